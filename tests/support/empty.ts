@@ -1,0 +1,2 @@
+/** Stands in for `server-only` outside the bundler, where it would throw. */
+export {};
