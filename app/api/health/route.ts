@@ -1,0 +1,6 @@
+import { isHealthy } from "@/modules/access/health";
+
+/** Says only whether the product can serve. */
+export async function GET(): Promise<Response> {
+  return (await isHealthy()) ? Response.json({ ok: true }) : Response.json({ ok: false }, { status: 503, headers: { "retry-after": "2" } });
+}

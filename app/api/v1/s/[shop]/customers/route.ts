@@ -1,0 +1,4 @@
+import { handle } from "@/modules/access/api";
+import { findCustomersEndpoint } from "@/modules/customers/endpoints";
+
+export const GET = handle(findCustomersEndpoint);

@@ -1,0 +1,79 @@
+import "server-only";
+import { isOutage } from "@/db/errors";
+import type { Result } from "@/modules/kernel/result";
+import { z } from "@/modules/kernel/zod";
+import type { Command } from "./command";
+import { NotFound, type ShopContext } from "./context";
+import { logFault } from "./fault";
+import { isOwnOrigin } from "./origin";
+import { deviceContext } from "./device";
+import { shopContextOrNull } from "./session";
+
+/** One address of the HTTP API. The same schema checks it, types it and documents it. */
+export interface Endpoint<S extends z.ZodType, T> {
+  readonly method: "GET" | "POST";
+  /** As in the document: `/api/v1/s/{shop}/parts`. */
+  readonly path: string;
+  readonly summary: string;
+  readonly input: S;
+  /** "person": a signed-in member. "device": an enrolled tablet or bench computer with its token. */
+  readonly by: readonly ("person" | "device")[];
+  run(ctx: ShopContext, input: z.output<S>, requestId: string | null): Promise<Result<T>>;
+}
+
+export const defineEndpoint = <S extends z.ZodType, T>(endpoint: Endpoint<S, T>): Endpoint<S, T> => endpoint;
+
+/** An endpoint that runs a command with the command's own schema. */
+export function commandEndpoint<S extends z.ZodType, T>(
+  command: Command<S, T>, at: { path: string; summary: string; by?: Endpoint<S, T>["by"] },
+): Endpoint<S, T> {
+  return {
+    method: "POST", path: at.path, summary: at.summary, input: command.spec.input, by: at.by ?? ["person"],
+    run: (ctx, input, requestId) => command(ctx, input as z.input<S>, requestId ? { requestId } : {}),
+  };
+}
+
+const REQUEST_ID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/;
+const problem = (status: number, title: string, more: object = {}, headers: HeadersInit = {}) =>
+  Response.json({ type: "about:blank", title, status, ...more }, { status, headers: { "content-type": "application/problem+json", "cache-control": "no-store", ...headers } });
+
+/** The route handler of an endpoint: who, origin, schema, then the data layer; problems as RFC 9457 documents. */
+export function handle<S extends z.ZodType, T>(endpoint: Endpoint<S, T>) {
+  return async (request: Request, { params }: { params: Promise<Record<string, string>> }): Promise<Response> => {
+    try {
+      const { shop = "", ...rest } = await params;
+      const bearer = /^Bearer ([\w-]{20,200})$/.exec(request.headers.get("authorization") ?? "")?.[1];
+      let ctx: ShopContext | null = null;
+      if (bearer && endpoint.by.includes("device")) ctx = await deviceContext(bearer, shop);
+      else if (!bearer && endpoint.by.includes("person")) {
+        if (endpoint.method !== "GET" && !isOwnOrigin(request.headers)) return problem(403, "This came from another site.");
+        ctx = await shopContextOrNull(shop);
+      }
+      if (!ctx) return problem(401, "Sign in first.");
+
+      let raw: unknown;
+      let requestId: string | null = null;
+      if (endpoint.method === "GET") raw = { ...Object.fromEntries(new URL(request.url).searchParams), ...rest };
+      else {
+        requestId = request.headers.get("idempotency-key");
+        if (!requestId || !REQUEST_ID.test(requestId)) return problem(400, "Send an Idempotency-Key header: a UUID made once for this act.");
+        const text = await request.text();
+        if (text.length > 1_000_000) return problem(413, "The body is too long; at most 1 MB.");
+        try { raw = { ...(JSON.parse(text) as object), ...rest }; } catch { return problem(400, "The body is not JSON."); }
+      }
+      const parsed = endpoint.input.safeParse(raw);
+      if (!parsed.success) {
+        return problem(422, "Some fields need another look.", { fields: parsed.error.issues.map((i) => ({ path: i.path.join("."), message: i.message })) });
+      }
+      const result = await endpoint.run(ctx, parsed.data, requestId);
+      if (result.ok) return Response.json(result.value ?? null, { headers: { "cache-control": "no-store" } });
+      const { code, message, field, fields, data } = result.refusal;
+      const status = code === "CHANGED_MEANWHILE" ? 409 : 422;
+      return problem(status, message, { code, field, fields, data });
+    } catch (error) {
+      if (error instanceof NotFound) return problem(404, "Not found.");
+      if (isOutage(error)) { logFault(endpoint.path, error); return problem(503, "The shop's records cannot be reached just now. Try again.", {}, { "retry-after": "2" }); }
+      return problem(500, "Something broke on our side.", { reference: logFault(endpoint.path, error) });
+    }
+  };
+}
