@@ -27,7 +27,7 @@ describe("a photo", () => {
     expect([thumbnail.widthPx, thumbnail.heightPx]).toEqual([160, 480]);
     for (const picture of [full, thumbnail]) {
       const meta = await sharp(picture.bytes).metadata();
-      expect(meta.format).toBe("jpeg");
+      expect(`image/${meta.format}`).toBe(picture.mime);
       expect(meta.exif).toBeUndefined();
       expect(meta.orientation).toBeUndefined();
     }

@@ -1,20 +1,21 @@
-import sharp from "sharp";
+import sharp, { type Sharp } from "sharp";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
 
 // Only the three loaders below may ever see bytes that a stranger sent.
 sharp.block({ operation: ["VipsForeignLoad"] });
 sharp.unblock({ operation: ["VipsForeignLoadJpegBuffer", "VipsForeignLoadPngBuffer", "VipsForeignLoadWebpBuffer"] });
 
-export interface Picture {
+export interface Picture<Mime extends string = string> {
   readonly bytes: Buffer;
-  readonly mime: "image/jpeg";
+  readonly mime: Mime;
   readonly widthPx: number;
   readonly heightPx: number;
 }
 
+/** The picture as JPEG, which documents and mail can carry too; the thumbnail, for screens only, as WebP. */
 export interface Photo {
-  readonly full: Picture;
-  readonly thumbnail: Picture;
+  readonly full: Picture<"image/jpeg">;
+  readonly thumbnail: Picture<"image/webp">;
 }
 
 /** Largest upload, bytes: a 48-megapixel phone photo is about 15 MB. */
@@ -38,15 +39,16 @@ export function imageKind(bytes: Uint8Array): "jpeg" | "png" | "webp" | "heic" |
   return null;
 }
 
-async function encode(bytes: Uint8Array, edgePx: number, quality: number): Promise<Picture> {
-  const { data, info } = await sharp(bytes, { limitInputPixels: PHOTO_PIXELS_MAX, failOn: "error", pages: 1 })
+const open = (bytes: Uint8Array, edgePx: number) =>
+  sharp(bytes, { limitInputPixels: PHOTO_PIXELS_MAX, failOn: "error", pages: 1 })
     .autoOrient()
     .resize({ width: edgePx, height: edgePx, fit: "inside", withoutEnlargement: true })
     .flatten({ background: "#ffffff" })
-    .toColourspace("srgb")
-    .jpeg({ quality, mozjpeg: true })
-    .toBuffer({ resolveWithObject: true });
-  return { bytes: data, mime: "image/jpeg", widthPx: info.width, heightPx: info.height };
+    .toColourspace("srgb");
+
+async function picture<Mime extends string>(image: Sharp, mime: Mime): Promise<Picture<Mime>> {
+  const { data, info } = await image.toBuffer({ resolveWithObject: true });
+  return { bytes: data, mime, widthPx: info.width, heightPx: info.height };
 }
 
 /**
@@ -68,9 +70,9 @@ export async function reencodePhoto(bytes: Uint8Array): Promise<Result<Photo>> {
     if (width * height > PHOTO_PIXELS_MAX) {
       return refuse("photo_too_large", "The photo has more than 60 megapixels. Send a smaller one.");
     }
-    const full = await encode(bytes, FULL_EDGE_PX, 82);
+    const full = await picture(open(bytes, FULL_EDGE_PX).jpeg({ quality: 82, mozjpeg: true }), "image/jpeg");
     // From the upright copy: decoding the original a second time would cost the most.
-    const thumbnail = await encode(full.bytes, THUMBNAIL_EDGE_PX, 76);
+    const thumbnail = await picture(open(full.bytes, THUMBNAIL_EDGE_PX).webp({ quality: 76 }), "image/webp");
     return ok({ full, thumbnail });
   } catch {
     return refuse("photo_damaged", "The photo is damaged or was cut off on the way. Send it again.");
