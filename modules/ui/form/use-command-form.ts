@@ -1,0 +1,122 @@
+"use client";
+
+import { zodResolver } from "@hookform/resolvers/zod";
+import { useCallback, useEffect, useId, useRef, useState, type RefObject } from "react";
+import { useForm, type DefaultValues, type FieldValues, type Path, type UseFormReturn } from "react-hook-form";
+import type { z } from "@/modules/kernel/zod";
+import { keepDraft, readDraft, dropDraft } from "./draft";
+import { noLink, readReply, type Reading, type Trouble } from "./form-trouble";
+import type { Reply } from "./reply";
+import { RequestId, within } from "./request-id";
+
+export interface CommandFormOptions<Input extends FieldValues, Output, Value> {
+  /** Same schema as on the server. It judges here so that mistakes show at once; the raw text is what is sent. */
+  schema: z.ZodType<Output, Input>;
+  defaultValues: DefaultValues<Input>;
+  action: (request: { requestId: string; input: Input }) => Promise<Reply<Value>>;
+  onDone?: (value: Value) => void;
+  /** Keeps a copy of what is typed in this tab under the given name until it is saved. */
+  draft?: string;
+  /** Warn before leaving the page with unsaved text. Default true. */
+  guard?: boolean;
+  /** How long an answer may take, ms. Default 20 000. */
+  timeoutMs?: number;
+}
+
+export interface CommandForm<Input extends FieldValues, Output> {
+  rhf: UseFormReturn<Input, unknown, Output>;
+  formId: string;
+  /** Sends it; also what Try again calls. */
+  submit: () => void;
+  pending: boolean;
+  trouble: Trouble | null;
+  clearTrouble: () => void;
+  summaryRef: RefObject<HTMLDivElement | null>;
+}
+
+export function useCommandForm<Input extends FieldValues, Output, Value>({
+  schema,
+  defaultValues,
+  action,
+  onDone,
+  draft,
+  guard = true,
+  timeoutMs = 20_000,
+}: CommandFormOptions<Input, Output, Value>): CommandForm<Input, Output> {
+  const formId = useId();
+  const summaryRef = useRef<HTMLDivElement | null>(null);
+  const [requestId] = useState(() => new RequestId(() => crypto.randomUUID()));
+  const [trouble, setTrouble] = useState<Trouble | null>(null);
+  const [pending, setPending] = useState(false);
+  const [attempt, setAttempt] = useState(0);
+  const busy = useRef(false);
+  const rhf = useForm<Input, unknown, Output>({
+    resolver: zodResolver<Input, unknown, Output>(schema),
+    defaultValues,
+    mode: "onTouched",
+    shouldFocusError: false,
+  });
+  const { handleSubmit, setError, reset, watch, getValues, formState } = rhf;
+  const dirty = formState.isDirty;
+
+  useEffect(() => {
+    if (draft === undefined) return;
+    const kept = readDraft(draft);
+    if (kept !== null) reset({ ...getValues(), ...kept } as Input, { keepDefaultValues: true });
+    const { unsubscribe } = watch((values) => keepDraft(draft, values));
+    return unsubscribe;
+  }, [draft, reset, watch, getValues]);
+
+  useEffect(() => {
+    if (!guard || !dirty) return;
+    const ask = (event: BeforeUnloadEvent) => event.preventDefault();
+    window.addEventListener("beforeunload", ask);
+    return () => window.removeEventListener("beforeunload", ask);
+  }, [guard, dirty]);
+
+  // After the errors are drawn, so that there is something to focus.
+  useEffect(() => {
+    if (attempt > 0) summaryRef.current?.focus();
+  }, [attempt]);
+
+  const show = useCallback(
+    (reading: Reading) => {
+      for (const f of reading.fields) setError(f.path as Path<Input>, { type: "server", message: f.message });
+      setTrouble(reading.trouble);
+      if (!reading.keepId) requestId.settle();
+      setAttempt((n) => n + 1);
+    },
+    [requestId, setError],
+  );
+
+  const send = useCallback(async () => {
+    if (busy.current) return;
+    busy.current = true;
+    setPending(true);
+    setTrouble(null);
+    try {
+      const input = getValues();
+      const reply = await within(timeoutMs, action({ requestId: requestId.take(), input }));
+      if (reply.status === "ok") {
+        requestId.settle();
+        if (draft !== undefined) dropDraft(draft);
+        // What was sent is now what is saved: nothing is unsaved until the next keystroke.
+        reset(input, { keepValues: true });
+        onDone?.(reply.value);
+      } else {
+        show(readReply(reply));
+      }
+    } catch {
+      show(noLink);
+    } finally {
+      busy.current = false;
+      setPending(false);
+    }
+  }, [action, draft, getValues, onDone, requestId, reset, show, timeoutMs]);
+
+  const submit = useCallback(() => {
+    void handleSubmit(send, () => setAttempt((n) => n + 1))();
+  }, [handleSubmit, send]);
+
+  return { rhf, formId, submit, pending, trouble, clearTrouble: () => setTrouble(null), summaryRef };
+}
