@@ -26,7 +26,7 @@ function address(text: string, what: string): string {
 }
 
 /** Display names come from typed text: one line, no quotes that could end the name early. */
-const displayName = (text: string | undefined): string => (text ?? "").replace(/[\p{Cc}"<>\\]+/gu, " ").trim().slice(0, 120);
+const displayName = (text: string | undefined): string => (text ?? "").replace(/[\s\p{Cc}"<>\\]+/gu, " ").trim().slice(0, 120);
 
 const named = (name: string | undefined, addr: string) => ({ name: displayName(name), address: addr });
 
