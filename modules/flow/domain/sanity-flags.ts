@@ -1,0 +1,142 @@
+import { ok, type Result } from "@/modules/kernel/result";
+import { curtainArea } from "./curtain-area";
+import { dischargeCoefficient } from "./discharge-coefficient";
+import type { FlowFlag, LiftFlag, LiftFlagAt } from "./flow-flags";
+import { refuseFlow, refuseNotFinite } from "./flow-refusal";
+import { isIncreasing, neighbours, paired } from "./neighbours";
+import { rangeFlags } from "./reading-to-flow";
+import { SET_POINT_SHARE_MAX } from "./test-pressure";
+import { M3S_PER_CFM, PA_PER_INH2O } from "./units";
+import { bernoulliSpeedMS } from "./velocity";
+
+/** Limits an owner may change. Common practice, no source. */
+export const SANITY_LIMITS = {
+  fallShare: 0.01,
+  zeroLiftExtraCfm: 0.5,
+  offNominalShare: 0.1,
+  outlierTimesMedian: 3,
+  /** A reading that departs less than this from its neighbours' line is never an outlier, however smooth the rest. */
+  outlierShareMin: 0.1,
+  gainShare: 0.4,
+  zeroDriftMm: 0.05,
+} as const;
+export type SanityLimits = { readonly [K in keyof typeof SANITY_LIMITS]: number };
+
+export interface SanityTest {
+  /** Strictly increasing, one unit; the unit is that of the lift in the flag. */
+  readonly lifts: readonly number[];
+  readonly flowsCfm: readonly number[];
+  /** The before test at the same lifts. */
+  readonly beforeCfm?: readonly number[];
+  /** Expanded uncertainty, cfm; a fall must exceed it too. */
+  readonly expandedUCfm?: number;
+  readonly leakCfm?: number;
+  readonly camMaxLift?: number;
+  readonly zeroReturnMm?: number;
+}
+
+export interface SanityReading {
+  readonly flowCfm?: number;
+  readonly percent?: number;
+  readonly heldInH2O?: number;
+  readonly nominalInH2O?: number;
+  readonly densityKgM3?: number;
+  readonly minSectionMm2?: number;
+  readonly valveDiametersMm?: readonly number[];
+  readonly liftMm?: number;
+}
+
+const at = (flag: LiftFlag, lift: number): LiftFlagAt => `${flag}@${lift}`;
+
+/** How far a reading lies from the straight line through two others, as a share. */
+function departure(p: readonly [number, number], a: readonly [number, number], b: readonly [number, number]): number {
+  const expected = a[1] + ((p[0] - a[0]) / (b[0] - a[0])) * (b[1] - a[1]);
+  return expected > 0 ? Math.abs(p[1] / expected - 1) : 0;
+}
+
+/** Readings that leave their neighbours' line by more than three times the usual departure; of a cluster only the worst. */
+function outlierLifts(curve: readonly (readonly [number, number])[], limits: SanityLimits): number[] {
+  const first = curve[0];
+  const all = first && first[0] > 0 ? [[0, 0] as const, ...curve] : curve;
+  if (all.length < 4) return [];
+  const shares = all.map((p, i) => {
+    const isLast = i === all.length - 1;
+    const a = all[isLast ? i - 2 : i - 1];
+    const b = all[isLast ? i - 1 : i + 1];
+    return i === 0 || !a || !b ? 0 : departure(p, a, b);
+  });
+  const sorted = shares.slice(1).sort((x, y) => x - y);
+  const median = sorted[Math.floor((sorted.length - 1) / 2)] ?? 0;
+  const limit = Math.max(limits.outlierTimesMedian * median, limits.outlierShareMin);
+  return all.flatMap(([lift], i) => {
+    const share = shares[i] ?? 0;
+    const isWorst = share >= (shares[i - 1] ?? 0) && share >= (shares[i + 1] ?? 0);
+    return share > limit && isWorst ? [lift] : [];
+  });
+}
+
+/**
+ * Doubts about a whole test. Nothing here stops a save; each is shown in words and shape.
+ * Errors: TOO_FEW_POINTS (lists differ in length), LIFTS_NOT_INCREASING.
+ */
+export function sanityFlagsOfTest(test: SanityTest, limits: SanityLimits = SANITY_LIMITS): Result<readonly (FlowFlag | LiftFlagAt)[]> {
+  const { lifts, flowsCfm, beforeCfm, expandedUCfm = 0, leakCfm = 0, camMaxLift, zeroReturnMm } = test;
+  const bad = refuseNotFinite({ lifts, flowsCfm, beforeCfm, expandedUCfm, leakCfm, camMaxLift, zeroReturnMm });
+  if (bad) return bad;
+  const curve = paired(lifts, flowsCfm);
+  if (!curve) return refuseFlow("TOO_FEW_POINTS", "flowsCfm");
+  if (!isIncreasing(lifts)) return refuseFlow("LIFTS_NOT_INCREASING", "lifts");
+  const flags: (FlowFlag | LiftFlagAt)[] = [];
+  for (const [[, flow], [lift, next]] of neighbours(curve)) {
+    if (flow - next > Math.max(limits.fallShare * flow, expandedUCfm)) flags.push(at("FLOW_FALLS_WITH_LIFT", lift));
+  }
+  if (curve.some(([lift, flow]) => lift === 0 && flow > leakCfm + limits.zeroLiftExtraCfm)) flags.push("FLOW_AT_ZERO_LIFT");
+  flags.push(...outlierLifts(curve, limits).map((lift) => at("OUTLIER", lift)));
+  if (beforeCfm) {
+    const both = paired(curve, beforeCfm);
+    if (!both) return refuseFlow("TOO_FEW_POINTS", "beforeCfm");
+    for (const [[lift, after], before] of both) {
+      if (before > 0 && after / before - 1 > limits.gainShare) flags.push(at("GAIN_UNUSUAL", lift));
+    }
+  }
+  if (zeroReturnMm !== undefined && Math.abs(zeroReturnMm) > limits.zeroDriftMm) flags.push("LIFT_ZERO_DRIFT");
+  if (camMaxLift !== undefined && !lifts.some((l) => l >= camMaxLift)) flags.push("NOT_TESTED_TO_CAM_LIFT");
+  return ok(flags);
+}
+
+/**
+ * Doubts about one reading; each check runs when its inputs are given.
+ * Errors: READING_OUT_OF_RANGE, PRESSURE_NOT_POSITIVE, GEOMETRY_INVALID, DENSITY_REQUIRED.
+ */
+export function sanityFlagsOfReading(reading: SanityReading, limits: SanityLimits = SANITY_LIMITS): Result<readonly FlowFlag[]> {
+  const { flowCfm, percent, heldInH2O, nominalInH2O, densityKgM3, minSectionMm2, valveDiametersMm, liftMm } = reading;
+  const bad = refuseNotFinite({ flowCfm, percent, heldInH2O, nominalInH2O, densityKgM3, minSectionMm2, valveDiametersMm, liftMm });
+  if (bad) return bad;
+  if (heldInH2O !== undefined && heldInH2O <= 0) return refuseFlow("PRESSURE_NOT_POSITIVE", "heldInH2O");
+  if (nominalInH2O !== undefined && nominalInH2O <= 0) return refuseFlow("PRESSURE_NOT_POSITIVE", "nominalInH2O");
+  if (densityKgM3 !== undefined && densityKgM3 <= 0) return refuseFlow("DENSITY_REQUIRED", "densityKgM3");
+  if (minSectionMm2 !== undefined && minSectionMm2 <= 0) return refuseFlow("GEOMETRY_INVALID", "minSectionMm2");
+  const flags: FlowFlag[] = [];
+  if (percent !== undefined) {
+    if (percent < 0 || percent > 100) return refuseFlow("READING_OUT_OF_RANGE", "percent", { min: 0, max: 100 });
+    flags.push(...rangeFlags(percent));
+  }
+  if (heldInH2O !== undefined && nominalInH2O !== undefined) {
+    const off = Math.abs(heldInH2O / nominalInH2O - 1);
+    if (off > SET_POINT_SHARE_MAX + 1e-9) flags.push("CONVERTED_PRESSURE");
+    if (off > limits.offNominalShare + 1e-9) flags.push("PRESSURE_OFF_NOMINAL");
+  }
+  if (flowCfm === undefined || heldInH2O === undefined || densityKgM3 === undefined) return ok(flags);
+  if (valveDiametersMm && liftMm !== undefined && liftMm > 0) {
+    const area = curtainArea({ valveDiametersMm, liftMm });
+    if (!area.ok) return area;
+    const cd = dischargeCoefficient({ model: "incompressible", flowCfm, dpInH2O: heldInH2O, densityKgM3, referenceAreaMm2: area.value.curtainAreaMm2 });
+    if (!cd.ok) return cd;
+    flags.push(...cd.value.flags);
+  }
+  if (minSectionMm2 !== undefined) {
+    const speedMS = (flowCfm * M3S_PER_CFM) / (minSectionMm2 * 1e-6);
+    if (speedMS > bernoulliSpeedMS(heldInH2O * PA_PER_INH2O, densityKgM3)) flags.push("ABOVE_IDEAL_PORT_LIMIT");
+  }
+  return ok(flags);
+}
