@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { daySummary, efficiencyPercent, productivityPercent, utilisationPercent } from "./day-summary";
+import { daySummary, utilisationPercent } from "./day-summary";
 
 describe("door against bench", () => {
   it.each([
@@ -15,11 +15,9 @@ describe("door against bench", () => {
     expect(daySummary({ doorMinutes: 480, directMinutes: 450, indirectMinutes: 0, paidBreakMinutes: 0, toleranceMinutes: 30 }).asks).toBe("none");
   });
 
-  // docs/hero-job.md: 18.90 book hours in 1149 bench minutes.
-  it("efficiency * utilisation = productivity; nothing to divide by is no figure", () => {
-    expect(efficiencyPercent(1134, 1149)).toBe(98.69);
-    expect(utilisationPercent(1149, 1532)).toBe(75);
-    expect(productivityPercent(1134, 1532)).toBe(74.02);
-    expect(efficiencyPercent(60, 0)).toBeNull();
+  it("utilisation is bench over door; nothing to divide by is no figure", () => {
+    expect(utilisationPercent(420, 480)).toBe("87.50");
+    expect(utilisationPercent(1, 3)).toBe("33.33");
+    expect(utilisationPercent(60, 0)).toBeNull();
   });
 });

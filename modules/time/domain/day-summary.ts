@@ -1,3 +1,5 @@
+import { fixedText, ratio } from "@/modules/kernel/fraction";
+
 /** Unexplained minutes a day that are let pass (shop rule, settable). More is asked next morning, never deducted. */
 export const UNEXPLAINED_MINUTES_DEFAULT = 15;
 
@@ -32,13 +34,6 @@ export function daySummary(p: {
   };
 }
 
-/** Percent with two decimals, or null when there is nothing to divide by. */
-const percent = (part: number, whole: number): number | null =>
-  whole === 0 ? null : Math.round((part * 10_000) / whole) / 100;
-
-/** Bench direct / door hours. */
-export const utilisationPercent = (directMinutes: number, doorMinutes: number): number | null => percent(directMinutes, doorMinutes);
-/** Book hours earned / bench direct hours. Rework adds minutes and earns no book hours. */
-export const efficiencyPercent = (bookMinutes: number, directMinutes: number): number | null => percent(bookMinutes, directMinutes);
-/** Book hours earned / door hours = efficiency * utilisation. */
-export const productivityPercent = (bookMinutes: number, doorMinutes: number): number | null => percent(bookMinutes, doorMinutes);
+/** Bench direct / door hours as percent text with two decimals, or null when nobody was in. */
+export const utilisationPercent = (directMinutes: number, doorMinutes: number): string | null =>
+  doorMinutes === 0 ? null : fixedText(ratio(directMinutes * 100, doorMinutes), 2);
