@@ -1,12 +1,12 @@
 import "server-only";
 import { isOutage } from "@/db/errors";
 import type { Result } from "@/modules/kernel/result";
-import { z } from "@/modules/kernel/zod";
+import type { z } from "@/modules/kernel/zod";
 import type { Command } from "./command";
 import { NotFound, type ShopContext } from "./context";
 import { logFault } from "./fault";
 import { isOwnOrigin } from "./origin";
-import { deviceContext } from "./device";
+import { deviceContext, deviceCookie } from "./device";
 import { shopContextOrNull } from "./session";
 
 /** One address of the HTTP API. The same schema checks it, types it and documents it. */
@@ -18,6 +18,8 @@ export interface Endpoint<S extends z.ZodType, T> {
   readonly input: S;
   /** "person": a signed-in member. "device": an enrolled tablet or bench computer with its token. */
   readonly by: readonly ("person" | "device")[];
+  /** A tablet put out of use may still call this, with the little it may still do. */
+  readonly revokedToo?: boolean;
   run(ctx: ShopContext, input: z.output<S>, requestId: string | null): Promise<Result<T>>;
 }
 
@@ -44,10 +46,15 @@ export function handle<S extends z.ZodType, T>(endpoint: Endpoint<S, T>) {
       const { shop = "", ...rest } = await params;
       const bearer = /^Bearer ([\w-]{20,200})$/.exec(request.headers.get("authorization") ?? "")?.[1];
       let ctx: ShopContext | null = null;
-      if (bearer && endpoint.by.includes("device")) ctx = await deviceContext(bearer, shop);
-      else if (!bearer && endpoint.by.includes("person")) {
+      const revoked = endpoint.revokedToo ? { revokedToo: true } : {};
+      if (bearer) {
+        if (endpoint.by.includes("device")) ctx = await deviceContext(bearer, shop, revoked);
+      } else {
+        // Both secrets may come in cookies, which the browser sends by itself: so the origin is asked.
         if (endpoint.method !== "GET" && !isOwnOrigin(request.headers)) return problem(403, "This came from another site.");
-        ctx = await shopContextOrNull(shop);
+        if (endpoint.by.includes("person")) ctx = await shopContextOrNull(shop);
+        const held = ctx || !endpoint.by.includes("device") ? null : deviceCookie(request.headers.get("cookie"));
+        if (held) ctx = await deviceContext(held, shop, revoked);
       }
       if (!ctx) return problem(401, "Sign in first.");
 

@@ -16,3 +16,12 @@ export async function allowed(key: string, limit: number, windowSeconds: number)
     return (rows[0]?.hits ?? 0) <= limit;
   });
 }
+
+/** Whether the limit of a key is reached in the running window, without counting a try. */
+export async function reached(key: string, limit: number, windowSeconds: number): Promise<boolean> {
+  return withSystem("tries are counted before anybody is known", async (tx) => {
+    const { rows } = await tx.execute<{ hits: number }>(sql`
+      select hits from rate_limits where key = ${key} and window_start = to_timestamp(floor(extract(epoch from now()) / ${windowSeconds}) * ${windowSeconds})`);
+    return (rows[0]?.hits ?? 0) >= limit;
+  });
+}

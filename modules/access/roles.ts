@@ -27,6 +27,8 @@ const MATRIX = {
   "ship": ["counter", "lead", "receiving", "manager", "owner"],
   "handover.unpaid": ["manager", "owner"],
   "clock.use": [...ALL_STAFF],
+  // What an enrolled tablet may still do once it is put out of use: hand over the times it kept.
+  "clock.punch": [...ALL_STAFF],
   "time.see-own": [...ALL_STAFF],
   "time.see-all": ["lead", "bookkeeper", "manager", "owner"],
   "time.correct": ["lead", "bookkeeper", "manager", "owner"],

@@ -11,5 +11,10 @@ export const INDIRECT_WORK = [
   "development",
   "counter help",
   "shipping",
+  // A rest of 5 to about 20 minutes is work time (29 CFR 785.18): it stays on the clock and is counted as paid break.
+  "break",
 ] as const;
 export type IndirectWork = (typeof INDIRECT_WORK)[number];
+
+/** Paid rest, counted apart from other indirect time. */
+export const PAID_BREAK: IndirectWork = "break";

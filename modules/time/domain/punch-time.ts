@@ -1,0 +1,33 @@
+/** The tablet's clock may be this far off before a punch is flagged. */
+export const SKEW_SECONDS_MAX = 120;
+/** A punch that arrives later than this after the tap was kept on the tablet meanwhile. */
+export const LIVE_SECONDS_MAX = 15;
+/** Older than this is not taken as time without somebody looking at it. */
+export const KEPT_DAYS_MAX = 14;
+
+export interface PunchTime {
+  /** The instant that counts, to the second. */
+  readonly at: Date;
+  readonly isLate: boolean;
+  readonly flags: readonly ("tablet clock off" | "tablet clock ahead" | "very late")[];
+}
+
+/**
+ * When a tap happened. The server's clock rules: a live punch counts when it arrives; a kept one counts at the tablet's
+ * time put right by the offset the tablet measured at its last answer (server less tablet, ms). A time that has not come
+ * counts now. Instants are cut to the second.
+ */
+export function punchTime(p: { readonly now: Date; readonly deviceAt: Date | null; readonly offsetMs: number | null }): PunchTime {
+  const now = toSecond(p.now);
+  if (p.deviceAt === null) return { at: now, isLate: false, flags: [] };
+  const offset = p.offsetMs ?? 0;
+  const tapped = toSecond(new Date(p.deviceAt.getTime() + offset));
+  const flags: PunchTime["flags"][number][] = Math.abs(offset) > SKEW_SECONDS_MAX * 1000 ? ["tablet clock off"] : [];
+  const late = (now.getTime() - tapped.getTime()) / 1000;
+  if (late < -SKEW_SECONDS_MAX) flags.push("tablet clock ahead");
+  if (late <= LIVE_SECONDS_MAX) return { at: now, isLate: false, flags };
+  if (late > KEPT_DAYS_MAX * 86_400) flags.push("very late");
+  return { at: tapped, isLate: true, flags };
+}
+
+const toSecond = (d: Date): Date => new Date(Math.floor(d.getTime() / 1000) * 1000);
