@@ -1,0 +1,61 @@
+import type { PlotBox } from "./curve-scale";
+import { spreadApart, type Rect } from "./label-placement";
+
+export interface LineEnd {
+  readonly key: string;
+  /** One entry a line of text. */
+  readonly lines: readonly string[];
+  readonly x: number;
+  readonly y: number;
+}
+export interface EndLabel {
+  readonly key: string;
+  readonly lines: readonly string[];
+  /** Baseline of the first line, left-aligned. */
+  readonly x: number;
+  readonly y: number;
+  readonly box: Rect;
+  /** From the line's end to the label, when the label had to move away from it. */
+  readonly leader: { readonly x1: number; readonly y1: number; readonly x2: number; readonly y2: number } | null;
+}
+
+/** Text of 13 px in the condensed face; a little wide, so that boxes never come out too small. */
+const CHAR_PX = 7.2;
+const LINE_PX = 15;
+const ASCENT_PX = 11;
+
+export const textWidthPx = (text: string): number => text.length * CHAR_PX;
+
+/**
+ * Labels at the ends of the lines, none over another. A line that stops early keeps its label beside its end when there
+ * is room; all others stand in the column right of the plot.
+ */
+export function endLabels(ends: readonly LineEnd[], plot: PlotBox): EndLabel[] {
+  const columnX = plot.right + 10;
+  const width = (e: LineEnd) => Math.max(0, ...e.lines.map(textWidthPx));
+  const isInner = (e: LineEnd) => e.x + 13 + width(e) < plot.right - 4;
+  const place = (group: readonly LineEnd[], xOf: (e: LineEnd) => number): EndLabel[] => {
+    const tallest = Math.max(1, ...group.map((e) => e.lines.length));
+    const gap = tallest * LINE_PX;
+    const ys = spreadApart(
+      group.map((e) => e.y + 4),
+      gap,
+      plot.top + ASCENT_PX,
+      plot.bottom - (tallest - 1) * LINE_PX,
+    );
+    return group.map((e, i) => {
+      const x = xOf(e);
+      const y = ys[i] ?? e.y;
+      const moved = Math.abs(y - 4 - e.y) > 8 || x - e.x > 16;
+      return {
+        key: e.key,
+        lines: e.lines,
+        x,
+        y,
+        box: { x, y: y - ASCENT_PX, width: width(e), height: e.lines.length * LINE_PX - 1 },
+        leader: moved ? { x1: e.x + 5, y1: e.y, x2: x - 3, y2: y - 4 } : null,
+      };
+    });
+  };
+  return [...place(ends.filter(isInner), (e) => e.x + 13), ...place(ends.filter((e) => !isInner(e)), () => columnX)];
+}
