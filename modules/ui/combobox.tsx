@@ -34,6 +34,8 @@ export interface ComboboxProps {
   invalid?: boolean;
   describedBy?: string;
   label?: string;
+  /** Id of a visible label; a list that is open hides the page behind it, so the tie by `for` alone is not enough. */
+  labelledBy?: string;
   /** Inside the well, before its end. */
   unit?: ReactNode;
   inputRef?: Ref<HTMLInputElement>;
@@ -62,6 +64,7 @@ export function Combobox({
   invalid,
   describedBy,
   label,
+  labelledBy,
   unit,
   inputRef,
   onBlur,
@@ -112,6 +115,7 @@ export function Combobox({
           id={id}
           placeholder={placeholder}
           aria-label={label}
+          aria-labelledby={labelledBy}
           aria-invalid={invalid || undefined}
           aria-describedby={describedBy}
           onBlur={onBlur}

@@ -49,7 +49,7 @@ export function KioskStrip({
       <span className="num kt-clock">{clock}</span>
       {children}
       {onLock === undefined ? null : (
-        <button type="button" className="big" onClick={onLock}>
+        <button type="button" className="k-key" onClick={onLock}>
           <Icon name="lock" size={22} />
           {lockLabel}
         </button>

@@ -12,6 +12,7 @@ export function PageHead({
   numberLabel,
   numberSize = "l",
   actions,
+  actionsOnPhone = true,
   close = false,
   children,
 }: {
@@ -21,6 +22,8 @@ export function PageHead({
   numberLabel?: string;
   numberSize?: "m" | "l";
   actions?: ReactNode;
+  /** False leaves the keys out below 900 px, where the page offers them elsewhere or not at all. */
+  actionsOnPhone?: boolean;
   close?: boolean;
   /** Anything that stands right of the title instead of keys, e.g. figures. */
   children?: ReactNode;
@@ -39,7 +42,7 @@ export function PageHead({
         </h1>
         {sub === undefined ? null : <div className="sub">{sub}</div>}
       </div>
-      {actions === undefined ? null : <div className="act">{actions}</div>}
+      {actions === undefined ? null : <div className={clsx("act", !actionsOnPhone && "hide-s")}>{actions}</div>}
       {children === undefined ? null : <div className="ml-auto">{children}</div>}
     </div>
   );

@@ -34,6 +34,7 @@ export function ComboboxInput({
         id={id}
         value={value}
         invalid={error !== undefined}
+        labelledBy={`${id}-label`}
         describedBy={aria["aria-describedby"]}
         inputRef={field.ref}
         onBlur={field.onBlur}

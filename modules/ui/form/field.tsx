@@ -27,7 +27,7 @@ export function Field({
 }) {
   return (
     <div className={clsx("field", className)}>
-      <label htmlFor={id} className={clsx(hideLabel && "sr-only")}>
+      <label id={`${id}-label`} htmlFor={id} className={clsx(hideLabel && "sr-only")}>
         {label}
         {optional ? <span className="opt"> (optional)</span> : null}
       </label>

@@ -7,5 +7,5 @@ import { TextInput, type TextInputProps } from "./text-input";
  * typed text is never dropped. The schema judges it.
  */
 export const NumberInput = ({ whole = false, ...props }: TextInputProps & { whole?: boolean }) => (
-  <TextInput inputMode={whole ? "numeric" : "decimal"} autoComplete="off" figures {...props} />
+  <TextInput inputMode={whole ? "numeric" : "decimal"} autoComplete="off" {...props} />
 );

@@ -14,13 +14,12 @@ export interface TextInputProps extends FieldProps, Native {
   lead?: ReactNode;
   /** A key inside the well, after the unit. */
   inside?: ReactNode;
-  figures?: boolean;
   alignEnd?: boolean;
   hideLabel?: boolean;
 }
 
 /** One line of text. */
-export function TextInput({ name, label, hint, optional, className, unit, lead, inside, figures, alignEnd, hideLabel, onChange, onBlur, ...native }: TextInputProps) {
+export function TextInput({ name, label, hint, optional, className, unit, lead, inside, alignEnd, hideLabel, onChange, onBlur, ...native }: TextInputProps) {
   const { id, error, form, aria } = useField({ name, label, hint });
   return (
     <Field id={id} label={label} hint={hint} error={error} optional={optional} hideLabel={hideLabel} className={className}>
@@ -31,7 +30,7 @@ export function TextInput({ name, label, hint, optional, className, unit, lead, 
           {...native}
           {...form.register(name, { onChange, onBlur })}
           {...aria}
-          className={clsx(figures && "fig", alignEnd && "at-r")}
+          className={clsx(alignEnd && "at-r")}
         />
         {unit === undefined ? null : <span className="unit">{unit}</span>}
         {inside}
