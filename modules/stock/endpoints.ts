@@ -1,0 +1,16 @@
+import "server-only";
+import { defineEndpoint } from "@/modules/access/api";
+import { ok } from "@/modules/kernel/result";
+import { findPartsInput, ledgerInput } from "./input";
+import { findParts } from "./queries/find-parts";
+import { ledgerOf } from "./queries/ledger";
+
+export const findPartsEndpoint = defineEndpoint({
+  method: "GET", path: "/api/v1/s/{shop}/parts", summary: "Parts by number, words or family, with what is on the shelf, promised, free, short and on order", input: findPartsInput, by: ["person"],
+  run: async (ctx, input) => ok(await findParts(ctx, input)),
+});
+
+export const ledgerEndpoint = defineEndpoint({
+  method: "GET", path: "/api/v1/s/{shop}/parts/{part}/movements", summary: "Ledger of one part, newest first, with the quantity after each row", input: ledgerInput, by: ["person"],
+  run: async (ctx, input) => ok(await ledgerOf(ctx, input)),
+});
