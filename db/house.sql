@@ -54,6 +54,9 @@ CREATE POLICY held_token ON devices FOR SELECT TO PUBLIC
 DROP POLICY IF EXISTS held_session ON payment_requests;
 CREATE POLICY held_session ON payment_requests FOR SELECT TO PUBLIC
   USING (provider_session_id = nullif(current_setting('app.provider_session', true), ''));
+DROP POLICY IF EXISTS held_payment ON payments;
+CREATE POLICY held_payment ON payments FOR SELECT TO PUBLIC
+  USING (provider_payment_id = nullif(current_setting('app.provider_session', true), ''));
 -- The worker looks for ready jobs over all shops; it may lease them, then enters each job's shop to run it.
 DROP POLICY IF EXISTS worker_queue ON jobs;
 CREATE POLICY worker_queue ON jobs FOR ALL TO vk_job USING (true) WITH CHECK (true);

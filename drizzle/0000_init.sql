@@ -107,6 +107,7 @@ CREATE TABLE "shop_settings" (
 	"write_off_limit_minor" bigint DEFAULT 100 NOT NULL,
 	"workweek_start_day" integer DEFAULT 1 NOT NULL,
 	"invoice_words" text DEFAULT '' NOT NULL,
+	"reference_prefix" text DEFAULT 'VK' NOT NULL,
 	"version" bigint DEFAULT 1 NOT NULL,
 	CONSTRAINT "shop_settings_shop_id_pk" PRIMARY KEY("shop_id")
 );
@@ -1372,4 +1373,5 @@ CREATE UNIQUE INDEX "invoices_number" ON "invoices" USING btree ("shop_id","numb
 CREATE INDEX "invoices_customer" ON "invoices" USING btree ("shop_id","customer_id");--> statement-breakpoint
 CREATE UNIQUE INDEX "payment_requests_session" ON "payment_requests" USING btree ("provider_session_id") WHERE provider_session_id is not null;--> statement-breakpoint
 CREATE UNIQUE INDEX "payments_provider" ON "payments" USING btree ("shop_id","provider_payment_id") WHERE provider_payment_id is not null;--> statement-breakpoint
-CREATE INDEX "payments_invoice" ON "payments" USING btree ("shop_id","invoice_id");
+CREATE INDEX "payments_invoice" ON "payments" USING btree ("shop_id","invoice_id");--> statement-breakpoint
+CREATE INDEX "payments_provider_id" ON "payments" USING btree ("provider_payment_id");

@@ -54,6 +54,7 @@ export const payments = pgTable("payments", {
   uniqueIndex("payments_provider").on(t.shopId, t.providerPaymentId).where(sql`provider_payment_id is not null`),
   foreignKey({ columns: [t.shopId, t.customerId], foreignColumns: [customers.shopId, customers.id] }),
   index("payments_invoice").on(t.shopId, t.invoiceId),
+  index("payments_provider_id").on(t.providerPaymentId),
 ]);
 
 export const refunds = pgTable("refunds", {

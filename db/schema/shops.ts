@@ -42,6 +42,8 @@ export const shopSettings = pgTable("shop_settings", {
   writeOffLimitMinor: minorUnits("write_off_limit_minor").notNull().default(100),
   workweekStartDay: integer("workweek_start_day").notNull().default(1),
   invoiceWords: text("invoice_words").notNull().default(""),
+  /** Two to four capital letters that begin the shop's payment references. */
+  referencePrefix: text("reference_prefix").notNull().default("VK"),
   version: version(),
 }, (t) => [primaryKey({ columns: [t.shopId] })]);
 
