@@ -24,7 +24,7 @@ export default defineConfig({
           exclude: ["**/*.int.test.ts", "**/node_modules/**"],
         },
       },
-      { extends: true, test: { ...shared, name: "architecture", include: ["tests/architecture/**/*.test.ts"], testTimeout: 60_000 } },
+      { extends: true, test: { ...shared, name: "architecture", include: ["tests/architecture/**/*.test.ts"], exclude: ["**/*.int.test.ts"], testTimeout: 60_000 } },
       { extends: true, test: { ...shared, name: "checks", include: ["tests/checks/**/*.test.ts"] } },
       {
         extends: true,

@@ -90,7 +90,7 @@ export function defineCommand<S extends z.ZodType, T>(spec: CommandSpec<S, T>): 
     return ok(value);
   }
 
-  return Object.assign(command, { spec, [COMMAND_MARK]: true }) as Command<S, T>;
+  return Object.assign(command, { spec, [COMMAND_MARK]: true });
 }
 
 function without(input: unknown, secret: readonly string[] = []): unknown {

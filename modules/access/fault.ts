@@ -4,7 +4,7 @@ import { randomUUID } from "node:crypto";
 /** Logs a fault under a short reference; the person sees the reference, never the words. */
 export function logFault(where: string, error: unknown, more: Record<string, unknown> = {}): string {
   const reference = randomUUID().slice(0, 8);
-  const e = error instanceof Error ? { name: error.name, message: error.message.slice(0, 2000), stack: error.stack?.slice(0, 4000), cause: String(error.cause ?? "").slice(0, 1000) } : { message: String(error).slice(0, 2000) };
+  const e = error instanceof Error ? { name: error.name, message: error.message.slice(0, 2000), stack: error.stack?.slice(0, 4000), cause: error.cause instanceof Error ? error.cause.message.slice(0, 1000) : undefined } : { message: String(error).slice(0, 2000) };
   console.error(JSON.stringify({ at: new Date().toISOString(), event: "fault", reference, where, ...more, ...e }));
   return reference;
 }

@@ -17,7 +17,7 @@ export interface SignedIn { sessionId: string; userId: string; name: string; ema
 
 /** The user behind this request, read from the database each time; null when signed out, ended or disabled. */
 export const signedIn = cache(async (): Promise<SignedIn | null> => {
-  const session = (await getServerSession(authOptions())) as { sid?: string } | null;
+  const session = await getServerSession<ReturnType<typeof authOptions>, { sid?: string }>(authOptions());
   const sid = session?.sid;
   if (!sid || !/^[0-9a-f-]{36}$/.test(sid)) return null;
   return withSystem("who is signed in", async (tx) => {
