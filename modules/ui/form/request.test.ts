@@ -1,0 +1,63 @@
+import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
+import { noLink, readReply } from "./form-trouble";
+import { NoAnswer, RequestId, within } from "./request-id";
+
+describe("request id", () => {
+  const counter = () => {
+    let n = 0;
+    return new RequestId(() => `id-${++n}`);
+  };
+  it("stays until something settles it", () => {
+    const r = counter();
+    expect([r.take(), r.take()]).toEqual(["id-1", "id-1"]);
+    r.settle();
+    expect(r.take()).toBe("id-2");
+  });
+  it("is kept whenever the shop may or may not have done it", () => {
+    expect(noLink.keepId).toBe(true);
+    expect(readReply({ status: "error", reference: "A7" }).keepId).toBe(true);
+    expect(readReply({ status: "signed-out" }).keepId).toBe(true);
+  });
+  it("is new after an answer that settles it", () => {
+    expect(readReply({ status: "refused", code: "x", message: "No." }).keepId).toBe(false);
+    expect(readReply({ status: "invalid", fields: [] }).keepId).toBe(false);
+    expect(readReply({ status: "conflict", message: "Changed." }).keepId).toBe(false);
+  });
+});
+
+describe("where an answer is shown", () => {
+  it("a refusal of one field stands under it", () => {
+    expect(readReply({ status: "refused", code: "x", message: "Too much.", field: "lines.2.qty" })).toEqual({
+      trouble: null,
+      fields: [{ path: "lines.2.qty", message: "Too much." }],
+      keepId: false,
+    });
+  });
+  it("a refusal of the whole stands above the form, with its code and data", () => {
+    expect(readReply({ status: "refused", code: "short", message: "4 short.", data: { short: 4 } }).trouble).toEqual({
+      kind: "refused",
+      code: "short",
+      message: "4 short.",
+      data: { short: 4 },
+    });
+  });
+  it("bad input stands under every field named", () => {
+    const fields = [{ path: "phone", message: "One digit short." }, { path: "promised", message: "Closed." }];
+    expect(readReply({ status: "invalid", fields })).toMatchObject({ trouble: null, fields });
+  });
+});
+
+describe("waiting for an answer", () => {
+  beforeEach(() => vi.useFakeTimers());
+  afterEach(() => vi.useRealTimers());
+  it("passes the answer and the failure on", async () => {
+    await expect(within(1000, Promise.resolve(7))).resolves.toBe(7);
+    await expect(within(1000, Promise.reject(new TypeError("Failed to fetch")))).rejects.toBeInstanceOf(TypeError);
+    expect(vi.getTimerCount()).toBe(0);
+  });
+  it("gives up in time", async () => {
+    const waiting = expect(within(1000, new Promise(() => undefined))).rejects.toBeInstanceOf(NoAnswer);
+    await vi.advanceTimersByTimeAsync(1000);
+    await waiting;
+  });
+});
