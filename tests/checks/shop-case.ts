@@ -46,7 +46,7 @@ export function valueOf<T>(r: Result<T>): T {
 export const reads =
   <T extends z.ZodRawShape>(shape: T, answer: (i: z.output<z.ZodObject<T>>) => Record<string, unknown>): Adapter =>
   (inputs) =>
-    answer(z.strictObject(shape).parse(inputs) as z.output<z.ZodObject<T>>);
+    answer(z.strictObject(shape).parse(inputs));
 
 const DECIMAL = /^-?\d+(\.\d+)?$/;
 

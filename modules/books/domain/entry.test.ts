@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { minor } from "@/modules/kernel/money";
-import { checkEntry, entryOf, mirror } from "./entry";
+import { checkEntry, credit, debit, entryOf, mirror } from "./entry";
 
 describe("journal entry", () => {
   it("is refused with the difference when it does not balance", () => {
@@ -19,12 +19,12 @@ describe("journal entry", () => {
   });
 
   it("leaves out lines of nothing", () => {
-    expect(entryOf(["1100", 5], ["4900", 0], ["4000", -5])).toEqual([{ account: "1100", amountMinor: 5 }, { account: "4000", amountMinor: -5 }]);
+    expect(entryOf(debit("1100", 5), debit("4900", 0), credit("4000", 5))).toEqual([{ account: "1100", amountMinor: 5 }, { account: "4000", amountMinor: -5 }]);
   });
 
   it("its mirror undoes it, line by line", () => {
     fc.assert(fc.property(fc.array(fc.integer({ min: -1e9, max: 1e9 }), { minLength: 1, maxLength: 9 }), (amounts) => {
-      const lines = entryOf(...amounts.map((a) => ["1100", a] as const), ["4000", -amounts.reduce((a, b) => a + b, 0)]);
+      const lines = entryOf(...amounts.map((a) => debit("1100", a)), credit("4000", amounts.reduce((a, b) => a + b, 0)));
       const back = mirror(lines);
       expect(back.map((l, i) => l.amountMinor + (lines[i]?.amountMinor ?? NaN))).toEqual(lines.map(() => 0));
       if (lines.length > 1) expect(checkEntry(lines).ok && checkEntry(back).ok).toBe(true);

@@ -40,8 +40,10 @@ export function checkEntry(lines: readonly DraftLine[]): Result<readonly EntryLi
 
 /** The same entry with every sign turned: a reversal, or the credit note of an invoice. */
 export const mirror = (lines: readonly EntryLine[]): EntryLine[] =>
-  lines.map((l) => ({ ...l, amountMinor: minor(-l.amountMinor) }));
+  lines.map((l) => ({ ...l, amountMinor: minor(0 - l.amountMinor) }));
+
+export const debit = (account: AccountCode, amountMinor: number): EntryLine => ({ account, amountMinor: minor(amountMinor) });
+export const credit = (account: AccountCode, amountMinor: number): EntryLine => ({ account, amountMinor: minor(0 - amountMinor) });
 
 /** Lines in the order given; those of 0 are left out. */
-export const entryOf = (...lines: readonly (readonly [AccountCode, number])[]): EntryLine[] =>
-  lines.filter(([, amount]) => amount !== 0).map(([account, amount]) => ({ account, amountMinor: minor(amount) }));
+export const entryOf = (...lines: readonly EntryLine[]): EntryLine[] => lines.filter((l) => l.amountMinor !== 0);

@@ -1,7 +1,7 @@
 import { type Minor } from "@/modules/kernel/money";
 import { type AccountCode } from "./accounts";
 import { type DocumentTotals } from "./document-totals";
-import { entryOf, mirror, type EntryLine } from "./entry";
+import { credit, debit, entryOf, mirror, type EntryLine } from "./entry";
 
 /** Where money comes in or goes out. */
 export const MONEY_WAYS = ["card", "bank", "cash"] as const;
@@ -11,7 +11,7 @@ const ACCOUNT_OF_WAY = { card: "1020", bank: "1010", cash: "1000" } as const sat
 
 /** A deposit is a debt to the customer until the invoice takes it. Dr clearing, bank or drawer / Cr customer deposits. */
 export const depositReceived = (p: { readonly amountMinor: Minor; readonly way: MoneyWay }): EntryLine[] =>
-  entryOf([ACCOUNT_OF_WAY[p.way], p.amountMinor], ["2100", -p.amountMinor]);
+  entryOf(debit(ACCOUNT_OF_WAY[p.way], p.amountMinor), credit("2100", p.amountMinor));
 
 /**
  * An issued invoice: Dr receivable and discounts / Cr income at gross and tax. An invoice of 0.00 (warranty) has no
@@ -19,15 +19,15 @@ export const depositReceived = (p: { readonly amountMinor: Minor; readonly way: 
  */
 export const invoiceIssued = (t: DocumentTotals): EntryLine[] =>
   entryOf(
-    ["1100", t.totalMinor],
-    ["4900", t.discountMinor],
-    ["4000", -t.laborMinor],
-    ["4100", -t.partsMinor],
-    ["4150", -t.suppliesMinor],
-    ["4200", -t.freightMinor],
-    ["4300", -t.outsideMinor],
-    ["4400", -t.coreMinor],
-    ["2200", -t.taxMinor],
+    debit("1100", t.totalMinor),
+    debit("4900", t.discountMinor),
+    credit("4000", t.laborMinor),
+    credit("4100", t.partsMinor),
+    credit("4150", t.suppliesMinor),
+    credit("4200", t.freightMinor),
+    credit("4300", t.outsideMinor),
+    credit("4400", t.coreMinor),
+    credit("2200", t.taxMinor),
   );
 
 /** A credit note turns the signs of what it takes back. */
@@ -35,19 +35,19 @@ export const creditNote = (invoiceLines: readonly EntryLine[]): EntryLine[] => m
 
 /** Dr customer deposits / Cr receivable. */
 export const depositApplied = (p: { readonly amountMinor: Minor }): EntryLine[] =>
-  entryOf(["2100", p.amountMinor], ["1100", -p.amountMinor]);
+  entryOf(debit("2100", p.amountMinor), credit("1100", p.amountMinor));
 
 /** Dr clearing, bank or drawer / Cr receivable. */
 export const paymentReceived = (p: { readonly amountMinor: Minor; readonly way: MoneyWay }): EntryLine[] =>
-  entryOf([ACCOUNT_OF_WAY[p.way], p.amountMinor], ["1100", -p.amountMinor]);
+  entryOf(debit(ACCOUNT_OF_WAY[p.way], p.amountMinor), credit("1100", p.amountMinor));
 
 /** What was paid over the open sum moves from receivable to the customer's credit. Dr receivable / Cr customer credits. */
 export const overpaymentCredited = (p: { readonly amountMinor: Minor }): EntryLine[] =>
-  entryOf(["1100", p.amountMinor], ["2110", -p.amountMinor]);
+  entryOf(debit("1100", p.amountMinor), credit("2110", p.amountMinor));
 
 /** A credit used on a later invoice. Dr customer credits / Cr receivable. */
 export const creditUsed = (p: { readonly amountMinor: Minor }): EntryLine[] =>
-  entryOf(["2110", p.amountMinor], ["1100", -p.amountMinor]);
+  entryOf(debit("2110", p.amountMinor), credit("1100", p.amountMinor));
 
 /** What a refund gives back: an unused deposit, a credit, or a payment (reopening the receivable). */
 export const REFUND_SOURCES = ["deposit", "credit", "payment"] as const;
@@ -56,16 +56,16 @@ const ACCOUNT_OF_SOURCE = { deposit: "2100", credit: "2110", payment: "1100" } a
 
 /** Money back the way it came. The fee of the first charge is not returned. */
 export const refunded = (p: { readonly amountMinor: Minor; readonly way: MoneyWay; readonly from: RefundSource }): EntryLine[] =>
-  entryOf([ACCOUNT_OF_SOURCE[p.from], p.amountMinor], [ACCOUNT_OF_WAY[p.way], -p.amountMinor]);
+  entryOf(debit(ACCOUNT_OF_SOURCE[p.from], p.amountMinor), credit(ACCOUNT_OF_WAY[p.way], p.amountMinor));
 
 /** A customer disputes a card charge: the money and a fee leave clearing, the receivable is open again. */
 export const disputeOpened = (p: { readonly amountMinor: Minor; readonly feeMinor: Minor }): EntryLine[] =>
-  entryOf(["1100", p.amountMinor], ["6150", p.feeMinor], ["1020", -(p.amountMinor + p.feeMinor)]);
+  entryOf(debit("1100", p.amountMinor), debit("6150", p.feeMinor), credit("1020", p.amountMinor + p.feeMinor));
 
 /** A dispute won: the money is back in clearing. */
 export const disputeWon = (p: { readonly amountMinor: Minor }): EntryLine[] =>
-  entryOf(["1020", p.amountMinor], ["1100", -p.amountMinor]);
+  entryOf(debit("1020", p.amountMinor), credit("1100", p.amountMinor));
 
 /** A balance nobody will pay. Dr bad debt / Cr receivable. */
 export const writtenOff = (p: { readonly amountMinor: Minor }): EntryLine[] =>
-  entryOf(["6200", p.amountMinor], ["1100", -p.amountMinor]);
+  entryOf(debit("6200", p.amountMinor), credit("1100", p.amountMinor));

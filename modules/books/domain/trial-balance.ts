@@ -27,7 +27,7 @@ export function trialBalance(lines: readonly EntryLine[]): TrialBalance {
     const own = lines.filter((l) => l.account === account.code).map((l) => l.amountMinor);
     if (own.length === 0) return [];
     const debitMinor = sumMinor(own.filter((a) => a > 0));
-    const creditMinor = minor(-sumMinor(own.filter((a) => a < 0)));
+    const creditMinor = minor(0 - sumMinor(own.filter((a) => a < 0)));
     return [{ account, debitMinor, creditMinor, balanceMinor: minor(debitMinor - creditMinor) }];
   });
   return {
