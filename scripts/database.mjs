@@ -30,8 +30,13 @@ export function runTypescript(file, env, failure, conditions = []) {
   return done.stdout;
 }
 
-export async function migrate(ownerEnv) {
-  runTypescript("db/migrate.ts", ownerEnv, "The database could not be brought up to date:");
+/**
+ * Bring the database up to date. In a cluster of ours the roles are made already; outside, the owner makes them when
+ * VK_APP_PASSWORD, VK_JOB_PASSWORD and VK_BACKUP_PASSWORD are given.
+ */
+export async function migrate(ownerEnv, environment = process.env) {
+  const { VK_APP_PASSWORD, VK_JOB_PASSWORD, VK_BACKUP_PASSWORD } = environment;
+  runTypescript("db/migrate.ts", { ...ownerEnv, ...(VK_APP_PASSWORD && VK_JOB_PASSWORD && VK_BACKUP_PASSWORD ? { VK_APP_PASSWORD, VK_JOB_PASSWORD, VK_BACKUP_PASSWORD } : {}) }, "The database could not be brought up to date:");
 }
 
 async function ask(ownerEnv, text, values) {
@@ -59,6 +64,6 @@ export async function markDemo(ownerEnv, mark) {
   await ask(ownerEnv, `do $$ begin execute format('comment on database %I is %L', current_database(), '${MARKS[mark]}'); end $$`);
 }
 
-export async function seedDemo(env) {
-  runTypescript("seed/run.ts", env, "The demo shop could not be loaded:", ["react-server"]);
+export async function seedDemo(ownerEnv) {
+  runTypescript("seed/run.ts", ownerEnv, "The demo shop could not be loaded:", ["react-server"]);
 }

@@ -79,24 +79,28 @@ export function databaseUrls(cluster, secrets, name) {
   };
 }
 
+/** Ways into the database that only one kind of process may know. */
+const OTHER_ROLES = new Set(["VK_OWNER_URL", "VK_BACKUP_URL", "VK_JOB_DATABASE_URL", "VK_APP_PASSWORD", "VK_JOB_PASSWORD", "VK_BACKUP_PASSWORD"]);
+
 /** What a child needs of the surroundings. npm's own variables stay out. */
 function surroundings(environment) {
-  return Object.fromEntries(Object.entries(environment).filter(([name]) => !/^npm_/i.test(name) && name !== "VK_OWNER_URL" && name !== "VK_BACKUP_URL"));
+  return Object.fromEntries(Object.entries(environment).filter(([name]) => !/^npm_/i.test(name) && !OTHER_ROLES.has(name)));
 }
 
 /**
  * The environment of web, worker and seed.
- * @param options `kind` product or test; `folder` of the data; `ports`; `secrets`; `database` addresses from
- *   `databaseUrls`, or none when they come from outside; `clockFile` for a test clock.
- * @returns `env` for web, worker and seed; `ownerEnv` for the migrator alone; `local`: which stand-ins to serve
+ * @param options `folder` of the data; `ports`; `secrets`; `database` addresses from `databaseUrls`, or none when they
+ *   come from outside; `clockFile` for a test clock.
+ * @returns `env` for the web, `workerEnv` for the worker, `ownerEnv` for migrator and seed (shops are founded by the
+ *   owner of the tables); `local`: which stand-ins to serve; `addresses` for people
  */
 export function assemble({ folder, ports, secrets, database, clockFile, environment = process.env }) {
   const outside = outsideServices(environment);
   const appUrl = (environment.VK_APP_URL || `http://localhost:${ports.web}`).replace(/\/+$/, "");
-  const { VK_OWNER_URL, VK_BACKUP_URL, ...working } = database ?? {};
+  const urls = database ?? environment;
   const env = {
     ...surroundings(environment),
-    ...working,
+    VK_DATABASE_URL: urls.VK_DATABASE_URL,
     NODE_ENV: "production",
     NEXT_TELEMETRY_DISABLED: "1",
     VK_APP_URL: appUrl,
@@ -113,10 +117,11 @@ export function assemble({ folder, ports, secrets, database, clockFile, environm
     ...(outside.files ? {} : { VK_FILES_DIR: environment.VK_FILES_DIR || path.join(folder, "files") }),
     ...(clockFile === undefined ? {} : { VK_CLOCK_FILE: clockFile }),
   };
-  const ownerUrl = VK_OWNER_URL ?? environment.VK_OWNER_URL;
   return {
     env,
-    ownerEnv: { ...env, VK_OWNER_URL: ownerUrl },
+    // The same program code opens the database as another role: the worker may lease jobs over all shops.
+    workerEnv: { ...env, VK_DATABASE_URL: urls.VK_JOB_DATABASE_URL },
+    ownerEnv: { ...env, VK_OWNER_URL: urls.VK_OWNER_URL },
     local: { database: !outside.database, mail: !outside.mail, payments: !outside.payments },
     addresses: {
       app: appUrl,

@@ -44,7 +44,7 @@ await run(async () => {
       supervised.adoptCluster(place);
       database = databaseUrls(await openDatabase(place, secrets, DATABASE), secrets, DATABASE);
     }
-    const { env, ownerEnv, local, addresses } = assemble({ folder: FOLDER, ports, secrets, database });
+    const { env, workerEnv, ownerEnv, local, addresses } = assemble({ folder: FOLDER, ports, secrets, database });
     await migrate(ownerEnv);
 
     // The stand-ins first: the demo is told through the product's own commands, which may send and charge.
@@ -56,13 +56,13 @@ await run(async () => {
 
     if (await demoWanted(ownerEnv, outside.database)) {
       say("Loading the demo shop");
-      await seedDemo(env);
+      await seedDemo(ownerEnv);
       await markDemo(ownerEnv, "loaded");
     }
     const server = await ensureServer(FOLDER);
     supervised.start("web", { server, env: { ...env, PORT: String(ports.web), HOSTNAME: host } });
-    supervised.start("worker", { env });
-    await supervised.waitFor("web", `http://${host === "0.0.0.0" ? "127.0.0.1" : host}:${ports.web}/`);
+    supervised.start("worker", { env: workerEnv });
+    await supervised.waitFor("web", `http://${host === "0.0.0.0" ? "127.0.0.1" : host}:${ports.web}/api/health`);
 
     heading("Valvekeeper is running");
     console.log(`  Application        ${addresses.app}`);
