@@ -37,6 +37,7 @@ const MATRIX = {
   "stock.see": [...ALL_STAFF],
   "stock.issue": ["counter", "technician", "lead", "receiving", "manager", "owner"],
   "stock.adjust": ["receiving", "bookkeeper", "manager", "owner"],
+  "stock.write-off": ["manager", "owner"],
   "parts.write": ["counter", "lead", "receiving", "bookkeeper", "manager", "owner"],
   "purchase.see": ["counter", "lead", "receiving", "bookkeeper", "manager", "owner"],
   "purchase.write": ["counter", "lead", "bookkeeper", "manager", "owner"],

@@ -56,7 +56,7 @@ const partFields = {
   families: line(300).default(""),
   position: z.enum(POSITIONS).default(""),
   bin: line(40).default(""),
-  salePrice: amountText,
+  salePrice: optionalAmountText,
   reorderPoint: levelText.default(null),
   orderQty: levelText.default(null),
   preferredSupplierId: z.union([z.uuid(), z.literal("")]).default(""),

@@ -48,7 +48,7 @@ async function chooseLots(ctx: TxContext, part: ShelfPart, args: IssueArgs): Pro
   if (args.lotId) {
     const lot = rows.find((l) => l.id === args.lotId);
     if (!lot) return refuse("LOT_EMPTY", "There is nothing left of that lot. Choose another.", { field: "lotId" });
-    if (lot.expiresOn && lot.expiresOn < day) return refuse("LOT_EXPIRED", `Lot ${lot.code} expired on ${lot.expiresOn}. Take a lot that is still good.`, { field: "lotId", data: { lot: lot.code } });
+    if (args.purpose !== "scrap" && lot.expiresOn && lot.expiresOn < day) return refuse("LOT_EXPIRED", `Lot ${lot.code} expired on ${lot.expiresOn}. Take a lot that is still good.`, { field: "lotId", data: { lot: lot.code } });
     if (lot.onHandMilli < args.qtyMilli) return notEnough(part, lot.onHandMilli, args.qtyMilli, ` That is all of lot ${lot.code}.`);
     return ok([{ id: lot.id, code: lot.code, qtyMilli: args.qtyMilli }]);
   }

@@ -73,8 +73,19 @@ export async function findParts(ctx: ShopContext, ask: FindPartsInput): Promise<
   });
 }
 
+/** One part as a list row, or null when it is not in this shop. */
+export async function getPartRow(ctx: ShopContext, partId: string): Promise<PartRow | null> {
+  mustBeAble(ctx, "stock.see");
+  const day = localDate(ctx.now, ctx.shop.zone);
+  return inShop(ctx, async (tx) => {
+    const { rows } = await tx.execute<Raw & Record<string, unknown>>(sql`select p.*, f.* from parts p join (${partFigures(ctx.shop.id, day, addDays(day, EXPIRING_DAYS))}) f on f.part_id = p.id where p.shop_id = ${ctx.shop.id} and p.id = ${partId}`);
+    const raw = rows[0];
+    return raw ? rowOf(ctx, raw, await kitStands({ ...ctx, tx }, raw.is_kit ? [raw.id] : [])) : null;
+  });
+}
+
 /** What a role may see of a part: sale price and cost are left out here, not hidden on the screen. */
-export function rowOf(ctx: ShopContext, r: Raw, kits: ReadonlyMap<string, { kits: number; short: string[] }>): PartRow {
+function rowOf(ctx: ShopContext, r: Raw, kits: ReadonlyMap<string, { kits: number; short: string[] }>): PartRow {
   const onHandMilli = Number(r.on_hand);
   const stand = kits.get(r.id);
   const seesCost = ableTo(ctx, "cost.see");
