@@ -1,5 +1,6 @@
 import "server-only";
 import { sendQueuedMail } from "@/modules/documents/mail";
+import { makeEstimatePaper } from "@/modules/work-orders/commands/estimate-paper";
 import type { Task } from "@/modules/access/jobs";
 import type { Handler } from "./queue";
 
@@ -12,4 +13,5 @@ const text = (payload: Record<string, unknown>, key: string): string => {
 /** What each task does. Every one is safe to run twice. */
 export const handlers: Partial<Record<Task, Handler>> = {
   "mail.send": (ctx, payload) => sendQueuedMail(ctx, text(payload, "mailId")),
+  "estimates.paper": (ctx, payload) => makeEstimatePaper(ctx, text(payload, "estimateId")),
 };
