@@ -171,7 +171,7 @@ export function curveGeometry(input: CurveGeometryInput): Result<CurveGeometry> 
     mini,
     plot,
     liftTicks: liftTicks(scale, unit, decimalText),
-    flowTicks: flowTicks(scale, mini ? 3 : 8, decimalText),
+    flowTicks: flowTicks(scale, mini ? 4 : 8, decimalText),
     flowTitle: mini ? null : { text: flowTitle, x: titleHitsPlate ? widthPx - 4 : plot.left, y: plot.top - 16, anchor: titleHitsPlate ? "end" : "start" },
     liftTitle: mini ? null : { text: `Valve lift, ${unit}`, x: plot.right, y: heightPx - 4, anchor: "end" },
     areas: shown.flatMap((l) =>

@@ -34,11 +34,11 @@ export function endLabels(ends: readonly LineEnd[], plot: PlotBox): EndLabel[] {
   const columnX = plot.right + 10;
   const width = (e: LineEnd) => Math.max(0, ...e.lines.map(textWidthPx));
   const isInner = (e: LineEnd) => e.x + 13 + width(e) < plot.right - 4;
-  const place = (group: readonly LineEnd[], xOf: (e: LineEnd) => number): EndLabel[] => {
+  const place = (group: readonly LineEnd[], xOf: (e: LineEnd) => number, dy: number): EndLabel[] => {
     const tallest = Math.max(1, ...group.map((e) => e.lines.length));
     const gap = tallest * LINE_PX;
     const ys = spreadApart(
-      group.map((e) => e.y + 4),
+      group.map((e) => e.y + dy),
       gap,
       plot.top + ASCENT_PX,
       plot.bottom - (tallest - 1) * LINE_PX,
@@ -46,7 +46,7 @@ export function endLabels(ends: readonly LineEnd[], plot: PlotBox): EndLabel[] {
     return group.map((e, i) => {
       const x = xOf(e);
       const y = ys[i] ?? e.y;
-      const moved = Math.abs(y - 4 - e.y) > 8 || x - e.x > 16;
+      const moved = Math.abs(y - dy - e.y) > 8 || x - e.x > 16;
       return {
         key: e.key,
         lines: e.lines,
@@ -57,5 +57,6 @@ export function endLabels(ends: readonly LineEnd[], plot: PlotBox): EndLabel[] {
       };
     });
   };
-  return [...place(ends.filter(isInner), (e) => e.x + 13), ...place(ends.filter((e) => !isInner(e)), () => columnX)];
+  // Inside the plot a label stands a little above its end, out of the way of a curve that goes on.
+  return [...place(ends.filter(isInner), (e) => e.x + 13, -8), ...place(ends.filter((e) => !isInner(e)), () => columnX, 4)];
 }

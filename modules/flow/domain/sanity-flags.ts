@@ -4,6 +4,7 @@ import { dischargeCoefficient } from "./discharge-coefficient";
 import type { FlowFlag, LiftFlag, LiftFlagAt } from "./flow-flags";
 import { refuseFlow, refuseNotFinite } from "./flow-refusal";
 import { isIncreasing, neighbours, paired } from "./neighbours";
+import { outlierLifts } from "./outliers";
 import { rangeFlags } from "./reading-to-flow";
 import { SET_POINT_SHARE_MAX } from "./test-pressure";
 import { M3S_PER_CFM, PA_PER_INH2O } from "./units";
@@ -15,8 +16,8 @@ export const SANITY_LIMITS = {
   zeroLiftExtraCfm: 0.5,
   offNominalShare: 0.1,
   outlierTimesMedian: 3,
-  /** A reading that departs less than this from its neighbours' line is never an outlier, however smooth the rest. */
-  outlierShareMin: 0.1,
+  /** A quarter off the line: wide steps at low lift bend a sound curve by up to 15 %. */
+  outlierShareMin: 0.25,
   gainShare: 0.4,
   zeroDriftMm: 0.05,
 } as const;
@@ -48,33 +49,6 @@ export interface SanityReading {
 
 const at = (flag: LiftFlag, lift: number): LiftFlagAt => `${flag}@${lift}`;
 
-/** How far a reading lies from the straight line through two others, as a share. */
-function departure(p: readonly [number, number], a: readonly [number, number], b: readonly [number, number]): number {
-  const expected = a[1] + ((p[0] - a[0]) / (b[0] - a[0])) * (b[1] - a[1]);
-  return expected > 0 ? Math.abs(p[1] / expected - 1) : 0;
-}
-
-/** Readings that leave their neighbours' line by more than three times the usual departure; of a cluster only the worst. */
-function outlierLifts(curve: readonly (readonly [number, number])[], limits: SanityLimits): number[] {
-  const first = curve[0];
-  const all = first && first[0] > 0 ? [[0, 0] as const, ...curve] : curve;
-  if (all.length < 4) return [];
-  const shares = all.map((p, i) => {
-    const isLast = i === all.length - 1;
-    const a = all[isLast ? i - 2 : i - 1];
-    const b = all[isLast ? i - 1 : i + 1];
-    return i === 0 || !a || !b ? 0 : departure(p, a, b);
-  });
-  const sorted = shares.slice(1).sort((x, y) => x - y);
-  const median = sorted[Math.floor((sorted.length - 1) / 2)] ?? 0;
-  const limit = Math.max(limits.outlierTimesMedian * median, limits.outlierShareMin);
-  return all.flatMap(([lift], i) => {
-    const share = shares[i] ?? 0;
-    const isWorst = share >= (shares[i - 1] ?? 0) && share >= (shares[i + 1] ?? 0);
-    return share > limit && isWorst ? [lift] : [];
-  });
-}
-
 /**
  * Doubts about a whole test. Nothing here stops a save; each is shown in words and shape.
  * Errors: TOO_FEW_POINTS (lists differ in length), LIFTS_NOT_INCREASING.
@@ -91,7 +65,7 @@ export function sanityFlagsOfTest(test: SanityTest, limits: SanityLimits = SANIT
     if (flow - next > Math.max(limits.fallShare * flow, expandedUCfm)) flags.push(at("FLOW_FALLS_WITH_LIFT", lift));
   }
   if (curve.some(([lift, flow]) => lift === 0 && flow > leakCfm + limits.zeroLiftExtraCfm)) flags.push("FLOW_AT_ZERO_LIFT");
-  flags.push(...outlierLifts(curve, limits).map((lift) => at("OUTLIER", lift)));
+  flags.push(...outlierLifts(curve, { timesMedian: limits.outlierTimesMedian, shareMin: limits.outlierShareMin }).map((lift) => at("OUTLIER", lift)));
   if (beforeCfm) {
     const both = paired(curve, beforeCfm);
     if (!both) return refuseFlow("TOO_FEW_POINTS", "beforeCfm");
