@@ -1,0 +1,10 @@
+import { receiveEvent } from "@/modules/payments/events";
+
+/** Events of the payment provider, signed by it. They come from another machine, so no origin is asked for here. */
+export async function POST(request: Request): Promise<Response> {
+  const declared = Number(request.headers.get("content-length") ?? 0);
+  if (declared > 1_000_000) return new Response(null, { status: 413 });
+  const body = new Uint8Array(await request.arrayBuffer());
+  if (body.byteLength > 1_000_000) return new Response(null, { status: 413 });
+  return new Response(null, { status: await receiveEvent(body, request.headers.get("stripe-signature")) });
+}

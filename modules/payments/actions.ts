@@ -1,0 +1,14 @@
+"use server";
+import { secretAction, shopAction } from "@/modules/access/action";
+import { linkContext } from "@/modules/access/link";
+import { answerRefund, askInvoicePayment, askRefund, closeEvent, explainPayoutItem, retryEvent, takePayment } from "./commands";
+import { startPaymentNow } from "./start-payment";
+
+export const takePaymentAction = shopAction(takePayment);
+export const askInvoicePaymentAction = shopAction(askInvoicePayment);
+export const askRefundAction = shopAction(askRefund);
+export const answerRefundAction = shopAction(answerRefund);
+export const retryEventAction = shopAction(retryEvent);
+export const closeEventAction = shopAction(closeEvent);
+export const explainPayoutItemAction = shopAction(explainPayoutItem);
+export const startPaymentAction = secretAction(startPaymentNow, linkContext);

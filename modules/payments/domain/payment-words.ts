@@ -1,0 +1,16 @@
+import type { MoneyWay } from "@/modules/books/domain/posting-sales";
+
+export const PAYMENT_METHODS = ["card", "cash", "cheque", "transfer"] as const;
+export type PaymentMethod = (typeof PAYMENT_METHODS)[number];
+export const METHOD_WORDS: Record<PaymentMethod, string> = { card: "card", cash: "cash", cheque: "check", transfer: "bank transfer" };
+/** Which account the money came into. */
+export const WAY_OF_METHOD: Record<PaymentMethod, MoneyWay> = { card: "card", cash: "cash", cheque: "bank", transfer: "bank" };
+
+/** What a payment was for once it was booked. `credit`: nothing was due. `undone`: a bank match taken back. */
+export const PAYMENT_PURPOSES = ["deposit", "invoice", "credit", "undone"] as const;
+export type PaymentPurpose = (typeof PAYMENT_PURPOSES)[number];
+
+export const REQUEST_STATES = ["new", "ready", "paid", "expired", "replaced"] as const;
+export type RequestState = (typeof REQUEST_STATES)[number];
+export const REFUND_STATES = ["asked", "accepted", "sent", "done", "failed", "declined"] as const;
+export type RefundState = (typeof REFUND_STATES)[number];
