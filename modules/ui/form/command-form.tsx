@@ -1,7 +1,7 @@
 "use client";
 
 import clsx from "clsx";
-import { useCallback, useMemo, useState, type ReactNode } from "react";
+import { useCallback, useEffect, useMemo, useRef, useState, type ReactNode } from "react";
 import { FormProvider, type FieldValues } from "react-hook-form";
 import { ErrorSummary } from "./error-summary";
 import { FormContext } from "./form-context";
@@ -39,6 +39,11 @@ export function CommandForm<Input extends FieldValues, Output>({
     () => ({ formId: form.formId, register, pending: form.pending }),
     [form.formId, register, form.pending],
   );
+  const top = useRef<HTMLDivElement>(null);
+  useEffect(() => {
+    // After the errors are drawn, so that there is something to read.
+    if (form.failed > 0) top.current?.focus();
+  }, [form.failed]);
   return (
     <FormProvider {...form.rhf}>
       <FormContext value={context}>
@@ -53,7 +58,7 @@ export function CommandForm<Input extends FieldValues, Output>({
             form.submit();
           }}
         >
-          <div ref={form.summaryRef} tabIndex={-1} className="form-top">
+          <div ref={top} tabIndex={-1} className="form-top">
             <FormTrouble trouble={form.trouble} onRetry={form.submit} pending={form.pending} signInHref={signInHref} words={troubleText} />
             <ErrorSummary labels={labels} toFix={toFix} />
           </div>

@@ -25,7 +25,7 @@ export function RadioRow({
 }: FieldProps & { options: readonly RadioOption[]; down?: boolean; hideLabel?: boolean; onChange?: () => void }) {
   const { id, error, form, aria } = useField({ name, label, hint });
   return (
-    <fieldset className={clsx("field", className)} aria-describedby={aria["aria-describedby"]}>
+    <fieldset role="radiogroup" className={clsx("field", className)} aria-describedby={aria["aria-describedby"]} aria-invalid={aria["aria-invalid"]}>
       <legend className={clsx(hideLabel && "sr-only")}>
         {label}
         {optional ? <span className="opt"> (optional)</span> : null}
@@ -39,7 +39,6 @@ export function RadioRow({
               disabled={o.disabled}
               {...form.register(name, { onChange })}
               id={i === 0 ? id : `${id}-${i}`}
-              aria-invalid={aria["aria-invalid"]}
             />
             <span>
               {o.label}

@@ -1,7 +1,7 @@
 "use client";
 
 import { zodResolver } from "@hookform/resolvers/zod";
-import { useCallback, useEffect, useId, useRef, useState, type RefObject } from "react";
+import { useCallback, useEffect, useId, useRef, useState } from "react";
 import { useForm, type DefaultValues, type FieldValues, type Path, type UseFormReturn } from "react-hook-form";
 import type { z } from "@/modules/kernel/zod";
 import { keepDraft, readDraft, dropDraft } from "./draft";
@@ -31,7 +31,8 @@ export interface CommandForm<Input extends FieldValues, Output> {
   pending: boolean;
   trouble: Trouble | null;
   clearTrouble: () => void;
-  summaryRef: RefObject<HTMLDivElement | null>;
+  /** Counts the tries that failed; the form moves the focus to what is wrong when it grows. */
+  failed: number;
 }
 
 export function useCommandForm<Input extends FieldValues, Output, Value>({
@@ -44,11 +45,10 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
   timeoutMs = 20_000,
 }: CommandFormOptions<Input, Output, Value>): CommandForm<Input, Output> {
   const formId = useId();
-  const summaryRef = useRef<HTMLDivElement | null>(null);
   const [requestId] = useState(() => new RequestId(() => crypto.randomUUID()));
   const [trouble, setTrouble] = useState<Trouble | null>(null);
   const [pending, setPending] = useState(false);
-  const [attempt, setAttempt] = useState(0);
+  const [failed, setFailed] = useState(0);
   const busy = useRef(false);
   const rhf = useForm<Input, unknown, Output>({
     resolver: zodResolver<Input, unknown, Output>(schema),
@@ -56,16 +56,15 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
     mode: "onTouched",
     shouldFocusError: false,
   });
-  const { handleSubmit, setError, reset, watch, getValues, formState } = rhf;
+  const { handleSubmit, setError, reset, subscribe, getValues, formState } = rhf;
   const dirty = formState.isDirty;
 
   useEffect(() => {
     if (draft === undefined) return;
     const kept = readDraft(draft);
-    if (kept !== null) reset({ ...getValues(), ...kept } as Input, { keepDefaultValues: true });
-    const { unsubscribe } = watch((values) => keepDraft(draft, values));
-    return unsubscribe;
-  }, [draft, reset, watch, getValues]);
+    if (kept !== null) reset({ ...getValues(), ...kept }, { keepDefaultValues: true });
+    return subscribe({ formState: { values: true }, callback: ({ values }) => keepDraft(draft, values) });
+  }, [draft, reset, subscribe, getValues]);
 
   useEffect(() => {
     if (!guard || !dirty) return;
@@ -74,17 +73,12 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
     return () => window.removeEventListener("beforeunload", ask);
   }, [guard, dirty]);
 
-  // After the errors are drawn, so that there is something to focus.
-  useEffect(() => {
-    if (attempt > 0) summaryRef.current?.focus();
-  }, [attempt]);
-
   const show = useCallback(
     (reading: Reading) => {
       for (const f of reading.fields) setError(f.path as Path<Input>, { type: "server", message: f.message });
       setTrouble(reading.trouble);
       if (!reading.keepId) requestId.settle();
-      setAttempt((n) => n + 1);
+      setFailed((n) => n + 1);
     },
     [requestId, setError],
   );
@@ -115,8 +109,8 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
   }, [action, draft, getValues, onDone, requestId, reset, show, timeoutMs]);
 
   const submit = useCallback(() => {
-    void handleSubmit(send, () => setAttempt((n) => n + 1))();
+    void handleSubmit(send, () => setFailed((n) => n + 1))();
   }, [handleSubmit, send]);
 
-  return { rhf, formId, submit, pending, trouble, clearTrouble: () => setTrouble(null), summaryRef };
+  return { rhf, formId, submit, pending, trouble, clearTrouble: () => setTrouble(null), failed };
 }
