@@ -2,6 +2,7 @@ import type { Metadata, Viewport } from "next";
 import { connection } from "next/server";
 import type { ReactNode } from "react";
 import { QueryProvider } from "@/modules/ui/query-provider";
+import { ToastProvider } from "@/modules/ui/toast";
 import { fontClasses } from "./fonts";
 import "./globals.css";
 
@@ -18,7 +19,7 @@ export default async function RootLayout({ children }: { children: ReactNode }) 
   return (
     <html lang="en" className={fontClasses}>
       <body>
-        <QueryProvider>{children}</QueryProvider>
+        <QueryProvider><ToastProvider>{children}</ToastProvider></QueryProvider>
       </body>
     </html>
   );

@@ -1,5 +1,6 @@
 "use client";
 import { signIn } from "next-auth/react";
+import Link from "next/link";
 import { useRouter } from "next/navigation";
 import { useState, useSyncExternalStore, type FormEvent } from "react";
 import { Note } from "@/modules/ui/note";
@@ -40,14 +41,14 @@ export function SignInForm({ next }: { next: string }) {
   }
 
   return (
-    <form method="post" onSubmit={(e) => void submit(e)} className="bay grid w-full max-w-[380px] gap-4" aria-labelledby="sign-in-label">
-      <h2 id="sign-in-label" className="eng ink">Sign in</h2>
+    <form method="post" onSubmit={(e) => void submit(e)} aria-labelledby="sign-in-label">
+      <h1 id="sign-in-label">Sign in</h1>
       <div role="alert">{problem ? <Note tone="stop">{problem}</Note> : null}</div>
-      <div className="f">
-        <label htmlFor="email">E-mail address</label>
+      <div className="field">
+        <label htmlFor="email">E-mail</label>
         <span className="in"><input id="email" name="email" type="email" autoComplete="username" required autoFocus className="w-full bg-transparent outline-none" /></span>
       </div>
-      <div className="f">
+      <div className="field">
         <label htmlFor="password">Password</label>
         <span className="in">
           <input id="password" name="password" type={shown ? "text" : "password"} autoComplete="current-password" required className="w-full bg-transparent outline-none" />
@@ -55,7 +56,7 @@ export function SignInForm({ next }: { next: string }) {
         </span>
       </div>
       <button className="btn go" disabled={pending || !ready}>{pending ? "Signing in" : "Sign in"}</button>
-      <p className="hint">Technicians clock in at the tablet with badge or PIN. Customers open the link in their mail.</p>
+      <p className="sm mid border-t border-line pt-4">On the shop floor? <Link className="lk" href="/clock">Use badge or PIN</Link></p>
     </form>
   );
 }
