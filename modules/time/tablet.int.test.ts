@@ -172,6 +172,14 @@ describe("what was kept on a tablet without a link", () => {
     expect(await behindTheCurtain(`select count(*) filter (where flag like 'to be checked%') || ' of ' || count(*) from punches where person_id = '${id("owner")}'`)).toEqual(["3 of 5"]);
   });
 
+  it("counts a wrong sealed PIN even when it is sent live", async () => {
+    const live = await tablet.at("2026-03-05T21:00:00Z");
+    const tries = () => behindTheCurtain(`select pin_failed_tries from people where id = '${id("rcv")}'`);
+    expect(await tries()).toEqual(["0"]);
+    expect(must(await doorIn(live, await sealed("rcv", { pin: "999999" }, "2026-03-05T21:00:00Z"))).doubt).toMatch(/did not match/);
+    expect(await tries()).toEqual(["1"]);
+  });
+
   it("does not let a sealed proof serve a second act", async () => {
     const online = await tablet.at("2026-03-06T20:00:00Z");
     const first = await sealed("owner", { pin: "480131" }, "2026-03-06T14:00:00Z");

@@ -59,7 +59,8 @@ export async function actingPerson(ctx: TxContext, stamp: Stamp): Promise<Result
   if (!person || (person.hasLeft && !time.isLate)) return gone();
   const isRevoked = !ctx.actor.acts.includes("clock.use");
   const proven = await prove(ctx, ctx.actor.id, stamp, time.at);
-  if (!proven && !time.isLate && !isRevoked) return refuse("PROOF_OVER", "The screen was open too long. Hold your badge to the reader or type your PIN again.");
+  // A wrong sealed PIN is counted, and the count must not be taken back with a refusal: such a press is kept to be checked.
+  if (!proven && !time.isLate && !isRevoked && stamp.proof.kind === "pass") return refuse("PROOF_OVER", "The screen was open too long. Hold your badge to the reader or type your PIN again.");
   const doubt = isRevoked ? "the tablet was put out of use" : !proven ? "badge or PIN did not match" : person.hasLeft ? "the person has left the shop" : time.flags.includes("very late") ? "kept for more than 14 days" : null;
   return ok({
     person, at: time.at, deviceAt, deviceId: ctx.actor.id, source: time.isLate ? "offline" : "tablet", isLate: time.isLate || isRevoked, flags: time.flags, doubt,
