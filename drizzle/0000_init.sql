@@ -104,6 +104,7 @@ CREATE TABLE "shop_settings" (
 	"estimate_valid_days" integer DEFAULT 30 NOT NULL,
 	"bench_check_hours" integer DEFAULT 8 NOT NULL,
 	"nominal_pressure_inh2o" integer DEFAULT 28 NOT NULL,
+	"show_flow_estimates" boolean DEFAULT false NOT NULL,
 	"write_off_limit_minor" bigint DEFAULT 100 NOT NULL,
 	"workweek_start_day" integer DEFAULT 1 NOT NULL,
 	"invoice_words" text DEFAULT '' NOT NULL,
@@ -830,6 +831,8 @@ CREATE TABLE "camshafts" (
 	"duration_deg" double precision,
 	"profile" jsonb DEFAULT '[]'::jsonb NOT NULL,
 	"data_source" text DEFAULT '' NOT NULL,
+	"active" boolean DEFAULT true NOT NULL,
+	"version" bigint DEFAULT 1 NOT NULL,
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "camshafts_shop_id_id_pk" PRIMARY KEY("shop_id","id"),
 	CONSTRAINT "camshafts_label" UNIQUE("shop_id","label","side")
@@ -843,6 +846,8 @@ CREATE TABLE "check_plates" (
 	"at_pressure_inh2o" double precision NOT NULL,
 	"certificate" text DEFAULT '' NOT NULL,
 	"due_on" date,
+	"active" boolean DEFAULT true NOT NULL,
+	"version" bigint DEFAULT 1 NOT NULL,
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "check_plates_shop_id_id_pk" PRIMARY KEY("shop_id","id"),
 	CONSTRAINT "check_plates_serial" UNIQUE("shop_id","serial")
@@ -874,6 +879,7 @@ CREATE TABLE "fixtures" (
 	"head_pattern" text DEFAULT '' NOT NULL,
 	"plate" text DEFAULT '' NOT NULL,
 	"active" boolean DEFAULT true NOT NULL,
+	"version" bigint DEFAULT 1 NOT NULL,
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "fixtures_shop_id_id_pk" PRIMARY KEY("shop_id","id"),
 	CONSTRAINT "fixtures_name" UNIQUE("shop_id","name")
@@ -923,6 +929,27 @@ CREATE TABLE "flow_readings" (
 	CONSTRAINT "flow_readings_cell" UNIQUE("shop_id","test_id","lift_um","repeat_no","revision")
 );
 --> statement-breakpoint
+CREATE TABLE "flow_test_summaries" (
+	"shop_id" uuid NOT NULL,
+	"test_id" uuid NOT NULL,
+	"head_id" uuid NOT NULL,
+	"family" text NOT NULL,
+	"side" text NOT NULL,
+	"purpose" text NOT NULL,
+	"started_at" timestamp with time zone NOT NULL,
+	"at_inh2o" double precision NOT NULL,
+	"lifts_um" integer[] NOT NULL,
+	"flows_cfm" double precision[] NOT NULL,
+	"peak_cfm" double precision,
+	"peak_lift_um" integer,
+	"mean_to_cam_cfm" double precision,
+	"doubts" integer DEFAULT 0 NOT NULL,
+	"is_converted" boolean DEFAULT false NOT NULL,
+	"constants_version" integer NOT NULL,
+	"made_at" timestamp with time zone NOT NULL,
+	CONSTRAINT "flow_test_summaries_shop_id_test_id_pk" PRIMARY KEY("shop_id","test_id")
+);
+--> statement-breakpoint
 CREATE TABLE "flow_tests" (
 	"shop_id" uuid NOT NULL,
 	"id" uuid NOT NULL,
@@ -939,6 +966,8 @@ CREATE TABLE "flow_tests" (
 	"camshaft_id" uuid,
 	"cam_lift_um" integer,
 	"nominal_pressure_inh2o" double precision NOT NULL,
+	"lifts" jsonb DEFAULT '[]'::jsonb NOT NULL,
+	"lift_unit" text DEFAULT 'in' NOT NULL,
 	"entry" text DEFAULT 'radius' NOT NULL,
 	"valves_open" text DEFAULT 'all' NOT NULL,
 	"valve_mm" double precision,
@@ -991,6 +1020,8 @@ CREATE TABLE "lift_devices" (
 	"name" text NOT NULL,
 	"resolution_mm" double precision NOT NULL,
 	"uncertainty_mm" double precision,
+	"active" boolean DEFAULT true NOT NULL,
+	"version" bigint DEFAULT 1 NOT NULL,
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "lift_devices_shop_id_id_pk" PRIMARY KEY("shop_id","id"),
 	CONSTRAINT "lift_devices_name" UNIQUE("shop_id","name")
@@ -1310,6 +1341,7 @@ ALTER TABLE "engine_families" ADD CONSTRAINT "engine_families_shop_id_shops_id_f
 ALTER TABLE "fixtures" ADD CONSTRAINT "fixtures_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_comparisons" ADD CONSTRAINT "flow_comparisons_shop_id_head_id_heads_shop_id_id_fk" FOREIGN KEY ("shop_id","head_id") REFERENCES "public"."heads"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_readings" ADD CONSTRAINT "flow_readings_shop_id_test_id_flow_tests_shop_id_id_fk" FOREIGN KEY ("shop_id","test_id") REFERENCES "public"."flow_tests"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
+ALTER TABLE "flow_test_summaries" ADD CONSTRAINT "flow_test_summaries_shop_id_test_id_flow_tests_shop_id_id_fk" FOREIGN KEY ("shop_id","test_id") REFERENCES "public"."flow_tests"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_tests" ADD CONSTRAINT "flow_tests_shop_id_head_id_heads_shop_id_id_fk" FOREIGN KEY ("shop_id","head_id") REFERENCES "public"."heads"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_tests" ADD CONSTRAINT "flow_tests_shop_id_bench_id_benches_shop_id_id_fk" FOREIGN KEY ("shop_id","bench_id") REFERENCES "public"."benches"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_tests" ADD CONSTRAINT "flow_tests_shop_id_fixture_id_fixtures_shop_id_id_fk" FOREIGN KEY ("shop_id","fixture_id") REFERENCES "public"."fixtures"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
@@ -1362,8 +1394,12 @@ CREATE UNIQUE INDEX "time_one_open" ON "time_entries" USING btree ("shop_id","pe
 CREATE INDEX "time_entries_operation" ON "time_entries" USING btree ("shop_id","operation_id");--> statement-breakpoint
 CREATE INDEX "time_entries_started" ON "time_entries" USING btree ("shop_id","started_at");--> statement-breakpoint
 CREATE INDEX "bench_checks_at" ON "bench_checks" USING btree ("shop_id","bench_id","at");--> statement-breakpoint
+CREATE INDEX "flow_test_summaries_family" ON "flow_test_summaries" USING btree ("shop_id","family","side","started_at");--> statement-breakpoint
+CREATE INDEX "flow_test_summaries_best" ON "flow_test_summaries" USING btree ("shop_id","family","side","mean_to_cam_cfm");--> statement-breakpoint
+CREATE INDEX "flow_test_summaries_head" ON "flow_test_summaries" USING btree ("shop_id","head_id");--> statement-breakpoint
 CREATE INDEX "flow_tests_head" ON "flow_tests" USING btree ("shop_id","head_id","side");--> statement-breakpoint
-CREATE INDEX "flow_tests_started" ON "flow_tests" USING btree ("shop_id","started_at");--> statement-breakpoint
+CREATE INDEX "flow_tests_started" ON "flow_tests" USING btree ("shop_id","started_at","id");--> statement-breakpoint
+CREATE INDEX "flow_tests_corrects" ON "flow_tests" USING btree ("shop_id","corrects_test_id") WHERE corrects_test_id is not null;--> statement-breakpoint
 CREATE UNIQUE INDEX "heads_piece" ON "heads" USING btree ("shop_id","piece_id") WHERE piece_id is not null;--> statement-breakpoint
 CREATE INDEX "heads_family" ON "heads" USING btree ("shop_id","family");--> statement-breakpoint
 CREATE INDEX "journal_entries_date" ON "journal_entries" USING btree ("shop_id","date");--> statement-breakpoint

@@ -33,6 +33,8 @@ export const checkPlates = pgTable("check_plates", {
   atPressureInH2O: doublePrecision("at_pressure_inh2o").notNull(),
   certificate: text("certificate").notNull().default(""),
   dueOn: businessDate("due_on"),
+  active: boolean("active").notNull().default(true),
+  version: version(),
   createdAt: createdAt(),
 }, (t) => [primaryKey({ columns: [t.shopId, t.id] }), unique("check_plates_serial").on(t.shopId, t.serial)]);
 
@@ -65,6 +67,7 @@ export const fixtures = pgTable("fixtures", {
   headPattern: text("head_pattern").notNull().default(""),
   plate: text("plate").notNull().default(""),
   active: boolean("active").notNull().default(true),
+  version: version(),
   createdAt: createdAt(),
 }, (t) => [primaryKey({ columns: [t.shopId, t.id] }), unique("fixtures_name").on(t.shopId, t.name)]);
 
@@ -74,6 +77,8 @@ export const liftDevices = pgTable("lift_devices", {
   name: text("name").notNull(),
   resolutionMm: doublePrecision("resolution_mm").notNull(),
   uncertaintyMm: doublePrecision("uncertainty_mm"),
+  active: boolean("active").notNull().default(true),
+  version: version(),
   createdAt: createdAt(),
 }, (t) => [primaryKey({ columns: [t.shopId, t.id] }), unique("lift_devices_name").on(t.shopId, t.name)]);
 
@@ -87,6 +92,8 @@ export const camshafts = pgTable("camshafts", {
   /** [{ angleDeg, liftUm }]; empty when only lift and duration are known */
   profile: jsonb("profile").notNull().default(sql`'[]'::jsonb`),
   dataSource: text("data_source").notNull().default(""),
+  active: boolean("active").notNull().default(true),
+  version: version(),
   createdAt: createdAt(),
 }, (t) => [primaryKey({ columns: [t.shopId, t.id] }), unique("camshafts_label").on(t.shopId, t.label, t.side)]);
 
@@ -152,6 +159,9 @@ export const flowTests = pgTable("flow_tests", {
   camshaftId: uuid("camshaft_id"),
   camLiftUm: integer("cam_lift_um"),
   nominalPressureInH2O: doublePrecision("nominal_pressure_inh2o").notNull(),
+  /** The ladder the test was planned for, read yet or not: [{ liftUm, text }]. */
+  lifts: jsonb("lifts").$type<{ liftUm: number; text: string }[]>().notNull().default(sql`'[]'::jsonb`),
+  liftUnit: text("lift_unit").notNull().default("in"),
   entry: text("entry").notNull().default("radius"),
   valvesOpen: text("valves_open").notNull().default("all"),
   valveMm: doublePrecision("valve_mm"),
@@ -181,7 +191,41 @@ export const flowTests = pgTable("flow_tests", {
   foreignKey({ columns: [t.shopId, t.fixtureId], foreignColumns: [fixtures.shopId, fixtures.id] }),
   foreignKey({ columns: [t.shopId, t.operatorId], foreignColumns: [people.shopId, people.id] }),
   index("flow_tests_head").on(t.shopId, t.headId, t.side),
-  index("flow_tests_started").on(t.shopId, t.startedAt),
+  index("flow_tests_started").on(t.shopId, t.startedAt, t.id),
+  index("flow_tests_corrects").on(t.shopId, t.correctsTestId).where(sql`corrects_test_id is not null`),
+]);
+
+/**
+ * Figures of a completed test, kept so that the library answers from one row a test. Made from the raw readings by the code
+ * named in `constants_version`; it can be thrown away and made again at any time.
+ */
+export const flowTestSummaries = pgTable("flow_test_summaries", {
+  shopId: shopId(),
+  testId: uuid("test_id").notNull(),
+  headId: uuid("head_id").notNull(),
+  /** Of the head when this was made; a head that changes family is summarised again. */
+  family: text("family").notNull(),
+  side: text("side").notNull(),
+  purpose: text("purpose").notNull(),
+  startedAt: instant("started_at").notNull(),
+  atInH2O: doublePrecision("at_inh2o").notNull(),
+  /** Lifts increasing, and the mean flow of the repeats at each, same order. */
+  liftsUm: integer("lifts_um").array().notNull(),
+  flowsCfm: doublePrecision("flows_cfm").array().notNull(),
+  peakCfm: doublePrecision("peak_cfm"),
+  peakLiftUm: integer("peak_lift_um"),
+  /** Mean over the lift from zero to cam lift; null when no cam lift is recorded or it was not reached. */
+  meanToCamCfm: doublePrecision("mean_to_cam_cfm"),
+  doubts: integer("doubts").notNull().default(0),
+  isConverted: boolean("is_converted").notNull().default(false),
+  constantsVersion: integer("constants_version").notNull(),
+  madeAt: instant("made_at").notNull(),
+}, (t) => [
+  primaryKey({ columns: [t.shopId, t.testId] }),
+  foreignKey({ columns: [t.shopId, t.testId], foreignColumns: [flowTests.shopId, flowTests.id] }),
+  index("flow_test_summaries_family").on(t.shopId, t.family, t.side, t.startedAt),
+  index("flow_test_summaries_best").on(t.shopId, t.family, t.side, t.meanToCamCfm),
+  index("flow_test_summaries_head").on(t.shopId, t.headId),
 ]);
 
 /** The raw reading, for ever as typed. An edit inserts the next version of the cell. */

@@ -39,6 +39,8 @@ export const shopSettings = pgTable("shop_settings", {
   estimateValidDays: integer("estimate_valid_days").notNull().default(30),
   benchCheckHours: integer("bench_check_hours").notNull().default(8),
   nominalPressureInH2O: integer("nominal_pressure_inh2o").notNull().default(28),
+  /** Engine speed and power estimates beside the curve of a head; never on an invoice. */
+  showFlowEstimates: boolean("show_flow_estimates").notNull().default(false),
   writeOffLimitMinor: minorUnits("write_off_limit_minor").notNull().default(100),
   workweekStartDay: integer("workweek_start_day").notNull().default(1),
   invoiceWords: text("invoice_words").notNull().default(""),
