@@ -4,6 +4,7 @@ import { env } from "@/modules/access/env";
 import { logFault } from "@/modules/access/fault";
 import { handlers } from "./handlers";
 import { leaseJob, runJob } from "./queue";
+import { runDue } from "./schedule";
 
 env();
 let stopping = false;
@@ -14,7 +15,10 @@ while (!stopping) {
   try {
     const job = await leaseJob();
     if (job) await runJob(job, handlers);
-    else await sleep(400);
+    else {
+      await runDue(Date.now());
+      await sleep(400);
+    }
   } catch (error) {
     logFault("worker", error);
     await sleep(1000);

@@ -127,7 +127,7 @@ export function lineTable(columns: readonly PaperColumn[], rows: readonly (reado
       vLineWidth: () => 0,
       hLineColor: (i: number) => (i === 1 ? PAPER_INK.ink : PAPER_INK.line),
       paddingLeft: (i: number) => (i === 0 ? 0 : 6), paddingRight: (i: number, node: { table: { widths?: unknown } }) => (Array.isArray(node.table.widths) && i === node.table.widths.length - 1 ? 0 : 6),
-      paddingTop: (i: number) => (i === 0 ? 0 : 4.6), paddingBottom: (i: number) => (i === 0 ? 5 : 4.4),
+      paddingTop: (i: number) => (i === 0 ? 0 : 3.9), paddingBottom: (i: number) => (i === 0 ? 4.6 : 3.4),
     },
     margin: [0, 18, 0, 0],
     ...more,

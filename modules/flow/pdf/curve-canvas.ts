@@ -1,0 +1,71 @@
+import type { CanvasElement, Content } from "pdfmake/interfaces";
+import { FACE, PAPER_INK } from "@/modules/documents/paper";
+import type { CurveGeometry } from "../domain/curve-geometry";
+import type { Segment } from "../domain/path-segments";
+
+/** Points on each cubic: at print size the chords are shorter than the line is thick. */
+const STEPS = 14;
+
+/** A drawing as points, one list for each sub-path. Cubics are sampled. */
+export function pointsOf(segments: readonly Segment[]): { x: number; y: number }[][] {
+  const paths: { x: number; y: number }[][] = [];
+  for (const s of segments) {
+    if (s.kind === "close") continue;
+    if (s.kind === "move") {
+      paths.push([{ x: s.x, y: s.y }]);
+      continue;
+    }
+    const path = paths.at(-1);
+    const from = path?.at(-1);
+    if (!path || !from) continue;
+    if (s.kind === "line") path.push({ x: s.x, y: s.y });
+    else {
+      for (let i = 1; i <= STEPS; i++) {
+        const t = i / STEPS;
+        const u = 1 - t;
+        const mix = (a: number, b: number, c: number, d: number) => u * u * u * a + 3 * u * u * t * b + 3 * u * t * t * c + t * t * t * d;
+        path.push({ x: mix(from.x, s.x1, s.x2, s.x), y: mix(from.y, s.y1, s.y2, s.y) });
+      }
+    }
+  }
+  return paths;
+}
+
+const AREA: Record<string, string> = { "intake-gain": PAPER_INK.fluid, "exhaust-gain": "#EEF68C" };
+
+/**
+ * A flow curve as vectors and words for a paper, one pixel of the geometry to the point. Gains are filled; a loss is left
+ * white and marked by its figure in the table. Everything is placed from the drawing's top left.
+ */
+export function curveContent(g: CurveGeometry): Content[] {
+  const drawn: CanvasElement[] = [];
+  const line = (x1: number, y1: number, x2: number, y2: number, lineWidth: number, lineColor: string): CanvasElement => ({ type: "line", x1, y1, x2, y2, lineWidth, lineColor });
+  for (const area of g.areas) {
+    if (area.kind !== "gain") continue;
+    for (const points of pointsOf(area.segments)) drawn.push({ type: "polyline", points, closePath: true, color: AREA[`${area.side}-gain`] ?? PAPER_INK.fluid, lineWidth: 0 });
+  }
+  for (const t of g.flowTicks) if (t.flowCfm > 0) drawn.push(line(g.plot.left, t.y, g.plot.right, t.y, 0.5, PAPER_INK.line));
+  for (const l of g.lines) {
+    for (const points of pointsOf(l.segments)) {
+      drawn.push({ type: "polyline", points, lineWidth: l.when === "after" ? 1.7 : 0.9, lineColor: l.when === "after" ? PAPER_INK.ink : PAPER_INK.edge, lineJoin: "round", ...(l.isDashed ? { dash: { length: l.when === "after" ? 4 : 3, space: 2.4 } } : {}) });
+    }
+  }
+  for (const p of g.points) {
+    if (p.when !== "after") continue;
+    drawn.push({ type: "ellipse", x: p.x, y: p.y, r1: 1.9, r2: 1.9, color: p.isFilled ? PAPER_INK.ink : "#FFFFFF", lineColor: PAPER_INK.ink, lineWidth: 0.9 });
+  }
+  if (g.cam) drawn.push({ type: "line", x1: g.cam.x, y1: g.cam.top, x2: g.cam.x, y2: g.cam.bottom, lineWidth: 0.8, lineColor: PAPER_INK.ink, dash: { length: 1, space: 2 } });
+  drawn.push(line(g.plot.left, g.plot.top, g.plot.left, g.plot.bottom, 0.9, PAPER_INK.ink), line(g.plot.left, g.plot.bottom, g.plot.right, g.plot.bottom, 0.9, PAPER_INK.ink));
+  for (const t of g.liftTicks) drawn.push(line(t.x, g.plot.bottom, t.x, g.plot.bottom + (t.isLong ? 5.5 : 3), 0.7, PAPER_INK.ink));
+
+  const word = (text: string, x: number, y: number, more: object = {}): Content => ({ text, fontSize: 7.6, font: FACE.table, relativePosition: { x, y }, ...more } as Content);
+  const boxed = (text: string, x: number, y: number, width: number, alignment: "right" | "center"): Content =>
+    ({ columns: [{ text, width, alignment, fontSize: 7.6, font: FACE.table, color: PAPER_INK.soft }], relativePosition: { x, y } } as Content);
+  return [
+    ...g.flowTicks.map((t) => boxed(t.text, g.plot.left - 34, t.y - 4.6, 28, "right")),
+    ...g.liftTicks.flatMap((t) => (t.text ? [boxed(t.text, t.x - 20, g.plot.bottom + 7, 40, "center")] : [])),
+    ...g.labels.flatMap((l) => l.lines.map((text, i) => word(text, l.x, l.y - 8 + i * 9.4, i === 0 ? { bold: true } : { color: PAPER_INK.soft }))),
+    ...(g.cam ? [boxed(g.cam.text, Math.min(g.cam.x - 40, g.widthPx - 80), g.cam.top - 10, 80, "center")] : []),
+    { canvas: [...drawn, { type: "rect", x: 0, y: 0, w: g.widthPx, h: g.heightPx, lineWidth: 0, lineColor: "#FFFFFF", fillOpacity: 0 }] },
+  ];
+}
