@@ -11,6 +11,7 @@ export const FLOW_FLAGS = {
   LEAK_SCALED: "Leak was read at another pressure and scaled.",
   LEAK_HIGH: "Leak is over 5 % of the reading. Seal the fixture.",
   CALIBRATION_DRIFT: "Bench factor moved by more than 1 % since the last check.",
+  CHECK_PLATE_OVERDUE: "A check plate was past its due date.",
   CHOKED: "Flow is choked: it is at the speed of sound.",
   CD_UNUSUAL: "Discharge coefficient outside 0.30 to 0.80. Check diameter, lift and units.",
   CD_ABOVE_ONE: "Discharge coefficient above 1 is impossible. Check diameter, lift, leak and units.",
