@@ -224,5 +224,4 @@ export const findOrdersInput = z.strictObject({
   limit: z.coerce.number<string | number>().int().min(1).max(100).default(50),
 });
 export const findInput = z.strictObject({ q: z.string().trim().max(100).default("") });
-export const findMenuInput = z.strictObject({ q: z.string().trim().max(60).default("") });
 export const noInput = z.strictObject({});

@@ -45,7 +45,7 @@ export async function heroParts(shop: TestShop): Promise<Record<string, string>>
         await tx.insert(stockMovements).values({ shopId, id: randomUUID(), partId: id, qtyMilli: p.opening * 1000, valueMinor: cents(p.unitCost) * p.opening, kind: "opening", at: new Date("2026-01-02T00:00:00Z") });
       }
     }
-    await add(HERO_EPOXY.sku, HERO_EPOXY.description, HERO_EPOXY.sale, { partClass: "epoxy", stockUnit: "g", lotTracked: true });
+    await add(HERO_EPOXY.sku, HERO_EPOXY.description, HERO_EPOXY.sale, { partClass: "epoxy", stockUnit: "gram", lotTracked: true });
     const kit = await add(HERO_KIT.sku, HERO_KIT.description, HERO_KIT.sale, { partClass: "kit", isKit: true });
     for (const [sku, n] of HERO_KIT.contents) await tx.insert(kitLines).values({ shopId, kitPartId: kit, partId: ids[sku] ?? "", qtyMilli: n * 1000 });
   });

@@ -45,9 +45,12 @@ export async function putToWork(ctx: TxContext, workOrderId: string, estimateId:
 async function withKitsOpened(ctx: TxContext, needs: readonly NeededPart[]): Promise<NeededPart[]> {
   const ids = [...new Set(needs.map((n) => n.partId))];
   if (ids.length === 0) return [];
-  const kits = new Set((await ctx.tx.select({ id: parts.id }).from(parts).where(and(eq(parts.shopId, ctx.shop.id), inArray(parts.id, ids), eq(parts.isKit, true)))).map((p) => p.id));
+  const known = await ctx.tx.select({ id: parts.id, isKit: parts.isKit, partClass: parts.partClass }).from(parts).where(and(eq(parts.shopId, ctx.shop.id), inArray(parts.id, ids)));
+  const kits = new Set(known.filter((p) => p.isKit).map((p) => p.id));
+  // Epoxy is sold by the fill and used by the gram: what it takes is known when it is mixed, and becomes a need then.
+  const byUse = new Set(known.filter((p) => p.partClass === "epoxy").map((p) => p.id));
   const inside = kits.size === 0 ? [] : await ctx.tx.select().from(kitLines).where(and(eq(kitLines.shopId, ctx.shop.id), inArray(kitLines.kitPartId, [...kits])));
-  return needs.flatMap((n) => (kits.has(n.partId)
+  return needs.filter((n) => !byUse.has(n.partId)).flatMap((n) => (kits.has(n.partId)
     ? inside.filter((k) => k.kitPartId === n.partId).map((k) => ({ ...n, partId: k.partId, neededMilli: Math.round((k.qtyMilli * n.neededMilli) / 1000) }))
     : [n]));
 }

@@ -9,7 +9,7 @@ import { longDay } from "@/modules/kernel/format";
 import { localDate } from "@/modules/kernel/instant";
 import { ok, refuse } from "@/modules/kernel/result";
 import { cancelOrderInput, changeOrderInput, promiseInput } from "../input";
-import { reserveForWorkOrder } from "../reserve";
+import { releaseReservations } from "../reserve";
 
 /** Words, use and reference of an order. */
 export const changeOrder = defineCommand({
@@ -67,8 +67,7 @@ export const cancelOrder = defineCommand({
       .where(and(eq(workOrders.shopId, ctx.shop.id), eq(workOrders.id, input.workOrderId), eq(workOrders.version, input.version), isNull(workOrders.closedAt), isNull(workOrders.cancelledAt)))
       .returning({ version: workOrders.version });
     if (!row) return changedMeanwhile("This order");
-    await ctx.tx.update(workOrderParts).set({ removedAt: ctx.now }).where(and(eq(workOrderParts.shopId, ctx.shop.id), eq(workOrderParts.workOrderId, input.workOrderId), isNull(workOrderParts.removedAt)));
-    await reserveForWorkOrder(ctx, input.workOrderId);
+    await releaseReservations(ctx, input.workOrderId);
     return ok({ version: row.version });
   },
   subject: (input) => ({ kind: "work-order", id: input.workOrderId }),

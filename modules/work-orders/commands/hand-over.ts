@@ -15,6 +15,7 @@ import { ok, refuse, type Result } from "@/modules/kernel/result";
 import { owedBeforeLeaving } from "../domain/may-leave";
 import { handOverInput, shipInput } from "../input";
 import { moneyOfOrder } from "../queries/order-money";
+import { releaseReservations } from "../reserve";
 
 interface Leaving {
   order: { id: string; number: string; customerId: string };
@@ -53,7 +54,9 @@ async function markGone(ctx: TxContext, leaving: Leaving, to: string): Promise<v
   await tx.update(workPieces).set({ handedOverAt: ctx.now, handedOverTo: to, place: "", version: sql`${workPieces.version} + 1` })
     .where(and(eq(workPieces.shopId, shop.id), inArray(workPieces.id, leaving.pieces.map((p) => p.id))));
   const [still] = await tx.select({ id: workPieces.id }).from(workPieces).where(and(eq(workPieces.shopId, shop.id), eq(workPieces.workOrderId, leaving.order.id), isNull(workPieces.handedOverAt))).limit(1);
-  if (!still) await tx.update(workOrders).set({ closedAt: ctx.now, version: sql`${workOrders.version} + 1` }).where(and(eq(workOrders.shopId, shop.id), eq(workOrders.id, leaving.order.id)));
+  if (still) return;
+  await tx.update(workOrders).set({ closedAt: ctx.now, version: sql`${workOrders.version} + 1` }).where(and(eq(workOrders.shopId, shop.id), eq(workOrders.id, leaving.order.id)));
+  await releaseReservations(ctx, leaving.order.id);
 }
 
 /** Fetched at the counter: who took it, when. The order closes with its last piece. */
