@@ -1,6 +1,6 @@
 import "server-only";
 import { randomUUID } from "node:crypto";
-import { and, desc, eq, inArray } from "drizzle-orm";
+import { and, desc, eq, inArray, lte } from "drizzle-orm";
 import { benchChecks, benches, checkPlates, engineFamilies, fixtures } from "@/db/schema";
 import { defineCommand } from "@/modules/access/command";
 import { personIdOf, type TxContext } from "@/modules/access/context";
@@ -12,10 +12,10 @@ import { typedNumber } from "../domain/typed-number";
 import type { ValveOfFamily } from "../domain/valve-list";
 import { addBenchInput, addFamilyInput, addFixtureInput, benchCheckInput } from "../input";
 
-/** The newest check of a bench: its factor and when it was made. */
+/** The newest check of a bench up to now: its factor and when it was made. */
 export async function latestCheck(ctx: TxContext, benchId: string): Promise<{ at: Date; factor: number } | null> {
   const [row] = await ctx.tx.select({ at: benchChecks.at, factor: benchChecks.factor }).from(benchChecks)
-    .where(and(eq(benchChecks.shopId, ctx.shop.id), eq(benchChecks.benchId, benchId))).orderBy(desc(benchChecks.at)).limit(1);
+    .where(and(eq(benchChecks.shopId, ctx.shop.id), eq(benchChecks.benchId, benchId), lte(benchChecks.at, ctx.now))).orderBy(desc(benchChecks.at)).limit(1);
   return row ?? null;
 }
 

@@ -1,4 +1,5 @@
 import * as customers from "@/modules/customers/endpoints";
+import * as flow from "@/modules/flow/endpoints";
 
 /** Every address of the API, for its document. A test holds this list against the route files. */
-export const ENDPOINTS = [customers].flatMap((module) => Object.values(module));
+export const ENDPOINTS = [customers, flow].flatMap((module) => Object.values(module));

@@ -1,0 +1,58 @@
+import "server-only";
+import { and, eq, sql } from "drizzle-orm";
+import { flowTests } from "@/db/schema";
+import { changedMeanwhile, defineCommand } from "@/modules/access/command";
+import type { TxContext } from "@/modules/access/context";
+import { ok, refuse, type Result } from "@/modules/kernel/result";
+import type { LiftUnit } from "../domain/lift-ladder";
+import { addLiftInput, changeTestInput } from "../input";
+import { conditionColumns, fixtureHere, plannedLifts } from "./start-test";
+
+export type TestRow = typeof flowTests.$inferSelect;
+
+/** The test, locked, if it is a draft of the version that was looked at. `version` left out: any. */
+export async function draftTest(ctx: TxContext, testId: string, version?: number): Promise<Result<TestRow>> {
+  const [test] = await ctx.tx.select().from(flowTests).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId))).for("update");
+  if (!test) return refuse("NOT_FOUND", "This test is not here.");
+  if (test.state === "complete") return refuse("TEST_FINISHED", "This test is finished and stays as it is. Correct it with a new one.");
+  if (test.state === "void") return refuse("TEST_VOID", "This test is void. Start a new one.");
+  if (version !== undefined && test.version !== version) return changedMeanwhile("This test");
+  return ok(test);
+}
+
+/** Conditions of a draft. The bench stays: another bench is another test. */
+export const changeTestConditions = defineCommand({
+  name: "flow.change-conditions",
+  act: "flow.record",
+  input: changeTestInput,
+  async run(ctx, { testId, version, ...input }) {
+    const test = await draftTest(ctx, testId, version);
+    if (!test.ok) return test;
+    if (!(await fixtureHere(ctx, input.fixtureId))) return refuse("NOT_FOUND", "This fixture is not here.", { field: "fixtureId" });
+    const columns = conditionColumns(input, test.value.liftUnit as LiftUnit);
+    if (!columns.ok) return columns;
+    await ctx.tx.update(flowTests).set({ ...columns.value, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId)));
+    return ok({ testId, version: version + 1 });
+  },
+  subject: (input) => ({ kind: "flow-test", id: input.testId }),
+});
+
+/** One more lift on the ladder of a draft. */
+export const addLift = defineCommand({
+  name: "flow.add-lift",
+  act: "flow.record",
+  input: addLiftInput,
+  async run(ctx, { testId, version, lift, reason }) {
+    const test = await draftTest(ctx, testId, version);
+    if (!test.ok) return test;
+    const added = plannedLifts([lift], test.value.liftUnit as LiftUnit, reason);
+    if (!added.ok) return refuse(added.refusal.code, added.refusal.message, { field: "lift" });
+    if (added.value.some((l) => test.value.lifts.some((o) => o.liftUm === l.liftUm))) return refuse("LIFT_THERE", "That lift is on the sheet already.", { field: "lift" });
+    const lifts = [...test.value.lifts, ...added.value].sort((a, b) => a.liftUm - b.liftUm);
+    const all = plannedLifts(lifts.map((l) => l.text), test.value.liftUnit as LiftUnit, reason);
+    if (!all.ok) return refuse(all.refusal.code, all.refusal.message, { field: "lift" });
+    await ctx.tx.update(flowTests).set({ lifts, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId)));
+    return ok({ testId, version: version + 1 });
+  },
+  subject: (input) => ({ kind: "flow-test", id: input.testId }),
+});

@@ -1,0 +1,81 @@
+import { ok, refuse, type Result } from "@/modules/kernel/result";
+import type { FlowFlag } from "./flow-flags";
+import { refuseFlow } from "./flow-refusal";
+import { subtractLeak } from "./leak";
+import type { BenchRange, BenchScale, HeldUnit, ValueUnit, WaterUnit } from "./raw-test";
+import { flowFromDirect, flowFromOrificeHead, flowFromRangePercent, type FlaggedFlow } from "./reading-to-flow";
+import { sanityFlagsOfReading } from "./sanity-flags";
+import { correctToPressure } from "./test-pressure";
+import { typedNumber } from "./typed-number";
+import { convertUnit } from "./units";
+
+/** What a raw reading is turned into flow by. */
+export interface ReadingRules {
+  readonly scale: BenchScale;
+  readonly ranges: readonly BenchRange[];
+  readonly waterUnit: WaterUnit;
+  readonly benchFactor: number;
+  readonly nominalInH2O: number;
+  /** Leak of the closed head as the bench showed it, cfm, and the pressure it was read at; null = not measured. */
+  readonly leak: { readonly indicatedCfm: number; readonly atInH2O: number } | null;
+}
+export interface TypedReading {
+  readonly valueText: string;
+  readonly valueUnit: ValueUnit;
+  readonly rangeLabel: string | null;
+  readonly pressureText: string;
+  readonly pressureUnit: HeldUnit;
+}
+
+/** Unit of a bare number on each scale. */
+export const SCALE_UNIT: Readonly<Record<BenchScale, ValueUnit>> = { direct: "cfm", percent_linear: "percent", orifice_head: "head" };
+
+/** Held pressure in inches of water of the bench's own definition. Errors: NUMBER_NOT_FINITE, PRESSURE_NOT_POSITIVE. */
+export function heldInH2O(text: string, unit: HeldUnit, waterUnit: WaterUnit): Result<number> {
+  const typed = typedNumber(text, "pressure");
+  if (!typed.ok) return typed;
+  if (typed.value <= 0) return refuseFlow("PRESSURE_NOT_POSITIVE", "pressure");
+  return unit === "inH2O" ? typed : convertUnit(typed.value, unit, `inH2O_${waterUnit}`);
+}
+
+function onScale(rules: ReadingRules, typed: TypedReading): Result<FlaggedFlow & { percent?: number }> {
+  const value = typedNumber(typed.valueText);
+  if (!value.ok) return value;
+  const { benchFactor } = rules;
+  if (typed.valueUnit === "percent" || typed.valueUnit === "head") {
+    const range = rules.ranges.find((r) => r.label === typed.rangeLabel) ?? (rules.ranges.length === 1 ? rules.ranges[0] : undefined);
+    if (!range) return refuse("READING_OUT_OF_RANGE", "Choose the range it was read on.", { field: "range" });
+    if (typed.valueUnit === "percent") return flowFromRangePercent({ rangeCfm: range.fullScaleCfm, percent: value.value, benchFactor });
+    if (range.fullScaleHead === undefined) return refuse("READING_OUT_OF_RANGE", "This range has no head at full scale. Choose another, or complete the bench's ranges.", { field: "range" });
+    return flowFromOrificeHead({ rangeCfm: range.fullScaleCfm, head: value.value, fullScaleHead: range.fullScaleHead, benchFactor });
+  }
+  const cfm = typed.valueUnit === "cfm" ? value : convertUnit(value.value, typed.valueUnit, "ft3/min");
+  return cfm.ok ? flowFromDirect({ valueCfm: cfm.value, benchFactor }) : cfm;
+}
+
+/**
+ * Raw reading to the flow it stands for, cfm at the nominal pressure: scale and bench factor, then less the leak at the held
+ * pressure, then to the nominal pressure. A leak read at another pressure is scaled and flagged.
+ * Source: each step names its own. Errors: those of the steps; the raw text stays whatever comes out.
+ */
+export function computedReading(rules: ReadingRules, typed: TypedReading): Result<FlaggedFlow> {
+  const held = heldInH2O(typed.pressureText, typed.pressureUnit, rules.waterUnit);
+  if (!held.ok) return held;
+  const raw = onScale(rules, typed);
+  if (!raw.ok) return raw;
+  const flags: FlowFlag[] = [...raw.value.flags];
+  let flowCfm = raw.value.flowCfm;
+  if (rules.leak && rules.leak.indicatedCfm > 0) {
+    const net = subtractLeak({
+      measuredCfm: flowCfm, leakCfm: rules.leak.indicatedCfm * rules.benchFactor, measuredAtInH2O: held.value, leakAtInH2O: rules.leak.atInH2O, allowScaling: true,
+    });
+    if (!net.ok) return net;
+    flags.push(...net.value.flags);
+    flowCfm = net.value.flowCfm;
+  }
+  const stated = correctToPressure({ flowCfm, fromInH2O: held.value, toInH2O: rules.nominalInH2O });
+  if (!stated.ok) return stated;
+  const doubts = sanityFlagsOfReading({ heldInH2O: held.value, nominalInH2O: rules.nominalInH2O });
+  if (!doubts.ok) return doubts;
+  return ok({ flowCfm: stated.value.flowCfm, flags: [...new Set([...flags, ...stated.value.flags, ...doubts.value])] });
+}

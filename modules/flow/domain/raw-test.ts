@@ -1,0 +1,81 @@
+import type { EntryKind, PortSide } from "./comparison-reasons";
+import type { LiftUnit } from "./lift-ladder";
+
+export type BenchScale = "direct" | "percent_linear" | "orifice_head";
+export type WaterUnit = "conventional" | "39.2F" | "60F";
+export type Purpose = "baseline" | "after" | "interim" | "check";
+export type TestState = "draft" | "complete" | "void";
+export type ValueUnit = "cfm" | "L/s" | "m3/h" | "percent" | "head";
+export type HeldUnit = "inH2O" | "Pa" | "hPa" | "kPa";
+
+export interface BenchRange {
+  readonly label: string;
+  /** Flow at the end of the scale, cfm. */
+  readonly fullScaleCfm: number;
+  /** Head at the end of the scale, in the manometer's own unit; for scales read as a head. */
+  readonly fullScaleHead?: number | undefined;
+}
+
+export interface BenchFacts {
+  readonly id: string;
+  readonly name: string;
+  readonly scale: BenchScale;
+  readonly ranges: readonly BenchRange[];
+  readonly waterUnit: WaterUnit;
+}
+
+/** One cell of a sheet as it was typed: the newest revision of one lift and repeat. Empty text = cleared. */
+export interface RawCell {
+  readonly liftUm: number;
+  readonly repeatNo: number;
+  /** 0 = nothing was ever typed here. */
+  readonly revision: number;
+  readonly valueText: string;
+  readonly valueUnit: ValueUnit;
+  readonly rangeLabel: string | null;
+  readonly pressureText: string;
+  readonly pressureUnit: HeldUnit;
+  readonly acceptedReason: string | null;
+  readonly excludedReason: string | null;
+  readonly takenAt: string;
+}
+
+/** One run over the lifts as kept: conditions and cells as typed, nothing computed. Instants are ISO texts. */
+export interface RawTest {
+  readonly id: string;
+  readonly side: PortSide;
+  readonly purpose: Purpose;
+  readonly runNo: number;
+  readonly state: TestState;
+  readonly version: number;
+  readonly bench: BenchFacts;
+  readonly benchFactor: number;
+  readonly benchCheckedAt: string | null;
+  readonly fixture: { readonly id: string; readonly name: string; readonly boreMm: number };
+  readonly nominalInH2O: number;
+  readonly lifts: readonly { readonly liftUm: number; readonly text: string }[];
+  readonly liftUnit: LiftUnit;
+  readonly camLiftUm: number | null;
+  readonly entry: EntryKind;
+  /** Names of the open valves, comma between; "all" when all of the port. */
+  readonly valvesOpen: string;
+  readonly valveMm: number | null;
+  readonly seatNote: string;
+  readonly plugClosed: boolean;
+  readonly testSprings: boolean;
+  readonly warmUpMinutes: number | null;
+  readonly roomTemperatureText: string;
+  readonly roomPressureText: string;
+  readonly roomHumidityText: string;
+  readonly leakText: string;
+  readonly leakPressureText: string;
+  readonly notes: string;
+  readonly operator: { readonly id: string; readonly name: string };
+  readonly startedAt: string;
+  readonly completedAt: string | null;
+  readonly correctsTestId: string | null;
+  readonly voidReason: string | null;
+  readonly cells: readonly RawCell[];
+}
+
+export const cellKey = (liftUm: number, repeatNo: number): string => `${liftUm}/${repeatNo}`;

@@ -1,0 +1,88 @@
+import type { PortSide } from "./comparison-reasons";
+import type { RawTest } from "./raw-test";
+import type { LiftReading } from "./repeats";
+import type { SideGain } from "./side-gain";
+import type { Standing } from "./standing-tests";
+import { conditionWords } from "./side-gain";
+import { figuresOfTest } from "./test-figures";
+
+/** What stands on every flow paper. */
+export const AIRFLOW_WORDS = "Airflow as measured on our bench, not power. Power depends on cam, compression, fuel, ignition, intake and exhaust; measure it on a dynamometer.";
+
+/** One test as a paper shows it. */
+export interface ReportTest {
+  readonly testId: string;
+  readonly purpose: RawTest["purpose"];
+  readonly runNo: number;
+  readonly operator: string;
+  readonly takenAt: string;
+  readonly bench: string;
+  readonly benchFactor: number;
+  readonly benchCheckedAt: string | null;
+  readonly valveMm: number | null;
+  readonly seatNote: string;
+  readonly room: string;
+  readonly conditions: readonly string[];
+  readonly readings: readonly LiftReading[];
+  /** Most readings at one lift. */
+  readonly repeats: number;
+  readonly isConverted: boolean;
+}
+export interface ReportSide {
+  readonly side: PortSide;
+  readonly before: ReportTest | null;
+  readonly after: ReportTest | null;
+  readonly gain: SideGain;
+}
+/** A comparison as issued: everything its paper needs, so that it can be made again unchanged. */
+export interface ReportSnapshot {
+  readonly kind: 1;
+  readonly shop: { readonly name: string; readonly address: string; readonly phone: string; readonly email: string };
+  readonly locale: string;
+  readonly zone: string;
+  readonly head: { readonly mark: string; readonly family: string; readonly castingNumber: string; readonly orderNumber: string | null; readonly customerName: string | null };
+  readonly cylinder: number;
+  readonly cylinders: number;
+  readonly comparisonNo: number;
+  readonly sides: readonly ReportSide[];
+  readonly notTested: readonly string[];
+  readonly customerWords: string;
+  readonly issuedBy: string;
+  readonly issuedAt: string;
+}
+
+const roomWords = (t: RawTest): string => [t.roomTemperatureText, t.roomPressureText, t.roomHumidityText].filter(Boolean).join(", ");
+
+/** A test for the paper: figures by lift, conditions in words. */
+export function reportTest(test: RawTest): ReportTest {
+  const figures = figuresOfTest(test);
+  return {
+    testId: test.id, purpose: test.purpose, runNo: test.runNo, operator: test.operator.name, takenAt: test.startedAt, bench: test.bench.name, benchFactor: test.benchFactor,
+    benchCheckedAt: test.benchCheckedAt, valveMm: test.valveMm, seatNote: test.seatNote, room: roomWords(test), conditions: conditionWords(test),
+    readings: figures.readings.map(({ liftUm, flowCfm }) => ({ liftUm, flowCfm })), repeats: Math.max(0, ...figures.readings.map((r) => r.count)), isConverted: figures.isConverted,
+  };
+}
+
+const SIDE_WORDS: Readonly<Record<PortSide, string>> = { intake: "Intake", exhaust: "Exhaust" };
+
+/** What the paper says was not tested. @param liftWords lift in micrometres as words. */
+export function notTestedWords(sides: readonly { side: PortSide; standing: Standing; gain: SideGain }[], cylinder: number, cylinders: number, liftWords: (um: number) => string): string[] {
+  const words = sides.flatMap(({ side, standing, gain }) => {
+    const name = SIDE_WORDS[side];
+    const out: string[] = [];
+    if (gain.state === "absent") {
+      out.push(gain.absent === "both" ? `${name}: not tested.` : `${name}: no ${gain.absent} test.`);
+      return out;
+    }
+    for (const [when, test] of [["before", standing.before], ["after", standing.after]] as const) {
+      if (!test) continue;
+      const figures = figuresOfTest(test);
+      const unread = test.lifts.filter((l) => !figures.readings.some((r) => r.liftUm === l.liftUm));
+      if (unread.length > 0) out.push(`${name} ${when}: ${unread.map((l) => liftWords(l.liftUm)).join(", ")} planned, not read.`);
+      if (figures.readings.length > 0 && figures.readings.every((r) => r.count < 2)) out.push(`${name} ${when}: no repeat readings, so differences were not judged against the bench's noise.`);
+    }
+    if (gain.camLiftUm !== null && !(standing.after && figuresOfTest(standing.after).readings.some((r) => r.liftUm >= (gain.camLiftUm ?? 0)))) out.push(`${name}: not read up to cam lift.`);
+    return out;
+  });
+  return [...words, ...(cylinders > 1 ? [`This page is port ${cylinder} of ${cylinders}.`] : []), "Swirl, tumble, wet flow and power were not measured."];
+}

@@ -1,0 +1,93 @@
+import { ok, type Refusal, type Result } from "@/modules/kernel/result";
+import type { PortSide } from "./comparison-reasons";
+import { computedReading, heldInH2O, type ReadingRules } from "./computed-reading";
+import { readingQuestion, type EntryQuestion } from "./entry-questions";
+import type { FlowFlag, LiftFlag } from "./flow-flags";
+import type { RawCell, RawTest } from "./raw-test";
+import { meanOfRepeats, type LiftMean, type LiftReading } from "./repeats";
+import { sanityFlagsOfTest } from "./sanity-flags";
+import type { ReadingSet } from "./shop-comparison";
+import { typedNumber } from "./typed-number";
+
+/** One cell with what comes out of it. No number = refused, and why. */
+export interface ComputedCell extends RawCell {
+  readonly flowCfm: number | null;
+  readonly refusal: Refusal | null;
+  readonly flags: readonly FlowFlag[];
+  readonly question: EntryQuestion | null;
+}
+export interface LiftDoubt {
+  readonly flag: LiftFlag | FlowFlag;
+  /** Null: the whole test. */
+  readonly liftUm: number | null;
+}
+export interface TestFigures {
+  readonly side: PortSide;
+  /** Cells that hold a text, lifts increasing, repeats in order. */
+  readonly cells: readonly ComputedCell[];
+  /** One figure a lift, excluded readings left out. */
+  readonly readings: readonly LiftMean[];
+  readonly doubts: readonly LiftDoubt[];
+  readonly isConverted: boolean;
+}
+
+/** Leak and scale of a test, read from its typed conditions. A leak that cannot be read refuses the whole computation. */
+export function rulesOfTest(test: RawTest): Result<ReadingRules> {
+  const rules = { scale: test.bench.scale, ranges: test.bench.ranges, waterUnit: test.bench.waterUnit, benchFactor: test.benchFactor, nominalInH2O: test.nominalInH2O };
+  if (test.leakText.trim() === "") return ok({ ...rules, leak: null });
+  const leak = typedNumber(test.leakText, "leak");
+  if (!leak.ok) return leak;
+  const at = test.leakPressureText.trim() === "" ? ok(test.nominalInH2O) : heldInH2O(test.leakPressureText, "inH2O", test.bench.waterUnit);
+  return at.ok ? ok({ ...rules, leak: { indicatedCfm: leak.value, atInH2O: at.value } }) : at;
+}
+
+/** Every figure of a test, computed from its raw cells. The same code runs in the browser, on the server and for the paper. */
+export function figuresOfTest(test: RawTest): TestFigures {
+  const rules = rulesOfTest(test);
+  const typed = test.cells.filter((c) => c.valueText.trim() !== "").sort((a, b) => a.liftUm - b.liftUm || a.repeatNo - b.repeatNo);
+  const computed = typed.map((cell) => ({ cell, result: rules.ok ? computedReading(rules.value, cell) : rules }));
+  const flows = computed.flatMap(({ cell, result }): LiftReading[] => (result.ok && cell.excludedReason === null ? [{ liftUm: cell.liftUm, flowCfm: result.value.flowCfm }] : []));
+  const readings = meanOfRepeats(flows);
+  const cells = computed.map(({ cell, result }): ComputedCell => {
+    const asTyped = typedNumber(cell.valueText);
+    // A flow below zero has no figure but still a question.
+    const forQuestion = result.ok ? result.value.flowCfm : asTyped.ok && asTyped.value < 0 ? asTyped.value : null;
+    return {
+      ...cell,
+      flowCfm: result.ok ? result.value.flowCfm : null,
+      refusal: result.ok ? null : result.refusal,
+      flags: result.ok ? result.value.flags : [],
+      question: forQuestion === null ? null : readingQuestion({ liftUm: cell.liftUm, flowCfm: forQuestion }, readings),
+    };
+  });
+  const lifts = readings.map((r) => r.liftUm);
+  const sane = sanityFlagsOfTest({
+    lifts, flowsCfm: readings.map((r) => r.flowCfm),
+    ...(rules.ok && rules.value.leak ? { leakCfm: rules.value.leak.indicatedCfm } : {}),
+    ...(test.camLiftUm === null || test.state === "draft" ? {} : { camMaxLift: test.camLiftUm }),
+  });
+  const doubts = (sane.ok ? sane.value : []).map((flag): LiftDoubt => {
+    const [name = "", at] = flag.split("@");
+    return { flag: name as LiftDoubt["flag"], liftUm: at === undefined ? null : Number(at) };
+  });
+  return { side: test.side, cells, readings, doubts, isConverted: cells.some((c) => c.flags.includes("CONVERTED_PRESSURE")) };
+}
+
+const valvesOf = (text: string): string[] => text.split(",").map((v) => v.trim()).filter(Boolean);
+export const valveWords = (test: Pick<RawTest, "valveMm">): string => (test.valveMm === null ? "not recorded" : `${test.valveMm} mm`);
+export const seatWords = (test: Pick<RawTest, "seatNote">): string => test.seatNote.trim() || "not recorded";
+
+/** A test as one side of a comparison: its conditions and one figure a lift. */
+export function readingSetOf(test: RawTest, figures: TestFigures = figuresOfTest(test)): ReadingSet {
+  return {
+    conditions: {
+      side: test.side, benchId: test.bench.id, benchName: test.bench.name,
+      fixtureId: test.fixture.id, fixtureName: test.fixture.name, fixtureBoreMm: test.fixture.boreMm,
+      nominalInH2O: test.nominalInH2O, isConverted: figures.isConverted, entry: test.entry, valvesOpen: valvesOf(test.valvesOpen),
+      liftsUm: [...new Set([...test.lifts.map((l) => l.liftUm), ...figures.readings.map((r) => r.liftUm)])].sort((a, b) => a - b),
+      benchCheckAt: test.benchCheckedAt === null ? null : new Date(test.benchCheckedAt), takenAt: new Date(test.startedAt),
+      operator: test.operator.name, benchFactor: test.benchFactor, valve: valveWords(test), seat: seatWords(test),
+    },
+    readings: figures.readings.map(({ liftUm, flowCfm }) => ({ liftUm, flowCfm })),
+  };
+}

@@ -1,0 +1,99 @@
+import "server-only";
+import { and, asc, desc, eq, isNull } from "drizzle-orm";
+import { benches, benchChecks, cautionsSeen, customers, fixtures, flowComparisons, heads, people, workOrders, workPieces } from "@/db/schema";
+import { inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
+import { ableTo } from "@/modules/access/context";
+import { BENCH_CAUTIONS, BENCH_STEP } from "../domain/bench-cautions";
+import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
+import { rawTests } from "./tests-of-head";
+import { seesCustomers } from "./gain";
+
+export interface SheetHead {
+  id: string; mark: string; family: string; pieceId: string | null; orderNumber: string | null; customerName: string | null; castingNumber: string; seatMaterial: string;
+  cylinders: number; camLiftIntakeUm: number | null; camLiftExhaustUm: number | null;
+}
+export interface PortMark { cylinder: number; state: "empty" | "part" | "done" }
+/** Everything a flow sheet shows, raw. Figures are computed from it by `figuresOfTest` and `sideGain`, here and in the browser alike. */
+export interface FlowSheet {
+  head: SheetHead;
+  cylinder: number;
+  ports: PortMark[];
+  tests: RawTest[];
+  benchCheckHours: number;
+  nominalInH2O: number;
+  canRecord: boolean;
+  canIssue: boolean;
+  /** Hazards this person has not yet confirmed for the job. */
+  cautions: string[];
+  comparisons: { id: string; comparisonNo: number; issuedAt: string; issuedBy: string }[];
+}
+export interface BenchGear {
+  benches: { id: string; name: string; scale: BenchScale; ranges: BenchRange[]; nominalPressuresInH2O: number[]; checkedAt: string | null; factor: number }[];
+  fixtures: { id: string; name: string; boreMm: number }[];
+  operators: { id: string; name: string }[];
+}
+
+/** Benches with their newest check, fixtures and people: what a session is set up from. */
+export async function gearOf(ctx: ShopContext): Promise<BenchGear> {
+  mustBeAble(ctx, "flow.see");
+  return inShop(ctx, async (tx) => {
+    const s = ctx.shop.id;
+    const b = await tx.select().from(benches).where(and(eq(benches.shopId, s), eq(benches.active, true))).orderBy(asc(benches.name));
+    const f = await tx.select({ id: fixtures.id, name: fixtures.name, boreMm: fixtures.boreMm }).from(fixtures).where(and(eq(fixtures.shopId, s), eq(fixtures.active, true))).orderBy(asc(fixtures.name));
+    const checks = await tx.selectDistinctOn([benchChecks.benchId], { benchId: benchChecks.benchId, at: benchChecks.at, factor: benchChecks.factor }).from(benchChecks)
+      .where(eq(benchChecks.shopId, s)).orderBy(benchChecks.benchId, desc(benchChecks.at));
+    const byBench = new Map(checks.map((c) => [c.benchId, c]));
+    const operators = await tx.select({ id: people.id, name: people.shortName }).from(people).where(and(eq(people.shopId, s), isNull(people.leftAt))).orderBy(asc(people.shortName));
+    return {
+      benches: b.map((x) => ({
+        id: x.id, name: x.name, scale: x.scale as BenchScale, ranges: x.ranges as BenchRange[], nominalPressuresInH2O: x.nominalPressuresInH2O,
+        checkedAt: byBench.get(x.id)?.at.toISOString() ?? null, factor: byBench.get(x.id)?.factor ?? 1,
+      })),
+      fixtures: f, operators,
+    };
+  });
+}
+
+function portMarks(cylinders: number, tests: readonly (RawTest & { cylinder: number })[]): PortMark[] {
+  return Array.from({ length: cylinders }, (_, i) => {
+    const here = tests.filter((t) => t.cylinder === i + 1 && t.state !== "void");
+    const isDone = (["intake", "exhaust"] as const).every((side) => here.some((t) => t.side === side && t.purpose === "after" && t.state === "complete"));
+    return { cylinder: i + 1, state: isDone ? "done" : here.some((t) => t.cells.some((c) => c.valueText !== "")) ? "part" : "empty" };
+  });
+}
+
+/** The sheet of one port pair. @throws NotFound */
+export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: number): Promise<FlowSheet> {
+  mustBeAble(ctx, "flow.see");
+  return inShop(ctx, async (tx) => {
+    const inner = { ...ctx, tx };
+    const s = ctx.shop.id;
+    const [row] = await tx.select({ h: heads, orderId: workOrders.id, orderNumber: workOrders.number, customerName: customers.name }).from(heads)
+      .leftJoin(workPieces, and(eq(workPieces.shopId, heads.shopId), eq(workPieces.id, heads.pieceId)))
+      .leftJoin(workOrders, and(eq(workOrders.shopId, workPieces.shopId), eq(workOrders.id, workPieces.workOrderId)))
+      .leftJoin(customers, and(eq(customers.shopId, workOrders.shopId), eq(customers.id, workOrders.customerId)))
+      .where(and(eq(heads.shopId, s), eq(heads.id, headId)));
+    if (!row || cylinder < 1 || cylinder > row.h.cylinders) throw new NotFound("head");
+    const { h } = row;
+    const all = await rawTests(inner, { headIds: [headId] });
+    const { benchCheckHours, nominalPressureInH2O } = await settingsOf(inner);
+    const personId = personIdOf(ctx);
+    const seen = row.orderId && personId
+      ? await tx.select({ hazard: cautionsSeen.hazard }).from(cautionsSeen).where(and(eq(cautionsSeen.shopId, s), eq(cautionsSeen.workOrderId, row.orderId), eq(cautionsSeen.step, BENCH_STEP), eq(cautionsSeen.personId, personId)))
+      : [];
+    const issued = await tx.select({ id: flowComparisons.id, comparisonNo: flowComparisons.comparisonNo, issuedAt: flowComparisons.issuedAt, issuedBy: people.shortName }).from(flowComparisons)
+      .innerJoin(people, and(eq(people.shopId, flowComparisons.shopId), eq(people.id, flowComparisons.issuedBy)))
+      .where(and(eq(flowComparisons.shopId, s), eq(flowComparisons.headId, headId), eq(flowComparisons.cylinder, cylinder))).orderBy(desc(flowComparisons.comparisonNo));
+    const canRecord = ableTo(ctx, "flow.record");
+    return {
+      head: {
+        id: h.id, mark: h.mark, family: h.family, pieceId: h.pieceId, orderNumber: row.orderNumber, customerName: seesCustomers(ctx) ? row.customerName : null, castingNumber: h.castingNumber,
+        seatMaterial: h.seatMaterial, cylinders: h.cylinders, camLiftIntakeUm: h.camLiftIntakeUm, camLiftExhaustUm: h.camLiftExhaustUm,
+      },
+      cylinder, ports: portMarks(h.cylinders, all), tests: all.filter((t) => t.cylinder === cylinder).map(({ headId: _, cylinder: __, ...t }) => t),
+      benchCheckHours, nominalInH2O: nominalPressureInH2O, canRecord, canIssue: ableTo(ctx, "flow.issue"),
+      cautions: canRecord && personId ? BENCH_CAUTIONS.map((c) => c.hazard).filter((hazard) => !seen.some((x) => x.hazard === hazard)) : [],
+      comparisons: issued.map((c) => ({ ...c, issuedAt: c.issuedAt.toISOString() })),
+    };
+  });
+}

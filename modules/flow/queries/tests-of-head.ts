@@ -1,0 +1,47 @@
+import "server-only";
+import { and, asc, desc, eq, inArray } from "drizzle-orm";
+import { benches, fixtures, flowReadings, flowTests, people } from "@/db/schema";
+import { inShop, type ShopContext } from "@/modules/access/context";
+import type { BenchRange, RawCell, RawTest } from "../domain/raw-test";
+
+/** The newest revision of every cell of the given tests; cleared cells come with an empty text. */
+export async function cellsOf(ctx: ShopContext, testIds: readonly string[]): Promise<Map<string, RawCell[]>> {
+  const byTest = new Map<string, RawCell[]>();
+  if (testIds.length === 0) return byTest;
+  const rows = await inShop(ctx, (tx) => tx.selectDistinctOn([flowReadings.testId, flowReadings.liftUm, flowReadings.repeatNo]).from(flowReadings)
+    .where(and(eq(flowReadings.shopId, ctx.shop.id), inArray(flowReadings.testId, [...testIds])))
+    .orderBy(flowReadings.testId, asc(flowReadings.liftUm), asc(flowReadings.repeatNo), desc(flowReadings.revision)));
+  for (const r of rows) {
+    const cell: RawCell = {
+      liftUm: r.liftUm, repeatNo: r.repeatNo, revision: r.revision, valueText: r.clearedAt ? "" : r.valueText, valueUnit: r.valueUnit as RawCell["valueUnit"], rangeLabel: r.rangeLabel,
+      pressureText: r.pressureText, pressureUnit: r.pressureUnit as RawCell["pressureUnit"], acceptedReason: r.acceptedReason, excludedReason: r.excludedReason, takenAt: r.takenAt.toISOString(),
+    };
+    byTest.set(r.testId, [...(byTest.get(r.testId) ?? []), cell]);
+  }
+  return byTest;
+}
+
+/** Tests by head (one or many), or by their own ids, with cells as typed. Oldest first. No rights are asked here: callers do. */
+export async function rawTests(ctx: ShopContext, which: { headIds: readonly string[] } | { testIds: readonly string[] }): Promise<(RawTest & { headId: string; cylinder: number })[]> {
+  const ids = "headIds" in which ? which.headIds : which.testIds;
+  if (ids.length === 0) return [];
+  const rows = await inShop(ctx, (tx) => tx.select({ t: flowTests, bench: benches, fixture: fixtures, operator: { id: people.id, name: people.shortName } }).from(flowTests)
+    .innerJoin(benches, and(eq(benches.shopId, flowTests.shopId), eq(benches.id, flowTests.benchId)))
+    .innerJoin(fixtures, and(eq(fixtures.shopId, flowTests.shopId), eq(fixtures.id, flowTests.fixtureId)))
+    .innerJoin(people, and(eq(people.shopId, flowTests.shopId), eq(people.id, flowTests.operatorId)))
+    .where(and(eq(flowTests.shopId, ctx.shop.id), inArray("headIds" in which ? flowTests.headId : flowTests.id, [...ids])))
+    .orderBy(asc(flowTests.startedAt), asc(flowTests.runNo)));
+  const cells = await cellsOf(ctx, rows.map((r) => r.t.id));
+  return rows.map(({ t, bench, fixture, operator }) => ({
+    headId: t.headId, cylinder: t.cylinder,
+    id: t.id, side: t.side as RawTest["side"], purpose: t.purpose as RawTest["purpose"], runNo: t.runNo, state: t.state as RawTest["state"], version: t.version,
+    bench: { id: bench.id, name: bench.name, scale: bench.scale as RawTest["bench"]["scale"], ranges: bench.ranges as BenchRange[], waterUnit: bench.waterUnit as RawTest["bench"]["waterUnit"] },
+    benchFactor: t.benchFactor, benchCheckedAt: t.benchCheckedAt?.toISOString() ?? null,
+    fixture: { id: fixture.id, name: fixture.name, boreMm: fixture.boreMm },
+    nominalInH2O: t.nominalPressureInH2O, lifts: t.lifts, liftUnit: t.liftUnit as RawTest["liftUnit"], camLiftUm: t.camLiftUm,
+    entry: t.entry as RawTest["entry"], valvesOpen: t.valvesOpen, valveMm: t.valveMm, seatNote: t.seatNote, plugClosed: t.plugClosed, testSprings: t.testSprings, warmUpMinutes: t.warmUpMinutes,
+    roomTemperatureText: t.roomTemperatureText, roomPressureText: t.roomPressureText, roomHumidityText: t.roomHumidityText, leakText: t.leakText, leakPressureText: t.leakPressureText, notes: t.notes,
+    operator, startedAt: t.startedAt.toISOString(), completedAt: t.completedAt?.toISOString() ?? null, correctsTestId: t.correctsTestId, voidReason: t.voidReason,
+    cells: cells.get(t.id) ?? [],
+  }));
+}
