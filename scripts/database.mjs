@@ -1,5 +1,5 @@
 /** The product's database in its cluster: made, migrated, and told the demo once. */
-import { spawnSync } from "node:child_process";
+import { spawn } from "node:child_process";
 import path from "node:path";
 import { ensureDatabase, ensureRoles, sql, startCluster } from "./postgres.mjs";
 import { Problem, say } from "./say.mjs";
@@ -23,11 +23,17 @@ export async function openDatabase(place, secrets, name) {
   return cluster;
 }
 
-/** Run one of our TypeScript programs to its end. */
+/** Run one of our TypeScript programs to its end. Returns what it printed. */
 export function runTypescript(file, env, failure, conditions = []) {
-  const done = spawnSync(process.execPath, [...conditions.map((c) => `--conditions=${c}`), "--import", "tsx", file], { cwd: PROJECT, env, encoding: "utf8", stdio: ["ignore", "pipe", "pipe"], maxBuffer: 64 * 1024 * 1024 });
-  if (done.status !== 0) throw new Problem(`${failure}\n${`${done.stdout}\n${done.stderr}`.trim()}`);
-  return done.stdout;
+  return new Promise((resolve, reject) => {
+    const child = spawn(process.execPath, [...conditions.map((c) => `--conditions=${c}`), "--import", "tsx", file], { cwd: PROJECT, env, stdio: ["ignore", "pipe", "pipe"] });
+    let out = "";
+    let err = "";
+    child.stdout.on("data", (chunk) => { out += chunk; });
+    child.stderr.on("data", (chunk) => { err += chunk; });
+    child.once("error", reject);
+    child.once("close", (code) => (code === 0 ? resolve(out) : reject(new Problem(`${failure}\n${`${out}\n${err}`.trim()}`))));
+  });
 }
 
 /**
@@ -36,7 +42,7 @@ export function runTypescript(file, env, failure, conditions = []) {
  */
 export async function migrate(ownerEnv, environment = process.env) {
   const { VK_APP_PASSWORD, VK_JOB_PASSWORD, VK_BACKUP_PASSWORD } = environment;
-  runTypescript("db/migrate.ts", { ...ownerEnv, ...(VK_APP_PASSWORD && VK_JOB_PASSWORD && VK_BACKUP_PASSWORD ? { VK_APP_PASSWORD, VK_JOB_PASSWORD, VK_BACKUP_PASSWORD } : {}) }, "The database could not be brought up to date:");
+  await runTypescript("db/migrate.ts", { ...ownerEnv, ...(VK_APP_PASSWORD && VK_JOB_PASSWORD && VK_BACKUP_PASSWORD ? { VK_APP_PASSWORD, VK_JOB_PASSWORD, VK_BACKUP_PASSWORD } : {}) }, "The database could not be brought up to date:");
 }
 
 async function ask(ownerEnv, text, values) {
@@ -65,5 +71,5 @@ export async function markDemo(ownerEnv, mark) {
 }
 
 export async function seedDemo(ownerEnv) {
-  runTypescript("seed/run.ts", ownerEnv, "The demo shop could not be loaded:", ["react-server"]);
+  await runTypescript("seed/run.ts", ownerEnv, "The demo shop could not be loaded:", ["react-server"]);
 }

@@ -203,6 +203,8 @@ function running(base) {
   const pid = Number(lines[0]);
   if (!Number.isInteger(pid) || pid <= 0 || !alive(pid)) return { state: "stale", pid };
   const command = commandOf(pid);
+  // A process that is dead but not yet buried has no command line any more. The server itself judges what it left.
+  if (command.trim() === "") return { state: "stale", pid };
   const ours = /postgres|postmaster/.test(command.split(" ")[0] ?? "") && command.includes(data);
   return ours ? { state: "running", pid, port: Number(lines[3]) } : { state: "reused", pid, file };
 }
@@ -214,7 +216,7 @@ async function launch(bin, context) {
   const { base } = context;
   const log = path.join(base, "log");
   if (has(log) && fs.statSync(log).size > 20_000_000) fs.renameSync(log, `${log}.old`);
-  const until = Date.now() + 30_000;
+  const until = Date.now() + 60_000;
   for (;;) {
     const from = has(log) ? fs.statSync(log).size : 0;
     // With an inherited pipe this call would only return when the server ends.

@@ -49,7 +49,7 @@ export async function openProduct({ name, place = clusterPlace("test"), ports: f
     await supervised.waitFor("payments", parts.addresses.payments);
     if (demo) {
       say("Loading the demo shops");
-      runTypescript("seed/run.ts", parts.ownerEnv, "The demo shops could not be loaded:", ["react-server"]);
+      await runTypescript("seed/run.ts", parts.ownerEnv, "The demo shops could not be loaded:", ["react-server"]);
     }
     const server = await ensureServer(TEST_FOLDER);
     const product = {

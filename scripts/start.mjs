@@ -2,7 +2,7 @@
 import path from "node:path";
 import { assemble, loadSecrets, outsideServices, databaseUrls, PORTS, portsFor, PROJECT, standInEnvironment } from "./environment.mjs";
 import { demoWanted, markDemo, migrate, openDatabase, seedDemo } from "./database.mjs";
-import { clusterPlace } from "./postgres.mjs";
+import { clusterPlace, startCluster } from "./postgres.mjs";
 import { mustBeFree } from "./ports.mjs";
 import { ensurePackages, ensureServer } from "./prepare.mjs";
 import { heading, run, say } from "./say.mjs";
@@ -45,12 +45,12 @@ await run(async () => {
       database = databaseUrls(await openDatabase(place, secrets, DATABASE), secrets, DATABASE);
     }
     const { env, workerEnv, ownerEnv, local, addresses } = assemble({ folder: FOLDER, ports, secrets, database });
-    await migrate(ownerEnv);
 
     // The stand-ins first: the demo is told through the product's own commands, which may send and charge.
     const standIns = standInEnvironment({ folder: FOLDER, ports, secrets, appUrl: addresses.app });
     if (local.mail) supervised.start("mail", { env: standIns });
     if (local.payments) supervised.start("payments", { env: standIns });
+    await migrate(ownerEnv);
     if (local.mail) await supervised.waitFor("mail", addresses.inbox);
     if (local.payments) await supervised.waitFor("payments", addresses.payments);
 
@@ -71,8 +71,9 @@ await run(async () => {
     for (const line of signInLines(env.VK_SIGN_INS_FILE)) console.log(`  ${line}`);
     console.log(`\n  Logs in ${path.relative(process.cwd(), path.join(FOLDER, "logs"))}. Ctrl-C stops everything.\n`);
     say("Ready");
-    // Stays until asked to stop.
+    // Stays until asked to stop, and brings the database back should it be killed.
     setInterval(() => {}, 2 ** 30);
+    if (!outside.database) supervised.keepCluster(() => startCluster(place));
   } catch (error) {
     await supervised.stop();
     throw error;

@@ -3,7 +3,7 @@ import { spawn } from "node:child_process";
 import fs from "node:fs";
 import path from "node:path";
 import { Problem, say } from "./say.mjs";
-import { stopCluster } from "./postgres.mjs";
+import { clusterState, stopCluster } from "./postgres.mjs";
 
 const PROJECT = path.resolve(import.meta.dirname, "..");
 const sleep = (ms) => new Promise((resolve) => setTimeout(resolve, ms));
@@ -96,6 +96,23 @@ export function supervisor({ logs, quiet = false }) {
       cluster = place;
       tell({ cluster: place });
     },
+    /** Look at the adopted database now and then, and start it again when it is gone. */
+    keepCluster(start) {
+      let busy = false;
+      const timer = setInterval(async () => {
+        if (stopping || busy || clusterState(cluster).state === "running") return;
+        busy = true;
+        say("The database stopped; starting it again");
+        try {
+          await start();
+        } catch (error) {
+          console.error(error instanceof Problem ? error.message : error);
+        }
+        busy = false;
+        if (stopping) stopCluster(cluster);
+      }, 1000);
+      timer.unref();
+    },
     async stopOne(name, signal = "SIGTERM") {
       const entry = children.get(name);
       if (entry?.child === undefined) return;
@@ -132,10 +149,19 @@ export function supervisor({ logs, quiet = false }) {
 export function askedToStop() {
   return new Promise((resolve) => {
     for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(signal, () => resolve(signal));
-    // npm killed hard takes its terminal with it but tells nobody: its child sees another parent.
-    const parent = process.ppid;
-    if (process.env.npm_lifecycle_event) {
-      setInterval(() => process.ppid !== parent && resolve("parent gone"), 1000).unref();
-    }
+    // npm killed hard tells nobody: its grandchild sees its line of parents change.
+    const line = parents();
+    if (process.env.npm_lifecycle_event) setInterval(() => parents() !== line && resolve("npm is gone"), 1000).unref();
   });
+}
+
+/** Parent and grandparent (npm starts a shell in between), where the system tells. */
+function parents() {
+  const parent = process.ppid;
+  try {
+    const stat = fs.readFileSync(`/proc/${parent}/stat`, "utf8");
+    return `${parent} ${stat.slice(stat.lastIndexOf(")") + 2).split(" ")[1]}`;
+  } catch {
+    return String(parent);
+  }
 }
