@@ -41,9 +41,10 @@ const problem = (status: number, title: string, more: object = {}, headers: Head
 
 /** The route handler of an endpoint: who, origin, schema, then the data layer; problems as RFC 9457 documents. */
 export function handle<S extends z.ZodType, T>(endpoint: Endpoint<S, T>) {
-  return async (request: Request, { params }: { params: Promise<Record<string, string>> }): Promise<Response> => {
+  return async (request: Request, { params }: { params: Promise<Record<string, string> | undefined> }): Promise<Response> => {
     try {
-      const { shop = "", ...rest } = await params;
+      // An address without a variable part comes without params.
+      const { shop = "", ...rest } = (await params) ?? {};
       const bearer = /^Bearer ([\w-]{20,200})$/.exec(request.headers.get("authorization") ?? "")?.[1];
       let ctx: ShopContext | null = null;
       const revoked = endpoint.revokedToo ? { revokedToo: true } : {};

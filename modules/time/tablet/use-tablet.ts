@@ -65,7 +65,7 @@ export function useTablet() {
     let over = false;
     const round = async () => {
       await sync();
-      if (!over) timer = setTimeout(() => void round(), boardRef.current && navigator.onLine ? LINKED_MS : UNLINKED_MS);
+      if (!over) timer = setTimeout(() => void round(), LINKED_MS);
     };
     const wake = () => { clearTimeout(timer); void round(); };
     void (async () => {
@@ -103,7 +103,7 @@ export function useTablet() {
     return owner ? { at: { personId: owner.id, own: null, secret } } : { message: "Badge not known here. Ask the manager." };
   }, [link]);
 
-  const press = useCallback(async (at: AtTablet, p: PressOf): Promise<Answer> => {
+  const pressNow = useCallback(async (at: AtTablet, p: PressOf): Promise<Answer> => {
     const here = boardRef.current;
     if (!here) return { kind: "refused", code: "NO_BOARD", message: "This tablet has not seen the shop yet.", data: {} };
     const requestId = crypto.randomUUID();
@@ -125,6 +125,14 @@ export function useTablet() {
     if (said?.kind === "refused") return said;
     return { kind: said?.kind === "ok" ? "done" : "kept" };
   }, [show, sync]);
+
+  // One after the other, so that each is judged by what the one before left.
+  const line = useRef<Promise<unknown>>(Promise.resolve());
+  const press = useCallback((at: AtTablet, p: PressOf): Promise<Answer> => {
+    const turn = line.current.then(() => pressNow(at, p));
+    line.current = turn.catch(() => undefined);
+    return turn;
+  }, [pressNow]);
 
   return { board, state, unlinkedSince, kept, identify, press, sync };
 }
