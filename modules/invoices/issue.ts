@@ -1,6 +1,6 @@
 import "server-only";
-import { and, eq, sql } from "drizzle-orm";
-import { invoices } from "@/db/schema";
+import { and, asc, eq, sql } from "drizzle-orm";
+import { invoices, payments } from "@/db/schema";
 import { changedMeanwhile, defineCommand } from "@/modules/access/command";
 import { ableTo, settingsOf, type TxContext } from "@/modules/access/context";
 import { leaveJob } from "@/modules/access/jobs";
@@ -72,6 +72,8 @@ export const issueInvoice = defineCommand({
       issuedBy: ctx.actor.kind === "person" ? ctx.actor.id : null, totalMinor: sheet.totals.totalMinor, depositAppliedMinor: sheet.deposit.appliedMinor, version: sql`${invoices.version} + 1`,
     }).where(draftAt(ctx, draft.value.id));
 
+    const surplus = await surplusLines(ctx, orderId, checked.value.depositSurplusMinor);
+    await useDeposits(ctx, orderId, sheet.deposit.appliedMinor + (surplus[0]?.amountMinor ?? 0));
     const post = (rule: string, text: string, lines: readonly EntryLine[]) => lines.length === 0 ? ok(null) : postEntry(ctx, {
       date: sheet.date, text, rule, sourceKind: "invoice", sourceId: draft.value.id, workOrderId: orderId, customerId: draft.value.customerId, lines,
     });
@@ -79,7 +81,7 @@ export const issueInvoice = defineCommand({
       ["invoiceIssued", `Invoice ${number}`, invoiceIssued(sheet.totals)],
       ["depositApplied", `Deposit applied to ${number}`, depositApplied({ amountMinor: minor(sheet.deposit.appliedMinor) })],
       ["costOfParts", `Parts of ${sheet.orderNumber}, ${number}`, costOfParts({ costMinor })],
-      ["depositSurplus", `Deposit not needed by ${number}`, await surplusLines(ctx, orderId, checked.value.depositSurplusMinor)],
+      ["depositSurplus", `Deposit not needed by ${number}`, surplus],
     ] as const;
     for (const [rule, text, lines] of entries) {
       const posted = await post(rule, text, lines);
@@ -98,6 +100,18 @@ async function surplusLines(ctx: TxContext, workOrderId: string, surplusMinor: n
   const billed = await billedBefore(ctx, workOrderId);
   const left = bill.ok && bill.value.lines.some((l) => l.kind !== "note" && !billed.lineIds.has(l.id));
   return left ? [] : entryOf(debit("2100", surplusMinor), credit("2110", surplusMinor));
+}
+
+/** Marks the deposits of an order as used, the oldest first. */
+async function useDeposits(ctx: TxContext, workOrderId: string, usedMinor: number): Promise<void> {
+  const rows = await ctx.tx.select().from(payments).where(and(eq(payments.shopId, ctx.shop.id), eq(payments.workOrderId, workOrderId), eq(payments.purpose, "deposit"))).orderBy(asc(payments.receivedAt)).for("update");
+  let left = usedMinor;
+  for (const p of rows) {
+    const part = Math.min(left, p.amountMinor - p.appliedMinor - p.refundedMinor);
+    if (part <= 0) continue;
+    await ctx.tx.update(payments).set({ appliedMinor: p.appliedMinor + part }).where(and(eq(payments.shopId, ctx.shop.id), eq(payments.id, p.id)));
+    left -= part;
+  }
 }
 
 /** Row of an issued invoice or credit note of this shop, locked. */

@@ -76,7 +76,7 @@ export async function bookPayment(ctx: TxContext, p: NewPayment): Promise<Result
   const receiptNumber = await takeYearNumber(ctx, "RC", day.slice(0, 4), 5);
   await tx.insert(payments).values({
     shopId: shop.id, id, receiptNumber, customerId: target.customerId, workOrderId: target.workOrderId, invoiceId: target.invoiceId, estimateId: target.estimateId,
-    purpose: depositMinor > 0 ? "deposit" : receivableMinor > 0 ? "invoice" : "credit", method: p.method, amountMinor: p.amountMinor, appliedMinor: receivableMinor,
+    purpose: depositMinor > 0 ? "deposit" : receivableMinor > 0 ? "invoice" : "credit", method: p.method, amountMinor: p.amountMinor, appliedMinor: receivableMinor + creditMinor,
     providerPaymentId: p.providerPaymentId ?? null, paymentRequestId: p.paymentRequestId ?? null, note: p.note ?? "", receivedAt: p.receivedAt, takenBy: personIdOf(ctx),
   });
   if (target.invoiceId && receivableMinor > 0) {

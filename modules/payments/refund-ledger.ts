@@ -47,7 +47,7 @@ export async function bookRefund(ctx: TxContext, p: Payment, r: RefundRow): Prom
   });
   if (!posted.ok) return posted;
   if (invoice && parts.receivableMinor > 0) await tx.update(invoices).set({ paidMinor: sql`${invoices.paidMinor} - ${parts.receivableMinor}` }).where(and(eq(invoices.shopId, shop.id), eq(invoices.id, invoice.id)));
-  await tx.update(payments).set({ refundedMinor: sql`${payments.refundedMinor} + ${r.amountMinor}`, appliedMinor: sql`greatest(0, ${payments.appliedMinor} - ${parts.receivableMinor})` })
+  await tx.update(payments).set({ refundedMinor: sql`${payments.refundedMinor} + ${r.amountMinor}`, appliedMinor: sql`greatest(0, ${payments.appliedMinor} - ${parts.receivableMinor + parts.creditMinor})` })
     .where(and(eq(payments.shopId, shop.id), eq(payments.id, p.id)));
   await tx.update(refunds).set({ state: "done" }).where(and(eq(refunds.shopId, shop.id), eq(refunds.id, r.id)));
   const [c] = await tx.select({ name: customers.name, email: customers.email }).from(customers).where(and(eq(customers.shopId, shop.id), eq(customers.id, p.customerId)));
