@@ -130,7 +130,7 @@ const valve = z.strictObject({
 });
 const familyFields = z.strictObject({
   name: line(80).min(1, "Name the family as the shop does."),
-  cylinders: z.coerce.number().int("Whole cylinders.").min(1, "At least 1.").max(16, "At most 16."),
+  cylinders: z.coerce.number<string | number>().int("Whole cylinders.").min(1, "At least 1.").max(16, "At most 16.").default(1),
   bore: optionalField({ min: 10, max: 300, unit: "mm" }),
   stroke: optionalField({ min: 10, max: 300, unit: "mm" }),
   valves: z.array(valve).max(8, "At most 8 valves a cylinder.").default([]),
@@ -155,7 +155,7 @@ export const ownHeadInput = z.strictObject({
   mark: line(60).min(1, "Give the casting a mark: a serial, or what is written on it."),
   family: line(80).min(1, "Name the engine family."),
   castingNumber: line(60).default(""),
-  cylinders: z.coerce.number().int("Whole cylinders.").min(1, "At least 1.").max(16, "At most 16."),
+  cylinders: z.coerce.number<string | number>().int("Whole cylinders.").min(1, "At least 1.").max(16, "At most 16.").default(1),
   bore: optionalField({ min: 10, max: 300, unit: "mm" }),
   stroke: optionalField({ min: 10, max: 300, unit: "mm" }),
   seatMaterial: z.enum(["unknown", "steel", "iron", "bronze", "copper-beryllium"]).default("unknown"),

@@ -8,6 +8,7 @@ import { ok, refuse } from "@/modules/kernel/result";
 import { correctInput, finishInput, voidInput } from "../input";
 import { rawTests } from "../queries/tests-of-head";
 import { draftTest } from "./change-test";
+import { summariseTest } from "./summarise";
 
 const at = (ctx: TxContext, testId: string) => and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId));
 
@@ -23,6 +24,7 @@ export const completeTest = defineCommand({
     const read = test?.cells.filter((c) => c.valueText !== "").length ?? 0;
     if (read === 0) return refuse("NOTHING_READ", "Nothing has been read yet. Type at least one reading, or void the test.");
     await ctx.tx.update(flowTests).set({ state: "complete", completedAt: ctx.now, version: sql`${flowTests.version} + 1` }).where(at(ctx, testId));
+    await summariseTest(ctx, testId);
     return ok({ testId, version: version + 1, read });
   },
   subject: (input) => ({ kind: "flow-test", id: input.testId }),
