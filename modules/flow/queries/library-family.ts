@@ -1,6 +1,6 @@
 import "server-only";
 import { and, eq, inArray, sql } from "drizzle-orm";
-import { engineFamilies, heads } from "@/db/schema";
+import { engineFamilies, flowTests, heads } from "@/db/schema";
 import { inShop, mustBeAble, NotFound, settingsOf, type ShopContext } from "@/modules/access/context";
 import type { Reason, PortSide } from "../domain/comparison-reasons";
 import { gainsByLift, type LiftGains } from "../domain/family-gains";
@@ -78,7 +78,9 @@ export async function familyPicture(ctx: ShopContext, ask: { family: string; sid
       group by head_id order by at desc limit ${ask.last}`);
     const headIds = lastHeads.rows.map((r) => r.head_id);
     const headRows = headIds.length === 0 ? [] : await tx.select({ id: heads.id, mark: heads.mark, ownerKind: heads.ownerKind, workDone: heads.workDone }).from(heads).where(and(eq(heads.shopId, s), inArray(heads.id, headIds)));
-    const tests = (await rawTests(inner, { headIds })).filter((t) => t.side === ask.side);
+    const sideTests = headIds.length === 0 ? [] : await tx.select({ id: flowTests.id }).from(flowTests)
+      .where(and(eq(flowTests.shopId, s), inArray(flowTests.headId, headIds), eq(flowTests.side, ask.side), eq(flowTests.state, "complete"), inArray(flowTests.purpose, ["baseline", "after"])));
+    const tests = await rawTests(inner, { testIds: sideTests.map((t) => t.id) });
     const found: { line: PortOfFamily; gain: SideGain }[] = [];
     for (const headId of headIds) {
       const head = headRows.find((h) => h.id === headId);

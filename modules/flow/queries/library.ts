@@ -1,6 +1,7 @@
 import "server-only";
-import { and, asc, eq, sql, type SQL } from "drizzle-orm";
+import { and, asc, desc, eq, inArray, sql, type SQL } from "drizzle-orm";
 import { benches, engineFamilies, flowTests, flowTestSummaries, heads, people } from "@/db/schema";
+import type { Tx } from "@/db/scope";
 import { inShop, mustBeAble, type ShopContext } from "@/modules/access/context";
 import { addDays, startOfDay } from "@/modules/kernel/instant";
 import type { PortSide } from "../domain/comparison-reasons";
@@ -45,29 +46,37 @@ export async function libraryTests(ctx: ShopContext, ask: LibraryAsk): Promise<{
   mustBeAble(ctx, "flow.see");
   const [afterAt, afterId] = (ask.after ?? "").split("|");
   const isPaged = Boolean(afterAt && afterId && !Number.isNaN(Date.parse(afterAt)) && /^[0-9a-f-]{36}$/.test(afterId));
-  const rows = await inShop(ctx, (tx) => tx.select({
+  return inShop(ctx, async (tx) => {
+    // First the page, from the tests and their heads alone; only its rows are then looked up in full.
+    const found = await tx.select({ id: flowTests.id, key: sql<string>`to_char(${flowTests.startedAt} at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"')` }).from(flowTests)
+      .innerJoin(heads, and(eq(heads.shopId, flowTests.shopId), eq(heads.id, flowTests.headId)))
+      .where(and(
+        eq(flowTests.shopId, ctx.shop.id), standsInLibrary(ctx.shop.id), ...filters(ctx, ask),
+        isPaged ? sql`(${flowTests.startedAt}, ${flowTests.id}) < (${afterAt}::timestamptz, ${afterId}::uuid)` : undefined,
+      ))
+      .orderBy(desc(flowTests.startedAt), desc(flowTests.id)).limit(ask.limit + 1);
+    const page = found.slice(0, ask.limit);
+    const last = page.at(-1);
+    return { rows: await rowsOf(ctx, tx, page.map((p) => p.id)), next: found.length > ask.limit && last ? `${last.key}|${last.id}` : null };
+  });
+}
+
+async function rowsOf(ctx: ShopContext, tx: Tx, ids: readonly string[]): Promise<LibraryRow[]> {
+  if (ids.length === 0) return [];
+  const rows = await tx.select({
     testId: flowTests.id, headId: flowTests.headId, cylinder: flowTests.cylinder, mark: heads.mark, family: heads.family, side: flowTests.side, purpose: flowTests.purpose, runNo: flowTests.runNo,
     ownerKind: heads.ownerKind, workDone: heads.workDone, valveMm: flowTests.valveMm, seatNote: flowTests.seatNote, startedAt: flowTests.startedAt, benchName: benches.name, operator: people.shortName,
     atInH2O: flowTests.nominalPressureInH2O, liftUnit: flowTests.liftUnit, importedFrom: flowTests.importedFrom,
     lifts: sql<number>`coalesce(cardinality(${flowTestSummaries.liftsUm}), 0)`, peakCfm: flowTestSummaries.peakCfm, peakLiftUm: flowTestSummaries.peakLiftUm, meanToCamCfm: flowTestSummaries.meanToCamCfm,
     doubts: sql<number>`coalesce(${flowTestSummaries.doubts}, 0)`, isConverted: sql<boolean>`coalesce(${flowTestSummaries.isConverted}, false)`,
-    key: sql<string>`to_char(${flowTests.startedAt} at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"')`,
   }).from(flowTests)
     .innerJoin(heads, and(eq(heads.shopId, flowTests.shopId), eq(heads.id, flowTests.headId)))
     .innerJoin(benches, and(eq(benches.shopId, flowTests.shopId), eq(benches.id, flowTests.benchId)))
     .innerJoin(people, and(eq(people.shopId, flowTests.shopId), eq(people.id, flowTests.operatorId)))
     .leftJoin(flowTestSummaries, and(eq(flowTestSummaries.shopId, flowTests.shopId), eq(flowTestSummaries.testId, flowTests.id)))
-    .where(and(
-      eq(flowTests.shopId, ctx.shop.id), standsInLibrary(ctx.shop.id), ...filters(ctx, ask),
-      isPaged ? sql`(${flowTests.startedAt}, ${flowTests.id}) < (${afterAt}::timestamptz, ${afterId}::uuid)` : undefined,
-    ))
-    .orderBy(sql`${flowTests.startedAt} desc, ${flowTests.id} desc`).limit(ask.limit + 1));
-  const page = rows.slice(0, ask.limit);
-  const last = page.at(-1);
-  return {
-    rows: page.map(({ key: _, startedAt, side, purpose, liftUnit, ...r }) => ({ ...r, startedAt: startedAt.toISOString(), side: side as PortSide, purpose: purpose as Purpose, liftUnit: liftUnit as LiftUnit })),
-    next: rows.length > ask.limit && last ? `${last.key}|${last.testId}` : null,
-  };
+    .where(and(eq(flowTests.shopId, ctx.shop.id), inArray(flowTests.id, [...ids])))
+    .orderBy(desc(flowTests.startedAt), desc(flowTests.id));
+  return rows.map(({ startedAt, side, purpose, liftUnit, ...r }) => ({ ...r, startedAt: startedAt.toISOString(), side: side as PortSide, purpose: purpose as Purpose, liftUnit: liftUnit as LiftUnit }));
 }
 
 export interface FamilyName { name: string; heads: number; isSetUp: boolean }

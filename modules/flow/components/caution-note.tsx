@@ -1,0 +1,44 @@
+"use client";
+
+import { useState } from "react";
+import { Button } from "@/modules/ui/button";
+import { Note } from "@/modules/ui/note";
+import { usePlace } from "@/modules/ui/place";
+import { markCautionsSeenAction } from "../caution-actions";
+import { CAUTION_CLOSE, cautionsFor } from "../domain/cautions";
+
+/**
+ * What can hurt at this step, once a job for each person. `hazards` are the ones still to be shown (`cautionsToShow`); without an
+ * order there is nothing to write it on, so it stays. It never blocks the work beside it.
+ */
+export function CautionNote({ hazards, workOrderId, step, big = false }: { hazards: readonly string[]; workOrderId: string | null; step: string; big?: boolean }) {
+  const { slug } = usePlace();
+  const [state, setState] = useState<"shown" | "sending" | "gone" | "failed">("shown");
+  const [requestId] = useState(() => crypto.randomUUID());
+  const cautions = cautionsFor(hazards);
+  if (cautions.length === 0 || state === "gone") return null;
+
+  const read = async (order: string) => {
+    setState("sending");
+    try {
+      const reply = await markCautionsSeenAction(slug, { requestId, input: { workOrderId: order, hazards: cautions.map((c) => c.hazard), step } });
+      setState(reply.status === "ok" ? "gone" : "failed");
+    } catch {
+      setState("failed");
+    }
+  };
+  return (
+    <section aria-label="Before you begin" className="noprint">
+      <Note
+        big={big}
+        action={workOrderId === null ? undefined : <Button size={big ? "xl" : "sm"} pending={state === "sending"} pendingText="Writing it down…" onClick={() => void read(workOrderId)}>I have read this</Button>}
+      >
+        {cautions.map((c) => (
+          <span key={c.hazard} className="mb-1 block"><b>{c.title}</b> {c.words} <span className="dim sm">{c.source}.</span></span>
+        ))}
+        <span className="mid block">{CAUTION_CLOSE}</span>
+        {state === "failed" ? <span role="alert" className="block"><b>Not written down.</b> The work can go on; try again when the link is back.</span> : null}
+      </Note>
+    </section>
+  );
+}
