@@ -11,7 +11,7 @@ export const NINEBARK: NewShop = {
   locale: "en-US",
   ratesFrom: "2025-05-01",
   settings: {
-    address: "14 Quarry Spur\nPell Junction", phone: "555-0110", email: "counter@ninebark.example", taxMode: "sales", taxName: "Pell County tax", taxRateText: "7.35", taxBasis: "invoice",
+    referencePrefix: "NB", address: "14 Quarry Spur\nPell Junction", phone: "555-0110", email: "counter@ninebark.example", taxMode: "sales", taxName: "Pell County tax", taxRateText: "7.35", taxBasis: "invoice",
     laborTaxable: false, partsTaxable: true, suppliesTaxable: true, freightTaxable: false, taxDecidedBy: "Priya Venkat, with the shop's adviser, 2025-04-14",
     suppliesBasisPoints: 400, suppliesCapMinor: 6000, depositBasisPoints: 3000, burdenBasisPoints: 1800, billRateMinor: 11000,
     invoiceWords: "Airflow is what we measured on our bench under the stated conditions; it is not a promise of power. Follow the service manual for clearances before starting the engine.",

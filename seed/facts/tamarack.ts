@@ -10,7 +10,7 @@ export const TAMARACK: NewShop = {
   locale: "en-GB",
   ratesFrom: "2025-05-01",
   settings: {
-    address: "Hof 3\nAltbruch", phone: "555-0177", email: "werkstatt@tamarack.example", taxNumber: "XX000000000", taxMode: "vat", taxName: "VAT", taxRateText: "21", taxBasis: "invoice",
+    address: "Hof 3\nAltbruch", phone: "555-0177", email: "werkstatt@tamarack.example", referencePrefix: "TB", taxNumber: "XX000000000", taxMode: "vat", taxName: "VAT", taxRateText: "21", taxBasis: "invoice",
     laborTaxable: true, partsTaxable: true, suppliesTaxable: true, freightTaxable: true, taxDecidedBy: "Svea Lindqvist, 2025-04-20", suppliesBasisPoints: 0, depositBasisPoints: 2500,
     burdenBasisPoints: 2100, billRateMinor: 9600,
     invoiceWords: "Airflow as measured on our bench under the stated conditions; no promise of power.",

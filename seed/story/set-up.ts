@@ -31,7 +31,7 @@ export async function heroShelf(cast: Cast, who: string, at: string, suppliers: 
   }
   const kit = must(await addPart(actor, { sku: HERO_KIT.sku, description: HERO_KIT.description, partClass: "kit", families: "S250-4V", salePrice: HERO_KIT.sale, isKit: true }));
   ids[HERO_KIT.sku] = kit.id;
-  must(await setKit(actor, { kitPartId: kit.id, version: kit.version, lines: HERO_KIT.contents.map(([sku, n]) => ({ partId: ids[sku] ?? "", qty: String(n) })) }));
+  must(await setKit(actor, { kitPartId: kit.id, version: 1, lines: HERO_KIT.contents.map(([sku, n]) => ({ partId: ids[sku] ?? "", qty: String(n) })) }));
   const epoxy = must(await addPart(actor, {
     sku: HERO_EPOXY.sku, description: HERO_EPOXY.description, partClass: "epoxy", stockUnit: "gram", lotTracked: true, salePrice: HERO_EPOXY.sale, hazard: "epoxy resin",
     preferredSupplierId: suppliers[HERO_EPOXY.supplier] ?? "",
