@@ -2,10 +2,11 @@ import { randomUUID } from "node:crypto";
 import pg from "pg";
 import type { ShopContext } from "@/modules/access/context";
 import type { Role } from "@/modules/access/roles";
+import { addPart } from "@/modules/stock/commands/parts";
 import { currentDatabase } from "@/tests/support/database";
 import { fillTables, digestOf } from "@/tests/support/fill-tables";
 import { furnish, type FurnishedShop } from "@/tests/support/furnished-shop";
-import { testShop } from "@/tests/support/shop";
+import { must, testShop } from "@/tests/support/shop";
 
 /** Stands in B's words and nowhere else. */
 export const CANARY = "Quillfinch";
@@ -39,7 +40,8 @@ async function rowsOf(client: pg.Client, shopId: string): Promise<Rows> {
 /** Shop A, whose people ask, and shop B, which has a row in every table and a canary in its words. */
 export async function twoShops(): Promise<World> {
   const a = await furnish(await testShop("first"));
-  const b = await furnish(await testShop("second", { zone: "Europe/London", currency: "GBP", locale: "en-GB" }));
+  const b = await furnish(await testShop("second", { zone: "Europe/London", currency: "GBP", locale: "en-GB", numbersFrom: { "WO-2026": 900, "TAG-260224": 90 } }));
+  must(await addPart(b.as("owner", NOW), { sku: "QF-900", description: "Only here", partClass: "valve", salePrice: "9.00" }));
   const all = new pg.Client({ connectionString: currentDatabase().superuserUrl });
   await all.connect();
   await fillTables(all, b.shop.id, CANARY);

@@ -31,6 +31,9 @@ async function linksOf(client: pg.Client, table: string): Promise<Map<string, { 
   return new Map(rows.map((r) => [r.col, { table: r.target, column: r.target_col }]));
 }
 
+/** Columns for look-up hold lower-case copies. */
+const spelt = (column: string, canary: string): string => (column.endsWith("_key") ? canary.toLowerCase() : canary);
+
 async function valueFor(client: pg.Client, shopId: string, c: Column, to: { table: string; column: string } | undefined, canary: string): Promise<unknown> {
   if (to) {
     const shopless = ["shops", "users"].includes(to.table);
@@ -38,7 +41,7 @@ async function valueFor(client: pg.Client, shopId: string, c: Column, to: { tabl
     return rows[0]?.v ?? null;
   }
   if (c.type === "uuid") return randomUUID();
-  if (c.type === "text") return WORDS.has(c.name) ? canary : `x-${c.name}`;
+  if (c.type === "text") return WORDS.has(c.name) ? spelt(c.name, canary) : `x-${c.name}`;
   if (c.type === "ARRAY") return [];
   if (c.type === "jsonb") return JSON.stringify({ words: canary });
   if (c.type === "boolean") return false;
@@ -79,7 +82,8 @@ export async function fillTables(client: pg.Client, shopId: string, canary: stri
   for (const table of tables) {
     for (const c of await columnsOf(client, table)) {
       if (c.type !== "text" || !WORDS.has(c.name) || c.generated) continue;
-      await client.query(`update ${table} set ${c.name} = ${c.name} || ' ${canary}' where shop_id = $1 and ${c.name} is not null and position('${canary}' in ${c.name}) = 0`, [shopId]);
+      const word = spelt(c.name, canary);
+      await client.query(`update ${table} set ${c.name} = ${c.name} || ' ${word}' where shop_id = $1 and ${c.name} is not null and position('${word}' in ${c.name}) = 0`, [shopId]);
     }
   }
   await client.query("set session_replication_role = default");

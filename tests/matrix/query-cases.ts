@@ -1,0 +1,95 @@
+import type { ShopContext, TxContext } from "@/modules/access/context";
+import type { Act } from "@/modules/access/roles";
+import type { At } from "./world";
+import { CANARY } from "./world";
+
+type Fn = (ctx: ShopContext, ...args: unknown[]) => unknown;
+
+export interface QueryCase {
+  /** The act it asks for itself; null for a part of other queries that relies on its caller, who is in this list too. */
+  act: Act | null;
+  /** Calls it with another shop's ids, numbers and words wherever it takes one. */
+  call(fn: Fn, ctx: ShopContext, at: At): unknown;
+  /** Open to the holder of a link: asked with a context whose link names the other shop's matter. */
+  as?: "customer";
+}
+
+/** What B's papers are called; A has none of these names. */
+export const OF_B = { order: "WO-2026-0900", sku: "QF-900", tag: "260224-90" };
+
+const byId = (act: Act | null, table: string): QueryCase => ({ act, call: (fn, ctx, at) => fn(ctx, at(table).id) });
+const byIds = (act: Act | null, table: string): QueryCase => ({ act, call: (fn, ctx, at) => fn(ctx, [at(table).id]) });
+const byText = (act: Act, text: string): QueryCase => ({ act, call: (fn, ctx) => fn(ctx, text) });
+const plain = (act: Act | null): QueryCase => ({ act, call: (fn, ctx) => fn(ctx) });
+const asked = (act: Act, ask: Record<string, unknown>): QueryCase => ({ act, call: (fn, ctx) => fn(ctx, ask) });
+const q = CANARY;
+
+/** One case a query; the key is its module, file and name. A query without one fails the matrix. */
+export const QUERY_CASES: Record<string, QueryCase> = {
+  "customers/queries findCustomers": asked("customers.see", { q, limit: 50 }),
+  "customers/queries getCustomer": byId("customers.see", "customers"),
+
+  "stock/queries/find-parts findParts": asked("stock.see", { q, view: "all", partClass: "", gone: true, limit: 100 }),
+  "stock/queries/find-parts getPartRow": byId("stock.see", "parts"),
+  "stock/queries/get-part getPart": byText("stock.see", OF_B.sku),
+  "stock/queries/kits kitLinesOf": byIds("stock.see", "parts"),
+  "stock/queries/kits freeOf": byIds(null, "parts"),
+  "stock/queries/kits kitStands": byIds(null, "parts"),
+  "stock/queries/ledger ledgerOf": { act: "stock.see", call: (fn, ctx, at) => fn(ctx, { part: at("parts").id, limit: 50 }) },
+  "stock/queries/out-by-lot netOutByLot": byId(null, "work_order_parts"),
+
+  "purchasing/queries/orders findOrders": asked("purchase.see", { q, view: "all", limit: 100 }),
+  "purchasing/queries/orders getOrder": byId("purchase.see", "purchase_orders"),
+  "purchasing/queries/suggestions suggestionsFor": plain("purchase.see"),
+  "purchasing/queries/suppliers findSuppliers": plain("purchase.see"),
+  "purchasing/queries/suppliers supplierNames": plain("parts.write"),
+  "purchasing/queries/suppliers getSupplier": byId("purchase.see", "suppliers"),
+
+  "time/queries/minutes minutesByOperation": byId("orders.see", "work_orders"),
+  "time/queries/minutes laborOf": byId(null, "work_orders"),
+  "time/queries/minutes minutesByPerson": byId("orders.see", "work_orders"),
+  "time/queries/own-time ownWeek": byId(null, "people"),
+  "time/queries/own-time missingOut": byId(null, "people"),
+
+  "work-orders/queries/bench-list clockBoard": plain("clock.use"),
+  "work-orders/queries/bench-list openOperations": plain(null),
+  "work-orders/queries/bench-list benchList": plain("clock.use"),
+  "work-orders/queries/customer-view customerView": { act: null, as: "customer", call: (fn, ctx) => fn(ctx) },
+  "work-orders/queries/customer-view customerFile": { act: null, as: "customer", call: (fn, ctx, at) => fn(ctx, at("files").id, false) },
+  "work-orders/queries/customer-view customerPaperId": { act: null, as: "customer", call: (fn, ctx) => fn(ctx) },
+  "work-orders/queries/deposit depositOf": byId(null, "work_orders"),
+  "work-orders/queries/estimates estimateEditor": byText("estimate.write", OF_B.order),
+  "work-orders/queries/estimates versionsOf": byId("prices.see", "work_orders"),
+  "work-orders/queries/estimates sentEstimate": byId("prices.see", "estimates"),
+  "work-orders/queries/find findAnything": byText("orders.see", q),
+  "work-orders/queries/floor floorOf": plain("floor.see"),
+  "work-orders/queries/house houseOrders": { act: null, call: (fn, ctx) => fn(ctx, undefined) },
+  "work-orders/queries/menu menuOf": { act: "prices.see", call: (fn, ctx) => fn(ctx, { withRetired: true }) },
+  "work-orders/queries/order-money moneyOfOrders": byIds(null, "work_orders"),
+  "work-orders/queries/order-money moneyOfOrder": byId(null, "work_orders"),
+  "work-orders/queries/order-page orderPage": byText("orders.see", OF_B.order),
+  "work-orders/queries/orders findOrders": asked("orders.see", { view: "open", q, station: "", person: "", promised: "", sort: "number", descending: "true", limit: 100 }),
+  "work-orders/queries/parts partsOf": byId("stock.see", "work_orders"),
+  "work-orders/queries/parts epoxySheetFor": { act: "work.record", call: (fn, ctx) => fn(ctx, OF_B.order, 1) },
+  "work-orders/queries/parts epoxyFillsOf": byId("orders.see", "pieces"),
+  "work-orders/queries/piece piecePage": { act: "orders.see", call: (fn, ctx) => fn(ctx, OF_B.order, 1) },
+  "work-orders/queries/piece releaseSheet": byId("orders.see", "pieces"),
+  "work-orders/queries/release-facts releaseFactsOf": { act: null, call: (fn, ctx, at) => fn(ctx, at("pieces").id, at("people").id) },
+  "work-orders/queries/rules rulesFor": { act: null, call: (fn, ctx, at) => fn(ctx, at("customers").id, "2026-03-20") },
+  "work-orders/queries/timeline timelineOf": byId(null, "work_orders"),
+};
+
+/** Functions beside the queries that read nothing. */
+export const READS_NOTHING: Record<string, string> = {
+  "stock/queries/part-figures partFigures": "makes a piece of SQL for the shop it is given",
+  "purchasing/queries/orders seesPrices": "asks the actor's roles only",
+};
+
+/** Inner parts want the open transaction in their context. */
+export const inside = (ctx: ShopContext, tx: TxContext["tx"]): TxContext => ({ ...ctx, tx });
+
+/** Cases of endpoints, by method and path: B's ids in a query string or body. Those without ids are asked for the canary by themselves. */
+export const ENDPOINT_CASES: Record<string, (at: At) => Record<string, unknown>> = {
+  "GET /api/v1/s/{shop}/parts/{part}/movements": (at) => ({ part: at("parts").id }),
+  "POST /api/v1/clock/identify": (at) => ({ kind: "pin", personId: at("people").id, pin: "480131" }),
+};
