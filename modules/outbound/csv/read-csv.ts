@@ -1,0 +1,10 @@
+import Papa from "papaparse";
+
+export const DELIMITERS = ["auto", ",", ";", "\t"] as const;
+export type Delimiter = (typeof DELIMITERS)[number];
+
+/** A text of separated values as rows of cells, blanks around cells taken off, empty lines left out. Quoting as in RFC 4180. */
+export function readCsv(text: string, delimiter: Delimiter = "auto"): { rows: string[][]; delimiter: string } {
+  const { data, meta } = Papa.parse<string[]>(text.replace(/^\ufeff/, ""), { delimiter: delimiter === "auto" ? "" : delimiter, skipEmptyLines: "greedy", delimitersToGuess: [",", ";", "\t"] });
+  return { rows: data.map((row) => row.map((cell) => cell.trim())), delimiter: meta.delimiter };
+}
