@@ -1,0 +1,26 @@
+"use server";
+import { shopAction } from "@/modules/access/action";
+import { acceptCorrection, askCorrection, enterTime, refuseCorrection, setAsideEntry, settlePunch } from "./commands/corrections";
+import { addDevice, makeEnrolCode, revokeDevice } from "./commands/devices";
+import { doorIn, doorOut } from "./commands/door";
+import { stopClock } from "./commands/indirect";
+import { addPerson, changePerson, leaveShop, setBadge, setPin, setRate } from "./commands/people";
+
+export const askCorrectionAction = shopAction(askCorrection);
+export const acceptCorrectionAction = shopAction(acceptCorrection);
+export const refuseCorrectionAction = shopAction(refuseCorrection);
+export const enterTimeAction = shopAction(enterTime);
+export const setAsideEntryAction = shopAction(setAsideEntry);
+export const settlePunchAction = shopAction(settlePunch);
+export const addDeviceAction = shopAction(addDevice);
+export const makeEnrolCodeAction = shopAction(makeEnrolCode);
+export const revokeDeviceAction = shopAction(revokeDevice);
+export const doorInAction = shopAction(doorIn);
+export const doorOutAction = shopAction(doorOut);
+export const stopClockAction = shopAction(stopClock);
+export const addPersonAction = shopAction(addPerson);
+export const changePersonAction = shopAction(changePerson);
+export const setBadgeAction = shopAction(setBadge);
+export const setPinAction = shopAction(setPin);
+export const setRateAction = shopAction(setRate);
+export const leaveShopAction = shopAction(leaveShop);

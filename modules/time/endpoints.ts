@@ -1,0 +1,10 @@
+import "server-only";
+import { defineEndpoint } from "@/modules/access/api";
+import { ok } from "@/modules/kernel/result";
+import { z } from "@/modules/kernel/zod";
+import { peopleAt } from "./queries/people-at";
+
+export const peopleAtEndpoint = defineEndpoint({
+  method: "GET", path: "/api/v1/s/{shop}/time/now", summary: "Who is in, on what, since when", input: z.object({}), by: ["person"],
+  run: async (ctx) => ok(await peopleAt(ctx)),
+});
