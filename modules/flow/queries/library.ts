@@ -37,7 +37,7 @@ function filters(ctx: ShopContext, ask: LibraryAsk): SQL[] {
     ask.seat ? sql`lower(${flowTests.seatNote}) like ${has(ask.seat)}` : null,
     ask.from ? sql`${flowTests.startedAt} >= ${startOfDay(ask.from, ctx.shop.zone).toISOString()}::timestamptz` : null,
     ask.to ? sql`${flowTests.startedAt} < ${startOfDay(addDays(ask.to, 1), ctx.shop.zone).toISOString()}::timestamptz` : null,
-    ask.q ? sql`(lower(${heads.mark}) like ${has(ask.q)} or lower(${heads.castingNumber}) like ${has(ask.q)} or lower(${heads.family}) like ${has(ask.q)} or lower(${flowTests.notes}) like ${has(ask.q)})` : null,
+    ask.q ? sql`(lower(${heads.mark}) like ${has(ask.q)} or lower(${heads.castingNumber}) like ${has(ask.q)} or lower(${heads.family}) like ${has(ask.q)})` : null,
   ].filter((x) => x !== null);
 }
 
