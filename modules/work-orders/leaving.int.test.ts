@@ -1,5 +1,6 @@
 import { randomUUID } from "node:crypto";
 import { beforeAll, describe, expect, it } from "vitest";
+import { sha256 } from "@/modules/access/audit";
 import { NotFound } from "@/modules/access/context";
 import { asCustomer, HERO_LABOR, HERO_SHELF, hashOf, heroLines, heroMenu, heroParts, openHero, pieceVersion, sendVersion, type HeroOrder } from "@/tests/support/hero-order";
 import { behindTheCurtain } from "@/tests/support/database";
@@ -28,7 +29,7 @@ async function agreedOrder(mark: string): Promise<HeroOrder> {
   must(await answerByLink(await asCustomer(a, h, v1.estimateId, "2026-02-19T17:42:00Z"), { answer: "approved", name: "Odalys Brennan", documentHash: await hashOf(a, v1.estimateId) }, { requestId: requestId() }));
   return h;
 }
-const photo = (subjectId: string) => ({ subjectKind: "piece" as const, subjectId, name: "face.jpg", storageKey: `${a.shop.id}/photo/${randomUUID()}.jpg`, thumbKey: null, sizeBytes: 1000, sha256: "a".repeat(64) });
+const photo = (subjectId: string) => ({ subjectKind: "piece" as const, subjectId, name: "face.jpg", storageKey: `${a.shop.id}/photo/${randomUUID()}.jpg`, thumbKey: null, sizeBytes: 1000, sha256: sha256(randomUUID()) });
 
 beforeAll(async () => {
   a = await testShop("first");
@@ -56,6 +57,11 @@ describe("booking in", () => {
     expect(await one(`select mark || ' ' || family || ' ' || casting_number from heads where piece_id = '${hero.pieceId}'`)).toBe("260224-01 S250-4V K7-2201");
     expect(await one(`select body_text like '%nick on the deck edge%' from mail_messages where kind = 'head-arrived'`)).toBe("t");
     expect(await receivePiece(a.as("rcv", late), await input())).toMatchObject({ ok: false, refusal: { code: "ALREADY_BOOKED_IN" } });
+  });
+  it("takes the same picture once, however often it is sent", async () => {
+    const same = photo(hero.pieceId);
+    const first = must(await addPhoto(a.as("rcv", AT), same));
+    expect(must(await addPhoto(a.as("rcv", AT), { ...same, storageKey: `${a.shop.id}/photo/${randomUUID()}.jpg` }))).toEqual(first);
   });
   it("takes no photo for a piece of another shop, and none that points elsewhere", async () => {
     expect(await addPhoto(b.as("rcv"), photo(hero.pieceId))).toMatchObject({ ok: false, refusal: { code: "NOT_FOUND" } });

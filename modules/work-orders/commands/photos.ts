@@ -23,6 +23,9 @@ export const addPhoto = defineCommand({
     if (!input.storageKey.startsWith(`${shop.id}/`) || (input.thumbKey !== null && !input.thumbKey.startsWith(`${shop.id}/`))) return refuse("NOT_FOUND", "These bytes are not here.");
     const [{ n } = { n: 0 }] = await tx.select({ n: sql<number>`count(*)::int` }).from(files).where(and(eq(files.shopId, shop.id), eq(files.kind, "photo"), eq(files.subjectId, input.subjectId)));
     if (n >= MOST) return refuse("TOO_MANY_PHOTOS", `There are ${MOST} photos already; that is the most.`);
+    // The same picture sent again, after a lost answer for one, is the picture that is here.
+    const [same] = await tx.select({ id: files.id }).from(files).where(and(eq(files.shopId, shop.id), eq(files.kind, "photo"), eq(files.subjectId, input.subjectId), eq(files.sha256, input.sha256))).limit(1);
+    if (same) return ok({ id: same.id, count: n });
     const id = await addFileRow(ctx, {
       kind: "photo", name: input.name, mime: "image/jpeg", extension: "jpg", subject: { kind: input.subjectKind, id: input.subjectId }, note: input.note,
       storageKey: input.storageKey, thumbKey: input.thumbKey, sizeBytes: input.sizeBytes, sha256: input.sha256,

@@ -107,7 +107,7 @@ export async function houseOrders(ctx: TxContext, which: SQL | undefined): Promi
           bookedInAt: p.bookedInAt?.toISOString() ?? null, handedOverAt: p.handedOverAt?.toISOString() ?? null,
           running: inHand && clock ? { ...clock, name: inHand.op.name } : null,
           next: inHand ? { id: inHand.op.id, code: inHand.op.code, name: inHand.op.name, station: inHand.station, workedMinutes: worked.get(inHand.op.id) ?? 0, bookMinutes: inHand.op.bookMinutes, notBefore: inHand.notBefore } : null,
-          bookMinutes: own.reduce((sum, x) => sum + (x.skippedAt ? 0 : x.bookMinutes), 0), workedMinutes: own.reduce((sum, x) => sum + (worked.get(x.id) ?? 0), 0),
+          bookMinutes: own.reduce((sum, x) => sum + (x.skippedAt ? 0 : x.bookMinutes), 0), workedMinutes: own.reduce((sum, x) => sum + (worked.get(x.id) ?? 0), 0) + (clock ? Math.max(0, Math.floor((ctx.now.getTime() - Date.parse(clock.since)) / 60_000)) : 0),
           leftMinutes: open.reduce((sum, x) => sum + Math.max(0, x.op.bookMinutes - (worked.get(x.op.id) ?? 0)), 0),
           status: pieceStatus({
             isBookedIn: p.bookedInAt !== null, isReleased: p.releasedAt !== null, isGone: p.handedOverAt !== null, isApproved: o.agreedEstimateId !== null,
