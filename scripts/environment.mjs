@@ -64,7 +64,7 @@ export function outsideServices(environment = process.env) {
   return {
     database: together(environment, ["VK_OWNER_URL", "VK_DATABASE_URL", "VK_JOB_DATABASE_URL"], "an outside database needs the owner's, the web's and the worker's address."),
     payments: environment.STRIPE_API_BASE ? false : together(environment, ["STRIPE_SECRET_KEY", "STRIPE_WEBHOOK_SECRET"], "payments need the secret key and the signing secret of the webhook."),
-    mail: together(environment, ["SMTP_URL", "VK_MAIL_FROM"], "mail needs the server's address and the address to send from."),
+    mail: Boolean(environment.SMTP_URL) && together(environment, ["SMTP_URL", "VK_MAIL_FROM"], "mail needs the server's address and the address to send from."),
     files: together(environment, ["S3_BUCKET", "S3_REGION", "S3_ACCESS_KEY_ID", "S3_SECRET_ACCESS_KEY"], "files in a bucket need its name, region and both keys."),
   };
 }
@@ -108,7 +108,7 @@ export function assemble({ folder, ports, secrets, database, clockFile, environm
     NEXTAUTH_SECRET: environment.NEXTAUTH_SECRET || secrets.sessionSecret,
     VK_PIN_PEPPER: environment.VK_PIN_PEPPER || secrets.pinPepper,
     VK_SIGN_INS_FILE: path.join(folder, "demo-sign-ins.json"),
-    ...(outside.mail ? {} : { SMTP_URL: `smtp://127.0.0.1:${ports.mail}`, VK_MAIL_FROM: "shop@valvekeeper.example" }),
+    ...(outside.mail ? {} : { SMTP_URL: `smtp://127.0.0.1:${ports.mail}`, VK_MAIL_FROM: environment.VK_MAIL_FROM || "shop@valvekeeper.example" }),
     ...(outside.payments ? {} : {
       STRIPE_SECRET_KEY: secrets.paymentKey,
       STRIPE_WEBHOOK_SECRET: secrets.paymentWebhookSecret,

@@ -203,8 +203,8 @@ function running(base) {
   const pid = Number(lines[0]);
   if (!Number.isInteger(pid) || pid <= 0 || !alive(pid)) return { state: "stale", pid };
   const command = commandOf(pid);
-  // A process that is dead but not yet buried has no command line any more. The server itself judges what it left.
-  if (command.trim() === "") return { state: "stale", pid };
+  // Dead, but its parent has not taken notice yet: such a process has no command line any more.
+  if (command.trim() === "") return { state: "unburied", pid, file };
   const ours = /postgres|postmaster/.test(command.split(" ")[0] ?? "") && command.includes(data);
   return ours ? { state: "running", pid, port: Number(lines[3]) } : { state: "reused", pid, file };
 }
@@ -254,6 +254,12 @@ function assertDurable(cluster) {
   );
 }
 
+/** The state once a dead server has been buried, which takes a moment, or will not happen at all. */
+async function settled(base) {
+  for (let tries = 0; tries < 20 && running(base).state === "unburied"; tries += 1) await sleep(100);
+  return running(base);
+}
+
 /** A running cluster: made when new, started when stopped. Returns how to reach it. */
 export async function startCluster(place) {
   const { base } = place;
@@ -278,12 +284,13 @@ export async function startCluster(place) {
   if (!has(passwordFile)) throw new Problem(`${passwordFile} is missing: without it nobody can open the database beside it.\nBring the file back from a backup.`);
   const cluster = { base, bin, port: place.port, password: fs.readFileSync(passwordFile, "utf8").trim(), fresh };
 
-  const now = running(base);
+  const now = await settled(base);
   if (now.state === "running" && Number.isInteger(now.port) && now.port > 0) {
     cluster.port = now.port;
   } else {
-    // Its process number now belongs to somebody else: the server would believe itself running.
-    if (now.state === "reused") fs.rmSync(now.file);
+    // Its process number belongs to somebody else, or to a dead process that nobody buries: the server would believe
+    // itself running. What other processes it left is still found, by the shared memory of the data folder.
+    if (now.state === "reused" || now.state === "unburied") fs.rmSync(now.file);
     await mustBeFree(place.port, place.variable, "the database");
     writeSettings(context);
     await launch(bin, context);
@@ -305,7 +312,7 @@ export function stopCluster(place, mode = "fast") {
   return true;
 }
 
-/** `stopped`, `running`, or what a crash left: `stale` or `reused`. */
+/** `stopped`, `running`, or what a crash left: `stale`, `reused` or `unburied`. */
 export const clusterState = (place) => running(place.base);
 
 const literal = (text) => `'${text.replaceAll("'", "''")}'`;

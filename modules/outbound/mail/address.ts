@@ -21,7 +21,6 @@ export function parseAddress(text: string): Result<string> {
   const trimmed = text.trim();
   if (trimmed === "") return no("The e-mail address is missing.");
   if (trimmed.length > 254) return no("An e-mail address has at most 254 characters.");
-  // eslint-disable-next-line no-control-regex -- everything outside ASCII is meant
   if (/[^\x00-\x7f]/.test(trimmed)) return no("The address holds a letter that mail servers can't be trusted to carry.");
   if (/[,;:<>()[\]"\\\s]/.test(trimmed)) return no("Only the bare address of one person fits here.");
   const at = trimmed.indexOf("@");

@@ -48,5 +48,5 @@ export function allowedDefinition(definition: TDocumentDefinitions): TDocumentDe
       return made;
     };
   }
-  return { ...rest, images, ...wrapped } as TDocumentDefinitions;
+  return { ...rest, images, ...wrapped };
 }

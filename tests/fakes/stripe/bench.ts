@@ -41,7 +41,7 @@ export async function openBench(options: { now: () => Date; file?: string | null
     control: async (what, input = {}) => {
       const answer = await fetch(`http://127.0.0.1:${fake.port}/_control/${what}`, { method: "POST", body: JSON.stringify(input) });
       if (!answer.ok) throw new Error(`${what}: ${answer.status} ${await answer.text()}`);
-      return await answer.json();
+      return (await answer.json()) as unknown;
     },
     submit: (id, form) => fetch(`http://127.0.0.1:${fake.port}/c/pay/${id}`, { method: "POST", body: new URLSearchParams(form), redirect: "manual" }),
     until: async (fits, what) => {

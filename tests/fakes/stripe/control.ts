@@ -1,6 +1,6 @@
 import { z } from "@/modules/kernel/zod";
 import { json, type Answer, type Call } from "../shared/http";
-import { API_FAULTS, type ApiFault, type ApiFaults } from "./faults";
+import { API_FAULTS, type ApiFaults } from "./faults";
 import type { Provider } from "./provider";
 import { noSuch, Refusal } from "./refusal";
 import type { Webhooks } from "./webhooks";
@@ -45,7 +45,7 @@ async function act(c: Controlled, what: string, input: unknown): Promise<unknown
   switch (what) {
     case "": {
       const { fail, times: n } = wanted.faults.parse(input);
-      faults.set(fail as ApiFault | null, n);
+      faults.set(fail, n);
       return faults.pending;
     }
     case "fee":

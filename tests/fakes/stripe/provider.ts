@@ -1,26 +1,13 @@
 import type Stripe from "stripe";
 import { newBalance, newCharge, newDispute, newIntent, newPayout, newRefund, newSession, type CardUsed } from "./objects";
 import { invalid, noSuch } from "./refusal";
+import { checkSession, DAY_SECONDS, type SessionWanted } from "./session-rules";
 import { feeOf, newId, type Keeper } from "./state";
-
-export interface SessionWanted {
-  amount: number;
-  currency: string;
-  description: string;
-  reference: string | null;
-  metadata: Record<string, string>;
-  intentMetadata: Record<string, string>;
-  email: string | null;
-  successUrl: string;
-  cancelUrl: string | null;
-  expiresAt: number | null;
-}
 
 interface Origin {
   idempotencyKey: string | null;
 }
 
-const MINUTE = 60;
 const idOf = (value: string | { id: string } | null): string | null => (value === null || typeof value === "string" ? value : value.id);
 
 /** What happens at the provider: sessions, payments, refunds, disputes and payouts, each told as an event. */
@@ -45,7 +32,7 @@ export class Provider {
     const event: Stripe.EventBase = {
       id: newId("evt"), object: "event", api_version: this.apiVersion, created: this.seconds(),
       // What an event shows is how things stood then.
-      data: { object: structuredClone(object) as Stripe.Event.Data.Object }, livemode: false, pending_webhooks: 1,
+      data: { object: structuredClone(object) }, livemode: false, pending_webhooks: 1,
       request: origin === undefined ? null : { id: newId("req", 14), idempotency_key: origin.idempotencyKey }, type,
     };
     this.state.events.push(event);
@@ -56,11 +43,8 @@ export class Provider {
 
   createSession(w: SessionWanted): Stripe.Checkout.Session {
     const created = this.seconds();
-    const expiresAt = w.expiresAt ?? created + 24 * 60 * MINUTE;
-    if (expiresAt < created + 30 * MINUTE - 5) throw invalid("The `expires_at` timestamp must be at least 30 minutes from Checkout Session creation.", "expires_at");
-    if (expiresAt > created + 24 * 60 * MINUTE + 5) throw invalid("The `expires_at` timestamp must be less than 24 hours from Checkout Session creation.", "expires_at");
-    if (w.amount < 50) throw invalid("The Checkout Session's total amount is below the smallest that can be charged.", "line_items", "amount_too_small");
-    if (w.amount > 99_999_999) throw invalid("The amount must be no more than 999,999.99.", "line_items", "amount_too_large");
+    const expiresAt = w.expiresAt ?? created + DAY_SECONDS;
+    checkSession(w.amount, expiresAt, created);
     const id = newId("cs_test", 40);
     const session = newSession({
       id, amount: w.amount, currency: w.currency, reference: w.reference, metadata: w.metadata, email: w.email, successUrl: w.successUrl, cancelUrl: w.cancelUrl,
