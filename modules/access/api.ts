@@ -20,6 +20,8 @@ export interface Endpoint<S extends z.ZodType, T> {
   readonly by: readonly ("person" | "device")[];
   /** A tablet put out of use may still call this, with the little it may still do. */
   readonly revokedToo?: boolean;
+  /** Hands on what was sent, once the schema took it: a command reads typed text itself, and may not read it twice. */
+  readonly asTyped?: boolean;
   run(ctx: ShopContext, input: z.output<S>, requestId: string | null): Promise<Result<T>>;
 }
 
@@ -30,7 +32,7 @@ export function commandEndpoint<S extends z.ZodType, T>(
   command: Command<S, T>, at: { path: string; summary: string; by?: Endpoint<S, T>["by"] },
 ): Endpoint<S, T> {
   return {
-    method: "POST", path: at.path, summary: at.summary, input: command.spec.input, by: at.by ?? ["person"],
+    method: "POST", path: at.path, summary: at.summary, input: command.spec.input, by: at.by ?? ["person"], asTyped: true,
     run: (ctx, input, requestId) => command(ctx, input as z.input<S>, requestId ? { requestId } : {}),
   };
 }
@@ -73,7 +75,7 @@ export function handle<S extends z.ZodType, T>(endpoint: Endpoint<S, T>) {
       if (!parsed.success) {
         return problem(422, "Some fields need another look.", { fields: parsed.error.issues.map((i) => ({ path: i.path.join("."), message: i.message })) });
       }
-      const result = await endpoint.run(ctx, parsed.data, requestId);
+      const result = await endpoint.run(ctx, endpoint.asTyped ? (raw as z.output<S>) : parsed.data, requestId);
       if (result.ok) return Response.json(result.value ?? null, { headers: { "cache-control": "no-store" } });
       const { code, message, field, fields, data } = result.refusal;
       const status = code === "CHANGED_MEANWHILE" ? 409 : 422;

@@ -6,9 +6,10 @@ const OWN: Record<string, string> = {
   "app/api/auth/[...nextauth]/route.ts": "next-auth's own handler",
   "app/api/health/route.ts": "says only whether the product can serve",
   "app/api/stripe/webhook/route.ts": "the provider's signature stands for origin and sign-in",
+  "app/api/v1/clock/enrol/route.ts": "a tablet that is nobody yet: origin, limit of tries and the code stand for sign-in",
 };
 /** Makers of handlers and contexts that a route must go through. */
-const THROUGH = /\b(handle\(|shopFile\(|shopContextOrNull\(|shopRoute\(|openLink\(|linkContext\(|deviceContext\(|shopPage\()/;
+const THROUGH = /\b(handle\(|signedIn\(|shopFile\(|shopContextOrNull\(|shopRoute\(|openLink\(|linkContext\(|deviceContext\(|shopPage\()/;
 
 const routes = sources("app", /^route\.tsx?$/);
 
