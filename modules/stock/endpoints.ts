@@ -1,7 +1,8 @@
 import "server-only";
 import { defineEndpoint } from "@/modules/access/api";
 import { ok } from "@/modules/kernel/result";
-import { findPartsInput, ledgerInput } from "./input";
+import { findPartsInput, ledgerInput, partInput } from "./input";
+import { getPart } from "./queries/get-part";
 import { findParts } from "./queries/find-parts";
 import { ledgerOf } from "./queries/ledger";
 
@@ -13,4 +14,9 @@ export const findPartsEndpoint = defineEndpoint({
 export const ledgerEndpoint = defineEndpoint({
   method: "GET", path: "/api/v1/s/{shop}/parts/{part}/movements", summary: "Ledger of one part, newest first, with the quantity after each row", input: ledgerInput, by: ["person"],
   run: async (ctx, input) => ok(await ledgerOf(ctx, input)),
+});
+
+export const partEndpoint = defineEndpoint({
+  method: "GET", path: "/api/v1/s/{shop}/parts/{part}", summary: "One part with its lots, kit, what waits for it and what is on order", input: partInput, by: ["person"],
+  run: async (ctx, input) => ok(await getPart(ctx, input.part)),
 });

@@ -86,3 +86,4 @@ export const countInput = z.strictObject({
 export const reverseInput = z.strictObject({ movementId: z.uuid(), reason: line(200).min(3, "Say why, in a few words.") });
 export const scrapInput = z.strictObject({ partId: z.uuid(), lotId: z.union([z.uuid(), z.literal("")]).default(""), qty: qtyText, reason: line(200).min(3, "Say why it is thrown out.") });
 export const ledgerInput = z.strictObject({ part: z.uuid(), before: z.coerce.number().int().optional(), limit: z.coerce.number().int().min(1).max(100).default(40) });
+export const partInput = z.strictObject({ part: z.string().min(1).max(60) });

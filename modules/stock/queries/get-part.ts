@@ -4,6 +4,7 @@ import { kitLines, lots, parts, purchaseOrderLines, purchaseOrders, suppliers, w
 import { ableTo, inShop, mustBeAble, NotFound, type ShopContext } from "@/modules/access/context";
 import { currencyDecimals } from "@/modules/kernel/format";
 import { addDays, localDate } from "@/modules/kernel/instant";
+import { isUuid } from "@/modules/kernel/id";
 import { minorText } from "@/modules/kernel/money";
 import { milliText } from "@/modules/kernel/quantity";
 import { getPartRow, type PartRow } from "./find-parts";
@@ -24,13 +25,13 @@ export interface PartDetail extends PartRow {
   form: { salePrice: string; reorderPoint: string; orderQty: string };
 }
 
-/** One part, whole, by its number. @throws NotFound */
-export async function getPart(ctx: ShopContext, sku: string): Promise<PartDetail> {
+/** One part, whole, by its number or id. @throws NotFound */
+export async function getPart(ctx: ShopContext, skuOrId: string): Promise<PartDetail> {
   mustBeAble(ctx, "stock.see");
   return inShop(ctx, async (tx) => {
     const inner = { ...ctx, tx };
     const mine = { shopId: ctx.shop.id };
-    const [p] = await tx.select().from(parts).where(and(eq(parts.shopId, mine.shopId), eq(parts.sku, sku)));
+    const [p] = await tx.select().from(parts).where(and(eq(parts.shopId, mine.shopId), isUuid(skuOrId) ? eq(parts.id, skuOrId) : eq(parts.sku, skuOrId)));
     if (!p) throw new NotFound("part");
     const row = await getPartRow(inner, p.id);
     if (!row) throw new NotFound("part");

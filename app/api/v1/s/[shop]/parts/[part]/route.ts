@@ -1,0 +1,4 @@
+import { handle } from "@/modules/access/api";
+import { partEndpoint } from "@/modules/stock/endpoints";
+
+export const GET = handle(partEndpoint);
