@@ -55,7 +55,8 @@ async function issued(shop: TestShop, order: HeroOrder, when = at) {
   const d = await drafted(shop, order, when);
   return must(await issueInvoice(shop.as("mgr", when), { invoiceId: d.invoiceId, version: d.version, totalMinor: d.totalMinor }));
 }
-const freeText = (kind: "labor" | "part", description: string, unitPrice: string) => ({ kind, pieceNo: 1, operationCode: kind === "labor" ? "PIN" : null, partId: kind === "part" ? (ids["SEL-55"] ?? null) : null, description, qty: "1", unitPrice });
+const freeText = (kind: "labor" | "part", description: string, unitPrice: string): Lines[number] =>
+  kind === "labor" ? { kind, pieceNo: 1, operationCode: "PIN", description, qty: "1", unitPrice } : { kind, pieceNo: 1, partId: ids["SEL-55"] ?? null, description, qty: "1", unitPrice };
 
 describe("numbers", () => {
   it("takes fifty presses of Issue as one, and leaves no hole between invoices issued at once", async () => {

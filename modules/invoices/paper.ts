@@ -8,7 +8,7 @@ import { leaveJob } from "@/modules/access/jobs";
 import { linkFor } from "@/modules/access/link";
 import { addFileRow, keepBytes } from "@/modules/documents/files";
 import { queueMail } from "@/modules/documents/mail";
-import { date, money } from "@/modules/kernel/format";
+import { date, decimal, money } from "@/modules/kernel/format";
 import { ok, refuse } from "@/modules/kernel/result";
 import { renderPdf } from "@/modules/outbound/pdf/render";
 import type { InvoiceSnapshot } from "./domain/invoice-snapshot";
@@ -56,7 +56,7 @@ async function mailInvoice(ctx: TxContext, of: { i: typeof invoices.$inferSelect
   const { i, snapshot: s } = of;
   if (!of.email) return false;
   const credit = s.kind === "credit";
-  const gains = s.pieces.flatMap((p) => p.gain.sides.flatMap((x) => (x.comparison.comparable ? [`${p.tag} ${x.side}: ${x.comparison.meanGainCfm >= 0 ? "+" : ""}${x.comparison.meanGainCfm.toFixed(2)} CFM on the mean of ${x.comparison.rows.length} lifts`] : [])));
+  const gains = s.pieces.flatMap((p) => p.gain.sides.flatMap((x) => (x.comparison.comparable ? [`${p.tag} ${x.side}: ${x.comparison.meanGainCfm >= 0 ? "+" : ""}${decimal(x.comparison.meanGainCfm, 2, s.locale)} CFM on the mean of ${x.comparison.rows.length} lifts`] : [])));
   await queueMail(ctx, {
     kind: credit ? "credit-note" : "invoice", to: of.email, toName: of.customerName,
     subject: credit ? `Credit note ${s.number ?? ""} for ${s.credits?.number ?? ""}` : `Invoice ${s.number ?? ""}, ${money(s.balanceMinor, ctx.shop)}${s.balanceMinor > 0 ? " to pay" : ""}`,

@@ -1,6 +1,8 @@
 "use server";
 import { secretAction, shopAction } from "@/modules/access/action";
 import { linkContext } from "@/modules/access/link";
+import { takeInBankFile } from "./bank-import";
+import { lockMatch, unlockMatch } from "./bank-match";
 import { answerRefund, askInvoicePayment, askRefund, closeEvent, explainPayoutItem, retryEvent, takePayment } from "./commands";
 import { startPaymentNow } from "./start-payment";
 
@@ -12,3 +14,6 @@ export const retryEventAction = shopAction(retryEvent);
 export const closeEventAction = shopAction(closeEvent);
 export const explainPayoutItemAction = shopAction(explainPayoutItem);
 export const startPaymentAction = secretAction(startPaymentNow, linkContext);
+export const takeInBankFileAction = shopAction(takeInBankFile);
+export const lockMatchAction = shopAction(lockMatch);
+export const unlockMatchAction = shopAction(unlockMatch);
