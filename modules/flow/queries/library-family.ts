@@ -15,7 +15,7 @@ import { standsInLibrary } from "./library";
 import { rawTests } from "./tests-of-head";
 
 /** A family's middle curve is taken over so many of its newest tests, so that the answer takes as long in year ten as in year one. */
-export const MEDIAN_OF_NEWEST = 200;
+export const MEDIAN_OF_NEWEST = 100;
 
 export interface MedianPoint extends LiftReading { n: number }
 export interface PortOfFamily { headId: string; cylinder: number; mark: string; ownerKind: string; workDone: string[]; flowedAt: string; gain: "comparable" | "withheld" | "absent"; reasons: string[]; meanGainCfm: number | null; meanPercent: number | null; notes: string[] }
