@@ -4,16 +4,11 @@ import { and, eq, gt, isNull } from "drizzle-orm";
 import { devices } from "@/db/schema";
 import { defineCommand } from "@/modules/access/command";
 import { personIdOf } from "@/modules/access/context";
-import { DEVICE_KINDS } from "@/modules/access/device";
 import { hashToken, newToken } from "@/modules/access/secret-token";
 import { ok, refuse } from "@/modules/kernel/result";
 import { z } from "@/modules/kernel/zod";
+import { newDeviceInput } from "../device-input";
 import { ENROL_MINUTES, enrolCodeHash, newEnrolCode } from "../identity/enrol-code";
-
-export const newDeviceInput = z.strictObject({
-  name: z.string().trim().min(1, "Name the tablet by its place, such as Bench 2.").max(40, "At most 40 characters."),
-  kind: z.enum(DEVICE_KINDS).default("clock"),
-});
 
 const codeUntil = (now: Date) => new Date(now.getTime() + ENROL_MINUTES * 60_000);
 
