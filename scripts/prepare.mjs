@@ -122,8 +122,10 @@ async function withBuildLock(work) {
 
 async function build(hash) {
   say("Building the application (a minute or two)");
-  // What a failed or interrupted build left behind can make the next one fail.
-  fs.rmSync(at(".next"), { recursive: true, force: true });
+  // What a failed or interrupted build left behind can make the next one fail. A development server keeps its own part.
+  if (fs.existsSync(at(".next"))) {
+    for (const part of fs.readdirSync(at(".next"))) if (part !== "dev") fs.rmSync(at(".next", part), { recursive: true, force: true });
+  }
   await runShown(process.execPath, [at("node_modules/next/dist/bin/next"), "build"], {
     env: { ...process.env, NODE_ENV: "production", NEXT_TELEMETRY_DISABLED: "1" },
   }, "The build failed: see above");

@@ -17,9 +17,10 @@ export const TEST_FOLDER = path.join(PROJECT, ".test");
 /**
  * @param options `name` of the database, made anew; `place` of its cluster (the tests' own when left out);
  *   `ports` to begin looking for free ones; `clock` gives it a test clock; `demo` loads the demo shops;
- *   `serve: false` leaves out web and worker (start them with the returned `supervised`).
+ *   `serve: false` leaves out web and worker (start them with the returned `supervised`); `fromSources` serves by the
+ *   development server, without a build.
  */
-export async function openProduct({ name, place = clusterPlace("test"), ports: from, folder = path.join(TEST_FOLDER, name), clock = false, demo = false, serve = true }) {
+export async function openProduct({ name, place = clusterPlace("test"), ports: from, folder = path.join(TEST_FOLDER, name), clock = false, demo = false, serve = true, fromSources = false }) {
   const startedHere = clusterState(place).state !== "running";
   const supervised = supervisor({ logs: path.join(folder, "logs"), quiet: true });
   if (startedHere) supervised.adoptCluster(place);
@@ -51,11 +52,12 @@ export async function openProduct({ name, place = clusterPlace("test"), ports: f
       say("Loading the demo shops");
       await runTypescript("seed/run.ts", parts.ownerEnv, "The demo shops could not be loaded:", ["react-server"]);
     }
-    const server = await ensureServer(TEST_FOLDER);
+    const server = fromSources ? PROJECT : await ensureServer(TEST_FOLDER);
+    const web = fromSources ? { args: [path.join(PROJECT, "node_modules/next/dist/bin/next"), "dev", "-p", String(ports.web), "-H", "127.0.0.1"], NODE_ENV: "development" } : { NODE_ENV: "production" };
     const product = {
       ...parts, server, ports, cluster, place, folder, clockFile, supervised,
       startWeb: async () => {
-        supervised.start("web", { server, env: { ...parts.env, PORT: String(ports.web), HOSTNAME: "127.0.0.1" } });
+        supervised.start("web", { server, args: web.args, env: { ...parts.env, NODE_ENV: web.NODE_ENV, PORT: String(ports.web), HOSTNAME: "127.0.0.1" } });
         await supervised.waitFor("web", `http://127.0.0.1:${ports.web}/api/health`);
       },
       startWorker: () => supervised.start("worker", { env: parts.workerEnv }),
