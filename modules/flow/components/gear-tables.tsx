@@ -60,7 +60,7 @@ export function GearTable({ view, ...props }: TableProps & { view: GearView }) {
   const { room, slug, edit } = props;
   if (rows.length === 0) return null;
   return (
-    <div className="lane-x">
+    <div className="lane-x relative">
       <table className="calm">
         <caption className="sr-only">{caption}</caption>
         <thead><tr>{heads.map(([text, right]) => <th key={text} scope="col" className={right ? "r" : undefined}>{text}</th>)}{room.canSetUp ? <th scope="col"><span className="sr-only">Change</span></th> : null}</tr></thead>

@@ -39,7 +39,7 @@ export default async function BenchPage({ params }: { params: Promise<{ shop: st
           )}
           <Bay label="Checks" flush>
             {checks.length === 0 ? <p className="mid p-4">No check is on record.</p> : (
-              <div className="lane-x"><table className="calm">
+              <div className="lane-x relative"><table className="calm">
                 <caption className="sr-only">Checks of {bench.name}, newest first</caption>
                 <thead><tr><th scope="col">When</th><th scope="col">By</th><th scope="col" className="r">Factor</th><th scope="col" className="r">Moved %</th><th scope="col" className="r">Worst plate %</th><th scope="col">Plates: certified, shown</th></tr></thead>
                 <tbody>{checks.map((c) => (

@@ -1,0 +1,56 @@
+import Link from "next/link";
+import { notFound } from "next/navigation";
+import { orNotFound, shopPage } from "@/modules/access/page";
+import { differenceText, flowText, liftWords } from "@/modules/flow/components/flow-words";
+import { LibraryCurves } from "@/modules/flow/components/library-curves";
+import { portWords, PURPOSE_WORDS } from "@/modules/flow/components/library-words";
+import type { Purpose } from "@/modules/flow/domain/raw-test";
+import { overlayInput } from "@/modules/flow/library-input";
+import { overlayOf, type OverlaySide } from "@/modules/flow/queries/library-family";
+import { date } from "@/modules/kernel/format";
+import { localDate } from "@/modules/kernel/instant";
+import { Bay } from "@/modules/ui/bay";
+import { LinkButton } from "@/modules/ui/button";
+import { Note } from "@/modules/ui/note";
+import { PageHead } from "@/modules/ui/page-head";
+
+export const metadata = { title: "Two tests over each other" };
+
+const nameOf = (s: OverlaySide) => `${s.mark} ${portWords(s.cylinder, s.side)} ${PURPOSE_WORDS[s.purpose as Purpose]}`;
+
+export default async function OverlayPage({ params, searchParams }: { params: Promise<{ shop: string }>; searchParams: Promise<Record<string, string | string[] | undefined>> }) {
+  const ctx = await shopPage(params, "flow.see");
+  const { a, b } = await searchParams;
+  const ask = overlayInput.safeParse({ a, b });
+  if (!ask.success) notFound();
+  const over = await orNotFound(overlayOf(ctx, ask.data));
+  const { slug, locale } = ctx.shop;
+  const unit = over.b.liftUnit;
+  const day = (iso: string) => date(localDate(new Date(iso), ctx.shop.zone), locale);
+  const word = over.samePort ? "Gain" : "Difference";
+  return (
+    <main id="main" className="page">
+      <PageHead title={`${nameOf(over.a)} and ${nameOf(over.b)}`} sub={over.a.family === over.b.family ? over.a.family : `${over.a.family} and ${over.b.family}`} actions={<LinkButton href={`/s/${slug}/flow/library`}>Library</LinkButton>} />
+      {over.comparable
+        ? <Note tone="info" className="mb-6" title="May be compared.">Side, bench, fixture, pressure, entry, open valves and lifts are alike.{over.samePort ? "" : " They are two castings, so the difference is not the gain of one port."} {over.notes.map((n) => n.words).join(" ")}</Note>
+        : <Note className="mb-6" title="Not comparable, so no difference is shown.">{over.reasons.map((r) => r.words).join(" ")} {over.notes.map((n) => n.words).join(" ")}</Note>}
+      <div className="split" style={{ "--side": "460px" } as React.CSSProperties}>
+        <Bay label="Over each other">
+          <LibraryCurves curves={[{ name: nameOf(over.a), look: "thin", readings: over.a.readings }, { name: nameOf(over.b), look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" width={820} height={420} />
+          {over.a.atInH2O === over.b.atInH2O ? null : <p className="hint">The first is stated at {over.a.atInH2O} in H₂O, the second at {over.b.atInH2O}: the two lines do not stand on one scale of pressure.</p>}
+        </Bay>
+        <Bay label="Readings, CFM" flush>
+          <table className="calm">
+            <caption className="sr-only">Both tests lift by lift</caption>
+            <thead><tr><th scope="col">Lift, {unit}</th><th scope="col" className="r">First</th><th scope="col" className="r">Second</th>{over.comparable ? <th scope="col" className="r">{word}</th> : null}</tr></thead>
+            <tbody>{over.rows.map((r) => <tr key={r.liftUm}><th scope="row" className="normal-case tracking-normal">{liftWords(r.liftUm, unit, locale)}</th><td className="r q">{r.a === null ? "—" : flowText(r.a, locale)}</td><td className="r q">{r.b === null ? "—" : flowText(r.b, locale)}</td>{over.comparable ? <td className="r q"><b>{r.difference === null ? "—" : differenceText(r.difference, locale)}</b></td> : null}</tr>)}</tbody>
+            {over.meanDifferenceCfm === null ? null : <tfoot><tr><td colSpan={3}>Mean over the common lifts</td><td className="r q">{differenceText(over.meanDifferenceCfm, locale)}</td></tr></tfoot>}
+          </table>
+          <div className="p-4">
+            {[over.a, over.b].map((s, i) => <p key={s.testId} className="sm mid mb-2"><b>{i === 0 ? "First" : "Second"}: <Link className="lk" href={`/s/${slug}/flow/${s.headId}`}>{s.mark}</Link></b>, {day(s.startedAt)}, {s.operator}. {s.conditions.join(", ")}.</p>)}
+          </div>
+        </Bay>
+      </div>
+    </main>
+  );
+}

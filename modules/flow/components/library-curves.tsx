@@ -1,0 +1,52 @@
+import { decimal } from "@/modules/kernel/format";
+import { curveScale, flowTicks, liftTicks } from "../domain/curve-scale";
+import { curveSegments, drawnCurve } from "../domain/drawn-curve";
+import type { LiftUnit } from "../domain/lift-ladder";
+import { pathText } from "../domain/path-segments";
+import type { LiftReading } from "../domain/repeats";
+import { flowText, liftWords } from "./flow-words";
+
+export interface NamedCurve { name: string; readings: readonly LiftReading[]; /** thin, thick, or thick and broken */ look: "thin" | "thick" | "dash" }
+
+/** Any curves over each other, named at their ends. Both axes begin at zero; the curve is the monotone one through the readings. */
+export function LibraryCurves({ curves, unit, atInH2O, camLiftUm, locale, title, width = 760, height = 360 }: {
+  curves: readonly NamedCurve[]; unit: LiftUnit; atInH2O: number; camLiftUm: number | null; locale: string; title: string; width?: number; height?: number;
+}) {
+  const plot = { left: 46, right: width - 150, top: 34, bottom: height - 46 };
+  const all = curves.flatMap((c) => c.readings);
+  if (all.length === 0) return <p className="hint">Nothing has been read here yet.</p>;
+  const text = (v: number, d: number) => decimal(v, d, locale);
+  const scale = curveScale(plot, [...all.map((r) => r.liftUm), camLiftUm ?? 0], all.map((r) => r.flowCfm));
+  const drawn = curves.flatMap((c) => {
+    const made = drawnCurve(c.readings);
+    const last = made.ok ? made.value.readings.at(-1) : undefined;
+    return made.ok && last ? [{ ...c, path: pathText(curveSegments(made.value, scale)), last }] : [];
+  });
+  // Names keep 15 px between them, from the highest line down.
+  let free = -Infinity;
+  const names = [...drawn].sort((p, q) => q.last.flowCfm - p.last.flowCfm).map((c) => {
+    const y = Math.max(scale.y(c.last.flowCfm) + 4, free + 15);
+    free = y;
+    return { ...c, labelY: y };
+  });
+  const words = drawn.map((c) => `${c.name}: ${c.readings.length} lifts, ${flowText(c.last.flowCfm, locale)} CFM at ${liftWords(c.last.liftUm, unit, locale)} ${unit}`).join("; ");
+  return (
+    <svg className="ch" viewBox={`0 0 ${width} ${height}`} role="img" aria-label={`${title}. ${words}.`}>
+      {flowTicks(scale, 8, text).map((t) => (
+        <g key={t.flowCfm}>{t.flowCfm === 0 ? null : <path className="gr" d={`M${plot.left} ${t.y}H${plot.right}`} />}<text x={plot.left - 8} y={t.y + 4} textAnchor="end">{t.text}</text></g>
+      ))}
+      {liftTicks(scale, unit, text).map((t) => (
+        <g key={t.liftUm}><path className="tk" d={`M${t.x} ${plot.bottom}v${t.lengthPx}`} />{t.text === undefined ? null : <text x={t.x} y={plot.bottom + 22} textAnchor="middle">{t.text}</text>}</g>
+      ))}
+      <path className="ax" d={`M${plot.left} ${plot.top - 6}V${plot.bottom}H${plot.right}`} />
+      {camLiftUm === null ? null : (
+        <g><path className="cam" d={`M${scale.x(camLiftUm)} ${plot.top - 4}V${plot.bottom}`} /><text x={scale.x(camLiftUm)} y={plot.top - 10} textAnchor="middle">Cam lift {liftWords(camLiftUm, unit, locale)}</text></g>
+      )}
+      {drawn.map((c) => <path key={c.name} className={c.look === "thin" ? "base" : c.look === "dash" ? "aft dash" : "aft"} d={c.path} />)}
+      {drawn.filter((c) => c.look !== "thin").flatMap((c) => c.readings.map((r) => <circle key={`${c.name}${r.liftUm}`} className={c.look === "dash" ? "pw" : "pt"} cx={scale.x(r.liftUm)} cy={scale.y(r.flowCfm)} r={3} />))}
+      {names.map((c) => <text key={c.name} className={c.look === "thin" ? undefined : "lab"} x={scale.x(c.last.liftUm) + 10} y={c.labelY}>{c.name}</text>)}
+      <text className="eng" x={plot.left} y={14}>{`CFM AT ${atInH2O} IN H₂O`}</text>
+      <text className="eng" x={plot.right} y={height - 4} textAnchor="end">{`VALVE LIFT, ${unit.toUpperCase()}`}</text>
+    </svg>
+  );
+}
