@@ -22,6 +22,8 @@ export default defineConfig({
           name: "unit",
           include: ["modules/**/*.test.{ts,tsx}", "tests/fakes/**/*.test.ts", "scripts/**/*.test.ts", "db/**/*.test.ts", "seed/**/*.test.ts"],
           exclude: ["**/*.int.test.ts", "**/node_modules/**"],
+          // Stand-ins speak over real sockets: a loaded machine must not make them fail.
+          testTimeout: 20_000,
         },
       },
       { extends: true, test: { ...shared, name: "architecture", include: ["tests/architecture/**/*.test.ts"], exclude: ["**/*.int.test.ts"], testTimeout: 60_000 } },

@@ -15,7 +15,7 @@ let port: MailPort;
 beforeEach(async () => {
   folder = await mkdtemp(path.join(tmpdir(), "mail-"));
   box = await startMail({ smtpPort: 0, inboxPort: 0, folder });
-  port = smtpMail({ url: `smtp://127.0.0.1:${box.smtpPort}`, from: "Heads <shop@example.com>", timeoutMs: 2000 });
+  port = smtpMail({ url: `smtp://127.0.0.1:${box.smtpPort}`, from: "Heads <shop@example.com>", timeoutMs: 10_000 });
 });
 afterEach(async () => {
   port.close();
@@ -110,7 +110,7 @@ describe("the local inbox", () => {
     expect((await fetch(url(path_))).status).toBe(404);
   });
   it("lets a test wait for the next message to somebody", async () => {
-    const waiting = fetch(url("/api/messages/wait?to=sam@example.org&timeout=5000"));
+    const waiting = fetch(url("/api/messages/wait?to=sam@example.org&timeout=15000"));
     await port.send(message());
     await port.send(message({ to: "sam@example.org", subject: "yours" }));
     const mail = (await (await waiting).json()) as StoredMail;

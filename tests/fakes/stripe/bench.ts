@@ -34,7 +34,7 @@ export async function openBench(options: { now: () => Date; file?: string | null
     port: 0, file: options.file ?? null, secretKey: SECRET_KEY, webhookSecret: WEBHOOK_SECRET, webhookUrl: `http://127.0.0.1:${receiver.port}/`, now: options.now,
   });
   const port = stripePayments({
-    secretKey: SECRET_KEY, webhookSecret: WEBHOOK_SECRET, apiBase: `http://127.0.0.1:${fake.port}`, timeoutMs: options.timeoutMs ?? 2000, retriesMax: options.retriesMax ?? 2,
+    secretKey: SECRET_KEY, webhookSecret: WEBHOOK_SECRET, apiBase: `http://127.0.0.1:${fake.port}`, timeoutMs: options.timeoutMs ?? 10_000, retriesMax: options.retriesMax ?? 2,
   });
   const bench: Bench = {
     fake, port, heard, answer: 200,
@@ -45,7 +45,7 @@ export async function openBench(options: { now: () => Date; file?: string | null
     },
     submit: (id, form) => fetch(`http://127.0.0.1:${fake.port}/c/pay/${id}`, { method: "POST", body: new URLSearchParams(form), redirect: "manual" }),
     until: async (fits, what) => {
-      const end = Date.now() + 5000;
+      const end = Date.now() + 15_000;
       while (!fits()) {
         if (Date.now() > end) throw new Error(`waited in vain: ${what}`);
         await new Promise((resolve) => setTimeout(resolve, 10));

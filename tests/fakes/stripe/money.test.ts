@@ -4,7 +4,7 @@ import path from "node:path";
 import { afterEach, beforeEach, describe, expect, it } from "vitest";
 import { PaymentFailure } from "@/modules/outbound/payments/port";
 import { stripePayments } from "@/modules/outbound/payments/stripe";
-import { goodCard, openBench, request, WEBHOOK_SECRET, type Bench } from "./bench";
+import { goodCard, openBench, request, SECRET_KEY, WEBHOOK_SECRET, type Bench } from "./bench";
 import { feeOf } from "./state";
 import { signature } from "./webhooks";
 
@@ -13,7 +13,7 @@ let folder: string;
 let bench: Bench;
 beforeEach(async () => {
   folder = await mkdtemp(path.join(tmpdir(), "pay-"));
-  bench = await openBench({ now: () => now, file: path.join(folder, "payments.json"), timeoutMs: 400 });
+  bench = await openBench({ now: () => now, file: path.join(folder, "payments.json") });
 });
 afterEach(async () => {
   await bench.close();
@@ -119,10 +119,16 @@ describe("a provider in trouble", () => {
     if (fail === "truncate") expect(await failure(call)).toMatchObject({ kind: "unreachable", retry: true });
     else await expect(call).resolves.toMatchObject({ status: "open" });
   });
-  it.each([[500, "busy"], [429, "busy"], ["reset", "unreachable"], ["hang", "unreachable"]] as const)("after three times %s is %s, to be tried later", async (fail, kind) => {
+  it.each([[500, "busy"], [429, "busy"], ["reset", "unreachable"]] as const)("after three times %s is %s, to be tried later", async (fail, kind) => {
     await bench.control("", { fail, times: 3 });
     expect(await failure(bench.port.getSession("cs_test_x"))).toMatchObject({ kind, retry: true });
     await bench.control("", { fail: null });
+  });
+  it("that stays silent is given up after the time allowed, to be tried later", async () => {
+    const hasty = stripePayments({ secretKey: SECRET_KEY, webhookSecret: WEBHOOK_SECRET, apiBase: `http://127.0.0.1:${bench.fake.port}`, timeoutMs: 300, retriesMax: 1 });
+    await bench.control("", { fail: "hang", times: 2 });
+    expect(await failure(hasty.getSession("cs_test_x"))).toMatchObject({ kind: "unreachable", retry: true });
+    expect(bench.fake.faults.pending.times).toBe(0);
   });
   it("that does not know our key says so", async () => {
     const other = stripePayments({ secretKey: "sk_test_other", webhookSecret: "x", apiBase: `http://127.0.0.1:${bench.fake.port}` });
