@@ -3,7 +3,6 @@ import { allowed } from "@/modules/access/rate-limit";
 import { requestFacts } from "@/modules/access/session";
 import { JoinForm } from "@/modules/time/components/join-form";
 import { openInvitation } from "@/modules/time/identity/invitation";
-import { EmptyState } from "@/modules/ui/empty-state";
 
 export const metadata: Metadata = { title: "Invitation", referrer: "no-referrer" };
 
@@ -20,7 +19,12 @@ export default async function JoinPage({ params }: { params: Promise<{ token: st
           <p className="mid mb-6">You will sign in with {invited.email}. Choose a password that only you know.</p>
           <JoinForm token={token} email={invited.email} />
         </>
-      ) : <EmptyState title="This invitation is not good any more" level={1}>It works once and for three days. Ask the owner of the shop for a new one.</EmptyState>}
+      ) : (
+        <>
+          <h1 className="mb-2 font-cut text-h2 font-bold">This invitation is not good any more</h1>
+          <p className="mid">It works once and for three days. Ask the owner of the shop for a new one.</p>
+        </>
+      )}
     </main>
   );
 }

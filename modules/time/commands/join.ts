@@ -18,6 +18,9 @@ export const acceptInvitation = defineCommand({
     const over = () => refuse("INVITATION_OVER", "This invitation is not good (any more). Ask the owner for a new one.");
     const invited = await openInvitation(token);
     if (!invited || invited.ctx.shop.id !== ctx.shop.id) return over();
+    // Held until the end, so that two takers of one invitation come one after the other.
+    const mine = and(eq(people.shopId, ctx.shop.id), eq(people.id, invited.personId), eq(people.version, invited.version), isNull(people.userId), isNull(people.leftAt));
+    if (!(await ctx.tx.select({ id: people.id }).from(people).where(mine).for("update")).length) return over();
     const problem = passwordProblem(password, [invited.name, ctx.shop.name, invited.email]);
     if (problem) return refuse("PASSWORD_WEAK", problem, { field: "password" });
     const [known] = await ctx.tx.select().from(users).where(eq(users.email, invited.email));
@@ -27,7 +30,7 @@ export const acceptInvitation = defineCommand({
     const userId = known?.id ?? randomUUID();
     if (!known) await ctx.tx.insert(users).values({ id: userId, email: invited.email, name: invited.name, passwordHash: await hashSecret(password) });
     const taken = await ctx.tx.update(people).set({ userId, version: sql`${people.version} + 1` })
-      .where(and(eq(people.shopId, ctx.shop.id), eq(people.id, invited.personId), eq(people.version, invited.version), isNull(people.userId), isNull(people.leftAt))).returning({ id: people.id });
+      .where(mine).returning({ id: people.id });
     return taken.length ? ok({ personId: invited.personId, slug: ctx.shop.slug }) : over();
   },
   subject: (_, value) => ({ kind: "person", id: value.personId }),

@@ -42,7 +42,7 @@ export function DeviceList({ devices }: { devices: readonly DeviceRow[] }) {
     <div className="split">
       <Bay label="Tablets" flush>
         {code ? (
-          <div className="plate mb-4" role="status">
+          <div className="plate mx-[18px] mb-4" role="status">
             <p>Open <b>/clock</b> on <b>{code.name}</b> and type</p>
             <p className="num n-l" style={{ letterSpacing: "0.06em" }}>{code.code}</p>
             <p className="mid">Once, until {time(code.until, place)}. It is not shown again.</p>
@@ -56,7 +56,7 @@ export function DeviceList({ devices }: { devices: readonly DeviceRow[] }) {
             <tbody>
               {devices.map((d) => (
                 <tr key={d.id}>
-                  <th scope="row">{d.name}</th>
+                  <td className="b">{d.name}</td>
                   <td className="w2">{d.kind === "clock" ? "Shop clock" : "Flow bench"}</td>
                   <td><Status dial={DIAL[d.state]} dim={d.state === "out of use"}>{WORD[d.state]}</Status></td>
                   <td className="w2 q">{d.lastSeenAt ? dateTime(d.lastSeenAt, place) : ""}</td>

@@ -7,7 +7,6 @@ import { localDate } from "@/modules/kernel/instant";
 import { Bay } from "@/modules/ui/bay";
 import { Button } from "@/modules/ui/button";
 import { DialogClose, TaskDialog } from "@/modules/ui/dialog";
-import { EmptyState } from "@/modules/ui/empty-state";
 import { Flag } from "@/modules/ui/flag";
 import { CommandForm } from "@/modules/ui/form/command-form";
 import { SubmitButton } from "@/modules/ui/form/submit-button";
@@ -29,21 +28,21 @@ export function LookAt({ look, mayCorrect }: { look: ToLookAt; mayCorrect: boole
   const sheet = (personId: string, at: string) => `/s/${place.slug}/time?person=${personId}&date=${localDate(new Date(at), place.zone)}`;
   return (
     <Bay label="To look at" aside={count === 0 ? "nothing" : String(count)} flush={count > 0}>
-      {count === 0 ? <EmptyState title="Nothing to look at" level={3}>Open attendances, asked corrections and flagged times land here.</EmptyState> : (
+      {count === 0 ? <p className="mid">Open attendances, asked corrections and flagged times land here.</p> : (
         <table>
           <caption className="sr-only">What asks for somebody</caption>
           <thead><tr><th scope="col">Person</th><th scope="col">What</th><th scope="col"><span className="sr-only">Answer</span></th></tr></thead>
           <tbody>
             {look.open.map((o) => (
               <tr key={`o${o.personId}`}>
-                <th scope="row">{o.name}</th>
+                <td className="b">{o.name}</td>
                 <td><Flag>No out</Flag> In since {dateTime(o.since, place)}. The person is asked at the next badge.</td>
                 <td className="r"><TextLink href={sheet(o.personId, o.since)}>Sheet</TextLink></td>
               </tr>
             ))}
             {look.asked.map((a) => (
               <tr key={a.id}>
-                <th scope="row">{a.name}</th>
+                <td className="b">{a.name}</td>
                 <td>
                   Asks for {day(a.startedAt)} <b className="q">{time(a.startedAt, place)} to {time(a.endedAt, place)}</b>, {a.words.toLowerCase()}
                   {a.replaces ? <> in place of <span className="q">{time(a.replaces.startedAt, place)} to {a.replaces.endedAt ? time(a.replaces.endedAt, place) : "open"}</span></> : null}.
@@ -58,7 +57,7 @@ export function LookAt({ look, mayCorrect }: { look: ToLookAt; mayCorrect: boole
             ))}
             {look.flagged.map((f) => (
               <tr key={f.id}>
-                <th scope="row">{f.name}</th>
+                <td className="b">{f.name}</td>
                 <td><Flag tone="open">{capital(f.flag)}</Flag> {capital(f.kind)}, {dateTime(f.at, place)}{f.note ? <span className="mid block">{f.note}</span> : null}</td>
                 <td className="r"><span className="inline-flex flex-wrap items-center justify-end gap-3"><TextLink href={sheet(f.personId, f.at)}>Sheet</TextLink>{mayCorrect && !f.isOwn ? <ActButton size="sm" action={settlePunchAction} input={{ id: f.id }}>Settled</ActButton> : null}</span></td>
               </tr>

@@ -23,7 +23,7 @@ export function NowTable({ initial, linksToSheets }: { initial: PersonNow[]; lin
         <tbody>
           {data.map((p) => (
             <tr key={p.personId}>
-              <th scope="row">{linksToSheets ? <TextLink href={`/s/${place.slug}/time?person=${p.personId}`}>{p.shortName}</TextLink> : p.shortName}</th>
+              <td className="b">{linksToSheets ? <TextLink href={`/s/${place.slug}/time?person=${p.personId}`}>{p.shortName}</TextLink> : p.shortName}</td>
               <td>{p.isOutMissing ? <Flag>No out</Flag> : p.isIn ? <Status dial="work">In {p.inSince ? time(p.inSince, place) : ""}</Status> : <Status dial="queue" dim>Out</Status>}</td>
               <td>{p.on ? <span className="inline-flex flex-wrap items-center gap-x-2 gap-y-1">{p.on.tag ? <Tag running>{p.on.tag}</Tag> : null}{capital(p.on.words)}</span> : p.isIn ? <span className="mid">Nothing running</span> : null}</td>
               <td className="r q w2">{p.on ? time(p.on.since, place) : ""}</td>

@@ -4,9 +4,10 @@ import clsx from "clsx";
 import { hours, money, shortDate, time } from "@/modules/kernel/format";
 import { addDays } from "@/modules/kernel/instant";
 import { Bay } from "@/modules/ui/bay";
-import { Button, LinkButton } from "@/modules/ui/button";
+import { Button } from "@/modules/ui/button";
 import { Flag } from "@/modules/ui/flag";
 import { usePlace } from "@/modules/ui/place";
+import { TextLink } from "@/modules/ui/text-link";
 import { Tube } from "@/modules/ui/tube";
 import type { SheetEntry, WeekSheet } from "../queries/week-sheet";
 import { capital, spell } from "../tablet/words";
@@ -15,7 +16,7 @@ import { AskCorrectionDialog, EnterTimeDialog } from "./time-dialog";
 const WEEK = 40 * 60;
 
 /** One person's week: each day attendance beside bench, with what is not explained; every row with its source. */
-export function WeekView({ sheet, people, mayEnter }: { sheet: WeekSheet; people: readonly { id: string; name: string }[]; mayEnter: boolean }) {
+export function WeekView({ sheet, people, mayEnter, today }: { today: string; sheet: WeekSheet; people: readonly { id: string; name: string }[]; mayEnter: boolean }) {
   const place = usePlace();
   const at = (date: string) => `/s/${place.slug}/time?${sheet.isOwn ? "" : `person=${sheet.personId}&`}date=${date}`;
   const correct = (entry: SheetEntry | undefined, date: string, label: string) =>
@@ -23,8 +24,8 @@ export function WeekView({ sheet, people, mayEnter }: { sheet: WeekSheet; people
     : mayEnter ? <EnterTimeDialog entry={entry} date={date} personId={sheet.personId} people={people} trigger={<Button size="sm" variant="lo">{label}</Button>} /> : null;
   return (
     <Bay label={`${sheet.isOwn ? "My week" : sheet.name}, from ${shortDate(sheet.from, place.locale)}`} flush
-      aside={<span className="inline-flex gap-2"><LinkButton size="sm" href={at(addDays(sheet.from, -7))}>Week before</LinkButton><LinkButton size="sm" href={at(addDays(sheet.from, 7))}>Week after</LinkButton></span>}>
-      <div className="mb-4 flex flex-wrap items-center gap-x-8 gap-y-3">
+      aside={<span className="inline-flex gap-4"><TextLink href={at(addDays(sheet.from, -7))}>Before</TextLink><TextLink href={at(addDays(sheet.from, 7))}>After</TextLink></span>}>
+      <div className="mb-3 flex flex-wrap items-center gap-x-8 gap-y-3 px-[18px] pt-1">
         <span className="num n-l">{spell(sheet.doorMinutes)}</span>
         <span className="min-w-[220px] flex-1"><Tube value={sheet.doorMinutes} mark={WEEK} size="big" label={`${hours(sheet.doorMinutes, place.locale, 2)} of 40 hours`} /><span className="mid sm mt-1 block">{hours(sheet.doorMinutes, place.locale, 2)} h at the door, {hours(sheet.benchMinutes, place.locale, 2)} h on the bench clock</span></span>
         {sheet.overtimeMinutes > 0 ? <Flag>Over 40 h by {spell(sheet.overtimeMinutes)}</Flag> : null}
@@ -36,11 +37,11 @@ export function WeekView({ sheet, people, mayEnter }: { sheet: WeekSheet; people
         {sheet.days.map((d) => (
           <tbody key={d.date}>
             <tr className="calm">
-              <th scope="rowgroup"><b>{shortDate(d.date, place.locale)}</b></th>
-              <td>{d.doorMinutes === 0 && d.entries.length === 0 ? <span className="mid">Off</span> : <span className="mid">bench {spell(d.directMinutes)}, not on a head {spell(d.indirectMinutes)}, breaks {spell(d.paidBreakMinutes)} {d.asks === "none" ? null : <Flag tone="open">{d.asks === "what was done" ? `${spell(d.unexplainedMinutes)} not explained` : `bench ${spell(-d.unexplainedMinutes)} beyond door`}</Flag>}</span>}</td>
+              <td className="b nw">{shortDate(d.date, place.locale)}</td>
+              <td>{d.doorMinutes === 0 && d.entries.length === 0 ? <span className="mid">{d.date > today ? "" : "Off"}</span> : <span className="mid">bench {spell(d.directMinutes)}, not on a head {spell(d.indirectMinutes)}, breaks {spell(d.paidBreakMinutes)} {d.asks === "none" ? null : <Flag tone="open">{d.asks === "what was done" ? `${spell(d.unexplainedMinutes)} not explained` : `bench ${spell(-d.unexplainedMinutes)} beyond door`}</Flag>}</span>}</td>
               <td className="r q"><b>{d.doorMinutes > 0 ? spell(d.doorMinutes) : ""}</b></td>
               <td className="w2" />
-              <td className="r">{correct(undefined, d.date, sheet.isOwn ? "Missing time" : "Enter")}</td>
+              <td className="r">{d.date > today ? null : correct(undefined, d.date, sheet.isOwn ? "Missing time" : "Enter")}</td>
             </tr>
             {d.entries.map((e) => (
               <tr key={e.id} className={clsx(e.isReplaced && "dim")}>

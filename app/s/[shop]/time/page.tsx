@@ -26,14 +26,16 @@ export default async function TimePage({ params, searchParams }: { params: Promi
   const sheet = await orNotFound(weekSheet(ctx, { personId: ask.person, date: ask.date }));
   const [now, look, people] = [await peopleAt(ctx), seesAll ? await toLookAt(ctx) : null, seesAll ? await peopleNames(ctx) : []];
   const today = localDate(ctx.now, ctx.shop.zone);
+  const inNow = <Bay label="In now" flush><NowTable initial={now} linksToSheets={seesAll} /></Bay>;
   return (
     <main id="main" className="page">
       <PageHead title="Time" sub={longDay(today, ctx.shop.locale)}
         actions={mayEnter ? <EnterTimeDialog date={today} people={people.filter((p) => ctx.actor.kind !== "person" || p.id !== ctx.actor.id)} trigger={<Button variant="go" icon="plus">Enter time</Button>} /> : undefined} />
       <Bays>
         {look ? <LookAt look={look} mayCorrect={mayEnter} /> : null}
-        <WeekView sheet={sheet} people={people} mayEnter={mayEnter} />
-        <Bay label="In now" flush><NowTable initial={now} linksToSheets={seesAll} /></Bay>
+        {seesAll && !ask.person ? inNow : null}
+        <WeekView sheet={sheet} people={people} mayEnter={mayEnter} today={today} />
+        {seesAll && !ask.person ? null : inNow}
       </Bays>
     </main>
   );

@@ -21,7 +21,7 @@ export default async function PeoplePage({ params }: { params: Promise<{ shop: s
         <tbody>
           {people.map((p) => (
             <tr key={p.id}>
-              <th scope="row"><TextLink href={`/s/${ctx.shop.slug}/settings/people/${p.id}`}>{p.name}</TextLink>{p.leftAt ? <span className="mid"> · has left</span> : null}</th>
+              <td className="b"><TextLink href={`/s/${ctx.shop.slug}/settings/people/${p.id}`}>{p.name}</TextLink>{p.leftAt ? <span className="mid"> · has left</span> : null}</td>
               <td className="w2 mid">{p.roles.map(roleWord).join(", ")}</td>
               <td>{p.leftAt ? "" : p.pin === "dead" ? <Flag>PIN dead</Flag> : [p.hasBadge ? "badge" : "", p.pin === "set" ? "PIN" : ""].filter(Boolean).join(", ") || <span className="mid">none</span>}</td>
               <td className="w2">{p.hasSignIn ? "Signs in" : <span className="mid">no</span>}</td>
