@@ -19,7 +19,7 @@ export function database(): Database {
     const pool = new pg.Pool({
       connectionString: url,
       max: Number(process.env.VK_DATABASE_POOL ?? 12),
-      connectionTimeoutMillis: 2_000,
+      connectionTimeoutMillis: 4_000,
       idleTimeoutMillis: 30_000,
       options: "-c statement_timeout=5000 -c lock_timeout=2000 -c idle_in_transaction_session_timeout=10000",
     });

@@ -8,7 +8,6 @@ import { FAMILIES, NINEBARK, NINEBARK_SUPPLIERS } from "../facts/ninebark";
 import { demoCustomers } from "../facts/people";
 import { heroJob } from "./hero";
 import { runsSince, tellJob, type Gear, type JobPlan } from "./job";
-import { offer } from "./orders";
 import { customersOf, heroShelf, menuOnTheWall } from "./set-up";
 import { restOfTheShelf } from "./shelf";
 
@@ -19,7 +18,7 @@ const SMALL: JobPlan["shelf"] = [["SEL-55", "4"], ["GSK-S250-HD", "1"]];
 
 /** Ninebark Headworks: set-up, eighteen months of past jobs, the hero job, and a floor that is alive today. */
 export async function tellNinebark(ownerUrl: string, pinPepper: string, now: Date, say: (line: string) => void): Promise<Cast> {
-  const cast = await castOf(ownerUrl, pinPepper, { ...NINEBARK, numbersFrom: { "WO-2025": 1, "WO-2026": 101, "PO-2026": 231, "INV-2025": 1, "INV-2026": 301, "TAG-260224": 7 } });
+  const cast = await castOf(ownerUrl, pinPepper, { ...NINEBARK, numbersFrom: { "WO-2025": 1, "WO-2026": 117, "PO-2026": 231, "INV-2025": 1, "INV-2026": 316, "TAG-260224": 7 } });
   const first = "2025-05-01T08:00";
   say("  shop, menu, shelf, customers");
   await menuOnTheWall(cast, "Ilse", first);
@@ -55,7 +54,7 @@ export async function tellNinebark(ownerUrl: string, pinPepper: string, now: Dat
       await heroJob(cast, { parts, suppliers, customerId: ids["Odalys Brennan"] ?? "", benchId: bench.id, fixtureId: fixture.id });
     }
     if (opened >= "2026-02-01" && opened < "2026-03-20") continue;
-    await tellJob(cast, gear, plan(i, { opened, promised: addDays(opened, 14), to: i % 9 === 8 ? "invoiced" : "gone", shelf: i % 4 === 0 ? SMALL : [] }), i);
+    await tellJob(cast, gear, plan(i, { opened, promised: addDays(opened, 14), to: "gone", shelf: i % 4 === 0 ? SMALL : [] }), i);
   }
 
   say("  the floor today");
@@ -64,7 +63,9 @@ export async function tellNinebark(ownerUrl: string, pinPepper: string, now: Dat
   const minutesAgo = (m: number) => localMinute(new Date(now.getTime() - m * 60_000), cast.shop.zone);
   const live = (i: number, more: Partial<JobPlan> & Pick<JobPlan, "opened" | "to">) => tellJob(cast, gear, plan(40 + i, more), 40 + i);
   // In the order in which the bench saw them: a person's clock only runs forward.
-  await live(0, { opened: ago(34), promised: ago(1), to: "paid", labor: SEATS });
+  await live(0, { opened: ago(38), promised: ago(20), to: "gone", labor: SEATS });
+  await live(14, { opened: ago(36), promised: ago(24), to: "gone", labor: PORTS });
+  await live(15, { opened: ago(34), promised: ago(1), to: "paid", labor: SEATS });
   await live(1, { opened: ago(30), promised: today, to: "invoiced", labor: PORTS });
   await live(2, { opened: ago(26), promised: today, to: "in work", labor: FULL, done: 10 });
   await live(3, { opened: ago(22), promised: today, to: "in work", labor: FULL, done: 9 });
@@ -80,9 +81,7 @@ export async function tellNinebark(ownerUrl: string, pinPepper: string, now: Dat
   await live(13, { opened: ago(3), promised: addDays(today, 10), to: "sent", labor: SEATS });
 
   must(await setHold(cast.as("Ilse", minutesAgo(60 * 26)), { pieceId: held.pieceIds[0] ?? "", reason: "customer answer", words: "asked about the cracked guide boss" }), "hold");
-  const finding = must(await recordFinding(cast.as("Hollis", minutesAgo(60 * 25)), { pieceId: short.pieceIds[0] ?? "", position: "intake", words: "Seat ring loose in the pocket, intake left.", goOnMeanwhile: true }), "finding");
-  void finding;
-  void offer;
+  must(await recordFinding(cast.as("Hollis", minutesAgo(60 * 25)), { pieceId: short.pieceIds[0] ?? "", position: "intake", words: "Seat ring loose in the pocket, intake left.", goOnMeanwhile: true }), "finding");
   if (localDate(new Date(now.getTime() - 110 * 60_000), cast.shop.zone) === today) {
     await runsSince(cast, "Anselm", intake.pieceIds[0] ?? "", "PIN", minutesAgo(102));
     await runsSince(cast, "June", flowing.pieceIds[0] ?? "", "FLB", minutesAgo(12));
