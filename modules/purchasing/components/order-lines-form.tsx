@@ -1,0 +1,85 @@
+"use client";
+import { useQuery } from "@tanstack/react-query";
+import { useRouter } from "next/navigation";
+import { useFieldArray, useWatch } from "react-hook-form";
+import { currencyDecimals, money } from "@/modules/kernel/format";
+import { extend, minorText, parseMinor } from "@/modules/kernel/money";
+import { milliText, parseMilli } from "@/modules/kernel/quantity";
+import { PartPicker } from "@/modules/stock/components/part-picker";
+import { Button } from "@/modules/ui/button";
+import { getJson } from "@/modules/ui/fetch-json";
+import { CommandForm } from "@/modules/ui/form/command-form";
+import { DateInput } from "@/modules/ui/form/date-input";
+import { MoneyInput } from "@/modules/ui/form/money-input";
+import { NumberInput } from "@/modules/ui/form/number-input";
+import { SelectInput } from "@/modules/ui/form/select-input";
+import { SubmitButton } from "@/modules/ui/form/submit-button";
+import { TextInput } from "@/modules/ui/form/text-input";
+import { TextareaInput } from "@/modules/ui/form/textarea-input";
+import { useCommandForm } from "@/modules/ui/form/use-command-form";
+import { usePlace } from "@/modules/ui/place";
+import { useToast } from "@/modules/ui/toast";
+import { changePurchaseOrderAction } from "../actions";
+import { changeOrderInput } from "../input";
+import type { OrderDetail } from "../queries/orders";
+
+/** The lines of a purchase order as typed. After sending, saving makes the next revision and mails it. */
+export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?: () => void }) {
+  const { slug, currency, locale } = usePlace();
+  const router = useRouter();
+  const toast = useToast();
+  const decimals = currencyDecimals(currency);
+  const form = useCommandForm({
+    schema: changeOrderInput,
+    defaultValues: {
+      id: order.id, version: order.version, neededBy: order.neededBy ?? "", notes: order.notes,
+      lines: order.lines.map((l) => ({ id: l.id, partId: l.partId, supplierNumber: l.supplierNumber, qty: milliText(l.qtyMilli), price: l.unitPriceMinor === null ? "" : minorText(l.unitPriceMinor, decimals), workOrderId: l.workOrderId ?? "" })),
+    },
+    action: (sent) => changePurchaseOrderAction(slug, sent),
+    onDone: (v) => { toast({ text: order.rawState === "sent" ? `Revision ${v.revision} goes to ${order.supplier.name}` : "Lines saved" }); onDone?.(); router.refresh(); },
+  });
+  const lines = useFieldArray({ control: form.rhf.control, name: "lines", keyName: "key" });
+  const typed = useWatch({ control: form.rhf.control, name: "lines" });
+  const total = (typed ?? []).reduce((sum, l) => sum + extend(parseMinor(String(l?.price ?? ""), decimals) ?? 0, parseMilli(String(l?.qty ?? "")) ?? 0), 0);
+  const known = new Map(order.lines.map((l) => [l.id, l]));
+  const orders = useOpenOrders(slug);
+  const tied = order.lines.flatMap((l) => (l.workOrderId && l.workOrderNumber ? [{ value: l.workOrderId, label: l.workOrderNumber }] : []));
+  const choices = [...new Map([...tied, ...orders].map((o) => [o.value, o])).values()];
+  return (
+    <CommandForm form={form} label="Lines of the purchase order" toFix="before the lines are saved">
+      <div className="grid gap-4">
+        {lines.fields.map((f, i) => {
+          const l = known.get(f.id ?? "");
+          return (
+            <div key={f.key} className="grid items-start gap-3" style={{ gridTemplateColumns: "repeat(auto-fit, minmax(112px, 1fr))", borderBottom: "1px solid var(--line)", paddingBottom: 12 }}>
+              <PartPicker name={`lines.${i}.partId`} label={`Line ${i + 1}, part`} kits={false} initial={l ? { id: l.partId, sku: l.sku, description: l.description } : null} />
+              <TextInput name={`lines.${i}.supplierNumber`} label="Their number" optional />
+              <NumberInput name={`lines.${i}.qty`} label="Quantity" alignEnd />
+              <MoneyInput name={`lines.${i}.price`} label="Each" currency={currency} />
+              <SelectInput name={`lines.${i}.workOrderId`} label="For" options={[{ value: "", label: "Stock" }, ...choices]} />
+              <Button variant="lo" className="self-end" onClick={() => lines.remove(i)} aria-label={`Take line ${i + 1} off`}>Take off</Button>
+            </div>
+          );
+        })}
+      </div>
+      <div style={{ display: "flex", justifyContent: "space-between", gap: 12, margin: "14px 0", flexWrap: "wrap" }}>
+        <Button variant="lo" icon="plus" onClick={() => lines.append({ id: "", partId: "", supplierNumber: "", qty: "1", price: "", workOrderId: "" })}>Add a part</Button>
+        <b>{`Parts ${money(total, { locale, currency })}`}</b>
+      </div>
+      <div className="fields">
+        <DateInput name="neededBy" label="Needed by" optional />
+        <TextareaInput name="notes" label="Notes on the order" rows={2} optional hint="Printed for the supplier." />
+      </div>
+      <div className="form-act"><SubmitButton pendingText="Saving…">{order.rawState === "sent" ? `Save and send revision ${order.revision + 1}` : "Save lines"}</SubmitButton></div>
+    </CommandForm>
+  );
+}
+
+/** Open work orders to tie a line to. */
+function useOpenOrders(slug: string): { value: string; label: string }[] {
+  const { data } = useQuery({
+    queryKey: ["purchase-work-orders", slug],
+    queryFn: ({ signal }) => getJson<{ rows: { id: string; number: string; customerName: string }[] }>(`/api/v1/s/${slug}/purchases/work-orders`, {}, signal),
+  });
+  return (data?.rows ?? []).map((o) => ({ value: o.id, label: `${o.number}, ${o.customerName}` }));
+}
