@@ -18,6 +18,7 @@ import { addPersonAction, changePersonAction, setBadgeAction, setPinAction, setR
 import { ROLE_WORDS } from "../domain/role-words";
 import { badgeInput, personEditInput, personInput, pinInput, rateInput } from "../input";
 import type { PersonRow } from "../queries/settings-lists";
+import { ActButton } from "./act-button";
 
 function RolesField() {
   const { id, error, form } = useField({ name: "roles", label: "Roles" });
@@ -61,17 +62,19 @@ export function ChangePersonForm({ person }: { person: PersonRow }) {
   return <CommandForm form={form} toFix="before it is kept"><PersonFields /><div className="form-act"><SubmitButton pendingText="Keeping…">Keep changes</SubmitButton></div></CommandForm>;
 }
 
+const newBadge = badgeInput.refine((b) => b.badgeCode !== "", { error: "Scan the badge into this field.", path: ["badgeCode"] });
+
 /** Badge and PIN: each is written and never shown again. */
 export function ClockKeys({ person }: { person: PersonRow }) {
   const { slug } = usePlace();
   const router = useRouter();
-  const badge = useCommandForm({ schema: badgeInput, defaultValues: { id: person.id, badgeCode: "" }, action: (sent) => setBadgeAction(slug, sent), onDone: () => { badge.rhf.reset({ id: person.id, badgeCode: "" }); router.refresh(); } });
+  const badge = useCommandForm({ schema: newBadge, defaultValues: { id: person.id, badgeCode: "" }, action: (sent) => setBadgeAction(slug, sent), onDone: () => { badge.rhf.reset({ id: person.id, badgeCode: "" }); router.refresh(); } });
   const pin = useCommandForm({ schema: pinInput, defaultValues: { id: person.id, pin: "" }, action: (sent) => setPinAction(slug, sent), onDone: () => { pin.rhf.reset({ id: person.id, pin: "" }); router.refresh(); } });
   return (
     <Bay label="At the shop clock">
       <CommandForm form={badge} label="Badge">
-        <div className="fields one"><TextInput name="badgeCode" label="New badge code" hint={person.hasBadge ? "Has a badge. Scan another, or leave empty to take it away." : "No badge yet. Scan it into this field."} autoComplete="off" /></div>
-        <div className="form-act"><SubmitButton variant="plain" pendingText="Writing…">Set badge</SubmitButton></div>
+        <div className="fields one"><TextInput name="badgeCode" label="New badge code" hint={person.hasBadge ? "Has a badge. Scan another into this field." : "No badge yet. Scan it into this field."} autoComplete="off" /></div>
+        <div className="form-act"><SubmitButton variant="plain" pendingText="Writing…">Set badge</SubmitButton>{person.hasBadge ? <ActButton variant="lo" action={setBadgeAction} input={{ id: person.id, badgeCode: "" }}>Take badge away</ActButton> : null}</div>
       </CommandForm>
       <div className="mt-5" />
       <CommandForm form={pin} label="PIN">

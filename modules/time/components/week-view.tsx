@@ -9,7 +9,7 @@ import { Flag } from "@/modules/ui/flag";
 import { usePlace } from "@/modules/ui/place";
 import { TextLink } from "@/modules/ui/text-link";
 import { Tube } from "@/modules/ui/tube";
-import type { SheetEntry, WeekSheet } from "../queries/week-sheet";
+import type { SheetDay, SheetEntry, WeekSheet } from "../queries/week-sheet";
 import { capital, spell } from "../tablet/words";
 import { AskCorrectionDialog, EnterTimeDialog } from "./time-dialog";
 
@@ -38,8 +38,8 @@ export function WeekView({ sheet, people, mayEnter, today }: { today: string; sh
           <tbody key={d.date}>
             <tr className="calm">
               <td className="b nw">{shortDate(d.date, place.locale)}</td>
-              <td>{d.doorMinutes === 0 && d.entries.length === 0 ? <span className="mid">{d.date > today ? "" : "Off"}</span> : <span className="mid">bench {spell(d.directMinutes)}, not on a head {spell(d.indirectMinutes)}, breaks {spell(d.paidBreakMinutes)} {d.asks === "none" ? null : <Flag tone="open">{d.asks === "what was done" ? `${spell(d.unexplainedMinutes)} not explained` : `bench ${spell(-d.unexplainedMinutes)} beyond door`}</Flag>}</span>}</td>
-              <td className="r q"><b>{d.doorMinutes > 0 ? spell(d.doorMinutes) : ""}</b></td>
+              <td>{d.doorMinutes === 0 && d.entries.length === 0 ? <span className="mid">{d.date > today ? "" : "Off"}</span> : <span className="mid">{partsOf(d)} {d.asks === "none" ? null : <Flag tone="open">{d.asks === "what was done" ? `${spell(d.unexplainedMinutes)} not explained` : `bench ${spell(-d.unexplainedMinutes)} beyond door`}</Flag>}</span>}</td>
+              <td className="r q nw"><b>{d.doorMinutes > 0 ? spell(d.doorMinutes) : ""}</b></td>
               <td className="w2" />
               <td className="r">{d.date > today ? null : correct(undefined, d.date, sheet.isOwn ? "Missing time" : "Enter")}</td>
             </tr>
@@ -47,7 +47,7 @@ export function WeekView({ sheet, people, mayEnter, today }: { today: string; sh
               <tr key={e.id} className={clsx(e.isReplaced && "dim")}>
                 <td className="q nw pl-4">{e.isReplaced ? <s>{spanOf(e, place)}</s> : spanOf(e, place)}</td>
                 <td>{capital(e.words)}{e.isRework ? <> <Flag tone="open">Rework</Flag></> : null}{e.isReplaced ? <span className="mid"> · corrected</span> : null}{e.reason ? <span className="mid block">{e.reason}</span> : null}</td>
-                <td className="r q">{e.isReplaced ? <s>{spell(e.minutes)}</s> : spell(e.minutes)}</td>
+                <td className="r q nw">{e.isReplaced ? <s>{spell(e.minutes)}</s> : spell(e.minutes)}</td>
                 <td className="w2 mid">{SOURCE[e.source] ?? e.source}</td>
                 <td className="r">{e.isReplaced ? null : correct(e, d.date, "Correct")}</td>
               </tr>
@@ -59,5 +59,7 @@ export function WeekView({ sheet, people, mayEnter, today }: { today: string; sh
   );
 }
 
+const partsOf = (d: SheetDay): string =>
+  [["bench", d.directMinutes], ["not on a head", d.indirectMinutes], ["breaks", d.paidBreakMinutes]].filter(([, m]) => Number(m) > 0).map(([w, m]) => `${w} ${spell(Number(m))}`).join(", ");
 const spanOf = (e: SheetEntry, place: { locale: string; zone: string }) => `${time(e.startedAt, place)} to ${e.endedAt ? time(e.endedAt, place) : "now"}`;
 const SOURCE: Record<string, string> = { tablet: "Tablet", offline: "Tablet, kept", desk: "Desk", manager: "Entered", correction: "Correction" };
