@@ -36,6 +36,13 @@ BEGIN
     END IF;
   END LOOP;
   EXECUTE 'GRANT USAGE, SELECT ON ALL SEQUENCES IN SCHEMA public TO vk_app, vk_job';
+  -- A dump takes in the sequences and the list of migrations as well.
+  EXECUTE 'GRANT SELECT ON ALL SEQUENCES IN SCHEMA public TO vk_backup';
+  IF EXISTS (SELECT 1 FROM pg_namespace WHERE nspname = 'drizzle') THEN
+    EXECUTE 'GRANT USAGE ON SCHEMA drizzle TO vk_backup';
+    EXECUTE 'GRANT SELECT ON ALL TABLES IN SCHEMA drizzle TO vk_backup';
+    EXECUTE 'GRANT SELECT ON ALL SEQUENCES IN SCHEMA drizzle TO vk_backup';
+  END IF;
   EXECUTE 'REVOKE INSERT, UPDATE, DELETE ON shops FROM vk_app, vk_job';
   EXECUTE 'REVOKE INSERT ON shop_settings FROM vk_app, vk_job';
 END $$;

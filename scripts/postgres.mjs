@@ -66,6 +66,13 @@ function programs(major) {
   return folders.find((folder) => majorOf(folder) === major);
 }
 
+/** The folder with the newest programs, for commands that speak to a server elsewhere. */
+export function newestPrograms() {
+  const folder = programs();
+  if (folder === undefined) throw new Problem("PostgreSQL's programs were not found. VK_PG_BIN may name their folder.");
+  return folder;
+}
+
 /** Install Debian's server, without the cluster and service that its package would make by itself. */
 function install() {
   const manual = "Install it (as root: apt-get install postgresql) and run this command again.";
