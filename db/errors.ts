@@ -12,10 +12,10 @@ export function databaseFault(error: unknown): { state: string; constraint: stri
 /** The same transaction may well pass if tried again: serialisation failure, deadlock. */
 export const isRetryable = (error: unknown): boolean => ["40001", "40P01"].includes(databaseFault(error)?.state ?? "");
 
-/** The database is away, full or out of connections: nothing was written; try again later. */
+/** The database is away, full, out of connections, or too busy to finish within its limits (statement, lock): nothing was written; try again later. */
 export function isOutage(error: unknown): boolean {
   const state = databaseFault(error)?.state ?? "";
-  if (/^(08|57P|53)/.test(state)) return true;
+  if (/^(08|57P|53)|^(57014|55P03|25P03)$/.test(state)) return true;
   let e: unknown = error;
   for (let depth = 0; depth < 4 && e instanceof Error; depth++) {
     if (/ECONNREFUSED|ECONNRESET|EPIPE|timeout exceeded when trying to connect|Connection terminated/.test(`${(e as { code?: string }).code ?? ""} ${e.message}`)) return true;
