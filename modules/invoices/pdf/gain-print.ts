@@ -3,6 +3,7 @@ import { bracket, bigNumber, engraved, FACE, lineTable, PAPER_INK } from "@/modu
 import { curveGeometry } from "@/modules/flow/domain/curve-geometry";
 import { curveContent } from "@/modules/flow/pdf/curve-canvas";
 import { decimal } from "@/modules/kernel/format";
+import { curveUnit } from "../domain/curve-unit";
 import { readingsOf, type GainSide } from "../domain/gain-block";
 import type { InvoicePiece } from "../domain/invoice-snapshot";
 
@@ -11,7 +12,7 @@ const signed = (n: number, digits: number, locale: string) => `${n > 0 ? "+" : n
 
 /** Lift as on the shop's scale: `.350` where inches are at home, `8.89 mm` elsewhere. */
 const liftText = (um: number, inches: boolean, locale: string) => (inches ? decimal(um / 25_400, 3, locale).replace(/^0(?=\D)/, "") : decimal(um / 1000, 2, locale));
-export const usesInches = (locale: string): boolean => /-(US|CA|GB)$/i.test(locale);
+
 
 const portWord = (sides: readonly GainSide[]) => (new Set(sides.map((s) => s.cylinder)).size > 1 || (sides[0]?.cylinder ?? 1) > 1 ? `, port ${sides[0]?.cylinder ?? 1}` : "");
 
@@ -30,7 +31,7 @@ export function gainBracket(piece: InvoicePiece, width: number, locale: string, 
   if (sides.length > 0) {
     const heightPx = 168;
     const geometry = curveGeometry({
-      widthPx: inner, heightPx, mini: true, unit: usesInches(locale) ? "in" : "mm", atInH2O: at ?? 28, camLiftUm: sides[0]?.camLiftUm ?? null,
+      widthPx: inner, heightPx, mini: true, unit: curveUnit(locale), atInH2O: at ?? 28, camLiftUm: sides[0]?.camLiftUm ?? null,
       lines: sides.map((s) => ({ side: s.side, ...readingsOf(s), gain: s.comparison.comparable ? "shown" as const : "withheld" as const })), decimalText: (v, digits) => decimal(v, digits, locale),
     });
     if (geometry.ok) {
@@ -70,7 +71,7 @@ export function gainBracket(piece: InvoicePiece, width: number, locale: string, 
 
 /** Each reading of a piece, lifts across; lower numbers stand as they are, in the same type. */
 export function gainTables(piece: InvoicePiece, locale: string, withTag: boolean): Content[] {
-  const inches = usesInches(locale);
+  const inches = curveUnit(locale) === "in";
   return piece.gain.sides.map((s): Content => {
     const { comparison } = s;
     const rows = comparison.rows;
