@@ -14,6 +14,8 @@ const NO_CARD = "This looks like a card number. Card numbers are never written h
 /** One line of text. */
 export const line = (max: number) =>
   z.string().trim().max(max, `At most ${max} characters.`).refine((s) => !/\p{Cc}/u.test(s), "Line breaks and control characters do not belong here.").refine((s) => !holdsCardNumber(s), NO_CARD);
+/** A maker's number as stamped: any digits may be one, so it is not taken for a card number. */
+const stamped = z.string().trim().max(40, "At most 40 characters.").refine((s) => !/\p{Cc}/u.test(s), "Line breaks and control characters do not belong here.");
 /** Several lines of text. */
 export const words = (max: number) =>
   z.string().trim().max(max, `At most ${max} characters.`).refine((s) => !/[^\P{Cc}\n\r\t]/u.test(s), "Control characters do not belong here.").refine((s) => !holdsCardNumber(s), NO_CARD);
@@ -89,8 +91,8 @@ export const menuEditInput = menuInput.extend({ id: z.uuid(), version: z.number(
 
 const pieceInput = z.strictObject({
   family: line(60).min(1, "Type the engine family, or “unknown”."),
-  castingNumber: line(40).default(""),
-  serial: line(40).default(""),
+  castingNumber: stamped.default(""),
+  serial: stamped.default(""),
   declaredValue: amountOrNone.default(null),
   description: line(200).default(""),
   ownerKind: z.enum(["customer", "shop"]).default("customer"),
@@ -105,7 +107,7 @@ export const openOrderInput = z.strictObject({
   newCustomer: newCustomer.nullable().default(null),
   pieces: z.array(pieceInput).min(1, "An order has at least one piece.").max(24, "At most 24 pieces."),
   wants: words(2000).default(""),
-  use: z.enum(USES),
+  use: z.enum(USES, { error: "Say what it is used on; other will do." }),
   promisedOn: dayOrNone.default(null),
   customerReference: line(60).default(""),
 }).refine((o) => o.customerId !== "" || o.newCustomer !== null, { error: "Pick a customer, or add a new one.", path: ["customerId"] });
@@ -120,7 +122,8 @@ export const cancelOrderInput = z.strictObject({ workOrderId: z.uuid(), version:
 export const startEstimateInput = z.strictObject({ workOrderId: z.uuid(), findingIds: z.array(z.uuid()).max(50).default([]) });
 const estimateLineInput = z.strictObject({
   kind: z.enum(ESTIMATE_LINE_KINDS),
-  pieceNo: z.number().int().min(1).max(24).nullable().default(null),
+  /** "" and null: for the whole order, or for its only piece. */
+  pieceNo: z.union([z.null(), z.literal("").transform(() => null), z.coerce.number<string | number>().int().min(1).max(24)]).default(null),
   /** Of a labor line: the menu's code. */
   operationCode: line(8).nullable().default(null),
   partId: z.uuid().nullable().default(null),
@@ -166,8 +169,8 @@ export const receiveInput = z.strictObject({
   pieceId: z.uuid(), version: z.number().int(),
   parcelCondition: z.enum(["sound", "crushed", "wet", "open", "handed over"], { error: "Say how the parcel looked." }),
   counts: z.partialRecord(z.enum(TRAY_KINDS), count).default({}),
-  castingNumber: line(40).default(""),
-  serial: line(40).default(""),
+  castingNumber: stamped.default(""),
+  serial: stamped.default(""),
   missing: words(1000).default(""),
   damage: words(1000).default(""),
   notes: words(1000).default(""),
