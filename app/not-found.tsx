@@ -1,0 +1,5 @@
+import { NothingHere } from "@/modules/ui/nothing-here";
+
+export default function NotFound() {
+  return <NothingHere home="/" />;
+}
