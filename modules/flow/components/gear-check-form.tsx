@@ -41,7 +41,7 @@ export function GearCheckForm({ benchId, plates }: { benchId: string; plates: re
           <tbody>
             {plates.map((p, i) => (
               <tr key={p.id}>
-                <th scope="row" className="normal-case tracking-normal"><span className="ord">{p.serial}</span>{p.isOverdue ? <span className="dim sm"> past its date</span> : null}</th>
+                <th scope="row" className="border-b border-line normal-case tracking-normal text-ink"><span className="ord">{p.serial}</span>{p.isOverdue ? <span className="dim sm"> past its date</span> : null}</th>
                 <td className="r q">{decimal(p.referenceFlowCfm, 1, locale)} <span className="unit">CFM at {p.atPressureInH2O}</span></td>
                 <td className="w-36"><TextInput name={`plates.${i}.indicated`} label={`Plate ${p.serial}, bench shows`} hideLabel unit="CFM" inputMode="decimal" alignEnd /></td>
               </tr>

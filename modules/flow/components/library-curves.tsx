@@ -9,10 +9,10 @@ import { flowText, liftWords } from "./flow-words";
 export interface NamedCurve { name: string; readings: readonly LiftReading[]; /** thin, thick, or thick and broken */ look: "thin" | "thick" | "dash" }
 
 /** Any curves over each other, named at their ends. Both axes begin at zero; the curve is the monotone one through the readings. */
-export function LibraryCurves({ curves, unit, atInH2O, camLiftUm, locale, title, width = 760, height = 360 }: {
+export function LibraryCurves({ curves, unit, atInH2O, camLiftUm, locale, title, width = 620, height = 340 }: {
   curves: readonly NamedCurve[]; unit: LiftUnit; atInH2O: number; camLiftUm: number | null; locale: string; title: string; width?: number; height?: number;
 }) {
-  const plot = { left: 46, right: width - 150, top: 34, bottom: height - 46 };
+  const plot = { left: 46, right: width - (width < 480 ? 96 : 150), top: 34, bottom: height - 46 };
   const all = curves.flatMap((c) => c.readings);
   if (all.length === 0) return <p className="hint">Nothing has been read here yet.</p>;
   const text = (v: number, d: number) => decimal(v, d, locale);
@@ -32,7 +32,7 @@ export function LibraryCurves({ curves, unit, atInH2O, camLiftUm, locale, title,
   const words = drawn.map((c) => `${c.name}: ${c.readings.length} lifts, ${flowText(c.last.flowCfm, locale)} CFM at ${liftWords(c.last.liftUm, unit, locale)} ${unit}`).join("; ");
   return (
     <svg className="ch" viewBox={`0 0 ${width} ${height}`} role="img" aria-label={`${title}. ${words}.`}>
-      {flowTicks(scale, 8, text).map((t) => (
+      {flowTicks(scale, width < 480 ? 5 : 8, text).map((t) => (
         <g key={t.flowCfm}>{t.flowCfm === 0 ? null : <path className="gr" d={`M${plot.left} ${t.y}H${plot.right}`} />}<text x={plot.left - 8} y={t.y + 4} textAnchor="end">{t.text}</text></g>
       ))}
       {liftTicks(scale, unit, text).map((t) => (

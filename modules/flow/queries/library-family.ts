@@ -11,7 +11,7 @@ import { conditionWords, sideGain, type SideGain } from "../domain/side-gain";
 import { standingTests } from "../domain/standing-tests";
 import { figuresOfTest, readingSetOf } from "../domain/test-figures";
 import { valveListWords, type ValveOfFamily } from "../domain/valve-list";
-import { standsInLibrary } from "./library";
+import { standsInLibrary } from "../library-sql";
 import { rawTests } from "./tests-of-head";
 
 /** A family's middle curve is taken over so many of its newest tests, so that the answer takes as long in year ten as in year one. */

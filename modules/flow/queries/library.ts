@@ -9,16 +9,13 @@ import type { LiftUnit } from "../domain/lift-ladder";
 import type { Purpose } from "../domain/raw-test";
 import { typedNumber } from "../domain/typed-number";
 import type { LibraryAsk } from "../library-input";
+import { standsInLibrary } from "../library-sql";
 
 export interface LibraryRow {
   testId: string; headId: string; cylinder: number; mark: string; family: string; side: PortSide; purpose: Purpose; runNo: number; ownerKind: string; workDone: string[];
   valveMm: number | null; seatNote: string; startedAt: string; benchName: string; operator: string; atInH2O: number; liftUnit: LiftUnit; lifts: number;
   peakCfm: number | null; peakLiftUm: number | null; meanToCamCfm: number | null; doubts: number; isConverted: boolean; importedFrom: string | null;
 }
-
-/** Complete and not replaced by a finished correction. */
-export const standsInLibrary = (shopId: string): SQL => sql`${flowTests.state} = 'complete' and not exists (
-  select 1 from flow_tests later where later.shop_id = ${shopId} and later.corrects_test_id = ${flowTests.id} and later.state = 'complete')`;
 
 const literal = (s: string) => s.replace(/[\\%_]/g, (c) => `\\${c}`);
 /** Half the width within which two valve sizes are one, mm. */

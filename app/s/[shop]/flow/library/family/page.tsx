@@ -47,11 +47,13 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
       <nav aria-label="Families" className="bar">{families.map((f) => <Link key={f.name} className={f.name === family ? "b" : "lk"} aria-current={f.name === family ? "page" : undefined} href={href(f.name, side)}>{f.name} <span className="dim sm">{f.heads}</span></Link>)}</nav>
       <div className="two mt-6">
         <Bay label={`What the last ${LAST} heads changed, lift by lift`}>
-          <LibraryGainStrips gains={p.gains} unit={unitOf} locale={locale} names={`the last heads of ${family}, ${side}`} />
+          <div className="hide-s"><LibraryGainStrips gains={p.gains} unit={unitOf} locale={locale} names={`the last heads of ${family}, ${side}`} /></div>
+          <div className="only-phone"><LibraryGainStrips gains={p.gains} unit={unitOf} locale={locale} names={`the last heads of ${family}, ${side}`} width={340} /></div>
           <p className="hint">Only ports whose before and after may be compared. Bars are the middle of the ports; greyed with fewer than three. Open dots left of zero are losses, ▼ counts them.</p>
         </Bay>
         <Bay label="Middle and best curve">
-          <LibraryCurves curves={curvesOf(p)} unit={unitOf} atInH2O={p.atInH2O} camLiftUm={p.camLiftUm} locale={locale} title={`${family}, ${side}`} />
+          <div className="hide-s"><LibraryCurves curves={curvesOf(p)} unit={unitOf} atInH2O={p.atInH2O} camLiftUm={p.camLiftUm} locale={locale} title={`${family}, ${side}`} /></div>
+          <div className="only-phone"><LibraryCurves curves={curvesOf(p)} unit={unitOf} atInH2O={p.atInH2O} camLiftUm={p.camLiftUm} locale={locale} title={`${family}, ${side}`} width={340} height={260} /></div>
           <p className="hint">
             Middle flow at each lift over the newest {MEDIAN_OF_NEWEST} tests of each kind at {p.atInH2O} in H₂O; the number of tests stands behind the name.
             {p.best ? ` Best is the highest mean flow up to cam lift: ${flowText(p.best.meanToCamCfm, locale)} CFM, ${p.best.mark}, ${day(p.best.startedAt)}.` : " No test here reaches a recorded cam lift, so none is called best."}
@@ -80,7 +82,7 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
           <div className="lane-x relative"><table className="calm">
             <caption className="sr-only">Gain at each lift: middle, least and most</caption>
             <thead><tr><th scope="col">Lift, {unitOf}</th><th scope="col" className="r">Ports</th><th scope="col" className="r">Least</th><th scope="col" className="r">Middle</th><th scope="col" className="r">Most</th><th scope="col" className="r">Lost flow</th></tr></thead>
-            <tbody>{p.gains.map((g) => <tr key={g.liftUm} className={g.isThin ? "dim" : undefined}><th scope="row" className="normal-case tracking-normal">{liftWords(g.liftUm, unitOf, locale)}</th><td className="r q">{g.n}</td><td className="r q">{differenceText(g.dots.at(-1)?.gainCfm ?? 0, locale)}</td><td className="r q"><b>{differenceText(g.medianCfm, locale)}</b></td><td className="r q">{differenceText(g.dots[0]?.gainCfm ?? 0, locale)}</td><td className="r q">{g.losses === 0 ? "none" : g.losses}</td></tr>)}</tbody>
+            <tbody>{p.gains.map((g) => <tr key={g.liftUm} className={g.isThin ? "dim" : undefined}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(g.liftUm, unitOf, locale)}</th><td className="r q">{g.n}</td><td className="r q">{differenceText(g.dots.at(-1)?.gainCfm ?? 0, locale)}</td><td className="r q"><b>{differenceText(g.medianCfm, locale)}</b></td><td className="r q">{differenceText(g.dots[0]?.gainCfm ?? 0, locale)}</td><td className="r q">{g.losses === 0 ? "none" : g.losses}</td></tr>)}</tbody>
           </table></div>
         </Bay>
       </Bays>

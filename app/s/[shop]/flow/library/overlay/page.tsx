@@ -36,14 +36,15 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
         : <Note className="mb-6" title="Not comparable, so no difference is shown.">{over.reasons.map((r) => r.words).join(" ")} {over.notes.map((n) => n.words).join(" ")}</Note>}
       <div className="split" style={{ "--side": "460px" } as React.CSSProperties}>
         <Bay label="Over each other">
-          <LibraryCurves curves={[{ name: nameOf(over.a), look: "thin", readings: over.a.readings }, { name: nameOf(over.b), look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" width={820} height={420} />
+          <div className="hide-s"><LibraryCurves curves={[{ name: nameOf(over.a), look: "thin", readings: over.a.readings }, { name: nameOf(over.b), look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" width={820} height={420} /></div>
+          <div className="only-phone"><LibraryCurves curves={[{ name: "First", look: "thin", readings: over.a.readings }, { name: "Second", look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" width={340} height={280} /></div>
           {over.a.atInH2O === over.b.atInH2O ? null : <p className="hint">The first is stated at {over.a.atInH2O} in H₂O, the second at {over.b.atInH2O}: the two lines do not stand on one scale of pressure.</p>}
         </Bay>
         <Bay label="Readings, CFM" flush>
           <table className="calm">
             <caption className="sr-only">Both tests lift by lift</caption>
             <thead><tr><th scope="col">Lift, {unit}</th><th scope="col" className="r">First</th><th scope="col" className="r">Second</th>{over.comparable ? <th scope="col" className="r">{word}</th> : null}</tr></thead>
-            <tbody>{over.rows.map((r) => <tr key={r.liftUm}><th scope="row" className="normal-case tracking-normal">{liftWords(r.liftUm, unit, locale)}</th><td className="r q">{r.a === null ? "—" : flowText(r.a, locale)}</td><td className="r q">{r.b === null ? "—" : flowText(r.b, locale)}</td>{over.comparable ? <td className="r q"><b>{r.difference === null ? "—" : differenceText(r.difference, locale)}</b></td> : null}</tr>)}</tbody>
+            <tbody>{over.rows.map((r) => <tr key={r.liftUm}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(r.liftUm, unit, locale)}</th><td className="r q">{r.a === null ? "—" : flowText(r.a, locale)}</td><td className="r q">{r.b === null ? "—" : flowText(r.b, locale)}</td>{over.comparable ? <td className="r q"><b>{r.difference === null ? "—" : differenceText(r.difference, locale)}</b></td> : null}</tr>)}</tbody>
             {over.meanDifferenceCfm === null ? null : <tfoot><tr><td colSpan={3}>Mean over the common lifts</td><td className="r q">{differenceText(over.meanDifferenceCfm, locale)}</td></tr></tfoot>}
           </table>
           <div className="p-4">

@@ -5,7 +5,7 @@ import { shopContextOrNull } from "@/modules/access/session";
 import { fileResponse, readFile } from "@/modules/documents/files";
 
 /** Who may look at what kind of file; kinds that are not named are opened by their own rooms. */
-const ACT_OF: Record<string, Act> = { photo: "orders.see", estimate: "prices.see", tag: "orders.see" };
+const ACT_OF: Record<string, Act> = { photo: "orders.see", estimate: "prices.see", tag: "orders.see", "flow-readings": "flow.see", "flow-sheet": "flow.see" };
 
 export async function GET(request: Request, { params }: { params: Promise<{ shop: string; id: string }> }): Promise<Response> {
   const nothing = () => new Response("Not found.", { status: 404, headers: { "cache-control": "no-store" } });
