@@ -1,7 +1,7 @@
 "use server";
 import { shopAction } from "@/modules/access/action";
 import { dismissCautions } from "./commands/cautions";
-import { addLift, changeTestConditions } from "./commands/change-test";
+import { addLift, changeSheetConditions } from "./commands/change-test";
 import { completeTest, correctTest, voidTest } from "./commands/finish-test";
 import { addBench, addFamily, addFixture, recordBenchCheck } from "./commands/gear";
 import { issueComparison } from "./commands/issue-comparison";
@@ -12,7 +12,7 @@ export const addFixtureAction = shopAction(addFixture);
 export const addFamilyAction = shopAction(addFamily);
 export const recordBenchCheckAction = shopAction(recordBenchCheck);
 export const startSheetAction = shopAction(startSheet);
-export const changeTestConditionsAction = shopAction(changeTestConditions);
+export const changeSheetConditionsAction = shopAction(changeSheetConditions);
 export const addLiftAction = shopAction(addLift);
 export const completeTestAction = shopAction(completeTest);
 export const voidTestAction = shopAction(voidTest);

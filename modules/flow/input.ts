@@ -98,6 +98,10 @@ export const startSheetInput = z.strictObject({
 }).refine((s) => s.intake !== undefined || s.exhaust !== undefined, { error: "Choose intake, exhaust or both.", path: ["intake"] });
 
 export const changeTestInput = z.strictObject({ testId: z.uuid(), version: z.number().int(), ...sessionFields, ...sideFields });
+const changedSide = z.strictObject({ testId: z.uuid(), version: z.number().int(), ...sideFields }).optional();
+/** Both drafts of a sheet at once: they share the session. */
+export const changeSheetInput = z.strictObject({ ...sessionFields, intake: changedSide, exhaust: changedSide })
+  .refine((s) => s.intake !== undefined || s.exhaust !== undefined, { error: "There is no draft to change.", path: ["intake"] });
 export const addLiftInput = z.strictObject({ testId: z.uuid(), version: z.number().int(), lift: line(20), reason: words(200).default("") });
 
 const typedCell = {

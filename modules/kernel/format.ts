@@ -74,6 +74,10 @@ export const longDay = (isoDate: string, locale: string): string => {
 export const time = (instant: Date | string, p: Pick<Place, "locale" | "zone">): string =>
   dateFormat(p.locale, { timeZone: p.zone, hour: "2-digit", minute: "2-digit", hourCycle: "h23" }).format(new Date(instant));
 
+/** `10:42:07` in the shop's zone: for "saved at". */
+export const clockTime = (instant: Date | string, p: Pick<Place, "locale" | "zone">): string =>
+  dateFormat(p.locale, { timeZone: p.zone, hour: "2-digit", minute: "2-digit", second: "2-digit", hourCycle: "h23" }).format(new Date(instant));
+
 /** `19 Feb 2026, 10:42` in the shop's zone. */
 export const dateTime = (instant: Date | string, p: Pick<Place, "locale" | "zone">): string =>
   `${date(localDate(new Date(instant), p.zone), p.locale)}, ${time(instant, p)}`;

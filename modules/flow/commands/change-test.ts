@@ -4,8 +4,9 @@ import { flowTests } from "@/db/schema";
 import { changedMeanwhile, defineCommand } from "@/modules/access/command";
 import type { TxContext } from "@/modules/access/context";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
+import type { z } from "@/modules/kernel/zod";
 import type { LiftUnit } from "../domain/lift-ladder";
-import { addLiftInput, changeTestInput } from "../input";
+import { addLiftInput, changeSheetInput, changeTestInput } from "../input";
 import { conditionColumns, fixtureHere, plannedLifts } from "./start-test";
 
 export type TestRow = typeof flowTests.$inferSelect;
@@ -20,21 +21,41 @@ export async function draftTest(ctx: TxContext, testId: string, version?: number
   return ok(test);
 }
 
+async function changeOne(ctx: TxContext, { testId, version, ...input }: z.output<typeof changeTestInput>): Promise<Result<{ testId: string; version: number }>> {
+  const test = await draftTest(ctx, testId, version);
+  if (!test.ok) return test;
+  if (!(await fixtureHere(ctx, input.fixtureId))) return refuse("NOT_FOUND", "This fixture is not here.", { field: "fixtureId" });
+  const columns = conditionColumns(input, test.value.liftUnit as LiftUnit);
+  if (!columns.ok) return columns;
+  await ctx.tx.update(flowTests).set({ ...columns.value, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId)));
+  return ok({ testId, version: version + 1 });
+}
+
 /** Conditions of a draft. The bench stays: another bench is another test. */
 export const changeTestConditions = defineCommand({
   name: "flow.change-conditions",
   act: "flow.record",
   input: changeTestInput,
-  async run(ctx, { testId, version, ...input }) {
-    const test = await draftTest(ctx, testId, version);
-    if (!test.ok) return test;
-    if (!(await fixtureHere(ctx, input.fixtureId))) return refuse("NOT_FOUND", "This fixture is not here.", { field: "fixtureId" });
-    const columns = conditionColumns(input, test.value.liftUnit as LiftUnit);
-    if (!columns.ok) return columns;
-    await ctx.tx.update(flowTests).set({ ...columns.value, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId)));
-    return ok({ testId, version: version + 1 });
-  },
+  run: changeOne,
   subject: (input) => ({ kind: "flow-test", id: input.testId }),
+});
+
+/** Conditions of the drafts of a sheet, which share the session: both change, or neither. */
+export const changeSheetConditions = defineCommand({
+  name: "flow.change-sheet",
+  act: "flow.record",
+  input: changeSheetInput,
+  async run(ctx, { intake, exhaust, ...session }) {
+    const versions: { testId: string; version: number }[] = [];
+    for (const [name, side] of [["intake", intake], ["exhaust", exhaust]] as const) {
+      if (!side) continue;
+      const changed = await changeOne(ctx, { ...session, ...side });
+      if (!changed.ok) return changed.refusal.field === "camLift" ? refuse(changed.refusal.code, changed.refusal.message, { field: `${name}.camLift` }) : changed;
+      versions.push(changed.value);
+    }
+    return ok({ versions });
+  },
+  subject: (input) => ({ kind: "flow-test", id: input.intake?.testId ?? input.exhaust?.testId ?? "" }),
 });
 
 /** One more lift on the ladder of a draft. */

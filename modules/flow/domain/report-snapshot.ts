@@ -79,10 +79,12 @@ export function notTestedWords(sides: readonly { side: PortSide; standing: Stand
       const figures = figuresOfTest(test);
       const unread = test.lifts.filter((l) => !figures.readings.some((r) => r.liftUm === l.liftUm));
       if (unread.length > 0) out.push(`${name} ${when}: ${unread.map((l) => liftWords(l.liftUm)).join(", ")} planned, not read.`);
-      if (figures.readings.length > 0 && figures.readings.every((r) => r.count < 2)) out.push(`${name} ${when}: no repeat readings, so differences were not judged against the bench's noise.`);
     }
     if (gain.camLiftUm !== null && !(standing.after && figuresOfTest(standing.after).readings.some((r) => r.liftUm >= (gain.camLiftUm ?? 0)))) out.push(`${name}: not read up to cam lift.`);
     return out;
   });
-  return [...words, ...(cylinders > 1 ? [`This page is port ${cylinder} of ${cylinders}.`] : []), "Swirl, tumble, wet flow and power were not measured."];
+  const tests = sides.flatMap(({ standing }) => [standing.before, standing.after]).filter((x): x is RawTest => x !== null);
+  const single = tests.filter((x) => figuresOfTest(x).readings.every((r) => r.count < 2));
+  const repeats = single.length === 0 ? [] : [`${single.length === tests.length ? "No" : "Some tests have no"} repeat readings, so a difference was not judged against the bench's noise.`];
+  return [...words, ...repeats, ...(cylinders > 1 ? [`This page is port ${cylinder} of ${cylinders}.`] : []), "Swirl, tumble, wet flow and power were not measured."];
 }

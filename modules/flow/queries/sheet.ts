@@ -1,8 +1,7 @@
 import "server-only";
 import { and, asc, desc, eq, isNull } from "drizzle-orm";
 import { benches, benchChecks, cautionsSeen, customers, fixtures, flowComparisons, heads, people, workOrders, workPieces } from "@/db/schema";
-import { inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
-import { ableTo } from "@/modules/access/context";
+import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
 import { BENCH_CAUTIONS, BENCH_STEP } from "../domain/bench-cautions";
 import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
 import { rawTests } from "./tests-of-head";
@@ -23,6 +22,8 @@ export interface FlowSheet {
   nominalInH2O: number;
   canRecord: boolean;
   canIssue: boolean;
+  /** Whose readings these will be. */
+  viewer: { id: string; name: string };
   /** Hazards this person has not yet confirmed for the job. */
   cautions: string[];
   comparisons: { id: string; comparisonNo: number; issuedAt: string; issuedBy: string }[];
@@ -91,7 +92,7 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
         seatMaterial: h.seatMaterial, cylinders: h.cylinders, camLiftIntakeUm: h.camLiftIntakeUm, camLiftExhaustUm: h.camLiftExhaustUm,
       },
       cylinder, ports: portMarks(h.cylinders, all), tests: all.filter((t) => t.cylinder === cylinder).map(({ headId: _, cylinder: __, ...t }) => t),
-      benchCheckHours, nominalInH2O: nominalPressureInH2O, canRecord, canIssue: ableTo(ctx, "flow.issue"),
+      benchCheckHours, nominalInH2O: nominalPressureInH2O, canRecord, canIssue: ableTo(ctx, "flow.issue"), viewer: { id: ctx.actor.id, name: ctx.actor.name },
       cautions: canRecord && personId ? BENCH_CAUTIONS.map((c) => c.hazard).filter((hazard) => !seen.some((x) => x.hazard === hazard)) : [],
       comparisons: issued.map((c) => ({ ...c, issuedAt: c.issuedAt.toISOString() })),
     };

@@ -1,0 +1,33 @@
+import { orNotFound, shopPage } from "@/modules/access/page";
+import { FlowSheetScreen } from "@/modules/flow/components/sheet/flow-sheet";
+import { PortNav } from "@/modules/flow/components/port-nav";
+import { sheetSubtitle } from "@/modules/flow/components/sheet-subtitle";
+import { sheetInput } from "@/modules/flow/input";
+import { flowSheetFor, gearOf } from "@/modules/flow/queries/sheet";
+import { DarkGround } from "@/modules/ui/theme";
+import { PageHead } from "@/modules/ui/page-head";
+import { Tag } from "@/modules/ui/tag";
+import { notFound } from "next/navigation";
+
+export const metadata = { title: "Flow sheet" };
+
+export default async function FlowSheetPage({ params, searchParams }: { params: Promise<{ shop: string; head: string }>; searchParams: Promise<Record<string, string | string[] | undefined>> }) {
+  const ctx = await shopPage(params, "flow.see");
+  const { port = "1", bench } = await searchParams;
+  const ask = sheetInput.safeParse({ headId: (await params).head, cylinder: port });
+  if (!ask.success) notFound();
+  const sheet = await orNotFound(flowSheetFor(ctx, ask.data.headId, ask.data.cylinder));
+  const gear = await gearOf(ctx);
+  const isBench = bench === "1";
+  const at = `/s/${ctx.shop.slug}/flow/${sheet.head.id}`;
+  const isOpen = sheet.tests.some((t) => t.state === "draft");
+  const page = (
+    <main id="main" className="page">
+      <PageHead title={<>Flow sheet&ensp;<Tag running={isOpen} runningWord="on the bench">{sheet.head.mark}</Tag></>} sub={sheetSubtitle(sheet)}>
+        <PortNav ports={sheet.ports} current={sheet.cylinder} href={(n) => `${at}?port=${n}${isBench ? "&bench=1" : ""}`} />
+      </PageHead>
+      <FlowSheetScreen key={`${sheet.cylinder}:${sheet.tests.map((t) => `${t.id}${t.version}${t.state}`).join()}`} sheet={sheet} gear={gear} isBench={isBench} />
+    </main>
+  );
+  return isBench ? <DarkGround>{page}</DarkGround> : page;
+}

@@ -1,0 +1,16 @@
+import type { CurveLine } from "../domain/curve-geometry";
+import type { LiftReading } from "../domain/repeats";
+import type { PortGain, SideGain } from "../domain/side-gain";
+
+const half = (gain: SideGain, when: "before" | "after"): LiftReading[] => {
+  if (gain.state === "absent") return [];
+  const unpaired = gain.state === "comparable" ? gain.unpairedRows : [];
+  return [...gain.rows, ...unpaired].flatMap((row) => {
+    const flowCfm = when === "before" ? row.beforeCfm : row.afterCfm;
+    return flowCfm === null ? [] : [{ liftUm: row.liftUm, flowCfm }];
+  });
+};
+
+/** Curves of a port as handed out. A withheld gain draws both curves and nothing between them. */
+export const linesOfPort = (port: PortGain): CurveLine[] =>
+  ([port.intake, port.exhaust] as const).map((gain): CurveLine => ({ side: gain.side, before: half(gain, "before"), after: half(gain, "after"), gain: gain.comparable ? "shown" : "withheld" }));

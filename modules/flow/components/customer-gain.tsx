@@ -1,0 +1,116 @@
+import { Fragment } from "react";
+import { date, decimal } from "@/modules/kernel/format";
+import { localDate } from "@/modules/kernel/instant";
+import { Bay } from "@/modules/ui/bay";
+import { AIRFLOW_WORDS } from "../domain/report-snapshot";
+import type { ComparableGain, GainOfPiece, PortGain, SideGain, WithheldGain } from "../domain/side-gain";
+import { differenceText, flowText, liftWords } from "./flow-words";
+import { withheldWords } from "./gain-words";
+import { MiniCurve } from "./mini-curve";
+
+interface At { locale: string; zone: string }
+
+/** The heading: more air only when every side that was compared flows more on the mean. */
+export function gainHeading(gain: GainOfPiece): string {
+  const sides = gain.ports.flatMap((p) => [p.intake, p.exhaust]);
+  const compared = sides.filter((s): s is ComparableGain => s.comparable);
+  if (compared.length > 0 && compared.every((s) => s.meanGainCfm > 0)) return "Your head flows more air";
+  if (compared.length > 0) return "Your head, before and after";
+  return "Your head on the flow bench";
+}
+
+function Figure({ gain, locale, isFirst }: { gain: ComparableGain; locale: string; isFirst: boolean }) {
+  const row = gain.rows.find((r) => r.liftUm === gain.peak.liftUm) ?? gain.rows.at(-1);
+  if (!row) return null;
+  return (
+    <div className={isFirst && row.gainCfm > 0 ? "fl" : undefined}>
+      <span className="num">{differenceText(row.gainCfm, locale)}</span>
+      <p><b>CFM {gain.side}</b><br />{flowText(row.beforeCfm, locale)} to {flowText(row.afterCfm, locale)} at {liftWords(row.liftUm, gain.liftUnit, locale)} lift</p>
+    </div>
+  );
+}
+
+const SHORT = { intake: "Intake", exhaust: "Exh." } as const;
+type Told = ComparableGain | WithheldGain;
+
+function PortTable({ port, locale }: { port: PortGain; locale: string }) {
+  const sides = [port.intake, port.exhaust].filter((g): g is Told => g.state !== "absent");
+  const [first] = sides;
+  if (!first) return null;
+  const lifts = [...new Set(sides.flatMap((g) => g.rows.map((r) => r.liftUm)))].sort((a, b) => a - b);
+  const text = (v: number | null | undefined) => (v === null || v === undefined ? "" : flowText(v, locale));
+  return (
+    <table>
+      <caption className="sr-only">Readings by lift, CFM at {first.atInH2O} inches of water</caption>
+      <thead>
+        <tr>
+          <th scope="col">Lift, {first.liftUnit}</th>
+          {sides.map((g) => g.comparable
+            ? <Fragment key={g.side}><th scope="col" className="r">{SHORT[g.side]}</th><th scope="col" className="r">Gain</th></Fragment>
+            : <Fragment key={g.side}><th scope="col" className="r">{SHORT[g.side]} before</th><th scope="col" className="r">After</th></Fragment>)}
+        </tr>
+      </thead>
+      <tbody>
+        {lifts.map((um) => (
+          <tr key={um}>
+            <th scope="row" className="q mid">{liftWords(um, first.liftUnit, locale)}</th>
+            {sides.map((g) => {
+              if (g.comparable) {
+                const row = g.rows.find((r) => r.liftUm === um);
+                return <Fragment key={g.side}><td className="r q">{text(row?.afterCfm)}</td><td className="r q b">{row === undefined ? "" : row.gainCfm < 0 ? `▼ ${differenceText(row.gainCfm, locale)}` : differenceText(row.gainCfm, locale)}</td></Fragment>;
+              }
+              const row = g.rows.find((r) => r.liftUm === um);
+              return <Fragment key={g.side}><td className="r q">{text(row?.beforeCfm)}</td><td className="r q">{text(row?.afterCfm)}</td></Fragment>;
+            })}
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  );
+}
+
+function sideNotes(gain: SideGain, at: At): string[] {
+  const withheld = withheldWords(gain);
+  if (withheld) return [withheld];
+  if (!gain.comparable) return [];
+  const name = gain.side === "intake" ? "The intake" : "The exhaust";
+  const day = (iso: string) => date(localDate(new Date(iso), at.zone), at.locale);
+  return [
+    `${name} averages ${differenceText(gain.meanGainCfm, at.locale, 2)} CFM${gain.meanPercent === null ? "" : ` (${decimal(gain.meanPercent, 2, at.locale)} %)`} over the lifts tested.`,
+    ...(gain.losses.length > 0 ? [`${name} reads lower at ${gain.losses.map((l) => `${liftWords(l.liftUm, gain.liftUnit, at.locale)} (${differenceText(l.gainCfm, at.locale)})`).join(", ")}.`] : []),
+    `Before ${day(gain.before.takenAt)} by ${gain.before.operator}, after ${day(gain.after.takenAt)} by ${gain.after.operator}. Seats before: ${gain.before.seat}; after: ${gain.after.seat}.`,
+  ];
+}
+
+/** The customer's page of the gain, below the page's masthead: heading, figures, curve, table, conditions. Server-rendered. */
+export function CustomerGain({ gain, locale, zone }: { gain: GainOfPiece } & At) {
+  const stated = gain.ports.flatMap((p) => [p.intake, p.exhaust]).find((s): s is Told => s.state !== "absent");
+  const at = { locale, zone };
+  return (
+    <>
+      <h1>{gainHeading(gain)}</h1>
+      <p className="lead">{stated ? `Measured on our bench at ${stated.atInH2O} inches of water.` : "No test is finished yet."}</p>
+      {gain.ports.map((port) => {
+        const compared = [port.intake, port.exhaust].filter((g): g is ComparableGain => g.comparable);
+        const portWords = gain.ports.length > 1 ? `, port ${port.cylinder}` : "";
+        const cam = stated?.camLiftUm ?? null;
+        return (
+          <Fragment key={port.cylinder}>
+            {compared.length === 0 ? null : <div className="bigg">{compared.map((g, i) => <Figure key={g.side} gain={g} locale={locale} isFirst={i === 0} />)}</div>}
+            <Bay label={`Before and after${portWords}`} className="mt-7">
+              <MiniCurve port={port} locale={locale} width={360} height={300} />
+              <p className="hint">Thick lines: after. Thin lines: before. Solid: intake. Dashed: exhaust.{compared.length > 0 ? " The filled part is your gain." : ""}</p>
+            </Bay>
+            <section className="mt-7">
+              <PortTable port={port} locale={locale} />
+              {[port.intake, port.exhaust].flatMap((g) => sideNotes(g, at)).map((words) => <p key={words} className="hint mt-2">{words}</p>)}
+              {cam === null || !stated ? null : <p className="hint mt-2">Your cam lifts {liftWords(cam, stated.liftUnit, locale)} {stated.liftUnit}.</p>}
+              {stated ? <p className="hint mt-2">Tested at {stated.conditions.join(", ")}.</p> : null}
+            </section>
+          </Fragment>
+        );
+      })}
+      <p className="hint mt-4">{AIRFLOW_WORDS}</p>
+    </>
+  );
+}

@@ -1,0 +1,83 @@
+"use client";
+import { useId, useState } from "react";
+import { Button } from "@/modules/ui/button";
+import { ToggleChip } from "@/modules/ui/chip";
+import { liftWords, flowText } from "../flow-words";
+import { cellDoubts } from "./cell-words";
+import { cellAt, flowAt, type SheetColumn } from "./sheet-figures";
+import { posOf } from "./reading-grid";
+import type { Pos, Sheet } from "./use-sheet";
+
+/** Asked for where something doubtful was typed; the value is kept with the reason. */
+function ReasonField({ onKeep, onForget }: { onKeep: (reason: string) => void; onForget: () => void }) {
+  const id = useId();
+  const [reason, setReason] = useState("");
+  return (
+    <form className="flex flex-wrap items-end gap-3" onSubmit={(e) => { e.preventDefault(); if (reason.trim().length >= 3) onKeep(reason.trim()); }}>
+      <span className="field grow">
+        <label htmlFor={id}>Reason to keep it</label>
+        <span className="in"><input id={id} value={reason} onChange={(e) => setReason(e.target.value)} maxLength={200} autoComplete="off" /></span>
+      </span>
+      <Button type="submit" disabledReason={reason.trim().length >= 3 ? undefined : "a few words"}>Keep it</Button>
+      <Button variant="lo" onClick={onForget}>Forget it</Button>
+    </form>
+  );
+}
+
+const NUMBER_WIDTH = { width: 92 } as const;
+
+/** What belongs to the cell in hand: range, pressure held, repeats, doubts and how to settle them. */
+export function CellPanel({ sheet, pos, col, locale }: { sheet: Sheet; pos: Pos; col: SheetColumn; locale: string }) {
+  const heldId = useId();
+  const { test } = col;
+  const stuck = sheet.stuckAt(pos);
+  const computed = cellAt(col, pos.liftUm);
+  const flow = flowAt(col, pos.liftUm);
+  const doubts = cellDoubts(computed, col.figures, stuck, pos.liftUm);
+  const repeats = [...new Set([1, ...col.figures.cells.filter((c) => c.liftUm === pos.liftUm).map((c) => c.repeatNo)])].sort((a, b) => a - b);
+  const reading = col.figures.readings.find((r) => r.liftUm === pos.liftUm);
+  const [extra, setExtra] = useState(0);
+  const shownRepeats = Array.from({ length: Math.min(9, Math.max(repeats.at(-1) ?? 1, extra)) }, (_, i) => i + 1);
+  const name = `${pos.side} ${liftWords(pos.liftUm, test.liftUnit, locale)} ${col.head.toLowerCase()}`;
+  const rangeNow = sheet.keptAt(pos)?.edits.at(-1)?.range ?? computed?.rangeLabel ?? sheet.range ?? test.bench.ranges[0]?.label ?? null;
+  const again = () => setExtra((repeats.at(-1) ?? 1) + 1);
+  return (
+    <section className="cp" aria-label={`Reading in hand: ${name}`}>
+      <p className="cp-h"><b className="capitalize">{name}</b> {flow === null ? <span className="mid">not read</span> : <span><b className="num">{flowText(flow, locale)}</b> <span className="unit">CFM at {test.nominalInH2O} in H₂O</span></span>}
+        {reading && reading.count > 1 ? <span className="mid"> mean of {reading.count}{reading.agrees ? "" : ", more than 1 % apart: read again"}</span> : null}
+      </p>
+      <div className="flex flex-wrap items-center gap-3">
+        {test.bench.scale === "direct" ? null : (
+          <div role="group" aria-label="Range" className="flex gap-1">
+            {test.bench.ranges.map((r) => <ToggleChip key={r.label} on={rangeNow === r.label} onChange={() => { sheet.setRange(r.label); if (sheet.textAt(pos) !== "") sheet.mark(pos, { range: r.label }); }}>{r.label}</ToggleChip>)}
+          </div>
+        )}
+        <span className="flex items-center gap-2">
+          <label htmlFor={heldId} className="sm">Held</label>
+          <span className="in" style={{ ...NUMBER_WIDTH, width: 140 }}>
+            <input id={heldId} inputMode="decimal" value={sheet.held} placeholder={String(test.nominalInH2O)} onChange={(e) => sheet.setHeld(e.target.value)} onBlur={() => { if (sheet.textAt(pos) !== "" && sheet.held !== "") sheet.mark(pos, { pressure: sheet.held }); }} />
+            <span className="unit">in H₂O</span>
+          </span>
+        </span>
+        {shownRepeats.slice(1).map((n) => {
+          const at = posOf(col, pos.liftUm, n);
+          return (
+            <span key={n} className="in" style={NUMBER_WIDTH}>
+              <input aria-label={`Repeat ${n}, ${name}`} inputMode="decimal" value={sheet.textAt(at)} placeholder={`again ${n}`} onChange={(e) => sheet.type(at, e.target.value)} onBlur={() => sheet.commit(at)} onKeyDown={(e) => { if (e.key === "Enter") sheet.commit(at); }} />
+            </span>
+          );
+        })}
+        {test.state === "draft" && shownRepeats.length < 9 ? <Button size="sm" variant="lo" icon="plus" onClick={again}>Read again</Button> : null}
+        {computed && !stuck && test.state === "draft" ? <Button size="sm" variant="lo" onClick={() => sheet.mark(pos, computed.excludedReason ? { excludedReason: null } : { excludedReason: "left out at the bench" })}>{computed.excludedReason ? "Count it again" : "Leave out"}</Button> : null}
+      </div>
+      {doubts.map((d) => <p key={d.words} className="sm"><span aria-hidden="true">▲ </span>{d.words}</p>)}
+      {stuck?.askReason ? <ReasonField onKeep={(reason) => sheet.keepWithReason(pos, reason)} onForget={() => sheet.discard(pos)} /> : null}
+      {stuck?.theirs ? (
+        <div className="flex gap-3">
+          <Button size="sm" onClick={() => sheet.insist(pos)}>Write mine over it</Button>
+          <Button size="sm" variant="lo" onClick={() => { sheet.discard(pos); void sheet.takeFromBench(); }}>Take {stuck.theirs.valueText || "theirs"}</Button>
+        </div>
+      ) : null}
+    </section>
+  );
+}

@@ -1,0 +1,35 @@
+import type { ReactNode } from "react";
+import { decimal } from "@/modules/kernel/format";
+import type { RawTest } from "../../domain/raw-test";
+import { liftWords } from "../flow-words";
+import type { SheetFigures } from "./sheet-figures";
+
+const newest = (f: SheetFigures, i: 0 | 1): RawTest | null => (f.sides[i]?.after ?? f.sides[i]?.before)?.test ?? null;
+
+/** Depression, bore, air, valves and cam of the tests in hand. */
+export function ConditionStrip({ figures, locale, change }: { figures: SheetFigures; locale: string; change?: ReactNode }) {
+  const intake = newest(figures, 0);
+  const exhaust = newest(figures, 1);
+  const test = intake ?? exhaust;
+  if (!test) return null;
+  const both = (of: (t: RawTest) => string | null) => [intake && of(intake), exhaust && of(exhaust)].map((v) => v ?? "–").join(" / ");
+  const mm = (v: number) => decimal(v, Number.isInteger(v) ? 0 : 1, locale);
+  const cells: [string, ReactNode][] = [
+    ["Depression", `${decimal(test.nominalInH2O, 1, locale)} in H₂O`],
+    ["Bore adapter", test.fixture.name.includes(String(test.fixture.boreMm)) ? `${test.fixture.name} mm` : `${test.fixture.name}, ${mm(test.fixture.boreMm)} mm`],
+    ["Air", [test.roomTemperatureText, test.roomPressureText].filter(Boolean).join(", ") || "not noted"],
+    ["Valves, mm", both((t) => (t.valveMm === null ? null : mm(t.valveMm)))],
+    ["Cam lift at valve", intake?.camLiftUm === null && exhaust?.camLiftUm === null ? "not noted" : both((t) => (t.camLiftUm === null ? null : `${liftWords(t.camLiftUm, t.liftUnit, locale)} ${t.side === "intake" ? "in" : "ex"}`))],
+  ];
+  return (
+    <div className="set">
+      {cells.map(([label, value], i) => (
+        <div key={label}>
+          <span className="eng">{label}</span>
+          <b>{value}</b>
+          {i === cells.length - 1 && change ? <span className="set-c">{change}</span> : null}
+        </div>
+      ))}
+    </div>
+  );
+}

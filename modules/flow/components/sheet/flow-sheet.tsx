@@ -1,0 +1,142 @@
+"use client";
+import Link from "next/link";
+import { useRouter } from "next/navigation";
+import { useState, type KeyboardEvent } from "react";
+import { KeyHints } from "@/modules/ui/key-hints";
+import { Bay } from "@/modules/ui/bay";
+import { usePlace } from "@/modules/ui/place";
+import type { PortSide } from "../../domain/comparison-reasons";
+import type { BenchGear, FlowSheet } from "../../queries/sheet";
+import { CurveReader } from "../curve-reader";
+import { liftWords } from "../flow-words";
+import { BenchCautionsNote } from "./bench-cautions-note";
+import { BenchKeypad } from "./bench-keypad";
+import { CellPanel } from "./cell-panel";
+import { ConditionStrip } from "./condition-strip";
+import { ConditionsDialog } from "./conditions-form";
+import { NextStep } from "./next-step";
+import { cellId, posOf, ReadingGrid } from "./reading-grid";
+import { SaveState } from "./save-state";
+import { notesOf, SheetNotes } from "./sheet-notes";
+import { meanText, SheetSummary } from "./sheet-summary";
+import type { SheetColumn } from "./sheet-figures";
+import { useSheet, type Pos } from "./use-sheet";
+
+const HINTS = [
+  { keys: ["0–9"], does: "reading" }, { keys: ["Enter"], does: "next lift" }, { keys: ["→"], does: "exhaust" }, { keys: ["Shift", "Enter"], does: "back" },
+  { keys: ["PgDn"], does: "next port" }, { keys: ["*"], does: "take from bench" }, { keys: ["Ctrl", "Z"], does: "undo" },
+];
+
+/** The flow sheet of one port pair: grid, live curve, doubts and the next step. With `isBench` a keypad for gloves stands by. */
+export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSheet; gear: BenchGear; isBench: boolean }) {
+  const place = usePlace();
+  const { slug, locale } = place;
+  const router = useRouter();
+  const sheet = useSheet(given, slug);
+  const [active, setActive] = useState<Pos | null>(null);
+  const [said, setSaid] = useState("");
+  const { figures } = sheet;
+  const columns = figures.sides.flatMap((s) => [s.before, s.after]).filter((c): c is SheetColumn => c !== null);
+  const drafts = columns.filter((c) => c.test.state === "draft");
+  const unit = columns[0]?.test.liftUnit ?? (locale.endsWith("US") ? "in" : "mm");
+  const nominal = columns[0]?.test.nominalInH2O ?? given.nominalInH2O;
+  const cam = columns.find((c) => c.test.camLiftUm !== null)?.test.camLiftUm ?? null;
+  const activeColumn = active ? (columns.find((c) => c.test.id === active.testId) ?? null) : null;
+  const notes = notesOf(figures, given.benchCheckHours, locale);
+  const [intake, exhaust] = figures.sides;
+
+  const focus = (side: PortSide, when: "before" | "after", liftUm: number) => document.getElementById(cellId(side, when, liftUm))?.focus();
+  const step = (pos: Pos, by: 1 | -1) => {
+    const next = figures.liftsUm[figures.liftsUm.indexOf(pos.liftUm) + by];
+    if (next === undefined) sheet.commit(pos);
+    else focus(pos.side, pos.when, next);
+  };
+  const across = (pos: Pos, side: PortSide) => {
+    const at = figures.sides.find((s) => s.side === side);
+    const col = [at?.after, at?.before].find((c) => c?.test.state === "draft");
+    if (col) focus(side, col.when, pos.liftUm);
+  };
+  const goToPort = (by: 1 | -1) => {
+    const to = given.cylinder + by;
+    if (to >= 1 && to <= given.head.cylinders) router.push(`/s/${slug}/flow/${given.head.id}?port=${to}${isBench ? "&bench=1" : ""}`);
+  };
+  const fromBench = () => void sheet.takeFromBench().then((did) => setSaid(did ? "Taken from the bench." : "No link to the shop's records."));
+  const undo = (pos: Pos | null) => {
+    const where = sheet.undo(pos);
+    if (where) focus(where.side, where.when, where.liftUm);
+  };
+
+  const onKey = (pos: Pos, e: KeyboardEvent<HTMLInputElement>) => {
+    const { selectionStart, selectionEnd, value } = e.currentTarget;
+    const all = selectionStart === 0 && selectionEnd === value.length;
+    const act: (() => void) | undefined =
+      e.key === "Enter" ? () => step(pos, e.shiftKey ? -1 : 1)
+      : e.key === "ArrowDown" ? () => step(pos, 1)
+      : e.key === "ArrowUp" ? () => step(pos, -1)
+      : e.key === "ArrowRight" && (all || selectionStart === value.length) ? () => across(pos, "exhaust")
+      : e.key === "ArrowLeft" && (all || selectionEnd === 0) ? () => across(pos, "intake")
+      : e.key === "PageDown" ? () => goToPort(1)
+      : e.key === "PageUp" ? () => goToPort(-1)
+      : e.key === "*" ? fromBench
+      : (e.ctrlKey || e.metaKey) && e.key.toLowerCase() === "z" ? () => undo(pos)
+      : undefined;
+    if (!act) return;
+    e.preventDefault();
+    act();
+  };
+  const digit = (d: string) => {
+    if (!active || !activeColumn) return;
+    const input = document.activeElement;
+    const isWhole = input instanceof HTMLInputElement && input.id === cellId(active.side, active.when, active.liftUm) && input.selectionStart === 0 && input.selectionEnd === input.value.length;
+    sheet.type(active, (isWhole ? "" : sheet.textAt(active)) + d);
+  };
+
+  const name = active && activeColumn ? `${active.side} ${liftWords(active.liftUm, unit, locale)} ${activeColumn.head.toLowerCase()}` : "no cell yet";
+  const firstDraft = drafts[0];
+  const live = drafts.some((c) => c.when === "before") && !drafts.some((c) => c.when === "after") ? "typing-before" : "typing-after";
+  const draftOf = (i: 0 | 1) => { const s = figures.sides[i]; return [s?.after, s?.before].find((c) => c?.test.state === "draft")?.test ?? null; };
+  const change = drafts.length > 0 && given.canRecord ? <ConditionsDialog gear={gear} drafts={{ intake: draftOf(0), exhaust: draftOf(1) }} onChanged={() => router.refresh()} /> : undefined;
+  const curve = { lines: figures.lines, unit, atInH2O: nominal, camLiftUm: cam, locale, label: "Read the curve point by point" } as const;
+
+  return (
+    <div className={`flow-sheet ${live}${isBench ? " bench" : ""}`}>
+      {drafts.length > 0 ? <BenchCautionsNote headId={given.head.id} hazards={given.cautions} viewer={given.viewer.name} /> : null}
+      <ConditionStrip figures={figures} locale={locale} change={change} />
+      <div className="fl">
+        <div className="fl-l">
+          {columns.length === 0 ? <Bay label="Readings, CFM"><p className="mid">No test of this port yet. The before test is read before any work is done.</p></Bay> : (
+            <Bay label="Readings, CFM" flush className="fg">
+              <ReadingGrid sheet={sheet} unit={unit} locale={locale} port={given.cylinder} canRecord={given.canRecord} isBench={isBench} active={active} onActive={setActive} onKey={onKey} />
+              {active && activeColumn?.test.state === "draft" ? <CellPanel key={`${active.testId}${active.liftUm}`} sheet={sheet} pos={active} col={activeColumn} locale={locale} /> : null}
+            </Bay>
+          )}
+          {isBench ? (notes.length === 0 ? null : (
+            <details className="chk2"><summary><b>{notes.length} {notes.length === 1 ? "check" : "checks"}.</b> {notes.map((n) => n.title).join(" ")}</summary><SheetNotes notes={notes} /></details>
+          )) : <SheetNotes notes={notes} />}
+          <NextStep sheet={given} gear={gear} figures={figures} waiting={sheet.state.waiting} onChanged={() => router.refresh()} />
+        </div>
+        <div className="fl-r">
+          <Bay label="Live curve" aside={isBench ? [["in", intake], ["ex", exhaust]].flatMap(([n, s]) => { const t = meanText(s as typeof intake, locale); return t ? [`${t} mean ${String(n)}`] : []; }).join(", ") || undefined : undefined}>
+            <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 236 : 366} /></div>
+            <div className="only-narrow"><CurveReader {...curve} width={350} height={290} mini /></div>
+            {isBench ? null : <SheetSummary figures={figures} locale={locale} />}
+          </Bay>
+          {isBench ? (
+            <BenchKeypad
+              name={name} onDigit={digit} onBack={() => { if (active) sheet.type(active, sheet.textAt(active).slice(0, -1)); }} onBench={fromBench}
+              onBackLift={() => { if (active) step(active, -1); else if (firstDraft) focus(firstDraft.side, firstDraft.when, figures.liftsUm[0] ?? 0); }}
+              onNextLift={() => { if (active) step(active, 1); else if (firstDraft) focus(firstDraft.side, firstDraft.when, figures.liftsUm[0] ?? 0); }}
+              onDoubt={() => { if (active && activeColumn && sheet.textAt(active) !== "") sheet.keepWithReason(posOf(activeColumn, active.liftUm), "doubtful, said at the bench"); }}
+            />
+          ) : null}
+        </div>
+      </div>
+      <div className="fl-foot">
+        {isBench ? null : <KeyHints hints={HINTS} />}
+        <span className="sr-only" role="status">{said}</span>
+        <SaveState state={sheet.state} savedAt={sheet.savedAt} place={place} />
+        {isBench ? null : <Link className="lk" href={`/s/${slug}/flow/${given.head.id}?port=${given.cylinder}&bench=1`}>Bench view</Link>}
+      </div>
+    </div>
+  );
+}

@@ -1,0 +1,87 @@
+"use client";
+import { useState } from "react";
+import { Button, LinkButton } from "@/modules/ui/button";
+import { ConfirmDialog } from "@/modules/ui/dialog";
+import { Note } from "@/modules/ui/note";
+import { usePlace } from "@/modules/ui/place";
+import type { Reply } from "@/modules/ui/form/reply";
+import { completeTestAction, correctTestAction, issueComparisonAction, voidTestAction } from "../../actions";
+import type { RawTest } from "../../domain/raw-test";
+import type { BenchGear, FlowSheet } from "../../queries/sheet";
+import { PURPOSE_WORDS, StartSheetDialog } from "./start-sheet-form";
+import type { SheetFigures } from "./sheet-figures";
+
+const troubleOf = (reply: Reply<unknown> | null): string => {
+  if (reply === null) return "No answer. What you typed is kept; try again in a moment.";
+  if (reply.status === "refused" || reply.status === "conflict") return reply.message;
+  if (reply.status === "signed-out") return "Sign in again, then press once more.";
+  if (reply.status === "error") return `Something broke on our side. Quote ${reply.reference}.`;
+  return "That could not be done.";
+};
+
+/** A reason asked before something is put out of use or opened again. */
+function ReasonDialog({ label, question, action, onAction }: { label: string; question: string; action: string; onAction: (reason: string) => void }) {
+  const [reason, setReason] = useState("");
+  const [open, setOpen] = useState(false);
+  return (
+    <ConfirmDialog open={open} onOpenChange={setOpen} trigger={<Button size="sm" variant="lo">{label}</Button>} question={question} safe="Leave it" action={action} onAction={() => { if (reason.trim().length >= 3) { setOpen(false); onAction(reason.trim()); } }}>
+      <label className="field"><span className="label">Reason</span><span className="in"><input value={reason} onChange={(e) => setReason(e.target.value)} maxLength={300} /></span></label>
+    </ConfirmDialog>
+  );
+}
+
+/** The one next step of the sheet: start, finish, issue; and the rarer ones beside it. */
+export function NextStep({ sheet, gear, figures, waiting, onChanged }: { sheet: FlowSheet; gear: BenchGear; figures: SheetFigures; waiting: number; onChanged: () => void }) {
+  const { slug } = usePlace();
+  const [pending, setPending] = useState(false);
+  const [trouble, setTrouble] = useState<string | null>(null);
+  const columns = figures.sides.flatMap((s) => [s.before, s.after]).flatMap((c) => (c ? [c.test] : []));
+  const drafts = columns.filter((t) => t.state === "draft");
+  const finished = columns.filter((t) => t.state === "complete");
+  const basisOf = (when: "before" | "after"): { intake: RawTest | null; exhaust: RawTest | null } => ({ intake: figures.sides[0]?.[when]?.test ?? null, exhaust: figures.sides[1]?.[when]?.test ?? null });
+  const before = basisOf("before");
+  const hasBefore = before.intake !== null || before.exhaust !== null;
+  const hasAfter = figures.sides.some((s) => s.after?.test.purpose === "after");
+
+  const run = async (acts: (() => Promise<Reply<unknown>>)[]) => {
+    setPending(true);
+    setTrouble(null);
+    for (const act of acts) {
+      const reply = await act().catch(() => null);
+      if (reply?.status !== "ok") {
+        setTrouble(troubleOf(reply));
+        setPending(false);
+        onChanged();
+        return;
+      }
+    }
+    setPending(false);
+    onChanged();
+  };
+  const sent = (input: object) => ({ requestId: crypto.randomUUID(), input });
+  const finish = () => void run(drafts.map((t) => () => completeTestAction(slug, sent({ testId: t.id, version: t.version }))));
+  const issue = () => void run([() => issueComparisonAction(slug, sent({ headId: sheet.head.id, cylinder: sheet.cylinder, customerWords: "" }))]);
+  const [latest] = sheet.comparisons;
+  if (!sheet.canRecord) return latest ? <LinkButton href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">Report {latest.comparisonNo}</LinkButton> : null;
+  return (
+    <>
+      {trouble ? <Note tone="warn" live title="Not done.">{trouble}</Note> : null}
+      <div className="commit-bar">
+        <span>
+          <b>{drafts.length > 0 ? drafts.map((t) => `${t.side} ${PURPOSE_WORDS[t.purpose]}`).join(", ") : finished.length > 0 ? (hasAfter ? "Before and after are finished" : "Before test finished") : "Nothing read yet"}</b>{" "}
+          <span className="mid">{drafts[0] ? `run ${drafts[0].runNo}, ${drafts[0].operator.name}` : ""}</span>
+        </span>
+        <span className="ml-auto flex flex-wrap items-center gap-2">
+          {drafts.length > 0 ? <ReasonDialog label="Void" question={`Void ${drafts.length > 1 ? "these tests" : "this test"}?`} action="Void it" onAction={(reason) => void run(drafts.map((t) => () => voidTestAction(slug, sent({ testId: t.id, version: t.version, reason }))))} /> : null}
+          {drafts.length === 0 ? finished.slice(-2).map((t) => <ReasonDialog key={t.id} label={`Correct ${t.side}`} question={`Correct the finished ${t.side} ${PURPOSE_WORDS[t.purpose]}?`} action="Correct it" onAction={(reason) => void run([() => correctTestAction(slug, sent({ testId: t.id, reason }))])} />) : null}
+          {latest ? <LinkButton size="sm" href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">{`Report ${latest.comparisonNo}`}</LinkButton> : null}
+          {drafts.length > 0 ? <Button variant="go" pending={pending} pendingText="Finishing…" onClick={finish} disabledReason={waiting > 0 ? "readings still on their way" : undefined}>{drafts.length > 1 ? "Finish both tests" : "Finish test"}</Button> : null}
+          {drafts.length === 0 && !hasBefore ? <StartSheetDialog sheet={sheet} gear={gear} purpose="baseline" basis={{ intake: null, exhaust: null }} isMain onStarted={onChanged} /> : null}
+          {drafts.length === 0 && hasBefore ? <StartSheetDialog sheet={sheet} gear={gear} purpose="interim" basis={before} isMain={false} onStarted={onChanged} /> : null}
+          {drafts.length === 0 && hasBefore ? <StartSheetDialog sheet={sheet} gear={gear} purpose="after" basis={before} isMain={!hasAfter} onStarted={onChanged} /> : null}
+          {drafts.length === 0 && hasAfter && sheet.canIssue ? <Button variant="go" pending={pending} pendingText="Issuing…" onClick={issue}>Issue report</Button> : null}
+        </span>
+      </div>
+    </>
+  );
+}

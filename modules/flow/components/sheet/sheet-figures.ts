@@ -1,0 +1,73 @@
+import { exhaustIntakeRatio } from "../../domain/exhaust-intake-ratio";
+import type { CurveLine } from "../../domain/curve-geometry";
+import type { PortSide } from "../../domain/comparison-reasons";
+import type { RawCell, RawTest } from "../../domain/raw-test";
+import { sideGain, type SideGain } from "../../domain/side-gain";
+import { standingTests } from "../../domain/standing-tests";
+import { figuresOfTest, type ComputedCell, type TestFigures } from "../../domain/test-figures";
+
+export type When = "before" | "after";
+
+export interface SheetColumn {
+  readonly side: PortSide;
+  readonly when: When;
+  readonly test: RawTest;
+  readonly figures: TestFigures;
+  /** `Before`, `After`, `Pass 2`. */
+  readonly head: string;
+}
+export interface SheetSide {
+  readonly side: PortSide;
+  readonly before: SheetColumn | null;
+  readonly after: SheetColumn | null;
+  readonly gain: SideGain | null;
+}
+export interface SheetFigures {
+  readonly sides: readonly SheetSide[];
+  /** Every lift of the sheet, increasing. */
+  readonly liftsUm: readonly number[];
+  readonly lines: readonly CurveLine[];
+}
+
+function column(test: RawTest | null, side: PortSide, when: When): SheetColumn | null {
+  if (!test) return null;
+  return { side, when, test, figures: figuresOfTest(test), head: when === "before" ? "Before" : test.purpose === "interim" ? `Pass ${test.runNo}` : "After" };
+}
+
+/** Both sides of a port as the sheet shows them: a pass in work stands where "after" will. */
+export function sheetFigures(tests: readonly RawTest[], benchCheckHours: number): SheetFigures {
+  const sides = (["intake", "exhaust"] as const).map((side): SheetSide => {
+    const standing = standingTests(tests, side, "draft");
+    const pass = standing.interim.at(-1) ?? null;
+    const afterTest = pass?.state === "draft" ? pass : (standing.after ?? pass);
+    const gain = sideGain({ ...standing, after: afterTest }, side, benchCheckHours);
+    return { side, before: column(standing.before, side, "before"), after: column(afterTest, side, "after"), gain: gain.ok ? gain.value : null };
+  });
+  const columns = sides.flatMap((s) => [s.before, s.after]).filter((c): c is SheetColumn => c !== null);
+  const liftsUm = [...new Set(columns.flatMap((c) => [...c.test.lifts.map((l) => l.liftUm), ...c.figures.cells.map((x) => x.liftUm)]))].sort((a, b) => a - b);
+  return {
+    sides, liftsUm,
+    lines: sides.map((s) => ({ side: s.side, before: s.before?.figures.readings ?? [], after: s.after?.figures.readings ?? [], gain: s.gain?.comparable ? "shown" : "withheld" })),
+  };
+}
+
+/** A test with what is typed laid over what the records hold. */
+export function withTyped(test: RawTest, typed: readonly RawCell[]): RawTest {
+  if (typed.length === 0) return test;
+  const is = (a: RawCell, b: RawCell) => a.liftUm === b.liftUm && a.repeatNo === b.repeatNo;
+  return { ...test, cells: [...test.cells.filter((c) => !typed.some((t) => is(c, t))), ...typed] };
+}
+
+export const cellAt = (col: SheetColumn | null, liftUm: number, repeatNo = 1): ComputedCell | null => col?.figures.cells.find((c) => c.liftUm === liftUm && c.repeatNo === repeatNo) ?? null;
+export const flowAt = (col: SheetColumn | null, liftUm: number): number | null => col?.figures.readings.find((r) => r.liftUm === liftUm)?.flowCfm ?? null;
+
+/** Exhaust to intake at the highest lift both were read at in the newest tests, percent; null without one. */
+export function exhaustToIntake(f: SheetFigures): { percent: number; liftUm: number } | null {
+  const [intake, exhaust] = f.sides.map((s) => ((s.after?.figures.readings.length ?? 0) > 0 ? s.after : s.before));
+  if (!intake || !exhaust) return null;
+  const common = exhaust.figures.readings.filter((e) => intake.figures.readings.some((i) => i.liftUm === e.liftUm)).at(-1);
+  const at = common && flowAt(intake, common.liftUm);
+  if (!common || !at) return null;
+  const ratio = exhaustIntakeRatio({ exhaustCfm: common.flowCfm, intakeCfm: at, exhaustAtInH2O: exhaust.test.nominalInH2O, intakeAtInH2O: intake.test.nominalInH2O });
+  return ratio.ok ? { percent: ratio.value.ratio * 100, liftUm: common.liftUm } : null;
+}

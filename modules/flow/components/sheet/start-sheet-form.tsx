@@ -1,0 +1,111 @@
+"use client";
+import { useState } from "react";
+import { Button } from "@/modules/ui/button";
+import { DialogClose, TaskDialog } from "@/modules/ui/dialog";
+import { Checkbox } from "@/modules/ui/form/checkbox";
+import { CommandForm } from "@/modules/ui/form/command-form";
+import { SelectInput } from "@/modules/ui/form/select-input";
+import { SubmitButton } from "@/modules/ui/form/submit-button";
+import { TextInput } from "@/modules/ui/form/text-input";
+import { TextareaInput } from "@/modules/ui/form/textarea-input";
+import { useCommandForm } from "@/modules/ui/form/use-command-form";
+import { usePlace } from "@/modules/ui/place";
+import { startSheetAction } from "../../actions";
+import type { Purpose, RawTest } from "../../domain/raw-test";
+import { startSheetInput } from "../../input";
+import type { BenchGear, FlowSheet } from "../../queries/sheet";
+
+export const PURPOSE_WORDS: Record<Purpose, string> = { baseline: "before test", after: "after test", interim: "pass in between", check: "check" };
+const liftTyped = (um: number | null, unit: "in" | "mm"): string => (um === null ? "" : unit === "in" ? (um / 25_400).toFixed(3) : String(um / 1000));
+
+const ENTRIES = [{ value: "radius", label: "Radius plate" }, { value: "clay", label: "Clay radius" }, { value: "manifold", label: "Manifold" }, { value: "none", label: "None" }];
+
+/** Fields of one side of the port, under `name.` */
+export function SideFields({ name, title }: { name: "intake" | "exhaust"; title: string }) {
+  return (
+    <fieldset className="fields three full">
+      <legend className="label">{title}</legend>
+      <TextInput name={`${name}.valve`} label="Valve" unit="mm" inputMode="decimal" optional />
+      <TextInput name={`${name}.camLift`} label="Cam lift" inputMode="decimal" optional />
+      <SelectInput name={`${name}.entry`} label="Entry piece" options={ENTRIES} />
+      <TextInput name={`${name}.valvesOpen`} label="Valves open" hint="all, or which" />
+      <TextInput name={`${name}.seatNote`} label="Seats" hint="Printed beside the table" className="col-span-2" />
+    </fieldset>
+  );
+}
+
+/** Fields of the session that both sides share. */
+export function SessionFields({ gear }: { gear: BenchGear }) {
+  return (
+    <>
+      <SelectInput name="fixtureId" label="Bore adapter" placeholder="Choose" options={gear.fixtures.map((f) => ({ value: f.id, label: `${f.name} (${f.boreMm} mm)` }))} />
+      <TextInput name="nominal" label="Test pressure" unit="in H₂O" inputMode="decimal" />
+      <TextInput name="roomTemperature" label="Room temperature" hint="with its unit, such as 71 °F" optional />
+      <TextInput name="roomPressure" label="Barometer" hint="with its unit, such as 29.86 inHg" optional />
+      <TextInput name="leak" label="Leak, valves shut" unit="CFM" inputMode="decimal" optional />
+      <TextInput name="leakPressure" label="Leak read at" unit="in H₂O" inputMode="decimal" optional />
+      <Checkbox name="leakScalingAgreed" label="The leak may be scaled if it was read at another pressure" className="full" />
+      <Checkbox name="plugClosed" label="Plug hole closed" />
+      <Checkbox name="testSprings" label="Light test springs" />
+    </>
+  );
+}
+
+function StartForm({ sheet, gear, purpose, basis, onStarted }: { sheet: FlowSheet; gear: BenchGear; purpose: Purpose; basis: { intake: RawTest | null; exhaust: RawTest | null }; onStarted: () => void }) {
+  const { slug, locale } = usePlace();
+  const [sides, setSides] = useState({ intake: true, exhaust: true });
+  const like = basis.intake ?? basis.exhaust;
+  const unit = like?.liftUnit ?? (locale.endsWith("US") ? "in" : "mm");
+  const step = like?.lifts[0]?.text ?? (unit === "in" ? "0.050" : "1");
+  const cam = liftTyped(like?.camLiftUm ?? sheet.head.camLiftIntakeUm ?? sheet.head.camLiftExhaustUm, unit);
+  const side = (name: "intake" | "exhaust") => ({
+    valve: basis[name]?.valveMm === null || basis[name] === null ? "" : String(basis[name].valveMm), entry: basis[name]?.entry ?? (name === "intake" ? ("radius" as const) : ("none" as const)), valvesOpen: basis[name]?.valvesOpen ?? "all",
+    camLift: liftTyped(basis[name]?.camLiftUm ?? (name === "intake" ? sheet.head.camLiftIntakeUm : sheet.head.camLiftExhaustUm), unit), seatNote: purpose === "baseline" ? "baseline on the cleaned original seats" : "",
+  });
+  const form = useCommandForm({
+    schema: startSheetInput,
+    defaultValues: {
+      headId: sheet.head.id, cylinder: sheet.cylinder, purpose, benchId: like?.bench.id ?? gear.benches[0]?.id ?? "", fixtureId: like?.fixture.id ?? (gear.fixtures.length === 1 ? (gear.fixtures[0]?.id ?? "") : ""),
+      nominal: String(like?.nominalInH2O ?? sheet.nominalInH2O), plugClosed: true, testSprings: true, roomTemperature: "", roomPressure: "", roomHumidity: "", leak: "", leakPressure: "", leakScalingAgreed: false, notes: "",
+      step, camLiftForLadder: cam, liftUnit: unit, intake: side("intake"), exhaust: side("exhaust"), operatorId: gear.operators.some((o) => o.id === sheet.viewer.id) ? sheet.viewer.id : undefined,
+    },
+    action: ({ requestId, input }) => startSheetAction(slug, { requestId, input: { ...input, ...(sides.intake ? {} : { intake: undefined }), ...(sides.exhaust ? {} : { exhaust: undefined }) } }),
+    onDone: onStarted,
+    draft: `flow-start-${sheet.head.id}-${sheet.cylinder}-${purpose}`,
+  });
+  return (
+    <CommandForm form={form} toFix="before the test starts">
+      <div className="fields">
+        <SelectInput name="benchId" label="Bench" options={gear.benches.map((b) => ({ value: b.id, label: b.name }))} />
+        <SelectInput name="operatorId" label="At the bench" options={gear.operators.map((o) => ({ value: o.id, label: o.name }))} />
+        <SelectInput name="liftUnit" label="Lifts in" options={[{ value: "in", label: "inches" }, { value: "mm", label: "millimetres" }]} />
+        <TextInput name="step" label="Step" inputMode="decimal" hint="The ladder is made of its multiples" />
+        <TextInput name="camLiftForLadder" label="Past cam lift" inputMode="decimal" hint="One lift goes past it" />
+        <SessionFields gear={gear} />
+        <div className="full flex gap-5">
+          {(["intake", "exhaust"] as const).map((s) => <label key={s} className="tick"><input type="checkbox" checked={sides[s]} onChange={(e) => setSides({ ...sides, [s]: e.target.checked })} /><span className="capitalize">{s}</span></label>)}
+        </div>
+        {sides.intake ? <SideFields name="intake" title="Intake" /> : null}
+        {sides.exhaust ? <SideFields name="exhaust" title="Exhaust" /> : null}
+        <TextareaInput name="notes" label="Notes" rows={2} optional className="full" />
+      </div>
+      <div className="form-act">
+        <SubmitButton pendingText="Opening…">{`Start ${PURPOSE_WORDS[purpose]}`}</SubmitButton>
+        <DialogClose>Not yet</DialogClose>
+      </div>
+    </CommandForm>
+  );
+}
+
+/** Opens both sides of a port as drafts; what the last test had is filled in. */
+export function StartSheetDialog({ purpose, isMain, onStarted, ...rest }: { sheet: FlowSheet; gear: BenchGear; purpose: Purpose; basis: { intake: RawTest | null; exhaust: RawTest | null }; isMain: boolean; onStarted: () => void }) {
+  const [open, setOpen] = useState(false);
+  const noGear = rest.gear.benches.length === 0 || rest.gear.fixtures.length === 0;
+  const label = `Start ${PURPOSE_WORDS[purpose]}`;
+  if (noGear) return <Button variant={isMain ? "go" : "plain"} disabledReason="a bench and a bore adapter are set up first">{label}</Button>;
+  return (
+    <TaskDialog open={open} onOpenChange={setOpen} wide trigger={<Button variant={isMain ? "go" : "plain"} icon="tube">{label}</Button>} title={`Start ${PURPOSE_WORDS[purpose]}, port ${rest.sheet.cylinder}`}>
+      <StartForm {...rest} purpose={purpose} onStarted={() => { setOpen(false); onStarted(); }} />
+    </TaskDialog>
+  );
+}

@@ -1,0 +1,160 @@
+"use client";
+import { useCallback, useEffect, useMemo, useRef, useState, useSyncExternalStore } from "react";
+import { getJson } from "@/modules/ui/fetch-json";
+import type { PortSide } from "../../domain/comparison-reasons";
+import { SCALE_UNIT } from "../../domain/computed-reading";
+import type { RawCell, RawTest } from "../../domain/raw-test";
+import { figuresOfTest } from "../../domain/test-figures";
+import type { FlowSheet } from "../../queries/sheet";
+import { keptKey, ReadingQueue, type CellEdit, type KeptCell, type SavedCell, type Stuck } from "./reading-queue";
+import { readingSender, tabletStore } from "./reading-store";
+import { sheetFigures, withTyped, type When } from "./sheet-figures";
+
+export interface Pos { readonly side: PortSide; readonly when: When; readonly testId: string; readonly liftUm: number; readonly repeatNo: number }
+interface Undo { readonly pos: Pos; readonly value: string }
+
+const lastEdit = (cell: KeptCell | undefined): CellEdit | undefined => cell?.edits.at(-1);
+
+/** A kept value as a cell of its test, so that figures and curve follow the key, not the network. */
+function rawOf(cell: KeptCell, edit: CellEdit, test: RawTest): RawCell {
+  return {
+    liftUm: cell.liftUm, repeatNo: cell.repeatNo, revision: cell.revision + 1, valueText: edit.value, valueUnit: SCALE_UNIT[test.bench.scale], rangeLabel: edit.range,
+    pressureText: edit.pressure || String(test.nominalInH2O), pressureUnit: "inH2O", acceptedReason: edit.acceptedReason, excludedReason: edit.excludedReason, takenAt: edit.takenAt,
+  };
+}
+
+/** State of one flow sheet in the browser: what is typed, what is saved, what waits, and the way back. */
+export function useSheet(sheet: FlowSheet, slug: string) {
+  const [saved, setSaved] = useState<readonly RawTest[]>(sheet.tests);
+  const [savedAt, setSavedAt] = useState<Date | null>(null);
+  const [range, setRange] = useState<string | null>(null);
+  const [held, setHeld] = useState("");
+  const undos = useRef<Undo[]>([]);
+  const committed = useRef(new Map<string, string>());
+  const idle = useRef<ReturnType<typeof setTimeout> | undefined>(undefined);
+
+  const onSaved = useCallback(({ cell, edit, revision }: SavedCell) => {
+    setSavedAt(new Date());
+    setSaved((tests) => tests.map((t) => (t.id === cell.testId ? withTyped(t, [{ ...rawOf(cell, edit, t), revision }]) : t)));
+  }, []);
+  const [queue] = useState(() => new ReadingQueue(tabletStore(slug), readingSender(slug), (s) => onSaved(s), sheet.viewer.id));
+  const state = useSyncExternalStore(queue.subscribe, queue.snapshot, queue.snapshot);
+
+  useEffect(() => {
+    const again = () => void queue.flush();
+    void queue.load().then(again);
+    const timer = setInterval(() => { if (queue.snapshot().waiting > 0) again(); }, 5_000);
+    window.addEventListener("online", again);
+    document.addEventListener("visibilitychange", again);
+    return () => {
+      clearInterval(timer);
+      window.removeEventListener("online", again);
+      document.removeEventListener("visibilitychange", again);
+    };
+  }, [queue]);
+
+  const tests = useMemo(() => saved.map((t) => withTyped(t, [...state.cells.values()].filter((c) => c.testId === t.id).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c, e, t)] : []; }))), [saved, state]);
+  const figures = useMemo(() => sheetFigures(tests, sheet.benchCheckHours), [tests, sheet.benchCheckHours]);
+
+  const keyOf = useCallback((pos: Pos) => keptKey(slug, pos.testId, pos.liftUm, pos.repeatNo), [slug]);
+  const savedCell = useCallback((pos: Pos) => saved.find((t) => t.id === pos.testId)?.cells.find((c) => c.liftUm === pos.liftUm && c.repeatNo === pos.repeatNo), [saved]);
+  const textAt = useCallback((pos: Pos): string => lastEdit(state.cells.get(keyOf(pos)))?.value ?? savedCell(pos)?.valueText ?? "", [state, keyOf, savedCell]);
+  const keptAt = useCallback((pos: Pos): KeptCell | undefined => state.cells.get(keyOf(pos)), [state, keyOf]);
+
+  const put = useCallback((pos: Pos, value: string, more: Partial<Pick<CellEdit, "acceptedReason" | "excludedReason" | "range" | "pressure">> = {}) => {
+    const test = saved.find((t) => t.id === pos.testId);
+    if (!test) return;
+    const kept = queue.snapshot().cells.get(keyOf(pos));
+    const before = savedCell(pos);
+    const was = lastEdit(kept);
+    const edit: CellEdit = {
+      requestId: crypto.randomUUID(), value, range: test.bench.scale === "direct" ? null : (was?.range ?? before?.rangeLabel ?? range ?? test.bench.ranges[0]?.label ?? null),
+      pressure: was?.pressure ?? held, acceptedReason: null, excludedReason: null, takenAt: new Date().toISOString(), ...more,
+    };
+    void queue.write({
+      key: keyOf(pos), shop: slug, testId: pos.testId, liftUm: pos.liftUm, lift: test.lifts.find((l) => l.liftUm === pos.liftUm)?.text ?? String(pos.liftUm / (test.liftUnit === "in" ? 25_400 : 1000)),
+      liftUnit: test.liftUnit, repeatNo: pos.repeatNo, revision: before?.revision ?? 0,
+    }, edit);
+  }, [saved, queue, keyOf, savedCell, slug, range, held]);
+
+  /** Sends the cell, or holds it where it is doubtful or no number. Called when the cell is left. */
+  const commit = useCallback((pos: Pos) => {
+    clearTimeout(idle.current);
+    const key = keyOf(pos);
+    const kept = queue.snapshot().cells.get(key);
+    const edit = lastEdit(kept);
+    if (!kept || !edit || kept.stuck) return;
+    const before = savedCell(pos);
+    const isSame = before !== undefined && before.valueText === edit.value && before.rangeLabel === edit.range && before.acceptedReason === edit.acceptedReason && before.excludedReason === edit.excludedReason && (edit.pressure === "" || before.pressureText === edit.pressure);
+    const neverSent = kept.edits.every((e) => !e.sent);
+    if (neverSent && (isSame || (edit.value.trim() === "" && (before?.revision ?? 0) === 0))) {
+      void queue.discard(key);
+      return;
+    }
+    const wasValue = committed.current.get(key) ?? before?.valueText ?? "";
+    if (wasValue !== edit.value) undos.current.push({ pos, value: wasValue });
+    committed.current.set(key, edit.value);
+    const test = saved.find((t) => t.id === pos.testId);
+    if (test && edit.value.trim() !== "") {
+      const others = [...queue.snapshot().cells.values()].filter((c) => c.testId === test.id).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c, e, test)] : []; });
+      const cell = figuresOfTest(withTyped(test, others)).cells.find((c) => c.liftUm === pos.liftUm && c.repeatNo === pos.repeatNo);
+      if (cell?.question && !edit.acceptedReason) {
+        void queue.hold(key, cell.question.words, true);
+        return;
+      }
+      if (cell?.refusal && !cell.question) {
+        void queue.hold(key, cell.refusal.message, false);
+        return;
+      }
+    }
+    void queue.flush();
+  }, [keyOf, queue, savedCell, saved]);
+
+  const type = useCallback((pos: Pos, value: string) => {
+    put(pos, value);
+    clearTimeout(idle.current);
+    idle.current = setTimeout(() => commit(pos), 4_000);
+  }, [put, commit]);
+
+  /** Back to what the cell said before. Returns where that was. */
+  const undo = useCallback((at: Pos | null): Pos | null => {
+    const now = at ? lastEdit(queue.snapshot().cells.get(keyOf(at)))?.value : undefined;
+    const stands = at ? (committed.current.get(keyOf(at)) ?? savedCell(at)?.valueText ?? "") : "";
+    if (at && now !== undefined && now !== stands) {
+      put(at, stands);
+      commit(at);
+      return at;
+    }
+    const last = undos.current.pop();
+    if (!last) return null;
+    committed.current.set(keyOf(last.pos), last.value);
+    put(last.pos, last.value);
+    void queue.flush();
+    return last.pos;
+  }, [queue, keyOf, savedCell, put, commit]);
+
+  /** Takes over what a bench computer has sent meanwhile. */
+  const takeFromBench = useCallback(async (): Promise<boolean> => {
+    try {
+      const fresh = await getJson<FlowSheet>(`/api/v1/s/${slug}/flow/sheet`, { headId: sheet.head.id, cylinder: sheet.cylinder });
+      setSaved(fresh.tests);
+      return true;
+    } catch {
+      return false;
+    }
+  }, [slug, sheet.head.id, sheet.cylinder]);
+
+  const mark = useCallback((pos: Pos, more: Partial<Pick<CellEdit, "acceptedReason" | "excludedReason" | "range" | "pressure">>) => {
+    put(pos, textAt(pos), more);
+    commit(pos);
+  }, [put, textAt, commit]);
+
+  return {
+    tests, figures, state, savedAt, range, setRange, held, setHeld, textAt, keptAt, type, commit, undo, takeFromBench, mark,
+    keepWithReason: (pos: Pos, reason: string) => mark(pos, { acceptedReason: reason }),
+    discard: (pos: Pos) => void queue.discard(keyOf(pos)),
+    insist: (pos: Pos) => void queue.insist(keyOf(pos), crypto.randomUUID()).then(() => queue.flush()),
+    stuckAt: (pos: Pos): Stuck | null => keptAt(pos)?.stuck ?? null,
+  };
+}
+export type Sheet = ReturnType<typeof useSheet>;

@@ -1,0 +1,140 @@
+import { renderToStaticMarkup } from "react-dom/server";
+import { describe, expect, it } from "vitest";
+import { HERO_FLOWS, HERO_LIFTS_UM } from "@/tests/support/hero-flow";
+import { renderPdf } from "@/modules/outbound/pdf/render";
+import type { PortSide } from "../domain/comparison-reasons";
+import type { RawTest } from "../domain/raw-test";
+import { notTestedWords, reportTest, type ReportSnapshot } from "../domain/report-snapshot";
+import { sideGain, type GainOfPiece, type PortGain } from "../domain/side-gain";
+import { standingTests } from "../domain/standing-tests";
+import { flowReport } from "../pdf/flow-report";
+import { CustomerGain, gainHeading } from "./customer-gain";
+import { CurveReader } from "./curve-reader";
+import { linesOfPort } from "./curve-lines";
+import { FlowCheckPort } from "./flow-check";
+import { liftWords } from "./flow-words";
+import { MiniCurve } from "./mini-curve";
+import { sheetFigures } from "./sheet/sheet-figures";
+import { notesOf, SheetNotes } from "./sheet/sheet-notes";
+import { SheetSummary } from "./sheet/sheet-summary";
+
+const PLACE = { locale: "en-US", zone: "America/Denver" };
+const FIXTURES = { "77": { id: "f77", name: "77", boreMm: 77 }, "79": { id: "f79", name: "79", boreMm: 79.5 } } as const;
+
+function heroTest(side: PortSide, when: "before" | "after", more: Partial<RawTest> & { flows?: readonly number[] } = {}): RawTest {
+  const { flows = HERO_FLOWS[side][when], ...rest } = more;
+  const day = when === "before" ? "2026-02-26" : "2026-03-12";
+  return {
+    id: `${side}-${when}`, side, purpose: when === "before" ? "baseline" : "after", runNo: 1, state: "complete", version: 2,
+    bench: { id: "b", name: "Bench 1", scale: "direct", ranges: [], waterUnit: "conventional" }, benchFactor: 1, benchCheckedAt: `${day}T15:40:00.000Z`, fixture: FIXTURES["77"], nominalInH2O: 28,
+    lifts: HERO_LIFTS_UM.map((liftUm) => ({ liftUm, text: (liftUm / 25_400).toFixed(3) })), liftUnit: "in", camLiftUm: 8636, entry: side === "intake" ? "radius" : "none", valvesOpen: "all", valveMm: 31,
+    seatNote: when === "before" ? "baseline on the cleaned original seats" : "new cut", plugClosed: true, testSprings: true, warmUpMinutes: null, roomTemperatureText: "71 °F", roomPressureText: "", roomHumidityText: "",
+    leakText: "", leakPressureText: "", notes: "", operator: { id: "june", name: "June" }, startedAt: `${day}T16:30:00.000Z`, completedAt: `${day}T17:00:00.000Z`, correctsTestId: null, voidReason: null,
+    cells: flows.map((flow, i) => ({ liftUm: HERO_LIFTS_UM[i] ?? 0, repeatNo: 1, revision: 1, valueText: String(flow), valueUnit: "cfm", rangeLabel: null, pressureText: "28", pressureUnit: "inH2O", acceptedReason: null, excludedReason: null, takenAt: `${day}T16:40:00.000Z` })),
+    ...rest,
+  };
+}
+const testsOf = (after: Partial<RawTest> & { exhaustFlows?: readonly number[] } = {}): RawTest[] => {
+  const { exhaustFlows, ...more } = after;
+  return [heroTest("intake", "before"), heroTest("exhaust", "before"), heroTest("intake", "after", more), heroTest("exhaust", "after", { ...more, ...(exhaustFlows ? { flows: exhaustFlows } : {}) })];
+};
+function portOf(tests: readonly RawTest[]): PortGain {
+  const side = (s: PortSide) => {
+    const gain = sideGain(standingTests(tests, s, "complete"), s, 8);
+    if (!gain.ok) throw new Error(gain.refusal.code);
+    return gain.value;
+  };
+  return { cylinder: 1, intake: side("intake"), exhaust: side("exhaust") };
+}
+const pieceOf = (tests: readonly RawTest[]): GainOfPiece => ({ pieceId: "p", headId: "h", mark: "260224-07", family: "S250-4V", ports: [portOf(tests)] });
+
+function snapshotOf(tests: readonly RawTest[]): ReportSnapshot {
+  const port = portOf(tests);
+  const sides = (["intake", "exhaust"] as const).map((side) => ({ side, standing: standingTests(tests, side, "complete"), gain: port[side] }));
+  return {
+    kind: 1, shop: { name: "Ninebark Headworks", address: "4 Sluice Road", phone: "555-0110", email: "" }, ...PLACE, head: { mark: "260224-07", family: "S250-4V", castingNumber: "K7-2201", orderNumber: "WO-2026-0118", customerName: "Odalys Brennan" },
+    cylinder: 1, cylinders: 1, comparisonNo: 1, sides: sides.map((s) => ({ side: s.side, gain: s.gain, before: s.standing.before && reportTest(s.standing.before), after: s.standing.after && reportTest(s.standing.after) })),
+    notTested: notTestedWords(sides, 1, 1, (um) => liftWords(um, "in", "en-US")), customerWords: "", issuedBy: "June", issuedAt: "2026-03-12T18:00:00.000Z",
+  };
+}
+/** All words of a paper's description. */
+const paperWords = (node: unknown): string => (typeof node === "string" ? ` ${node}` : Array.isArray(node) ? node.map(paperWords).join("") : typeof node === "object" && node !== null ? Object.entries(node).filter(([k]) => k === "text" || typeof node === "object").map(([k, v]) => (k === "text" || typeof v === "object" ? paperWords(v) : "")).join("") : "");
+
+/** Every place of this module that tells what changed between two tests, as the words a reader meets there. */
+const PLACES: Record<string, (tests: readonly RawTest[]) => string> = {
+  "the order's flow check": (t) => renderToStaticMarkup(<FlowCheckPort port={portOf(t)} locale="en-US" />),
+  "the mini curve": (t) => renderToStaticMarkup(<MiniCurve port={portOf(t)} locale="en-US" />),
+  "the curve that is read point by point": (t) => renderToStaticMarkup(<CurveReader lines={linesOfPort(portOf(t))} unit="in" atInH2O={28} camLiftUm={8636} width={560} height={366} locale="en-US" label="Read the curve" />),
+  "the customer's page": (t) => renderToStaticMarkup(<CustomerGain gain={pieceOf(t)} {...PLACE} />),
+  "the sheet's summary": (t) => renderToStaticMarkup(<SheetSummary figures={sheetFigures(t, 8)} locale="en-US" />),
+  "the sheet's notes": (t) => renderToStaticMarkup(<SheetNotes notes={notesOf(sheetFigures(t, 8), 8, "en-US")} />),
+  "the flow report": (t) => paperWords(flowReport(snapshotOf(t)).content),
+};
+const words = (html: string): string => html.replace(/<[^>]+>/g, " ").replace(/ +/g, " ");
+/** Class names of filled areas count as saying it too. */
+const saysGain = (html: string): boolean => /\bgain/i.test(html) || /class="gain2?"/.test(html) || /more air/i.test(html) || /[+]\d/.test(words(html));
+
+const APART: Record<string, Partial<RawTest>> = {
+  "another bore adapter": { fixture: FIXTURES["79"] },
+  "another depression": { nominalInH2O: 25 },
+  "an old bench check": { benchCheckedAt: "2026-03-11T15:00:00.000Z" },
+  "no bench check": { benchCheckedAt: null },
+  "another bench": { bench: { id: "b2", name: "Bench 2", scale: "direct", ranges: [], waterUnit: "conventional" } },
+};
+
+describe.each(Object.entries(PLACES))("%s", (_, render) => {
+  it.each(Object.entries(APART))("never says gain after %s", (_name, change) => {
+    expect(saysGain(render(testsOf(change)))).toBe(false);
+  });
+  it("never says gain before the after test", () => {
+    expect(saysGain(render(testsOf().filter((t) => t.purpose === "baseline")))).toBe(false);
+  });
+  it("never promises power", () => {
+    expect(words(render(testsOf())).replace(/not power\.|Power depends on [^;]*;|wet flow and power were not measured/gi, "")).not.toMatch(/\b(power|horsepower|hp|kW)\b/i);
+  });
+});
+
+// The notes only speak up when something is wrong.
+describe.each(Object.entries(PLACES).filter(([name]) => name !== "the sheet's notes"))("%s", (_, render) => {
+  it("speaks of a gain when the tests may be compared", () => expect(saysGain(render(testsOf()))).toBe(true));
+});
+
+describe("what is told", () => {
+  const LOSS = [21.2, ...HERO_FLOWS.exhaust.after.slice(1)];
+  it("is the hero's mean on every place that prints it", () => {
+    for (const place of ["the order's flow check", "the customer's page", "the sheet's summary", "the flow report"]) {
+      const text = words(PLACES[place]?.(testsOf()) ?? "");
+      expect(text, place).toContain("+9.45");
+      expect(text, place).toContain("+6.25");
+    }
+    expect(words(PLACES["the flow report"]?.(testsOf()) ?? "")).toMatch(/\+9\.45 CFM \(10\.63 %\)[\s\S]*\+6\.25 CFM \(8\.92 %\)/);
+  });
+  it("names a loss wherever it names a gain", () => {
+    for (const place of ["the order's flow check", "the customer's page", "the flow report"]) {
+      const text = words(PLACES[place]?.(testsOf({ exhaustFlows: LOSS })) ?? "");
+      expect(text, place).toMatch(/▼|loss|lower/);
+      expect(text, place).toContain(".050");
+    }
+    expect(words(PLACES["the sheet's notes"]?.(testsOf({ exhaustFlows: LOSS })) ?? "")).toContain("Exhaust .050 lost 0.6 CFM.");
+  });
+  it("gives the reason where the gain would stand", () => {
+    for (const place of ["the order's flow check", "the customer's page", "the sheet's notes", "the flow report"]) {
+      expect(words(PLACES[place]?.(testsOf(APART["another bore adapter"])) ?? ""), place).toContain("Bore fixture differs: before 77 mm, after 79.5 mm.");
+    }
+  });
+  it("heads the customer's page by what was found", () => {
+    expect(gainHeading(pieceOf(testsOf()))).toBe("Your head flows more air");
+    expect(gainHeading(pieceOf(testsOf({ exhaustFlows: HERO_FLOWS.exhaust.before.map((v) => v - 1) })))).toBe("Your head, before and after");
+    expect(gainHeading(pieceOf(testsOf(APART["another bench"])))).toBe("Your head on the flow bench");
+  });
+  it("fits on one page, and comes out the same twice", async () => {
+    const long = Array.from({ length: 24 }, (_, i) => 1270 * (i + 1));
+    const wide = testsOf().map((t): RawTest => ({ ...t, lifts: long.map((liftUm) => ({ liftUm, text: String(liftUm) })), cells: long.map((liftUm, i) => ({ ...(t.cells[0] as RawTest["cells"][number]), liftUm, valueText: String(20 + i * 5 + (t.purpose === "after" ? 2 : 0)) })) }));
+    for (const tests of [testsOf(), testsOf(APART["another bore adapter"]), wide]) {
+      const make = () => renderPdf(flowReport(snapshotOf(tests)), { creationDate: new Date("2026-03-12T18:00:00Z") });
+      const [one, two] = [await make(), await make()];
+      expect(one.equals(two)).toBe(true);
+      expect(one.toString("latin1").match(/\/Type \/Page\b(?!s)/g)).toHaveLength(1);
+    }
+  });
+});
