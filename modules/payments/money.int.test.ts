@@ -14,6 +14,7 @@ import type { InvoiceSnapshot } from "@/modules/invoices/domain/invoice-snapshot
 import { issueInvoice } from "@/modules/invoices/issue";
 import { draftSheet } from "@/modules/invoices/sheet";
 import { minor } from "@/modules/kernel/money";
+import { jobProfitOf } from "@/modules/reports/queries";
 import { answerByLink } from "@/modules/work-orders/commands/answer-estimate";
 import { startPayments, type PaymentsStandIn } from "@/tests/fakes/stripe/server";
 import { listen } from "@/tests/fakes/shared/http";
@@ -240,6 +241,21 @@ describe("the hero job's money", () => {
     });
     expect(Object.values(left).reduce((x, y) => x + y, 0)).toBe(0);
     expect(await behindTheCurtain("select coalesce(sum(amount_minor), 0) from journal_lines")).toEqual(["0"]);
+  });
+
+  it("earned 1,506.42, 58.20 % of net sales, from facts that open to their rows", async () => {
+    // Minutes and rates of the six people of the worked example, put on six people of this shop.
+    const worked = [["rcv", 1900, 66], ["owner", 2950, 253], ["insp", 3000, 140], ["tech", 3800, 345], ["lead", 3100, 195], ["book", 2800, 150]] as const;
+    for (const [who, rate, minutes] of worked) {
+      await behindTheCurtain(`update pay_rates set rate_minor = ${rate} where person_id = '${a.people[who] ?? ""}'`);
+      await behindTheCurtain(`insert into time_entries (shop_id, id, person_id, clock, work_order_id, started_at, ended_at, source) values ('${a.shop.id}', gen_random_uuid(), '${a.people[who] ?? ""}', 'bench', '${hero.orderId}', '2026-03-05T15:00:00Z', '2026-03-05T15:00:00Z'::timestamptz + interval '${minutes} minutes', 'test')`);
+    }
+    const view = await jobProfitOf(a.as("owner", "2026-03-20T17:00:00Z"), hero.orderId);
+    expect(view).toMatchObject({ netSalesMinor: 258830, partsMinor: 26052, loadedLaborMinor: 71336, freightOutMinor: 3640, paymentFeesMinor: 7160, profitMinor: 150642, marginBp: 5820, minutes: 1149 });
+    expect(view.rows.fees.map((r) => r.amountMinor)).toEqual([1977, 5183]);
+    expect((await jobProfitOf(a.as("mgr", "2026-03-20T17:00:00Z"), hero.orderId)).rows.labor.every((l) => l.costMinor === null)).toBe(true);
+    await expect(jobProfitOf(a.as("tech"), hero.orderId)).rejects.toThrow(NotFound);
+    await expect(jobProfitOf(b.as("owner"), hero.orderId)).rejects.toThrow(NotFound);
   });
 });
 
