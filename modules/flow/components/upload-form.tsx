@@ -26,7 +26,7 @@ export function UploadForm({ heads, gear, headId: given, nominal }: { heads: rea
   const toast = useToast();
   const fileId = useId();
   const nominalId = useId();
-  const [headId, setHeadId] = useState(given ?? heads[0]?.id ?? "");
+  const [headId, setHeadId] = useState(given ?? "");
   const [purpose, setPurpose] = useState("baseline");
   const [benchId, setBenchId] = useState(gear.benches[0]?.id ?? "");
   const [fixtureId, setFixtureId] = useState(gear.fixtures[0]?.id ?? "");
@@ -85,7 +85,7 @@ export function UploadForm({ heads, gear, headId: given, nominal }: { heads: rea
       {trouble ? <Note tone="stop" live title="Nothing was kept.">{trouble.message} {trouble.fields.map((f) => `${f.path}: ${f.message}`).join(" ")}</Note> : null}
       <Bay label="1. Of which head, read how">
         <div className="fields three">
-          <Pick label="Head" value={headId} options={heads.map((h) => ({ value: h.id, label: `${h.mark}, ${h.family}` }))} onChange={setHeadId} />
+          <Pick label="Head" value={headId} options={[{ value: "", label: "Choose the head" }, ...heads.map((h) => ({ value: h.id, label: `${h.mark}, ${h.family}` }))]} onChange={setHeadId} />
           <Pick label="Test" value={purpose} options={[{ value: "baseline", label: "Before work" }, { value: "after", label: "After work" }, { value: "interim", label: "A pass in between" }, { value: "check", label: "A check" }]} onChange={setPurpose} />
           <Pick label="Bench" value={benchId} options={gear.benches.map((b) => ({ value: b.id, label: b.name }))} onChange={setBenchId} />
           <Pick label="Fixture" value={fixtureId} options={gear.fixtures.map((f) => ({ value: f.id, label: `${f.name} (${f.boreMm} mm)` }))} onChange={setFixtureId} />
