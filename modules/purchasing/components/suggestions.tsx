@@ -51,10 +51,10 @@ function Group({ group, suppliers }: { group: SuggestionGroup; suppliers: readon
       <CommandForm form={form} label={`Order from ${group.supplierName}`} toFix="before the order is written">
         <table className="calm">
           <caption className="sr-only">{`To buy from ${group.supplierName}`}</caption>
-          <thead><tr><th className="chk"><span className="sr-only">Take</span></th><th className="w2">No.</th><th>Part</th><th>For</th><th className="r">Free</th><th className="r">Buy</th>{group.rows.some((r) => r.lastPriceMinor !== null) ? <th className="r hide-s">Last paid</th> : null}</tr></thead>
+          <thead><tr><th className="chk" style={{ width: 44 }}><span className="sr-only">Take</span></th><th className="w2">No.</th><th>Part</th><th>For</th><th className="r">Free</th><th className="r">Buy</th>{group.rows.some((r) => r.lastPriceMinor !== null) ? <th className="r hide-s">Last paid</th> : null}</tr></thead>
           <tbody>{group.rows.map((r) => (
             <tr key={r.key}>
-              <td className="chk"><input type="checkbox" checked={ticked.has(r.key)} onChange={() => toggle(r.key)} aria-label={`Buy ${r.sku}${r.workOrderNumber ? ` for ${r.workOrderNumber}` : ""}`} /></td>
+              <td className="chk"><span className="tick"><input type="checkbox" checked={ticked.has(r.key)} onChange={() => toggle(r.key)} aria-label={`Buy ${r.sku}${r.workOrderNumber ? ` for ${r.workOrderNumber}` : ""}`} /></span></td>
               <td className="q mid w2 nw">{r.sku}</td><td className="b">{r.description}</td><td>{r.why === "short" ? <Flag tone="open">{r.workOrderNumber ?? "Short"}</Flag> : <Status dial="work">Reorder</Status>}</td>
               <td className="r q">{qtyText(r.freeMilli, r.stockUnit)}</td><td className="r q b">{qtyText(r.qtyMilli, r.stockUnit)}</td>{group.rows.some((x) => x.lastPriceMinor !== null) ? <td className="r q mid hide-s">{r.lastPriceMinor === null ? "" : amount(r.lastPriceMinor, place)}</td> : null}
             </tr>

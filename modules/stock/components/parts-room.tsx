@@ -69,7 +69,7 @@ export function PartsRoom({ first, view, canBuy }: { first: Page; view: PartView
           <div className="bar"><SearchWell label="Narrow the list" placeholder="Number, words or family" value={text} onChange={(e) => setText(e.target.value)} /></div>
           <DataTable
             caption="Parts" columns={columns} rows={rows} rowKey={(p) => p.id} hrefOf={(p) => `/s/${slug}/parts/${encodeURIComponent(p.sku)}`} picked={pickedId} onPick={(p) => setPicked(p.id)}
-            compact={(p) => <span className="row2" style={{ gridTemplateColumns: "1fr auto 128px" }}><b>{p.description}</b><span><b className="num" style={{ fontSize: "1.0625rem" }}>{qtyText(p.freeMilli, p.isKit ? "each" : p.stockUnit)}</b> <span className="dim sm">free</span></span><PartState part={p} locale={locale} /></span>}
+            compact={(p) => <span className="row2" style={{ gridTemplateColumns: "1fr auto 128px", alignItems: "center" }}><b>{p.description}</b><span><b className="num" style={{ fontSize: "1.0625rem" }}>{qtyText(p.freeMilli, p.isKit ? "each" : p.stockUnit)}</b> <span className="dim sm">free</span></span><PartState part={p} locale={locale} /></span>}
             state={query.isPending ? "loading" : query.isError && rows.length === 0 ? "error" : "ready"} loadingLabel="Fetching parts."
             error={<ErrorState title="The parts could not be fetched" action={<Button onClick={() => void query.refetch()}>Try again</Button>}>Nothing was changed.</ErrorState>}
             empty={<EmptyState title={q ? "No part of that number or name" : EMPTY[view][0]} action={q ? undefined : <LinkButton href={`/s/${slug}/parts/new`}>Add a part</LinkButton>}>{q ? "Try fewer letters, or the supplier's number." : EMPTY[view][1]}</EmptyState>}

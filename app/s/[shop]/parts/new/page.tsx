@@ -11,7 +11,7 @@ export default async function NewPartPage({ params }: { params: Promise<{ shop: 
   return (
     <main id="main" className="page">
       <PageHead title="Add a part" sub="Its number is for ever; the rest can be changed." />
-      <AddPartForm suppliers={await supplierNames(ctx)} seesPrice={ableTo(ctx, "prices.see")} />
+      <div style={{ maxWidth: 920 }}><AddPartForm suppliers={await supplierNames(ctx)} seesPrice={ableTo(ctx, "prices.see")} /></div>
     </main>
   );
 }

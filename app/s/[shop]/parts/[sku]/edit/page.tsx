@@ -13,7 +13,7 @@ export default async function ChangePartPage({ params }: { params: Promise<{ sho
   return (
     <main id="main" className="page">
       <PageHead title={`Change ${part.sku}`} sub="The number stays." />
-      <ChangePartForm part={part} suppliers={await supplierNames(ctx)} seesPrice={ableTo(ctx, "prices.see")} />
+      <div style={{ maxWidth: 920 }}><ChangePartForm part={part} suppliers={await supplierNames(ctx)} seesPrice={ableTo(ctx, "prices.see")} /></div>
     </main>
   );
 }

@@ -12,5 +12,5 @@ export default async function SupplierPage({ params }: { params: Promise<{ shop:
   const { id } = await params;
   if (!isUuid(id)) notFound();
   const supplier = await orNotFound(getSupplier(ctx, id));
-  return <main id="main" className="page"><PageHead title={supplier.name} /><ChangeSupplierForm supplier={supplier} /></main>;
+  return <main id="main" className="page"><PageHead title={supplier.name} /><div style={{ maxWidth: 920 }}><ChangeSupplierForm supplier={supplier} /></div></main>;
 }

@@ -6,5 +6,5 @@ export const metadata = { title: "Add a supplier" };
 
 export default async function NewSupplierPage({ params }: { params: Promise<{ shop: string }> }) {
   await shopPage(params, "purchase.write");
-  return <main id="main" className="page"><PageHead title="Add a supplier" /><AddSupplierForm /></main>;
+  return <main id="main" className="page"><PageHead title="Add a supplier" /><div style={{ maxWidth: 920 }}><AddSupplierForm /></div></main>;
 }
