@@ -1,5 +1,6 @@
 import { z } from "@/modules/kernel/zod";
 import { holdsCardNumber } from "@/modules/kernel/card-number";
+import { INVOICE_VIEWS } from "./domain/invoice-views";
 import { parseMinor } from "@/modules/kernel/money";
 
 const words = (max: number) => z.string().trim().max(max, `At most ${max} characters.`)
@@ -34,7 +35,7 @@ export const creditInvoiceInput = z.strictObject({
 export const applyCreditInput = z.strictObject({ invoiceId: z.uuid() });
 export const writeOffInput = z.strictObject({ invoiceId: z.uuid(), reason: words(240).min(3, "Say why, in a few words.") });
 export const findInvoicesInput = z.strictObject({
-  view: z.enum(["open", "overdue", "paid", "draft", "all"]).default("open"), q: z.string().trim().max(100).default(""),
+  view: z.enum(INVOICE_VIEWS).default("open"), q: z.string().trim().max(100).default(""),
   after: z.string().max(200).optional(), limit: z.coerce.number().int().min(1).max(100).default(50),
 });
 export type FindInvoices = z.output<typeof findInvoicesInput>;

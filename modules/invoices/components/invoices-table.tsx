@@ -11,11 +11,10 @@ import { Flag } from "@/modules/ui/flag";
 import { usePlace, type PlaceFacts } from "@/modules/ui/place";
 import { SearchWell } from "@/modules/ui/search-well";
 import { Status } from "@/modules/ui/status";
-import { Views } from "@/modules/ui/views";
+import type { InvoiceView } from "../domain/invoice-views";
 import type { InvoiceRow, InvoicesPage } from "../queries";
+import { InvoiceViews } from "./invoice-views";
 
-export const INVOICE_VIEWS = ["open", "overdue", "paid", "draft", "all"] as const;
-export type InvoiceView = (typeof INVOICE_VIEWS)[number];
 const WORDS: Record<InvoiceView, string> = { open: "Open", overdue: "Overdue", paid: "Paid", draft: "Drafts", all: "All" };
 
 const stateOf = (r: InvoiceRow) => r.state === "draft" ? <Status dial="draft">Draft</Status>
@@ -51,14 +50,8 @@ export function InvoicesTable({ view, first }: { view: InvoiceView; first: Invoi
   const base = `/s/${place.slug}/books`;
   return (
     <>
-      <Views
-        label="Saved views" current={view}
-        views={[
-          ...INVOICE_VIEWS.map((v) => ({ key: v, label: WORDS[v], href: v === "open" ? base : `${base}?view=${v}`, ...(v === "open" || v === "overdue" || v === "draft" ? { count: counts[v] } : {}) })),
-          { key: "ready", label: "Ready to bill", href: `${base}?view=ready`, count: counts.ready },
-        ]}
-      />
       <div className="bar">
+        <InvoiceViews slug={place.slug} current={view} counts={counts} />
         <SearchWell label="Find an invoice" placeholder="Number, name or sum" value={q} onChange={(e) => setQ(e.target.value)} />
         <span className="bar-r mid sm">{money(data?.pages[0]?.openMinor ?? first.openMinor, place)} open</span>
       </div>
