@@ -35,7 +35,7 @@ export const cancelInput = z.strictObject({ id: z.uuid(), version: z.number().in
 const cameText = line(16).transform((s, issue) => {
   const q = parseMilli(s === "" ? "0" : s);
   if (q === null || q < 0) { issue.addIssue({ code: "custom", message: "How many came, such as 6; 0 or empty when none." }); return z.NEVER; }
-  return q as number;
+  return q;
 });
 export const OVER_CHOICES = ["keep", "return", "refuse"] as const;
 export const receiveInput = z.strictObject({

@@ -11,14 +11,14 @@ const line = (max: number) => z.string().trim().max(max, `At most ${max} charact
 export const qtyText = line(16).transform((s, issue) => {
   const q = parseMilli(s);
   if (q === null || q <= 0) { issue.addIssue({ code: "custom", message: "A quantity above 0, such as 2 or 42.5." }); return z.NEVER; }
-  return q as number;
+  return q;
 });
 /** Quantity of 0 or more; empty is null. */
 export const levelText = line(16).transform((s, issue) => {
   if (s === "") return null;
   const q = parseMilli(s);
   if (q === null || q < 0) { issue.addIssue({ code: "custom", message: "A quantity of 0 or more, or leave it empty." }); return z.NEVER; }
-  return q as number;
+  return q;
 });
 /** Amount of 0 or more as typed. More decimals than two are refused when the command reads it for the shop's currency. */
 export const amountText = line(20).refine((s) => { const m = parseMinor(s, 4); return m !== null && m >= 0; }, "An amount of 0 or more, such as 23.75.");

@@ -119,7 +119,9 @@ describe("the shelf", () => {
   it("refuses half a valve, and more than there is with the real number and the bin", async () => {
     const take = (qtyMilli: number) => withShop(a.shop.id, (tx) => issueStock({ ...a.as("tech"), tx }, { partId: id("GV-S250"), qtyMilli }));
     expect(await take(500)).toMatchObject({ ok: false, refusal: { code: "NOT_WHOLE_PIECES" } });
-    expect(await take(7000)).toMatchObject({ ok: false, refusal: { code: "INSUFFICIENT_STOCK", message: expect.stringContaining("There are 6 of GV-S250 on the shelf at A 4, not 7."), data: { onHandMilli: 6000, bin: "A 4" } } });
+    const seven = await take(7000);
+    expect(seven).toMatchObject({ ok: false, refusal: { code: "INSUFFICIENT_STOCK", data: { onHandMilli: 6000, bin: "A 4" } } });
+    expect(!seven.ok && seven.refusal.message).toContain("There are 6 of GV-S250 on the shelf at A 4, not 7.");
     expect(await withShop(a.shop.id, (tx) => issueStock({ ...a.as("tech"), tx }, { partId: id("SPK-S250"), qtyMilli: 1000 }))).toMatchObject({ ok: false, refusal: { code: "KIT_HAS_NO_SHELF" } });
   });
 
@@ -130,7 +132,9 @@ describe("the shelf", () => {
     const lotId = page.lots[0]?.id ?? "";
     const take = (more: object) => withShop(a.shop.id, (tx) => issueStock({ ...a.as("tech"), tx }, { partId: id("EP-04"), qtyMilli: 5000, ...more }));
     expect(await take({ lotId })).toMatchObject({ ok: false, refusal: { code: "LOT_EXPIRED", field: "lotId" } });
-    expect(await take({ qtyMilli: 1_031_000 })).toMatchObject({ ok: false, refusal: { code: "INSUFFICIENT_STOCK", message: expect.stringContaining("lot E-2511 is expired") } });
+    const tooMuch = await take({ qtyMilli: 1_031_000 });
+    expect(tooMuch).toMatchObject({ ok: false, refusal: { code: "INSUFFICIENT_STOCK" } });
+    expect(!tooMuch.ok && tooMuch.refusal.message).toContain("lot E-2511 is expired");
     must(await scrapStock(a.as("mgr"), { partId: id("EP-04"), lotId, qty: "100", reason: "past its date" }));
     expect(await part("EP-04")).toMatchObject({ onHandMilli: 1_030_000, valueMinor: 12_772, expiredMilli: 0 });
     expect(await account("5400")).toEqual(["1240"]);

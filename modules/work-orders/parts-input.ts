@@ -20,7 +20,7 @@ export const dropNeedInput = z.strictObject({ workOrderPartId: z.uuid(), version
 const gramsText = line(12).transform((s, issue) => {
   const q = parseMilli(s === "" ? "0" : s);
   if (q === null || q < 0) { issue.addIssue({ code: "custom", message: "Grams such as 38 or 4.5." }); return z.NEVER; }
-  return q as number;
+  return q;
 });
 /** Cure time of the data sheet in hours, to whole minutes; above 0, at most 14 days. */
 const cureText = line(8).transform((s, issue) => {

@@ -88,7 +88,7 @@ async function valueOf(ctx: TxContext, part: ShelfPart, differenceMilli: number)
   if (differenceMilli === 0) return 0;
   if (differenceMilli < 0) {
     const out = issue(stockOf(part), milli(-differenceMilli));
-    return out.ok ? -out.value.costMinor : null;
+    return out.ok ? 0 - out.value.costMinor : null;
   }
   if (part.onHandMilli > 0) return timesFraction(part.valueMinor, differenceMilli, part.onHandMilli);
   const [last] = await ctx.tx.select({ qty: stockMovements.qtyMilli, value: stockMovements.valueMinor }).from(stockMovements)
