@@ -6,14 +6,16 @@ import { behindTheCurtain } from "@/tests/support/database";
 import { HERO_FLOWS } from "@/tests/support/hero-flow";
 import { must, requestId, testShop, type TestShop } from "@/tests/support/shop";
 import { dismissCautions } from "./commands/cautions";
-import { addLift, changeTestConditions } from "./commands/change-test";
+import { addLift, changeSheetConditions, changeTestConditions } from "./commands/change-test";
 import { completeTest, correctTest, voidTest } from "./commands/finish-test";
 import { addBench, addFamily, addFixture, recordBenchCheck } from "./commands/gear";
 import { headForPiece } from "./commands/head";
+import { issueComparison } from "./commands/issue-comparison";
 import { postWholeTest } from "./commands/post-test";
 import { recordReading } from "./commands/record-reading";
 import { startSheet, startTest } from "./commands/start-test";
 import { gainForPiece } from "./queries/gain";
+import { flowReportPdf, issuedReport } from "./queries/report";
 import { roomPage } from "./queries/room";
 import { flowSheetFor, gearOf } from "./queries/sheet";
 
@@ -118,6 +120,37 @@ describe("the hero head", () => {
     must(await completeTest(who, { testId: fixed.testId, version: 1 }));
     const [port] = (await gainForPiece(a.as("tech"), head.pieceId)).ports;
     expect(port?.exhaust).toMatchObject({ comparable: true, losses: [{ liftUm: 1270, gainCfm: -0.6 }], crossovers: [{ direction: "loss_to_gain" }] });
+  });
+});
+
+describe("a report", () => {
+  it("is frozen with its conditions; a correction makes the next one and leaves the first as it was", async () => {
+    const head = await heroHead();
+    const issue = () => issueComparison(a.as("insp", AFTER), { headId: head.headId, customerWords: "" });
+    const first = must(await issue());
+    expect(first.comparisonNo).toBe(1);
+    expect(await issue()).toMatchObject({ ok: false, refusal: { code: "NOTHING_CHANGED" } });
+    const fixed = must(await correctTest(a.as("insp", AFTER), { testId: head.after.exhaust, reason: "exhaust .050 read again" }));
+    must(await recordReading(a.as("insp", AFTER), { testId: fixed.testId, lift: ".050", value: "21.2", revisionSeen: 1 }));
+    must(await completeTest(a.as("insp", AFTER), { testId: fixed.testId, version: 1 }));
+    const second = must(await issue());
+    expect(second.comparisonNo).toBe(2);
+    const exhaustOf = async (id: string) => (await issuedReport(a.as("tech"), id)).sides.find((s) => s.side === "exhaust");
+    expect((await exhaustOf(first.comparisonId))?.gain).toMatchObject({ comparable: true, losses: [] });
+    expect((await exhaustOf(second.comparisonId))?.gain).toMatchObject({ comparable: true, losses: [{ gainCfm: -0.6 }] });
+    expect((await exhaustOf(first.comparisonId))?.before).toMatchObject({ operator: "insp", valveMm: 31, conditions: expect.arrayContaining(["28 in H₂O", "no entry piece"]) as unknown });
+    expect((await issuedReport(a.as("tech"), first.comparisonId)).notTested.join(" ")).toContain("power were not measured");
+    const pdf = await flowReportPdf(a.as("tech"), first.comparisonId);
+    expect(pdf.bytes.subarray(0, 5).toString()).toBe("%PDF-");
+    expect((await flowReportPdf(a.as("tech"), first.comparisonId)).bytes.equals(pdf.bytes)).toBe(true);
+    await expect(issuedReport(b.as("owner"), first.comparisonId)).rejects.toThrow(NotFound);
+    await expect(behindTheCurtain(`set role vk_app; update flow_comparisons set customer_words = 'x' where id = '${first.comparisonId}'`)).rejects.toThrow();
+  });
+
+  it("needs a finished test and somebody who may issue", async () => {
+    const { headId } = await newHead();
+    expect(await issueComparison(a.as("insp"), { headId })).toMatchObject({ ok: false, refusal: { code: "NOTHING_FINISHED" } });
+    await expect(issueComparison(a.as("counter"), { headId })).rejects.toThrow(NotFound);
   });
 });
 
@@ -228,6 +261,16 @@ describe("a test", () => {
     expect(await change(2, { leak: "1", leakPressure: "10" })).toMatchObject({ ok: false, refusal: { code: "LEAK_PRESSURE_MISMATCH", field: "leakPressure" } });
     expect(must(await addLift(a.as("tech"), { testId, version: 2, lift: "0.450" })).version).toBe(3);
     expect((await flowSheetFor(a.as("tech"), headId, 1)).tests[0]).toMatchObject({ valveMm: 31.5, lifts: { length: 9 } });
+  });
+
+  it("changes both drafts of a sheet or neither", async () => {
+    const { headId } = await newHead();
+    const [intake = "", exhaust = ""] = must(await startSheet(a.as("tech"), { headId, purpose: "baseline", benchId: bench, fixtureId: fixture, nominal: "28", step: "0.050", camLiftForLadder: "0.340", intake: {}, exhaust: {} })).testIds;
+    const change = (versions: [number, number]) => changeSheetConditions(a.as("tech"), { fixtureId: otherFixture, nominal: "25", intake: { testId: intake, version: versions[0], valve: "31" }, exhaust: { testId: exhaust, version: versions[1], valve: "27" } });
+    expect(await change([1, 7])).toMatchObject({ ok: false, refusal: { code: "CHANGED_MEANWHILE" } });
+    expect((await flowSheetFor(a.as("tech"), headId, 1)).tests.map((t) => [t.version, t.nominalInH2O])).toEqual([[1, 28], [1, 28]]);
+    must(await change([1, 1]));
+    expect((await flowSheetFor(a.as("tech"), headId, 1)).tests.map((t) => [t.version, t.nominalInH2O, t.fixture.boreMm, t.valveMm])).toEqual([[2, 25, 79.5, 31], [2, 25, 79.5, 27]]);
   });
 
   it("starts both sides of a sheet on a ladder past the cam", async () => {

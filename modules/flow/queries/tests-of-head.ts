@@ -30,7 +30,7 @@ export async function rawTests(ctx: ShopContext, which: { headIds: readonly stri
     .innerJoin(fixtures, and(eq(fixtures.shopId, flowTests.shopId), eq(fixtures.id, flowTests.fixtureId)))
     .innerJoin(people, and(eq(people.shopId, flowTests.shopId), eq(people.id, flowTests.operatorId)))
     .where(and(eq(flowTests.shopId, ctx.shop.id), inArray("headIds" in which ? flowTests.headId : flowTests.id, [...ids])))
-    .orderBy(asc(flowTests.startedAt), asc(flowTests.runNo)));
+    .orderBy(asc(flowTests.startedAt), desc(flowTests.side), asc(flowTests.runNo), asc(flowTests.id)));
   const cells = await cellsOf(ctx, rows.map((r) => r.t.id));
   return rows.map(({ t, bench, fixture, operator }) => ({
     headId: t.headId, cylinder: t.cylinder,

@@ -32,7 +32,7 @@ export function CellPanel({ sheet, pos, col, locale }: { sheet: Sheet; pos: Pos;
   const { test } = col;
   const stuck = sheet.stuckAt(pos);
   const computed = cellAt(col, pos.liftUm);
-  const flow = flowAt(col, pos.liftUm);
+  const flow = flowAt(col, pos.liftUm) ?? (stuck ? (computed?.flowCfm ?? null) : null);
   const doubts = cellDoubts(computed, col.figures, stuck, pos.liftUm);
   const repeats = [...new Set([1, ...col.figures.cells.filter((c) => c.liftUm === pos.liftUm).map((c) => c.repeatNo)])].sort((a, b) => a - b);
   const reading = col.figures.readings.find((r) => r.liftUm === pos.liftUm);

@@ -15,8 +15,8 @@ export interface CellDoubt { readonly short: string; readonly words: string }
 export function cellDoubts(cell: ComputedCell | null, figures: TestFigures, stuck: Stuck | null, liftUm: number): CellDoubt[] {
   const found: CellDoubt[] = [];
   if (stuck) found.push({ short: STUCK_SHORT[stuck.kind], words: stuck.message });
-  if (cell?.excludedReason) found.push({ short: "left out", words: `Left out: ${cell.excludedReason}` });
-  else if (cell?.acceptedReason) found.push({ short: "kept", words: `Kept with a reason: ${cell.acceptedReason}` });
+  if (stuck === null && cell?.excludedReason) found.push({ short: "left out", words: `Left out: ${cell.excludedReason}` });
+  else if (stuck === null && cell?.acceptedReason) found.push({ short: "kept", words: `Kept with a reason: ${cell.acceptedReason}` });
   for (const flag of cell?.flags ?? []) if (SHORT[flag]) found.push({ short: SHORT[flag] ?? "", words: FLOW_FLAGS[flag] });
   for (const d of figures.doubts) {
     const isHere = d.liftUm === liftUm || (d.flag === "FLOW_AT_ZERO_LIFT" && liftUm === 0);

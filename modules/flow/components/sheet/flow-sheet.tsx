@@ -48,8 +48,12 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const focus = (side: PortSide, when: "before" | "after", liftUm: number) => document.getElementById(cellId(side, when, liftUm))?.focus();
   const step = (pos: Pos, by: 1 | -1) => {
     const next = figures.liftsUm[figures.liftsUm.indexOf(pos.liftUm) + by];
-    if (next === undefined) sheet.commit(pos);
-    else focus(pos.side, pos.when, next);
+    if (next !== undefined) {
+      focus(pos.side, pos.when, next);
+      return;
+    }
+    sheet.commit(pos);
+    if (document.activeElement instanceof HTMLInputElement) document.activeElement.select();
   };
   const across = (pos: Pos, side: PortSide) => {
     const at = figures.sides.find((s) => s.side === side);
@@ -113,7 +117,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
           {isBench ? (notes.length === 0 ? null : (
             <details className="chk2"><summary><b>{notes.length} {notes.length === 1 ? "check" : "checks"}.</b> {notes.map((n) => n.title).join(" ")}</summary><SheetNotes notes={notes} /></details>
           )) : <SheetNotes notes={notes} />}
-          <NextStep sheet={given} gear={gear} figures={figures} waiting={sheet.state.waiting} onChanged={() => router.refresh()} />
+          <NextStep sheet={given} gear={gear} figures={figures} settle={sheet.settle} onChanged={() => router.refresh()} />
         </div>
         <div className="fl-r">
           <Bay label="Live curve" aside={isBench ? [["in", intake], ["ex", exhaust]].flatMap(([n, s]) => { const t = meanText(s as typeof intake, locale); return t ? [`${t} mean ${String(n)}`] : []; }).join(", ") || undefined : undefined}>

@@ -31,7 +31,7 @@ function ReasonDialog({ label, question, action, onAction }: { label: string; qu
 }
 
 /** The one next step of the sheet: start, finish, issue; and the rarer ones beside it. */
-export function NextStep({ sheet, gear, figures, waiting, onChanged }: { sheet: FlowSheet; gear: BenchGear; figures: SheetFigures; waiting: number; onChanged: () => void }) {
+export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: FlowSheet; gear: BenchGear; figures: SheetFigures; settle: () => Promise<string | null>; onChanged: () => void }) {
   const { slug } = usePlace();
   const [pending, setPending] = useState(false);
   const [trouble, setTrouble] = useState<string | null>(null);
@@ -59,7 +59,14 @@ export function NextStep({ sheet, gear, figures, waiting, onChanged }: { sheet: 
     onChanged();
   };
   const sent = (input: object) => ({ requestId: crypto.randomUUID(), input });
-  const finish = () => void run(drafts.map((t) => () => completeTestAction(slug, sent({ testId: t.id, version: t.version }))));
+  const finish = async () => {
+    setPending(true);
+    const inTheWay = await settle();
+    setPending(false);
+    if (inTheWay) setTrouble(inTheWay);
+    else await finishAll();
+  };
+  const finishAll = () => run(drafts.map((t) => () => completeTestAction(slug, sent({ testId: t.id, version: t.version }))));
   const issue = () => void run([() => issueComparisonAction(slug, sent({ headId: sheet.head.id, cylinder: sheet.cylinder, customerWords: "" }))]);
   const [latest] = sheet.comparisons;
   if (!sheet.canRecord) return latest ? <LinkButton href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">Report {latest.comparisonNo}</LinkButton> : null;
@@ -75,7 +82,7 @@ export function NextStep({ sheet, gear, figures, waiting, onChanged }: { sheet: 
           {drafts.length > 0 ? <ReasonDialog label="Void" question={`Void ${drafts.length > 1 ? "these tests" : "this test"}?`} action="Void it" onAction={(reason) => void run(drafts.map((t) => () => voidTestAction(slug, sent({ testId: t.id, version: t.version, reason }))))} /> : null}
           {drafts.length === 0 ? finished.slice(-2).map((t) => <ReasonDialog key={t.id} label={`Correct ${t.side}`} question={`Correct the finished ${t.side} ${PURPOSE_WORDS[t.purpose]}?`} action="Correct it" onAction={(reason) => void run([() => correctTestAction(slug, sent({ testId: t.id, reason }))])} />) : null}
           {latest ? <LinkButton size="sm" href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">{`Report ${latest.comparisonNo}`}</LinkButton> : null}
-          {drafts.length > 0 ? <Button variant="go" pending={pending} pendingText="Finishing…" onClick={finish} disabledReason={waiting > 0 ? "readings still on their way" : undefined}>{drafts.length > 1 ? "Finish both tests" : "Finish test"}</Button> : null}
+          {drafts.length > 0 ? <Button variant="go" pending={pending} pendingText="Finishing…" onClick={() => void finish()}>{drafts.length > 1 ? "Finish both tests" : "Finish test"}</Button> : null}
           {drafts.length === 0 && !hasBefore ? <StartSheetDialog sheet={sheet} gear={gear} purpose="baseline" basis={{ intake: null, exhaust: null }} isMain onStarted={onChanged} /> : null}
           {drafts.length === 0 && hasBefore ? <StartSheetDialog sheet={sheet} gear={gear} purpose="interim" basis={before} isMain={false} onStarted={onChanged} /> : null}
           {drafts.length === 0 && hasBefore ? <StartSheetDialog sheet={sheet} gear={gear} purpose="after" basis={before} isMain={!hasAfter} onStarted={onChanged} /> : null}

@@ -38,6 +38,8 @@ export function ReadingCell(p: ReadingCellProps) {
       <input
         id={p.id} className={clsx(p.isLoss && "loss", p.text === "" && "todo")} value={p.text} aria-labelledby={p.labelledBy} aria-describedby={p.doubts.length > 0 ? noteId : undefined}
         aria-invalid={p.doubts.some((d) => d.short === "look again" || d.short === "sure?") || undefined} inputMode={p.isBench ? "none" : "decimal"} autoComplete="off" enterKeyHint="next" maxLength={20}
+        // A press on another cell selects what stands there, so that typing replaces it.
+        onMouseDown={(e) => { if (document.activeElement !== e.currentTarget) { e.preventDefault(); e.currentTarget.focus(); } }}
         onChange={(e) => p.onText(e.target.value)} onKeyDown={p.onKey} onFocus={(e) => { e.currentTarget.select(); p.onEnter(); }} onBlur={p.onLeave}
       />
       {p.repeats > 1 ? <span className="rep" aria-label={`${p.repeats} readings, mean shown`}>×{p.repeats}</span> : null}

@@ -35,6 +35,9 @@ let ids = 0;
 const edit = (value: string, more: Partial<CellEdit> = {}): CellEdit => ({ requestId: `r${++ids}`, value, range: null, pressure: "", acceptedReason: null, excludedReason: null, takenAt: "2026-03-12T16:20:00Z", ...more });
 const at = (liftUm: number, revision = 0) => ({ key: keptKey("ninebark", "t1", liftUm, 1), shop: "ninebark", testId: "t1", liftUm, lift: String(liftUm / 25_400), liftUnit: "in" as const, repeatNo: 1, revision });
 
+/** Types a value and leaves the cell. */
+const put = async (q: ReadingQueue, where: ReturnType<typeof at>, what: CellEdit) => { await q.write(where, what); await q.release(where.key); };
+
 let store: ReturnType<typeof tablet>;
 let server: ReturnType<typeof records>;
 let saved: SavedCell[];
@@ -44,8 +47,8 @@ beforeEach(() => { store = tablet(); server = records(); saved = []; });
 describe("readings on their way", () => {
   it("are saved in the order they were typed and leave the tablet empty", async () => {
     const q = queue();
-    await q.write(at(2540), edit("48.9"));
-    await q.write(at(1270), edit("24.6"));
+    await put(q, at(2540), edit("48.9"));
+    await put(q, at(1270), edit("24.6"));
     await q.flush();
     expect(server.log).toEqual(["2540=48.9", "1270=24.6"]);
     expect(store.kept.size).toBe(0);
@@ -56,8 +59,8 @@ describe("readings on their way", () => {
   it("survive a lost link and a closed tablet, and are saved once", async () => {
     server.set("down");
     const first = queue();
-    await first.write(at(1270), edit("24.6"));
-    await first.write(at(2540), edit("48.9"));
+    await put(first, at(1270), edit("24.6"));
+    await put(first, at(2540), edit("48.9"));
     await first.flush();
     expect(first.snapshot()).toMatchObject({ waiting: 2, link: "down" });
     const second = queue();
@@ -72,36 +75,41 @@ describe("readings on their way", () => {
   it("are not written twice when only the answer was lost, even when typed over meanwhile", async () => {
     const q = queue();
     server.set("answer-lost");
-    await q.write(at(1270), edit("24.6"));
+    await put(q, at(1270), edit("24.6"));
     await q.flush();
     expect(server.cells.get(at(1270).key)).toEqual({ revision: 1, value: "24.6" });
-    await q.write(at(1270), edit("24.8"));
+    await put(q, at(1270), edit("24.8"));
     server.set("up");
     await q.flush();
     expect(server.cells.get(at(1270).key)).toEqual({ revision: 2, value: "24.8" });
     expect(server.log).toEqual(["1270=24.6", "1270=24.8"]);
   });
 
-  it("send only the last of the values that were never sent", async () => {
+  it("are not sent while they are still being typed, and then only the last", async () => {
     const q = queue();
-    for (const v of ["2", "24", "24.", "24.6"]) await q.write(at(1270), edit(v));
+    for (const v of ["2", "24", "24.", "24.6"]) {
+      await q.write(at(1270), edit(v));
+      await q.flush();
+    }
+    expect(server.log).toEqual([]);
+    await q.release(at(1270).key);
     await q.flush();
     expect(server.log).toEqual(["1270=24.6"]);
   });
 
   it("wait for a person when they are doubted, and for a decision when another screen wrote there", async () => {
     const q = queue();
-    await q.write(at(1270), edit("489"));
+    await put(q, at(1270), edit("489"));
     await q.hold(at(1270).key, "More than 60 % from its neighbour.", true);
     await q.flush();
     expect(server.log).toEqual([]);
     expect(store.kept.get(at(1270).key)?.edits[0]?.value).toBe("489");
-    await q.write(at(1270), edit("489", { acceptedReason: "read twice" }));
+    await put(q, at(1270), edit("489", { acceptedReason: "read twice" }));
     await q.flush();
     expect(server.log).toEqual(["1270=489"]);
 
     server.cells.set(at(2540).key, { revision: 3, value: "50.0" });
-    await q.write(at(2540), edit("48.9"));
+    await put(q, at(2540), edit("48.9"));
     await q.flush();
     expect(q.snapshot().cells.get(at(2540).key)?.stuck).toMatchObject({ kind: "conflict", theirs: { revision: 3, valueText: "50.0" } });
     await q.insist(at(2540).key, "r-insist");
@@ -109,10 +117,35 @@ describe("readings on their way", () => {
     expect(server.cells.get(at(2540).key)).toEqual({ revision: 4, value: "48.9" });
   });
 
+  it("do not lose sight of a value on its way while a doubtful one over it waits", async () => {
+    const q = queue();
+    server.set("answer-lost");
+    await put(q, at(1270), edit("24.6"));
+    await q.flush();
+    await put(q, at(1270), edit("246"));
+    await q.hold(at(1270).key, "More than 60 % from its neighbour.", true);
+    server.set("up");
+    await put(q, at(1270), edit("24.7"));
+    await q.flush();
+    expect(server.cells.get(at(1270).key)).toEqual({ revision: 2, value: "24.7" });
+    expect(q.snapshot().cells.size).toBe(0);
+
+    server.set("answer-lost");
+    await put(q, at(2540, 0), edit("48.9"));
+    await q.flush();
+    await put(q, at(2540, 0), edit("489"));
+    await q.hold(at(2540).key, "More than 60 % from its neighbour.", true);
+    await q.discard(at(2540).key);
+    server.set("up");
+    await q.flush();
+    expect(server.log.at(-1)).toBe("2540=48.9");
+    expect(q.snapshot().cells.size).toBe(0);
+  });
+
   it("keep another person's values for that person", async () => {
     server.set("down");
     const june = queue("june");
-    await june.write(at(1270), edit("24.6"));
+    await put(june, at(1270), edit("24.6"));
     await june.flush();
     server.set("up");
     const bram = queue("bram");

@@ -31,6 +31,8 @@ export interface KeptCell {
   readonly revision: number;
   /** Oldest first. One that was sent already keeps its place: its answer may only have been lost. */
   readonly edits: readonly (CellEdit & { readonly sent: boolean })[];
+  /** False while it is still being typed: kept, but not sent. */
+  readonly isReady: boolean;
   readonly stuck: Stuck | null;
   /** Order of writing over all cells. */
   readonly order: number;
@@ -57,7 +59,7 @@ export interface SavedCell { readonly cell: KeptCell; readonly edit: CellEdit; r
 
 export const keptKey = (shop: string, testId: string, liftUm: number, repeatNo: number): string => `${shop}:${testId}:${liftUm}/${repeatNo}`;
 
-const waits = (cell: KeptCell): boolean => cell.stuck === null && cell.edits.length > 0;
+const waits = (cell: KeptCell): boolean => cell.stuck === null && (cell.edits[0]?.sent === true || (cell.isReady && cell.edits.length > 0));
 
 /**
  * Holds every typed value until the records have it. A value is put into the store before it is sent; a lost network or a
@@ -96,7 +98,8 @@ export class ReadingQueue {
   async load(): Promise<void> {
     for (const cell of await this.store.all()) {
       this.order = Math.max(this.order, cell.order);
-      if (!this.cells.has(cell.key)) this.cells.set(cell.key, cell);
+      // Nobody is typing it any more.
+      if (!this.cells.has(cell.key)) this.cells.set(cell.key, { ...cell, isReady: true });
     }
     this.changed();
   }
@@ -112,12 +115,18 @@ export class ReadingQueue {
     await this.store.remove(key);
   }
 
-  /** Keeps a typed value on this tablet. It replaces one of the same cell that was never sent. Does not send. */
+  /** Keeps a typed value on this tablet. It replaces one of the same cell that was never sent. Sent after `release`. */
   async write(at: Pick<KeptCell, "key" | "shop" | "testId" | "liftUm" | "lift" | "liftUnit" | "repeatNo" | "revision">, edit: CellEdit): Promise<void> {
     const before = this.cells.get(at.key);
-    const sent = before?.stuck ? [] : (before?.edits.filter((e) => e.sent) ?? []);
+    const sent = before?.edits.filter((e) => e.sent) ?? [];
     this.order += 1;
-    await this.keep({ ...at, revision: before && !before.stuck ? before.revision : Math.max(at.revision, before?.revision ?? 0), person: this.person, edits: [...sent, { ...edit, sent: false }], stuck: null, order: before?.order ?? this.order });
+    await this.keep({ ...at, revision: sent.length > 0 && before ? before.revision : Math.max(at.revision, before?.revision ?? 0), person: this.person, edits: [...sent, { ...edit, sent: false }], isReady: false, stuck: null, order: before?.order ?? this.order });
+  }
+
+  /** The cell was left: its value may go. */
+  async release(key: string): Promise<void> {
+    const cell = this.cells.get(key);
+    if (cell && !cell.isReady) await this.keep({ ...cell, isReady: true });
   }
 
   /** Holds a value back where it was typed: until a reason is given, or (no reason will do) until it is typed anew. */
@@ -126,9 +135,11 @@ export class ReadingQueue {
     if (cell) await this.keep({ ...cell, stuck: { kind: askReason ? "asked" : "refused", message, askReason, theirs: null } });
   }
 
-  /** Forgets a value that waits for a person; what stands in the records counts again. */
+  /** Forgets the value that was never sent; one that is on its way, or what stands in the records, counts again. */
   async discard(key: string): Promise<void> {
-    await this.drop(key);
+    const cell = this.cells.get(key);
+    const sent = cell?.edits.filter((e) => e.sent) ?? [];
+    await (cell && sent.length > 0 ? this.keep({ ...cell, edits: sent, stuck: null }) : this.drop(key));
   }
 
   /** Writes the kept value over what somebody else put there meanwhile. */
@@ -136,7 +147,7 @@ export class ReadingQueue {
     const cell = this.cells.get(key);
     const last = cell?.edits.at(-1);
     if (!cell || !last || !cell.stuck?.theirs) return;
-    await this.keep({ ...cell, revision: cell.stuck.theirs.revision, stuck: null, edits: [{ ...last, requestId, sent: false }] });
+    await this.keep({ ...cell, revision: cell.stuck.theirs.revision, stuck: null, isReady: true, edits: [{ ...last, requestId, sent: false }] });
   }
 
   /** Sends what waits, oldest first, until all is saved or the link is down. Calls while it runs make it look once more. */
@@ -192,7 +203,8 @@ export class ReadingQueue {
       await this.drop(cell.key);
       return true;
     }
-    await this.keep({ ...now, stuck: { kind: answer.theirs ? "conflict" : answer.askReason ? "asked" : "refused", message: answer.message, askReason: answer.askReason, theirs: answer.theirs } });
+    // Answered with no: it is not on its way any more.
+    await this.keep({ ...now, edits: now.edits.map((e) => ({ ...e, sent: false })), stuck: { kind: answer.theirs ? "conflict" : answer.askReason ? "asked" : "refused", message: answer.message, askReason: answer.askReason, theirs: answer.theirs } });
     return true;
   }
 }

@@ -19,7 +19,9 @@ const lastEdit = (cell: KeptCell | undefined): CellEdit | undefined => cell?.edi
 function rawOf(cell: KeptCell, edit: CellEdit, test: RawTest): RawCell {
   return {
     liftUm: cell.liftUm, repeatNo: cell.repeatNo, revision: cell.revision + 1, valueText: edit.value, valueUnit: SCALE_UNIT[test.bench.scale], rangeLabel: edit.range,
-    pressureText: edit.pressure || String(test.nominalInH2O), pressureUnit: "inH2O", acceptedReason: edit.acceptedReason, excludedReason: edit.excludedReason, takenAt: edit.takenAt,
+    pressureText: edit.pressure || String(test.nominalInH2O), pressureUnit: "inH2O", acceptedReason: edit.acceptedReason,
+    // A value that waits for a person is shown where it stands, and drawn nowhere.
+    excludedReason: edit.excludedReason ?? (cell.stuck && cell.stuck.kind !== "conflict" ? "held back" : null), takenAt: edit.takenAt,
   };
 }
 
@@ -96,7 +98,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
     committed.current.set(key, edit.value);
     const test = saved.find((t) => t.id === pos.testId);
     if (test && edit.value.trim() !== "") {
-      const others = [...queue.snapshot().cells.values()].filter((c) => c.testId === test.id).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c, e, test)] : []; });
+      const others = [...queue.snapshot().cells.values()].filter((c) => c.testId === test.id).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c.key === key ? { ...c, stuck: null } : c, e, test)] : []; });
       const cell = figuresOfTest(withTyped(test, others)).cells.find((c) => c.liftUm === pos.liftUm && c.repeatNo === pos.repeatNo);
       if (cell?.question && !edit.acceptedReason) {
         void queue.hold(key, cell.question.words, true);
@@ -107,7 +109,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
         return;
       }
     }
-    void queue.flush();
+    void queue.release(key).then(() => queue.flush());
   }, [keyOf, queue, savedCell, saved]);
 
   const type = useCallback((pos: Pos, value: string) => {
@@ -129,7 +131,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
     if (!last) return null;
     committed.current.set(keyOf(last.pos), last.value);
     put(last.pos, last.value);
-    void queue.flush();
+    void queue.release(keyOf(last.pos)).then(() => queue.flush());
     return last.pos;
   }, [queue, keyOf, savedCell, put, commit]);
 
@@ -150,6 +152,13 @@ export function useSheet(sheet: FlowSheet, slug: string) {
   }, [put, textAt, commit]);
 
   return {
+    /** Null when every value of this sheet is in the records; otherwise what stands in the way, in words. */
+    settle: async (): Promise<string | null> => {
+      await queue.flush();
+      const here = [...queue.snapshot().cells.values()].filter((c) => sheet.tests.some((t) => t.id === c.testId));
+      if (here.some((c) => c.stuck)) return "A reading waits for you: keep it with a reason, or forget it.";
+      return here.length > 0 ? "Some readings are not saved yet. They go as soon as the link is back." : null;
+    },
     tests, figures, state, savedAt, range, setRange, held, setHeld, textAt, keptAt, type, commit, undo, takeFromBench, mark,
     keepWithReason: (pos: Pos, reason: string) => mark(pos, { acceptedReason: reason }),
     discard: (pos: Pos) => void queue.discard(keyOf(pos)),
