@@ -30,7 +30,7 @@ export function options(argv) {
   const plantAt = argv.indexOf("--plant");
   return {
     commands: value("commands", 2000), kills: value("kills", 12), seed: value("seed", Date.now() % 1_000_000), fromSources: argv.includes("--from-sources"),
-    plant: plantAt < 0 ? null : (argv[plantAt + 1] ?? ""), clientsOnly: argv.includes("--no-kills"),
+    plant: plantAt < 0 ? null : (argv[plantAt + 1] ?? ""),
   };
 }
 
@@ -206,7 +206,8 @@ async function drill({ commands, kills, seed, fromSources }) {
         prev_hash as "prevHash", hash from audit_log where shop_id = $1 order by seq`, [shopId]),
     });
     report({ figures, faults, seconds, seed, done, kills, seen: listening.seen });
-    return faults.length === 0 && done.length >= Math.min(kills, done.length);
+    if (done.length < kills) console.log(`  Only ${done.length} of ${kills} kills came in time: ask for more commands.`);
+    return faults.length === 0;
   } finally {
     await product.close();
   }
@@ -215,7 +216,7 @@ async function drill({ commands, kills, seed, fromSources }) {
 function report({ figures: f, faults, seconds, seed, done, seen }) {
   const sorted = seen.latest.sort((a, b) => a - b);
   const back = [...seen.firstGoodAfter].sort((a, b) => a - b);
-  const kinds = Object.entries(Object.groupBy(done, (k) => k.kind)).map(([kind, list]) => `${kind} ${list.length}`).join(", ");
+  const kinds = [...new Set(done.map((k) => k.kind))].map((kind) => `${kind} ${done.filter((k) => k.kind === kind).length}`).join(", ");
   const statuses = [...seen.statuses].sort(([a], [b]) => a - b).map(([s, n]) => `${s === 0 ? "no answer" : s} ${n}`).join(", ");
   heading("What the drill has shown");
   console.log(`  seed                         ${seed}`);

@@ -2,7 +2,9 @@ import type { At, World } from "./world";
 
 export interface Case {
   /** An input with another shop's ids at every place an id can stand. */
-  input(at: At, world: World): unknown;
+  input: (at: At, world: World) => unknown;
+  /** Other inputs, for places that one input cannot fill together. */
+  also?: readonly ((at: At, world: World) => unknown)[];
   /** Who of A asks; the owner when left out. `customer`: by a link that names B's matter. `tablet`: A's tablet. */
   as?: "customer" | "tablet";
   /** Places that take an id which the asker makes up itself. */
@@ -11,6 +13,7 @@ export interface Case {
 
 const part = { description: "Valve", partClass: "valve", salePrice: "1.00" };
 const menu = { code: "ZZZ", name: "Name", station: "Porting", skill: "porting", sequence: 10, bookHours: "1", price: "1.00" };
+const bench = { name: "Bench", kind: "series_orifice", scale: "direct", waterUnit: "conventional", nominalPressures: "28", maxFlow: "600" };
 const estimateLine = { description: "Line", qty: "1", unitPrice: "1.00" };
 const proof = (at: At) => ({ kind: "pass", personId: at("people").id, pass: "x".repeat(60) });
 const stamp = { ownMade: ["actId"] } as const;
@@ -36,7 +39,8 @@ export const COMMAND_CASES: Record<string, Case> = {
   "pieces.reopen": { input: (at) => ({ ...named(at, "pieces", "pieceId"), reason: "because" }) },
   "pieces.hand-over": { input: (at) => ({ workOrderId: at("work_orders").id, pieceIds: [at("pieces").id], to: "Somebody", unpaidOk: true }) },
   "pieces.ship": { input: (at) => ({ workOrderId: at("work_orders").id, pieceIds: [at("pieces").id], carrier: "Carrier", insured: "", cost: "1.00", unpaidOk: true }) },
-  "photos.add": { input: (at, w) => ({ subjectKind: "piece", subjectId: at("pieces").id, name: "x.jpg", storageKey: `${w.a.shop.id}/photo/x.jpg`, thumbKey: null, sizeBytes: 1, sha256: "a".repeat(64) }) },
+  "photos.add": { input: (at, w) => ({ subjectKind: "piece", subjectId: at("pieces").id, name: "x.jpg", storageKey: `${w.a.shop.id}/photo/x.jpg`, thumbKey: null, sizeBytes: 1, sha256: "a".repeat(64) }),
+    also: [(at, w) => ({ subjectKind: "finding", subjectId: at("findings").id, name: "x.jpg", storageKey: `${w.a.shop.id}/photo/y.jpg`, thumbKey: null, sizeBytes: 1, sha256: "a".repeat(64) })] },
   "holds.set": { input: (at) => ({ pieceId: at("pieces").id, reason: "parts" }) },
   "holds.end": { input: (at) => ({ holdId: at("holds").id }) },
   "findings.record": { input: (at) => ({ pieceId: at("pieces").id, words: "found it" }) },
@@ -70,7 +74,10 @@ export const COMMAND_CASES: Record<string, Case> = {
   "invoices.credit": { input: (at) => ({ invoiceId: at("invoices").id, reason: "because", lines: [{ lineId: at("invoice_lines").id, amount: "1.00" }] }) },
   "invoices.apply-credit": { input: (at) => ({ invoiceId: at("invoices").id }) },
   "invoices.write-off": { input: (at) => ({ invoiceId: at("invoices").id, reason: "because" }) },
-  "payments.take": { input: (at) => ({ invoiceId: at("invoices").id, method: "cash", amount: "1.00", confirmed: true }), ownMade: ["workOrderId"] },
+  "payments.take": {
+    input: (at) => ({ invoiceId: at("invoices").id, method: "cash", amount: "1.00", confirmed: true }),
+    also: [(at) => ({ workOrderId: at("work_orders").id, method: "cash", amount: "1.00", confirmed: true })],
+  },
   "payments.ask": { input: (at) => ({ invoiceId: at("invoices").id }) },
   "payments.start": { input: () => ({}), as: "customer" },
   "payments.retry-event": { input: () => ({ eventId: "evt_of_b" }) },
@@ -96,6 +103,50 @@ export const COMMAND_CASES: Record<string, Case> = {
   "purchasing.receive": { input: (at) => ({ purchaseOrderId: at("purchase_orders").id, lines: [{ lineId: at("purchase_order_lines").id, came: "1" }] }) },
   "purchasing.reverseReceipt": { input: (at) => ({ receiptId: at("receipts").id, reason: "because" }) },
 
+  "bank.lock": { input: (at) => ({ ...named(at, "bank_lines", "lineId"), kind: "invoice", ids: [at("invoices").id] }),
+    also: [(at) => ({ ...named(at, "bank_lines", "lineId"), kind: "payment", ids: [at("payments").id] }), (at) => ({ ...named(at, "bank_lines", "lineId"), kind: "payout", ids: [at("payouts").id] })] },
+  "bank.unlock": { input: (at) => named(at, "bank_lines", "lineId") },
+
+  "flow.dismiss-cautions": { input: (at) => ({ headId: at("heads").id, hazards: ["noise"] }) },
+  "flow.cautions-seen": { input: (at) => ({ workOrderId: at("work_orders").id, hazards: ["noise"], step: "CLN" }) },
+  "flow.change-camshaft": { input: (at) => ({ ...edit(at, "camshafts"), label: "Cam", side: "intake", maxLift: "9.0", duration: "240" }) },
+  "flow.change-family": { input: (at) => ({ ...edit(at, "engine_families"), name: "Taken" }) },
+  "flow.change-head-work": { input: (at) => edit(at, "heads") },
+  "flow.change-bench": { input: (at) => ({ ...edit(at, "benches"), ...bench }) },
+  "flow.change-check-plate": { input: (at) => ({ ...edit(at, "check_plates"), serial: "P-1", referenceFlow: "100", atPressure: "28" }) },
+  "flow.change-fixture": { input: (at) => ({ ...edit(at, "fixtures"), name: "77", bore: "77" }) },
+  "flow.change-lift-device": { input: (at) => ({ ...edit(at, "lift_devices"), name: "Dial", resolution: "0.01" }) },
+  "flow.save-measurements": { input: (at) => ({ headId: at("heads").id, stage: "before", rows: [{ cylinder: 1, side: "", kind: "deck flatness", value: "0.02", unit: "mm" }] }) },
+  "flow.record-bench-check": { input: (at) => ({ benchId: at("benches").id, isFine: true }) },
+  "flow.start-test": { input: (at) => ({ headId: at("heads").id, benchId: at("benches").id, fixtureId: at("fixtures").id, operatorId: at("people").id, side: "intake", purpose: "baseline", nominal: "28", lifts: ["0.1"] }) },
+  "flow.start-sheet": { input: (at) => ({ headId: at("heads").id, benchId: at("benches").id, fixtureId: at("fixtures").id, operatorId: at("people").id, purpose: "baseline", nominal: "28", step: "0.05", camLiftForLadder: "0.34", intake: {} }) },
+  "flow.post-test": { input: (at) => ({ headId: at("heads").id, benchId: at("benches").id, fixtureId: at("fixtures").id, operatorId: at("people").id, side: "intake", purpose: "baseline", nominal: "28", readings: [{ lift: "0.1", value: "20" }] }) },
+  "flow.change-conditions": { input: (at) => ({ ...named(at, "flow_tests", "testId"), fixtureId: at("fixtures").id, nominal: "28" }) },
+  "flow.change-sheet": { input: (at) => ({ fixtureId: at("fixtures").id, nominal: "28", intake: named(at, "flow_tests", "testId"), exhaust: named(at, "flow_tests", "testId") }) },
+  "flow.add-lift": { input: (at) => ({ ...named(at, "flow_tests", "testId"), lift: "0.2" }) },
+  "flow.record-reading": { input: (at) => ({ testId: at("flow_tests").id, lift: "0.1", value: "20" }) },
+  "flow.complete-test": { input: (at) => named(at, "flow_tests", "testId") },
+  "flow.void-test": { input: (at) => ({ ...named(at, "flow_tests", "testId"), reason: "because" }) },
+  "flow.correct-test": { input: (at) => ({ testId: at("flow_tests").id, reason: "because" }) },
+  "flow.issue-comparison": { input: (at) => ({ headId: at("heads").id }) },
+  "flow.read-file": { input: (at, w) => ({
+    headId: at("heads").id, benchId: at("benches").id, fixtureId: at("fixtures").id, purpose: "baseline", nominal: "28", flowUnit: "cfm", pressureUnit: "inH2O",
+    mapping: { headerRows: 0, decimal: ".", lift: 0, flow: 1, liftUnit: "in" }, text: "0.1,20", file: { name: "x.csv", mime: "text/csv", storageKey: `${w.a.shop.id}/flow/x.csv`, sizeBytes: 6, sha256: "a".repeat(64) },
+  }) },
+  "flow.add-sheet-photo": { input: (at, w) => ({ headId: at("heads").id, storageKey: `${w.a.shop.id}/photo/x.jpg`, thumbKey: null, sizeBytes: 1, sha256: "a".repeat(64) }) },
+
+  "time.askCorrection": { input: (at) => ({ timeEntryId: at("time_entries").id, operationId: at("operations").id, clock: "bench", start: "2026-03-05T15:10", end: "2026-03-05T15:40", reason: "because" }) },
+  "time.enterTime": { input: (at) => ({ personId: at("people").id, replacesId: at("time_entries").id, operationId: at("operations").id, clock: "bench", start: "2026-03-05T15:10", end: "2026-03-05T15:40", reason: "because" }) },
+  "time.acceptCorrection": { input: (at) => ({ id: at("correction_requests").id }) },
+  "time.refuseCorrection": { input: (at) => ({ id: at("correction_requests").id, reason: "because" }) },
+  "time.setAsideEntry": { input: (at) => ({ id: at("time_entries").id, reason: "because" }) },
+  "time.settlePunch": { input: (at) => ({ id: at("punches").id }) },
+  "time.changePerson": { input: (at) => ({ ...edit(at, "people"), name: "Taken", shortName: "Taken", roles: ["technician"] }) },
+  "time.leaveShop": { input: (at) => ({ id: at("people").id }) },
+  "time.setBadge": { input: (at) => ({ id: at("people").id, badgeCode: "TAKEN-1" }) },
+  "time.setPin": { input: (at) => ({ id: at("people").id, pin: "583920" }) },
+  "time.setRate": { input: (at) => ({ personId: at("people").id, validFrom: "2026-04-01", rate: "20.00" }) },
+
   "time.makeEnrolCode": { input: (at) => ({ id: at("devices").id, code: "ABCD-EFGH" }) },
   "time.revokeDevice": { input: (at) => ({ id: at("devices").id }) },
   "time.doorIn": { as: "tablet", ...stamp, input: (at) => ({ proof: proof(at), actId }) },
@@ -114,5 +165,6 @@ export const COMMAND_CASES: Record<string, Case> = {
 
 /** Commands without an id in their input, so that nothing of another shop can be named. Each new one is listed on purpose. */
 export const NAMES_NOTHING = [
-  "customers.add", "menu.add", "purchasing.addSupplier", "time.addDevice", "time.enrolDevice",
+  "customers.add", "menu.add", "purchasing.addSupplier", "time.addDevice", "time.enrolDevice", "time.addPerson", "time.acceptInvitation", "shop.settings", "bank.take-in",
+  "flow.add-bench", "flow.add-fixture", "flow.add-family", "flow.add-camshaft", "flow.add-own-head", "flow.add-check-plate", "flow.add-lift-device", "flow.set-up-bench", "flow.set-up-fixture", "flow.set-up-family", "flow.set-limit",
 ];

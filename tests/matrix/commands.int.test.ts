@@ -46,10 +46,12 @@ describe("the list of cases", () => {
   });
   it.each(commands.filter((c) => NAMES_NOTHING.includes(c.value.spec.name)).map((c) => [c.value.spec.name, c.value] as const))("%s indeed takes no id", (_, command) => expect(idPaths(command.spec.input)).toEqual([]));
   it.each(cases.map((c) => [c.title, c] as const))("%s puts an id at every place of its input", (_, { value, one }) => {
-    const { at, seen } = positions(world, "theirs", null);
-    const input = one.input(at, world);
-    expect(value.spec.input.safeParse(input), "the input must reach the command").toMatchObject({ success: true });
-    const filled = pathsOf(input, new Set(seen().map((s) => s.id)));
+    const filled = [one.input, ...(one.also ?? [])].flatMap((make) => {
+      const { at, seen } = positions(world, "theirs", null);
+      const input = make(at, world);
+      expect(value.spec.input.safeParse(input), "the input must reach the command").toMatchObject({ success: true });
+      return pathsOf(input, new Set(seen().map((s) => s.id)));
+    });
     expect([...new Set([...filled, ...(one.ownMade ?? [])])].sort()).toEqual(expect.arrayContaining(idPaths(value.spec.input)));
   });
 });
@@ -57,24 +59,26 @@ describe("the list of cases", () => {
 describe("A's people with B's ids", () => {
   it.each(cases.map((c) => [c.title, c] as const))("%s finds nothing, changes nothing, and answers as for an id that never was", async (_, { value, one }) => {
     const before = await world.digestOfB();
-    const ask = async (whose: "theirs" | "nobody", only: number | null) => {
-      const { at, seen } = positions(world, whose, only);
-      const input = one.input(at, world);
-      const ctx = await asker(one, whose);
-      return { answer: await outcome(() => value(ctx, input)), places: seen().length };
-    };
-    const theirs = await ask("theirs", null);
-    const nobody = await ask("nobody", null);
-    expect(isRefused(theirs.answer), JSON.stringify(theirs.answer)).toBe(true);
-    expect(theirs.answer).toEqual(nobody.answer);
-    expect(JSON.stringify(theirs.answer)).not.toContain(CANARY);
-    // Each place alone, with ids of A's own at the others, so that an earlier look-up cannot hide a later one.
-    for (let only = 0; theirs.places > 1 && only < theirs.places; only++) {
-      const [t, n] = [await ask("theirs", only), await ask("nobody", only)];
-      const ids = /[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}/g;
-      const plain = (answer: unknown) => JSON.stringify(answer).replace(ids, "id");
-      expect(plain(t.answer), `place ${only}`).toBe(plain(n.answer));
-      expect(plain(t.answer)).not.toContain(CANARY);
+    for (const make of [one.input, ...(one.also ?? [])]) {
+      const ask = async (whose: "theirs" | "nobody", only: number | null) => {
+        const { at, seen } = positions(world, whose, only);
+        const input = make(at, world);
+        const ctx = await asker(one, whose);
+        return { answer: await outcome(() => value(ctx, input)), places: seen().length };
+      };
+      const theirs = await ask("theirs", null);
+      const nobody = await ask("nobody", null);
+      expect(isRefused(theirs.answer), JSON.stringify(theirs.answer)).toBe(true);
+      expect(theirs.answer).toEqual(nobody.answer);
+      expect(JSON.stringify(theirs.answer)).not.toContain(CANARY);
+      // Each place alone, with ids of A's own at the others, so that an earlier look-up cannot hide a later one.
+      for (let only = 0; theirs.places > 1 && only < theirs.places; only++) {
+        const [t, n] = [await ask("theirs", only), await ask("nobody", only)];
+        const ids = /[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}/g;
+        const plain = (answer: unknown) => JSON.stringify(answer).replace(ids, "id");
+        expect(plain(t.answer), `place ${only}`).toBe(plain(n.answer));
+        expect(plain(t.answer)).not.toContain(CANARY);
+      }
     }
     expect(await world.digestOfB()).toEqual(before);
   });

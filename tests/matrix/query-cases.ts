@@ -1,7 +1,7 @@
 import type { ShopContext, TxContext } from "@/modules/access/context";
 import type { Act } from "@/modules/access/roles";
-import type { At } from "./world";
-import { CANARY } from "./world";
+import { libraryInput } from "@/modules/flow/library-input";
+import { CANARY, type At } from "./world";
 
 type Fn = (ctx: ShopContext, ...args: unknown[]) => unknown;
 
@@ -51,6 +51,55 @@ export const QUERY_CASES: Record<string, QueryCase> = {
   "time/queries/own-time ownWeek": byId(null, "people"),
   "time/queries/own-time missingOut": byId(null, "people"),
 
+  "time/queries/find-operations findOperations": asked("time.see-own", { q }),
+  "time/queries/people-at peopleAt": plain("floor.see"),
+  "time/queries/settings-lists deviceList": plain("devices.write"),
+  "time/queries/settings-lists peopleList": plain("devices.write"),
+  "time/queries/settings-lists getPerson": byId("devices.write", "people"),
+  "time/queries/settings-lists peopleNames": plain("time.see-all"),
+  "time/queries/to-look-at toLookAt": plain("time.see-all"),
+  "time/queries/week-sheet weekSheet": { act: "time.see-all", call: (fn, ctx, at) => fn(ctx, { personId: at("people").id, date: "2026-03-05" }) },
+
+  "books/queries findEntries": asked("books.see", { limit: 100 }),
+  "books/queries trialBalanceView": { act: "books.see", call: (fn, ctx) => fn(ctx, null) },
+  "invoices/queries findInvoices": asked("books.see", { view: "all", q, limit: 100 }),
+  "invoices/queries findReadyToBill": plain("books.see"),
+  "invoices/queries getInvoice": byId("books.see", "invoices"),
+  "invoices/queries invoicePdf": byId("books.see", "invoices"),
+  "invoices/queries agingView": plain("books.see"),
+  "invoices/queries openSumOf": byId(null, "work_orders"),
+  "invoices/queries invoicesOfOrder": byId("prices.see", "work_orders"),
+  "invoices/queries invoiceForCustomer": { act: null, as: "customer", call: (fn, ctx) => fn(ctx) },
+  "payments/queries findSetAside": plain("books.see"),
+  "payments/queries paymentsFor": { act: "books.see", call: (fn, ctx, at) => fn(ctx, { invoiceId: at("invoices").id, workOrderId: at("work_orders").id }) },
+  // Shows nobody anything but those who may answer.
+  "payments/queries findWaitingRefunds": plain(null),
+  "reports/queries jobProfitOf": byId("profit.see", "work_orders"),
+  "purchasing/queries/open-work-orders openWorkOrders": plain("purchase.write"),
+  "stock/queries/count-sheet countSheetFor": { act: "stock.adjust", call: (fn, ctx, at) => fn(ctx, { part: at("parts").id }) },
+
+  "flow/queries/gain gainForPiece": byId("flow.see", "pieces"),
+  "flow/queries/gear gearRoom": plain("flow.see"),
+  "flow/queries/gear benchHistory": byId("flow.see", "benches"),
+  "flow/queries/job-cautions cautionsToShow": { act: "clock.use", call: (fn, ctx, at) => fn(ctx, { workOrderId: at("work_orders").id, step: "CLN", hazards: ["noise"] }) },
+  "flow/queries/job-cautions cautionsSeenOn": byId("orders.see", "work_orders"),
+  "flow/queries/library-family familyPicture": asked("flow.see", { family: q, side: "intake", last: 3 }),
+  "flow/queries/library-family overlayOf": { act: "flow.see", call: (fn, ctx, at) => fn(ctx, { a: at("flow_tests").id, b: at("flow_tests").id }) },
+  "flow/queries/library libraryTests": asked("flow.see", libraryInput.parse({ q })),
+  "flow/queries/measurements measurementSheet": byId("flow.see", "heads"),
+  "flow/queries/library familyNames": plain("flow.see"),
+  "flow/queries/report issuedReport": byId("flow.see", "flow_comparisons"),
+  "flow/queries/report flowReportPdf": byId("flow.see", "flow_comparisons"),
+  "flow/queries/room roomPage": asked("flow.see", { q, state: "", limit: 100 }),
+  "flow/queries/room headOfTag": byText("flow.see", OF_B.tag),
+  "flow/queries/sheet gearOf": plain("flow.see"),
+  "flow/queries/sheet flowSheetFor": { act: "flow.see", call: (fn, ctx, at) => fn(ctx, at("heads").id, 1) },
+  "flow/queries/upload uploadHeads": byId("flow.see", "heads"),
+  "flow/queries/upload flowFilesOf": byId("flow.see", "heads"),
+  "flow/queries/tests-of-head cellsOf": byIds(null, "flow_tests"),
+  "flow/queries/tests-of-head rawTests": { act: null, call: (fn, ctx, at) => fn(ctx, { headIds: [at("heads").id] }) },
+  "work-orders/queries/families familiesOf": plain("orders.see"),
+
   "work-orders/queries/bench-list clockBoard": plain("clock.use"),
   "work-orders/queries/bench-list openOperations": plain(null),
   "work-orders/queries/bench-list benchList": plain("clock.use"),
@@ -83,6 +132,8 @@ export const QUERY_CASES: Record<string, QueryCase> = {
 export const READS_NOTHING: Record<string, string> = {
   "stock/queries/part-figures partFigures": "makes a piece of SQL for the shop it is given",
   "purchasing/queries/orders seesPrices": "asks the actor's roles only",
+  "flow/queries/gain portGains": "computes from tests it is given",
+  "flow/queries/gain seesCustomers": "asks the actor's roles only",
 };
 
 /** Inner parts want the open transaction in their context. */
@@ -91,5 +142,7 @@ export const inside = (ctx: ShopContext, tx: TxContext["tx"]): TxContext => ({ .
 /** Cases of endpoints, by method and path: B's ids in a query string or body. Those without ids are asked for the canary by themselves. */
 export const ENDPOINT_CASES: Record<string, (at: At) => Record<string, unknown>> = {
   "GET /api/v1/s/{shop}/parts/{part}/movements": (at) => ({ part: at("parts").id }),
+  "GET /api/v1/s/{shop}/flow/sheet": (at) => ({ headId: at("heads").id }),
+  "GET /api/v1/s/{shop}/flow/library/overlay": (at) => ({ a: at("flow_tests").id, b: at("flow_tests").id }),
   "POST /api/v1/clock/identify": (at) => ({ kind: "pin", personId: at("people").id, pin: "480131" }),
 };

@@ -8,6 +8,9 @@ import { addSupplier } from "@/modules/purchasing/commands/suppliers";
 import { draftPurchaseOrder, sendPurchaseOrder } from "@/modules/purchasing/commands/orders";
 import { receiveGoods } from "@/modules/purchasing/commands/receive";
 import { draftInvoice } from "@/modules/invoices/draft";
+import { addBench, addFixture, recordBenchCheck } from "@/modules/flow/commands/gear";
+import { issueComparison } from "@/modules/flow/commands/issue-comparison";
+import { postWholeTest } from "@/modules/flow/commands/post-test";
 import { issueInvoice } from "@/modules/invoices/issue";
 import { draftSheet } from "@/modules/invoices/sheet";
 import { askInvoicePayment, askRefund, takePayment } from "@/modules/payments/commands";
@@ -22,6 +25,7 @@ import { receivePiece } from "@/modules/work-orders/commands/receive-piece";
 import { HERO_EPOXY, HERO_KIT, HERO_PARTS } from "@/seed/facts/ninebark";
 import { behindTheCurtain } from "./database";
 import { asCustomer, HERO_LABOR, HERO_SHELF, hashOf, heroLines, heroMenu, openHero, pieceVersion, sendVersion, type HeroOrder } from "./hero-order";
+import { HERO_CAM_UM, HERO_FLOWS, HERO_LIFTS_UM } from "./hero-flow";
 import { must, type TestShop } from "./shop";
 import { enrolledTablet, type Tablet } from "./tablet";
 
@@ -42,6 +46,25 @@ async function shelf(shop: TestShop): Promise<Record<string, string>> {
   ids[HERO_KIT.sku] = must(await addPart(owner, { sku: HERO_KIT.sku, description: HERO_KIT.description, partClass: "kit", isKit: true, salePrice: HERO_KIT.sale })).id;
   must(await setKit(owner, { kitPartId: ids[HERO_KIT.sku] ?? "", version: 1, lines: HERO_KIT.contents.map(([sku, qty]) => ({ partId: ids[sku] ?? "", qty: String(qty) })) }));
   return ids;
+}
+
+const inches = (um: number): string => (um / 25_400).toFixed(3);
+
+/** Both sides before and after, on one bench, and the comparison handed out. */
+async function flowed(shop: TestShop, headId: string): Promise<void> {
+  const at = (iso: string) => shop.as("insp", iso);
+  const benchId = must(await addBench(shop.as("owner", "2026-02-25T15:00:00Z"), { name: "Bench 1" })).id;
+  const fixtureId = must(await addFixture(shop.as("owner", "2026-02-25T15:05:00Z"), { name: "77", boreMm: "77" })).id;
+  for (const [purpose, when, day] of [["baseline", "before", "2026-02-26"], ["after", "after", "2026-03-12"]] as const) {
+    must(await recordBenchCheck(at(`${day}T15:40:00Z`), { benchId, isFine: true, note: "looked over" }));
+    for (const side of ["intake", "exhaust"] as const) {
+      must(await postWholeTest(at(`${day}T17:00:00Z`), {
+        headId, benchId, fixtureId, side, purpose, nominal: "28", camLift: inches(HERO_CAM_UM), entry: side === "intake" ? "radius" : "none", complete: true,
+        readings: HERO_LIFTS_UM.map((um, i) => ({ lift: inches(um), value: (HERO_FLOWS[side][when][i] ?? 0).toFixed(1), acceptedReason: "as read" })),
+      }));
+    }
+  }
+  must(await issueComparison(at("2026-03-12T18:00:00Z"), { headId, customerWords: "as flowed" }));
 }
 
 /**
@@ -74,6 +97,8 @@ export async function furnish(shop: TestShop): Promise<FurnishedShop> {
   must(await doorOut(shop.as("tech", "2026-03-05T23:00:00Z"), {}));
   must(await recordFinding(shop.as("tech", "2026-03-05T16:00:00Z"), { pieceId: hero.pieceId, words: "Exhaust guides out of limit", position: "exhaust" }));
   must(await setHold(owner("2026-03-05T16:05:00Z"), { pieceId: hero.pieceId, reason: "customer answer", words: "asked about the guides" }));
+
+  await flowed(shop, await one(`select id from heads where piece_id = '${hero.pieceId}'`));
 
   const { invoiceId } = must(await draftInvoice(owner("2026-03-13T18:00:00Z"), { workOrderId: hero.orderId }));
   must(await issueInvoice(owner("2026-03-13T18:10:00Z"), { invoiceId, version: 1, totalMinor: await totalOnScreen(shop, invoiceId) }));

@@ -4,11 +4,14 @@ import * as customers from "@/modules/customers/endpoints";
 import * as customerWrites from "@/modules/customers/write-endpoints";
 import * as flow from "@/modules/flow/endpoints";
 import * as flowLibrary from "@/modules/flow/library-endpoints";
+import * as invoices from "@/modules/invoices/endpoints";
+import * as payments from "@/modules/payments/endpoints";
 import * as paymentWrites from "@/modules/payments/write-endpoints";
 import * as purchasing from "@/modules/purchasing/endpoints";
 import * as purchaseWrites from "@/modules/purchasing/write-endpoints";
 import * as stock from "@/modules/stock/endpoints";
 import * as stockWrites from "@/modules/stock/write-endpoints";
+import * as time from "@/modules/time/endpoints";
 import * as bench from "@/modules/work-orders/bench-endpoints";
 import * as workOrders from "@/modules/work-orders/endpoints";
 import * as workOrderWrites from "@/modules/work-orders/write-endpoints";
@@ -18,5 +21,5 @@ const isEndpoint = (value: unknown): value is AnyEndpoint => typeof value === "o
 
 /** Every address of the API, for its document. A test holds this list against the route files. */
 export const ENDPOINTS: readonly AnyEndpoint[] = [
-  customers, customerWrites, flow, flowLibrary, paymentWrites, purchasing, purchaseWrites, stock, stockWrites, bench, workOrders, workOrderWrites,
+  customers, customerWrites, flow, flowLibrary, invoices, payments, paymentWrites, purchasing, purchaseWrites, stock, stockWrites, time, bench, workOrders, workOrderWrites,
 ].flatMap((module) => Object.values(module).filter(isEndpoint));

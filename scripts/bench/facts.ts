@@ -1,0 +1,19 @@
+/** What the benchmark asks for: numbers and ids of the demo, and a link a customer holds. */
+import { and, desc, eq, isNull, sql } from "drizzle-orm";
+import { closeDatabase } from "@/db/client";
+import { heads, invoices, links, shops, workOrders } from "@/db/schema";
+import { withShop, withSystem } from "@/db/scope";
+import { linkAddress } from "@/modules/access/link";
+
+const [shop] = await withSystem("the shop of the benchmark", (tx) => tx.select().from(shops).where(eq(shops.slug, process.env.BENCH_SHOP ?? "ninebark")));
+if (!shop) throw new Error("The demo has no such shop.");
+const facts = await withShop(shop.id, async (tx) => {
+  const [order] = await tx.select({ number: workOrders.number }).from(workOrders).where(and(eq(workOrders.shopId, shop.id), isNull(workOrders.cancelledAt))).orderBy(desc(workOrders.openedAt)).limit(1);
+  const [head] = await tx.select({ id: heads.id }).from(heads).where(eq(heads.shopId, shop.id)).limit(1);
+  const [link] = await tx.select({ id: links.id }).from(links).where(and(eq(links.shopId, shop.id), eq(links.purpose, "estimate"), isNull(links.revokedAt), sql`${links.expiresAt} > now()`)).orderBy(desc(links.createdAt)).limit(1);
+  const [invoice] = await tx.select({ id: invoices.id }).from(invoices).where(and(eq(invoices.shopId, shop.id), eq(invoices.state, "issued"))).limit(1);
+  const { rows: [tests] } = await tx.execute<{ n: number }>(sql`select count(*)::int as n from flow_tests where shop_id = ${shop.id} and state = 'complete'`);
+  return { order: order?.number ?? null, headId: head?.id ?? null, link: link ? new URL(linkAddress(link.id)).pathname : null, invoiceId: invoice?.id ?? null, tests: tests?.n ?? 0 };
+});
+await closeDatabase();
+console.log(JSON.stringify({ slug: shop.slug, shopId: shop.id, ...facts }));
