@@ -1,0 +1,22 @@
+import { execFile } from "node:child_process";
+import path from "node:path";
+import { promisify } from "node:util";
+
+export interface Founded {
+  readonly slug: string;
+  readonly shopId: string;
+  /** Ids by short name. */
+  readonly people: Readonly<Record<string, string>>;
+}
+
+const PROJECT = path.resolve(import.meta.dirname, "../../..");
+
+/** Founds the journeys' shop in a process of its own: the product's commands run on the server only. */
+export async function foundShopFor(slug: string): Promise<Founded> {
+  const { stdout } = await promisify(execFile)(
+    process.execPath, ["--conditions=react-server", "--import", "tsx", path.join(PROJECT, "tests/e2e/support/found-run.ts"), slug], { cwd: PROJECT, env: process.env },
+  );
+  const line = stdout.split("\n").find((l) => l.startsWith("FOUNDED "));
+  if (line === undefined) throw new Error(`nothing was founded: ${stdout}`);
+  return JSON.parse(line.slice("FOUNDED ".length)) as Founded;
+}
