@@ -25,7 +25,8 @@ export function proxy(request: NextRequest): NextResponse {
   response.headers.set("x-frame-options", "DENY");
   response.headers.set("cross-origin-opener-policy", "same-origin");
   response.headers.set("permissions-policy", "camera=(self), microphone=(), geolocation=()");
-  response.headers.set("referrer-policy", request.nextUrl.pathname.startsWith("/l/") ? "no-referrer" : "same-origin");
+  // Never "no-referrer": it would blank the Origin of a plain form, and the customer's page must work without scripts.
+  response.headers.set("referrer-policy", "same-origin");
   response.headers.set("strict-transport-security", "max-age=31536000; includeSubDomains");
   response.headers.set("cache-control", "private, no-store");
   return response;

@@ -4,11 +4,12 @@ import { approvals, estimates, files, findings, shopSettings, workOrders, workPi
 import { inShop, NotFound, type ShopContext } from "@/modules/access/context";
 import { readFile } from "@/modules/documents/files";
 import { localDate } from "@/modules/kernel/instant";
-import type { EstimateSnapshot } from "../domain/estimate-snapshot";
+import { lineChanges } from "../domain/line-changes";
+import type { EstimateSnapshot, SnapshotLine } from "../domain/estimate-snapshot";
 import { depositOf, type OrderDeposit } from "./deposit";
 import { houseOrders } from "./house";
 
-export interface CustomerPiece { pieceNo: number; tag: string | null; family: string; place: string; station: number | null; photoIds: string[] }
+export interface CustomerPiece { id: string; isProved: boolean; pieceNo: number; tag: string | null; family: string; place: string; station: number | null; photoIds: string[] }
 export interface CustomerView {
   number: string; estimateId: string; version: number; shopPhone: string; shopEmail: string;
   /** `open` may be answered; the rest say in words why not. */
@@ -16,6 +17,8 @@ export interface CustomerView {
   snapshot: EstimateSnapshot; documentHash: string; pdf: boolean;
   answer: { answer: string; name: string; at: string; via: string } | null;
   newerVersion: number | null;
+  /** Lines that the version agreed before did not have, or had otherwise, and those that go; null for a first estimate. */
+  changes: { more: SnapshotLine[]; less: SnapshotLine[] } | null;
   findings: { id: string; position: string; words: string; photoIds: string[] }[];
   pieces: CustomerPiece[];
   deposit: OrderDeposit | null;
@@ -47,6 +50,8 @@ export async function customerView(ctx: ShopContext): Promise<CustomerView> {
     const [answer] = await tx.select().from(approvals).where(and(eq(approvals.shopId, s), eq(approvals.estimateId, e.id)));
     const [newer] = await tx.select({ no: estimates.estimateNo }).from(estimates)
       .where(and(eq(estimates.shopId, s), eq(estimates.workOrderId, o.id), sql`${estimates.estimateNo} > ${e.estimateNo}`, inArray(estimates.state, ["sent", "approved"]))).orderBy(desc(estimates.estimateNo)).limit(1);
+    const snapshot = e.snapshot as EstimateSnapshot;
+    const [base] = snapshot.change ? await tx.select({ snapshot: estimates.snapshot }).from(estimates).where(and(eq(estimates.shopId, s), eq(estimates.workOrderId, o.id), eq(estimates.estimateNo, snapshot.change.fromVersion))) : [];
     const asked = await tx.select({ id: findings.id, position: findings.position, words: findings.words }).from(findings).where(and(eq(findings.shopId, s), eq(findings.estimateId, e.id), isNull(findings.withdrawnAt))).orderBy(asc(findings.foundAt));
     const [house] = await houseOrders(inner, eq(workOrders.id, o.id));
     const subjects = [...(house?.pieces.map((p) => p.id) ?? []), ...asked.map((f) => f.id)];
@@ -56,13 +61,13 @@ export async function customerView(ctx: ShopContext): Promise<CustomerView> {
     return {
       number: o.number, estimateId: e.id, version: e.estimateNo, shopPhone: settings?.phone ?? "", shopEmail: settings?.email ?? "",
       standing: e.state === "sent" ? (o.closedAt || o.cancelledAt ? "closed" : isOutOfDate ? "out of date" : "open") : e.state === "approved" ? "approved" : e.state === "declined" ? "declined" : "replaced",
-      snapshot: e.snapshot as EstimateSnapshot, documentHash: e.documentHash ?? "", pdf: e.pdfFileId !== null,
+      snapshot, changes: base?.snapshot ? lineChanges((base.snapshot as EstimateSnapshot).lines, snapshot.lines) : null, documentHash: e.documentHash ?? "", pdf: e.pdfFileId !== null,
       answer: answer ? { answer: answer.answer, name: answer.name, at: answer.at.toISOString(), via: answer.via } : null, newerVersion: newer?.no ?? null,
       findings: asked.map((f) => ({ ...f, photoIds: photosOf(f.id) })), deposit: await depositOf(inner, o.id), promisedOn: o.promisedOn,
       pieces: house?.pieces.map((p) => {
         const at = p.status.station;
         const place = p.status.word === "Gone" ? "With you again" : p.status.dial === "ready" ? "Ready for you" : at === null ? "On its way to us" : (PLACE_WORDS[at] ?? at);
-        return { pieceNo: p.pieceNo, tag: p.tag, family: p.family, place: p.status.dial === "hold" ? `${place}; on hold, we will call` : place, station: at === null ? null : Object.keys(PLACE_WORDS).indexOf(at), photoIds: photosOf(p.id) };
+        return { id: p.id, isProved: p.status.dial === "ready" || p.status.dial === "out", pieceNo: p.pieceNo, tag: p.tag, family: p.family, place: p.status.dial === "hold" ? `${place}; on hold, we will call` : place, station: at === null ? null : Object.keys(PLACE_WORDS).indexOf(at), photoIds: photosOf(p.id) };
       }) ?? [],
     };
   });
@@ -92,4 +97,18 @@ export async function customerPaperId(ctx: ShopContext): Promise<string> {
   const [e] = await inShop(ctx, (tx) => tx.select({ id: estimates.pdfFileId }).from(estimates).where(and(eq(estimates.shopId, ctx.shop.id), eq(estimates.id, subjectOf(ctx)))));
   if (!e?.id) throw new NotFound("paper");
   return e.id;
+}
+
+/** Pieces of the order behind any link of its customer that passed final inspection: those whose flow may be shown. */
+export async function provedPieces(ctx: ShopContext, workOrderId: string): Promise<string[]> {
+  if (ctx.actor.kind !== "customer") throw new NotFound("link");
+  const customerId = ctx.actor.id;
+  return inShop(ctx, async (tx) => (await tx.select({ id: workPieces.id }).from(workPieces).innerJoin(workOrders, and(eq(workOrders.shopId, workPieces.shopId), eq(workOrders.id, workPieces.workOrderId)))
+    .where(and(eq(workPieces.shopId, ctx.shop.id), eq(workPieces.workOrderId, workOrderId), eq(workOrders.customerId, customerId), sql`${workPieces.releasedAt} is not null`)).orderBy(asc(workPieces.pieceNo))).map((p) => p.id));
+}
+
+/** How a customer reaches the shop. */
+export async function customerShop(ctx: ShopContext): Promise<{ phone: string; email: string }> {
+  const [row] = await inShop(ctx, (tx) => tx.select({ phone: shopSettings.phone, email: shopSettings.email }).from(shopSettings).where(eq(shopSettings.shopId, ctx.shop.id)));
+  return row ?? { phone: "", email: "" };
 }
