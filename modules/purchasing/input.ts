@@ -34,7 +34,7 @@ export const cancelInput = z.strictObject({ id: z.uuid(), version: z.number().in
 /** Quantity that came: 0 or more; empty is nothing. */
 const cameText = line(16).transform((s, issue) => {
   const q = parseMilli(s === "" ? "0" : s);
-  if (q === null || q < 0) { issue.addIssue({ code: "custom", message: "How many came, such as 6; 0 or empty when none." }); return z.NEVER; }
+  if (q === null || q < 0) { issue.addIssue({ code: "custom", message: "A quantity such as 6, or empty when none came." }); return z.NEVER; }
   return q;
 });
 export const OVER_CHOICES = ["keep", "return", "refuse"] as const;

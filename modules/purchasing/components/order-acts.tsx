@@ -22,8 +22,9 @@ function useDone(close: () => void) {
 }
 
 /** Sends the order: it takes its number and goes out by mail with its paper, or by hand. */
-export function SendDialog({ order }: { order: OrderDetail }) {
+export function SendDialog({ order, waits }: { order: OrderDetail; /** Why it cannot be sent yet. */ waits?: string }) {
   const [open, setOpen] = useState(false);
+  if (waits !== undefined) return <Button variant="go" icon="send" disabledReason={waits}>Send order</Button>;
   return (
     <TaskDialog open={open} onOpenChange={setOpen} trigger={<Button variant="go" icon="send">Send order</Button>} title={`Send to ${order.supplier.name}`} description="The order takes its number. A change after that is a new revision, and goes out again.">
       <SendForm order={order} close={() => setOpen(false)} />

@@ -22,6 +22,7 @@ import { useToast } from "@/modules/ui/toast";
 import { changePurchaseOrderAction } from "../actions";
 import { changeOrderInput } from "../input";
 import type { OrderDetail } from "../queries/orders";
+import { SendDialog } from "./order-acts";
 
 /** The lines of a purchase order as typed. After sending, saving makes the next revision and mails it. */
 export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?: () => void }) {
@@ -33,7 +34,7 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
     schema: changeOrderInput,
     defaultValues: {
       id: order.id, version: order.version, neededBy: order.neededBy ?? "", notes: order.notes,
-      lines: order.lines.map((l) => ({ id: l.id, partId: l.partId, supplierNumber: l.supplierNumber, qty: milliText(l.qtyMilli), price: l.unitPriceMinor === null ? "" : minorText(l.unitPriceMinor, decimals), workOrderId: l.workOrderId ?? "" })),
+      lines: order.lines.map((l) => ({ id: l.id, partId: l.partId, supplierNumber: l.supplierNumber, qty: milliText(l.qtyMilli), price: !l.unitPriceMinor ? "" : minorText(l.unitPriceMinor, decimals), workOrderId: l.workOrderId ?? "" })),
     },
     action: (sent) => changePurchaseOrderAction(slug, sent),
     onDone: (v) => { toast({ text: order.rawState === "sent" ? `Revision ${v.revision} goes to ${order.supplier.name}` : "Lines saved" }); onDone?.(); router.refresh(); },
@@ -52,7 +53,7 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
           const l = known.get(f.id ?? "");
           return (
             <div key={f.key} className="grid items-start gap-3" style={{ gridTemplateColumns: "repeat(auto-fit, minmax(112px, 1fr))", borderBottom: "1px solid var(--line)", paddingBottom: 12 }}>
-              <PartPicker name={`lines.${i}.partId`} label={`Line ${i + 1}, part`} kits={false} initial={l ? { id: l.partId, sku: l.sku, description: l.description } : null} />
+              <PartPicker name={`lines.${i}.partId`} label={`Line ${i + 1}, part`} kits={false} initial={l ? { id: l.partId, sku: l.sku, description: l.description } : null} {...(l ? { hint: l.description } : {})} />
               <TextInput name={`lines.${i}.supplierNumber`} label="Their number" optional />
               <NumberInput name={`lines.${i}.qty`} label="Quantity" alignEnd />
               <MoneyInput name={`lines.${i}.price`} label="Each" currency={currency} />
@@ -70,7 +71,12 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
         <DateInput name="neededBy" label="Needed by" optional />
         <TextareaInput name="notes" label="Notes on the order" rows={2} optional hint="Printed for the supplier." />
       </div>
-      <div className="form-act"><SubmitButton pendingText="Saving…">{order.rawState === "sent" ? `Save and send revision ${order.revision + 1}` : "Save lines"}</SubmitButton></div>
+      <div className="form-act">
+        {order.rawState === "sent" ? <SubmitButton pendingText="Saving…">{`Save and send revision ${order.revision + 1}`}</SubmitButton> : <>
+          <SubmitButton variant="plain" pendingText="Saving…">Save lines</SubmitButton>
+          <SendDialog order={order} {...(form.rhf.formState.isDirty ? { waits: "Save the lines first." } : order.lines.length === 0 ? { waits: "Add a part and save." } : {})} />
+        </>}
+      </div>
     </CommandForm>
   );
 }

@@ -46,18 +46,18 @@ export function ReceiveForm({ order }: { order: OrderDetail }) {
           {open.map((l, i) => {
             const over = (parseMilli(String(typed?.[i]?.came ?? "")) ?? 0) > l.openMilli;
             return (
-              <tr key={l.id} style={{ verticalAlign: "top" }}>
-                <td className="q mid w2 nw" style={{ paddingTop: 16 }}>{l.sku}</td>
+              <tr key={l.id}>
+                <td className="q mid w2 nw">{l.sku}</td>
                 <td className="b" style={{ paddingBlock: 12 }}>
                   {l.description}
                   {l.waiting.map((w) => <span key={w.number} className="sm mid" style={{ display: "flex", alignItems: "center", gap: 5, fontWeight: 400 }}><Icon name="clock" size={13} />{`${w.number} waits for ${qtyText(w.shortMilli, l.stockUnit)}`}</span>)}
                   {l.lotTracked ? <div className="grid gap-2" style={{ gridTemplateColumns: "repeat(auto-fit, minmax(120px, 1fr))", marginTop: 8, fontWeight: 400 }}><TextInput name={`lines.${i}.lotCode`} label="Lot" /><DateInput name={`lines.${i}.expiresOn`} label="Expires" /></div> : null}
                   {over ? <div style={{ marginTop: 8, fontWeight: 400 }}><SelectInput name={`lines.${i}.over`} label="More than ordered: what becomes of it?" options={[{ value: "", label: "Choose" }, { value: "keep", label: "Keep it" }, { value: "return", label: "Send it back" }, { value: "refuse", label: "Refused at the door" }]} /></div> : null}
                 </td>
-                <td className="mid w2" style={{ paddingTop: 16 }}>{l.workOrderNumber ?? "Stock"}</td>
-                <td className="r q" style={{ paddingTop: 16 }}>{qtyText(l.openMilli, l.stockUnit)}</td>
-                <td style={{ width: 120, paddingBlock: 7 }}><NumberInput name={`lines.${i}.came`} label={`Came, ${l.sku}`} hideLabel alignEnd unit={unitMark(l.stockUnit) || undefined} autoFocus={i === 0} /></td>
-                {seesPrice ? <td className="r q hide-s" style={{ paddingTop: 16 }}>{l.unitPriceMinor === null ? "" : amount(l.unitPriceMinor, place)}</td> : null}
+                <td className="mid w2">{l.workOrderNumber ?? "Stock"}</td>
+                <td className="r q">{qtyText(l.openMilli, l.stockUnit)}</td>
+                <td style={{ width: 160, paddingBlock: 7 }}><NumberInput name={`lines.${i}.came`} label={`Came, ${l.sku}`} hideLabel alignEnd unit={unitMark(l.stockUnit) || undefined} autoFocus={i === 0} /></td>
+                {seesPrice ? <td className="r q hide-s">{l.unitPriceMinor === null ? "" : amount(l.unitPriceMinor, place)}</td> : null}
               </tr>
             );
           })}

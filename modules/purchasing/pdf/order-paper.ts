@@ -46,7 +46,7 @@ export function orderPaper(s: OrderSheet): TDocumentDefinitions {
         { label: "Needed by", strong: s.neededBy ? date(s.neededBy, s.shop.locale) : "As soon as you can" },
         { label: "Expected", strong: s.expectedOn ? date(s.expectedOn, s.shop.locale) : "Please tell us" },
         { label: "Terms", strong: s.terms },
-        { label: "Questions to", strong: s.contact, more: s.shop.email },
+        { label: "Questions to", strong: s.contact },
       ]),
       lineTable([
         { head: "Line", width: 26, faint: true }, { head: "Your number", width: 84 }, { head: "Our number", width: 84 }, { head: "Part", width: "*", strong: true },
@@ -54,7 +54,7 @@ export function orderPaper(s: OrderSheet): TDocumentDefinitions {
       ], s.lines.map((l) => [
         String(l.lineNo), l.supplierNumber || "–", l.sku, l.forOrder ? `${l.description}, for ${l.forOrder}` : l.description, `${milliText(l.qtyMilli)}${unit(l.stockUnit)}`, amount(l.unitPriceMinor, place), amount(extend(l.unitPriceMinor, l.qtyMilli), place),
       ])),
-      { columns: [{ text: s.notes, width: "*", color: PAPER_INK.soft }, { width: 190, columns: [{ text: "Parts, without freight", bold: true }, { text: money(total, place), bold: true, alignment: "right", fontSize: 12 }] }], columnGap: 18, margin: [0, 12, 0, 0] },
+      { columns: [{ text: s.notes, width: "*", color: PAPER_INK.soft }, { width: 230, columns: [{ width: "*", text: "Parts, without freight", bold: true }, { width: "auto", text: money(total, place), bold: true, alignment: "right", fontSize: 12 }], columnGap: 8 }], columnGap: 18, margin: [0, 12, 0, 0] },
       { text: "Please put our number on the delivery note and on the bill, and tell us by mail when a date or a price differs.", color: PAPER_INK.soft, margin: [0, 20, width / 3, 0] },
     ],
   });

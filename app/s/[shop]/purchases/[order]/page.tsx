@@ -1,6 +1,6 @@
 import { ableTo } from "@/modules/access/context";
 import { orNotFound, shopPage } from "@/modules/access/page";
-import { CancelDialog, ExpectDialog, SendDialog } from "@/modules/purchasing/components/order-acts";
+import { CancelDialog, ExpectDialog } from "@/modules/purchasing/components/order-acts";
 import { OrderBody } from "@/modules/purchasing/components/order-body";
 import { OrderSide } from "@/modules/purchasing/components/order-side";
 import { OrderSteps, orderSub } from "@/modules/purchasing/components/order-steps";
@@ -21,11 +21,10 @@ export default async function PurchaseOrderPage({ params }: { params: Promise<{ 
   const place = { locale: ctx.shop.locale, zone: ctx.shop.zone };
   return (
     <main id="main" className="page">
-      <PageHead number={order.number ? String(Number(order.number.slice(-4))) : "–"} numberLabel={order.number ?? "Not sent yet,"} title={`Purchase order to ${order.supplier.name}`} sub={orderSub(order, place)} actions={<>
+      <PageHead {...(order.number ? { number: String(Number(order.number.slice(-4))), numberLabel: `${order.number}, ` } : {})} title={`Purchase order to ${order.supplier.name}`} sub={orderSub(order, place)} actions={<>
         {seesPrices(ctx) && order.lines.length > 0 ? <LinkButton href={`/s/${ctx.shop.slug}/purchases/${order.number ?? order.id}/pdf`} newTab variant="lo" icon="print">Print</LinkButton> : null}
         {canWrite && (order.state === "draft" || isOpen) ? <CancelDialog order={order} /> : null}
         {canWrite && isOpen ? <ExpectDialog order={order} /> : null}
-        {canWrite && order.state === "draft" ? <SendDialog order={order} /> : null}
       </>} />
       <OrderSteps order={order} place={place} />
       <div className="split" style={{ ["--side" as string]: "320px" }}>
