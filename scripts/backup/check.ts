@@ -49,7 +49,7 @@ export async function checkBackup(o: { folder: string; superuser: (database: str
   try {
     await admin.query(`drop database if exists "${o.scratch}" with (force)`);
     await admin.query(`create database "${o.scratch}" template template0`);
-    const restored = spawnSync(path.join(o.programs, "pg_restore"), ["--exit-on-error", "--no-owner", `--dbname=${o.superuser(o.scratch)}`, path.join(o.folder, manifest.dump.file)], { encoding: "utf8", env: { PATH: process.env.PATH, PGCONNECT_TIMEOUT: "10" } });
+    const restored = spawnSync(path.join(o.programs, "pg_restore"), ["--exit-on-error", "--no-owner", `--dbname=${o.superuser(o.scratch)}`, path.join(o.folder, manifest.dump.file)], { encoding: "utf8", env: { NODE_ENV: "production", PATH: process.env.PATH, PGCONNECT_TIMEOUT: "10" } });
     restoreSeconds = Number(process.hrtime.bigint() - started) / 1e9;
     if (restored.status !== 0) return { faults: [`pg_restore did not finish: ${(restored.stderr || String(restored.error ?? "")).trim()}`], manifest, restoreSeconds };
     const there = new pg.Client({ connectionString: o.superuser(o.scratch) });

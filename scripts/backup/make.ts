@@ -47,7 +47,7 @@ export async function makeBackup(o: { backupUrl: string; programs: string; files
     if (!about) throw new BackupRefused("The database gave no snapshot.");
     const file = "database.dump";
     // Without --enable-row-security: were the role bound after all, the dump would fail instead of being a part.
-    const dumped = spawnSync(path.join(o.programs, "pg_dump"), ["--format=custom", `--snapshot=${about.snapshot}`, `--file=${path.join(half, file)}`, `--dbname=${o.backupUrl}`], { encoding: "utf8", env: { PATH: process.env.PATH, PGCONNECT_TIMEOUT: "10" } });
+    const dumped = spawnSync(path.join(o.programs, "pg_dump"), ["--format=custom", `--snapshot=${about.snapshot}`, `--file=${path.join(half, file)}`, `--dbname=${o.backupUrl}`], { encoding: "utf8", env: { NODE_ENV: "production", PATH: process.env.PATH, PGCONNECT_TIMEOUT: "10" } });
     if (dumped.status !== 0) throw new BackupRefused(`pg_dump did not finish: ${(dumped.stderr || String(dumped.error ?? "")).trim()}`);
     const tables = await tablesOf(client);
     const { rows: kept } = await client.query<{ storage_key: string; thumb_key: string | null; sha256: string }>("select storage_key, thumb_key, sha256 from files order by storage_key");

@@ -10,12 +10,10 @@ import { queueMail } from "@/modules/documents/mail";
 import { dateTime } from "@/modules/kernel/format";
 import { localDate } from "@/modules/kernel/instant";
 import { ok, refuse } from "@/modules/kernel/result";
+import { PHOTOS_WANTED } from "../domain/photos-wanted";
 import { trayText } from "../domain/tray-kinds";
 import { pieceIdInput, placeInput, receiveInput } from "../input";
 import { onAnotherOrder } from "./open-order";
-
-/** Both faces, ports, damage: fewer is a question, not a refusal. */
-export const PHOTOS_WANTED = 4;
 
 /** Address of the newest standing link to one of the order's estimates, to send a customer back to their page. */
 async function standingPage(ctx: TxContext, workOrderId: string): Promise<string | null> {
