@@ -1,6 +1,5 @@
 "use server";
 import { shopAction } from "@/modules/access/action";
-import { dismissCautions } from "./commands/cautions";
 import { addLift, changeSheetConditions } from "./commands/change-test";
 import { completeTest, correctTest, voidTest } from "./commands/finish-test";
 import { addBench, addFamily, addFixture, recordBenchCheck } from "./commands/gear";
@@ -17,5 +16,4 @@ export const addLiftAction = shopAction(addLift);
 export const completeTestAction = shopAction(completeTest);
 export const voidTestAction = shopAction(voidTest);
 export const correctTestAction = shopAction(correctTest);
-export const dismissCautionsAction = shopAction(dismissCautions);
 export const issueComparisonAction = shopAction(issueComparison);

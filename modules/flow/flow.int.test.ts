@@ -5,7 +5,7 @@ import { benchJob } from "@/tests/support/bench-job";
 import { behindTheCurtain } from "@/tests/support/database";
 import { HERO_FLOWS } from "@/tests/support/hero-flow";
 import { must, requestId, testShop, type TestShop } from "@/tests/support/shop";
-import { dismissCautions } from "./commands/cautions";
+import { markCautionsSeen } from "./commands/job-cautions";
 import { addLift, changeSheetConditions, changeTestConditions } from "./commands/change-test";
 import { completeTest, correctTest, voidTest } from "./commands/finish-test";
 import { addBench, addFamily, addFixture, recordBenchCheck } from "./commands/gear";
@@ -17,7 +17,7 @@ import { startSheet, startTest } from "./commands/start-test";
 import { gainForPiece } from "./queries/gain";
 import { flowReportPdf, issuedReport } from "./queries/report";
 import { roomPage } from "./queries/room";
-import { flowSheetFor, gearOf } from "./queries/sheet";
+import { BENCH_STEP, flowSheetFor, gearOf } from "./queries/sheet";
 
 const BEFORE = "2026-02-26T16:30:00Z";
 const AFTER = "2026-03-12T16:15:00Z";
@@ -332,10 +332,9 @@ describe("who may", () => {
   });
 
   it("tells the cautions of the bench once a job to each person", async () => {
-    const { headId } = await newHead();
-    expect((await flowSheetFor(a.as("tech"), headId, 1)).cautions).toEqual(["noise", "suction", "springs"]);
-    must(await dismissCautions(a.as("tech"), { headId, hazards: ["noise", "suction", "springs"] }));
-    must(await dismissCautions(a.as("tech"), { headId, hazards: ["noise"] }));
+    const { headId, workOrderId } = await newHead();
+    expect((await flowSheetFor(a.as("tech"), headId, 1)).cautions.toSorted()).toEqual(["noise", "springs", "suction"]);
+    must(await markCautionsSeen(a.as("tech"), { workOrderId, step: BENCH_STEP, hazards: ["noise", "suction", "springs"] }));
     expect((await flowSheetFor(a.as("tech"), headId, 1)).cautions).toEqual([]);
     expect((await flowSheetFor(a.as("insp"), headId, 1)).cautions).toHaveLength(3);
   });

@@ -134,7 +134,6 @@ export const wholeTestInput = startTestInput.omit({ headId: true, lifts: true })
   complete: z.boolean().default(false),
 }).refine((t) => t.headId !== undefined || t.tag !== undefined, { error: "Say which head: headId or tag.", path: ["tag"] });
 
-export const cautionInput = z.strictObject({ headId: z.uuid(), hazards: z.array(z.enum(["noise", "suction", "springs"])).min(1).max(3) });
 export const issueInput = z.strictObject({ headId: z.uuid(), cylinder: z.number().int().min(1).max(16).default(1), customerWords: words(1000).default("") });
 export const sheetInput = z.strictObject({ headId: z.uuid(), cylinder: z.coerce.number().int().min(1).max(16).default(1) });
 export const roomInput = z.strictObject({

@@ -1,14 +1,18 @@
 import "server-only";
 import { and, asc, desc, eq, isNull } from "drizzle-orm";
-import { benches, benchChecks, cautionsSeen, customers, fixtures, flowComparisons, heads, people, workOrders, workPieces } from "@/db/schema";
+import { benches, benchChecks, customers, fixtures, flowComparisons, heads, people, workOrders, workPieces } from "@/db/schema";
 import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
-import { BENCH_CAUTIONS, BENCH_STEP } from "../domain/bench-cautions";
 import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
 import { rawTests } from "./tests-of-head";
 import { seesCustomers } from "./gain";
+import { cautionsToShow } from "./job-cautions";
+
+/** The step of a job at which the hazards of the bench are told. */
+export const BENCH_STEP = "bench session";
+const BENCH_HAZARDS = ["noise", "suction", "springs"] as const;
 
 export interface SheetHead {
-  id: string; mark: string; family: string; pieceId: string | null; orderNumber: string | null; customerName: string | null; castingNumber: string; seatMaterial: string;
+  id: string; mark: string; family: string; pieceId: string | null; workOrderId: string | null; orderNumber: string | null; customerName: string | null; castingNumber: string; seatMaterial: string;
   cylinders: number; camLiftIntakeUm: number | null; camLiftExhaustUm: number | null;
 }
 export interface PortMark { cylinder: number; state: "empty" | "part" | "done" }
@@ -79,21 +83,20 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
     const all = await rawTests(inner, { headIds: [headId] });
     const { benchCheckHours, nominalPressureInH2O } = await settingsOf(inner);
     const personId = personIdOf(ctx);
-    const seen = row.orderId && personId
-      ? await tx.select({ hazard: cautionsSeen.hazard }).from(cautionsSeen).where(and(eq(cautionsSeen.shopId, s), eq(cautionsSeen.workOrderId, row.orderId), eq(cautionsSeen.step, BENCH_STEP), eq(cautionsSeen.personId, personId)))
-      : [];
+    const canRecord = ableTo(ctx, "flow.record");
+    const isTold = canRecord && personId !== null;
+    const cautions = !isTold ? [] : row.orderId ? await cautionsToShow(inner, { workOrderId: row.orderId, step: BENCH_STEP, hazards: BENCH_HAZARDS }) : [...BENCH_HAZARDS];
     const issued = await tx.select({ id: flowComparisons.id, comparisonNo: flowComparisons.comparisonNo, issuedAt: flowComparisons.issuedAt, issuedBy: people.shortName }).from(flowComparisons)
       .innerJoin(people, and(eq(people.shopId, flowComparisons.shopId), eq(people.id, flowComparisons.issuedBy)))
       .where(and(eq(flowComparisons.shopId, s), eq(flowComparisons.headId, headId), eq(flowComparisons.cylinder, cylinder))).orderBy(desc(flowComparisons.comparisonNo));
-    const canRecord = ableTo(ctx, "flow.record");
     return {
       head: {
-        id: h.id, mark: h.mark, family: h.family, pieceId: h.pieceId, orderNumber: row.orderNumber, customerName: seesCustomers(ctx) ? row.customerName : null, castingNumber: h.castingNumber,
+        id: h.id, mark: h.mark, family: h.family, pieceId: h.pieceId, workOrderId: row.orderId, orderNumber: row.orderNumber, customerName: seesCustomers(ctx) ? row.customerName : null, castingNumber: h.castingNumber,
         seatMaterial: h.seatMaterial, cylinders: h.cylinders, camLiftIntakeUm: h.camLiftIntakeUm, camLiftExhaustUm: h.camLiftExhaustUm,
       },
       cylinder, ports: portMarks(h.cylinders, all), tests: all.filter((t) => t.cylinder === cylinder).map(({ headId: _, cylinder: __, ...t }) => t),
       benchCheckHours, nominalInH2O: nominalPressureInH2O, canRecord, canIssue: ableTo(ctx, "flow.issue"), viewer: { id: ctx.actor.id, name: ctx.actor.name },
-      cautions: canRecord && personId ? BENCH_CAUTIONS.map((c) => c.hazard).filter((hazard) => !seen.some((x) => x.hazard === hazard)) : [],
+      cautions,
       comparisons: issued.map((c) => ({ ...c, issuedAt: c.issuedAt.toISOString() })),
     };
   });

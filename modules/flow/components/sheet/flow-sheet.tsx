@@ -7,9 +7,9 @@ import { Bay } from "@/modules/ui/bay";
 import { usePlace } from "@/modules/ui/place";
 import type { PortSide } from "../../domain/comparison-reasons";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
+import { CautionNote } from "../caution-note";
 import { CurveReader } from "../curve-reader";
 import { liftWords } from "../flow-words";
-import { BenchCautionsNote } from "./bench-cautions-note";
 import { BenchKeypad } from "./bench-keypad";
 import { CellPanel } from "./cell-panel";
 import { ConditionStrip } from "./condition-strip";
@@ -104,7 +104,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
 
   return (
     <div className={`flow-sheet ${live}${isBench ? " bench" : ""}`}>
-      {drafts.length > 0 ? <BenchCautionsNote headId={given.head.id} hazards={given.cautions} viewer={given.viewer.name} /> : null}
+      {drafts.length > 0 ? <div className="mb-5 empty:hidden"><CautionNote hazards={given.cautions} workOrderId={given.head.workOrderId} step="bench session" /></div> : null}
       <ConditionStrip figures={figures} locale={locale} change={change} />
       <div className="fl">
         <div className="fl-l">
