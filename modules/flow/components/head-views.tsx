@@ -1,0 +1,75 @@
+"use client";
+
+import { useState } from "react";
+import { decimal } from "@/modules/kernel/format";
+import { Bay } from "@/modules/ui/bay";
+import { ToggleChip } from "@/modules/ui/chip";
+import { Icon } from "@/modules/ui/icon";
+import { usePlace } from "@/modules/ui/place";
+import type { CoefficientRow } from "../domain/coefficient-rows";
+import { FLOW_FLAGS } from "../domain/flow-flags";
+import type { NoiseRow } from "../domain/noise-rows";
+import type { PortFigures } from "../queries/head-figures";
+import { differenceText, flowText, liftWords } from "./flow-words";
+import { portWords } from "./library-words";
+
+const NOISE_MARK: Readonly<Record<NoiseRow["verdict"], string>> = { larger_than_noise: "●", within_noise: "○", not_assessed: "◌" };
+
+/** Is the change larger than the noise, lift by lift, in words and shape. Without repeats it is not assessed. */
+export function NoiseVerdicts({ port, locale }: { port: Pick<PortFigures, "noise" | "withheld" | "notStated" | "liftUnit">; locale: string }) {
+  if (port.noise === null) return <p className="mid">No change is judged: {port.withheld.join(" ") || "the two tests cannot be compared."}</p>;
+  return (
+    <>
+      <table className="calm">
+        <caption className="sr-only">The change at each lift against the measurement noise</caption>
+        <thead><tr><th scope="col">Lift, {port.liftUnit}</th><th scope="col" className="r">Change, CFM</th><th scope="col" className="r">U, 95 %</th><th scope="col" className="r">Readings</th><th scope="col">Verdict</th></tr></thead>
+        <tbody>{port.noise.map((r) => (
+          <tr key={r.liftUm}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(r.liftUm, port.liftUnit, locale)}</th><td className="r q"><b>{differenceText(r.differenceCfm, locale)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${decimal(r.expandedCfm, 1, locale)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{NOISE_MARK[r.verdict]}</span> {r.words}</td></tr>
+        ))}</tbody>
+      </table>
+      {port.notStated.length > 0 ? <p className="hint p-3">Uncertainty of {port.notStated.join(" and ")} is not stated for this bench and counts as nothing here.</p> : null}
+    </>
+  );
+}
+
+function FlagWords({ row }: { row: CoefficientRow | undefined }) {
+  return row && row.flags.length > 0 ? <span className="sm block"><Icon name="warn" size={12} /> {row.flags.map((f) => FLOW_FLAGS[f]).join(" ")}</span> : null;
+}
+
+/** Discharge coefficient and curtain speed before and after, in metric or inch units. */
+export function HeadViews({ ports }: { ports: readonly PortFigures[] }) {
+  const { locale } = usePlace();
+  const [inch, setInch] = useState(true);
+  const n = (v: number | undefined, digits: number) => (v === undefined ? "—" : decimal(v, digits, locale));
+  const flow = (cfm: number) => (inch ? flowText(cfm, locale) : decimal(cfm * 0.4719474432, 1, locale));
+  return (
+    <>
+      <div className="bar noprint"><ToggleChip on={inch} onChange={() => setInch(true)}>in, CFM, ft/s</ToggleChip><ToggleChip on={!inch} onChange={() => setInch(false)}>mm, L/s, m/s</ToggleChip></div>
+      <div className="two">
+        {ports.map((p) => {
+          const unit = inch ? "in" : "mm";
+          const lifts = [...new Set([...(p.before?.rows ?? []), ...(p.after?.rows ?? [])].map((r) => r.liftUm))].sort((a, b) => a - b);
+          const row = (when: "before" | "after", um: number) => p[when]?.rows.find((r) => r.liftUm === um);
+          const ideal = (p.after ?? p.before);
+          return (
+            <Bay key={`${p.cylinder}${p.side}`} label={`Coefficient and speed, ${portWords(p.cylinder, p.side)}`} flush>
+              {lifts.length === 0 ? <p className="mid p-4">Valve sizes are not recorded, or not all valves were open, so there is no coefficient.</p> : (
+                <div className="lane-x relative"><table className="calm">
+                  <caption className="sr-only">Discharge coefficient on curtain area and mean speed through the curtain</caption>
+                  <thead><tr><th scope="col">Lift, {unit}</th><th scope="col" className="r">L/D</th><th scope="col" className="r">{inch ? "CFM" : "L/s"} before</th><th scope="col" className="r">after</th><th scope="col" className="r">Cd before</th><th scope="col" className="r">after</th><th scope="col" className="r">{inch ? "ft/s" : "m/s"} before</th><th scope="col" className="r">after</th></tr></thead>
+                  <tbody>{lifts.map((um) => {
+                    const [b, a] = [row("before", um), row("after", um)];
+                    const speed = (r: CoefficientRow | undefined) => n(inch ? r?.speedFtS : r?.speedMS, 0);
+                    return <tr key={um}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(um, unit, locale)}</th><td className="r q">{n((a ?? b)?.liftOverDiameter, 3)}</td><td className="r q">{b ? flow(b.flowCfm) : "—"}</td><td className="r q">{a ? flow(a.flowCfm) : "—"}</td><td className="r q">{n(b?.cd, 3)}<FlagWords row={b} /></td><td className="r q"><b>{n(a?.cd, 3)}</b><FlagWords row={a} /></td><td className="r q">{speed(b)}</td><td className="r q">{speed(a)}</td></tr>;
+                  })}</tbody>
+                </table></div>
+              )}
+              <p className="hint p-3">Compressible coefficient on curtain area, {p.valves || "valves unknown"}; dry air at 20 °C and 101.325 kPa; stated at {p.atInH2O} in H₂O{ideal ? `, where air can reach ${n(inch ? ideal.idealFtS : ideal.idealMS, 0)} ${inch ? "ft/s" : "m/s"}` : ""}.</p>
+              <div className="border-t border-line"><NoiseVerdicts port={p} locale={locale} /></div>
+            </Bay>
+          );
+        })}
+      </div>
+    </>
+  );
+}
