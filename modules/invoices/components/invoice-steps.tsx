@@ -29,6 +29,8 @@ export function InvoiceSteps({ view, may }: { view: InvoicePageView; may: { writ
   const isDraft = view.state === "draft";
   const now = isDraft ? 1 : view.openMinor > 0 ? (view.sentAt ? 4 : 3) : 4;
   const [asking, setAsking] = useState(false);
+  const [givingUp, setGivingUp] = useState(false);
+  const [why, setWhy] = useState("");
   const issue = useAct(issueInvoiceAction.bind(null, place.slug), (v: { number: string }) => { setAsking(false); toast({ text: `Invoice ${v.number} issued` }); });
   const send = useAct(sendInvoiceAction.bind(null, place.slug), (v: { to: string }) => toast({ text: `Sent to ${v.to}` }));
   const drop = useAct(dropDraftAction.bind(null, place.slug), () => router.push(`/s/${place.slug}/books?view=draft`));
@@ -103,7 +105,14 @@ export function InvoiceSteps({ view, may }: { view: InvoicePageView; may: { writ
             {!isDraft && view.kind === "invoice" ? (
               <div className="mt-2 flex flex-wrap gap-2">
                 {view.creditHeldMinor > 0 && view.openMinor > 0 && may.write ? <Button variant="lo" pending={credit.pending} onClick={() => void credit.run({ invoiceId: view.id })}>Use credit of {m(Math.min(view.creditHeldMinor, view.openMinor))}</Button> : null}
-                {view.openMinor > 0 && may.writeOff ? <Button variant="lo" pending={writeOff.pending} onClick={() => void writeOff.run({ invoiceId: view.id, reason: "Short payment" })}>Write off {m(view.openMinor)}</Button> : null}
+                {view.openMinor > 0 && may.writeOff ? (
+                  <ConfirmDialog
+                    open={givingUp} onOpenChange={setGivingUp} trigger={<Button variant="lo">Write off</Button>} question={`Write off ${m(view.openMinor)} of ${s.number ?? ""}?`} safe="Keep it open" action="Write it off" pending={writeOff.pending} pendingText="Writing off…"
+                    onAction={() => void writeOff.run({ invoiceId: view.id, reason: why || "Short payment" }).then(() => setGivingUp(false))}
+                  >
+                    <div className="field"><label htmlFor="wo-why">Why nobody will pay it</label><div className="in"><input id="wo-why" value={why} maxLength={240} onChange={(e) => setWhy(e.target.value)} /></div></div>
+                  </ConfirmDialog>
+                ) : null}
                 {may.credit ? <CreditDialog view={view} /> : null}
               </div>
             ) : null}
