@@ -59,14 +59,14 @@ export default async function LinkPage({ params, searchParams }: { params: Promi
   return (
     <main id="main" className="cust">
       <CustomerTop shop={ctx.shop.name} phone={shop.phone} />
-      <CustomerEstimate view={view} token={token} zone={ctx.shop.zone} heading={heading} lead={lead} />
+      <CustomerEstimate view={view} token={token} zone={ctx.shop.zone} heading={heading} lead={lead}>
+        {view.standing === "approved" ? <PayDeposit token={token} justPaid={paid !== undefined} /> : null}
+        {view.standing === "approved" || view.standing === "replaced" || view.standing === "closed" ? <WhereHeadsAre view={view} token={token} /> : null}
+        {seeGain}
+      </CustomerEstimate>
       {view.standing === "open" ? (
-        <AnswerForm token={token} requestId={randomUUID()} documentHash={view.documentHash} words={s.words} mail={shop.email}
-          approveLabel={`Approve ${money(s.totals.totalMinor, s)}`} hint={`${deposit} We call before anything costs more.`} />
+        <AnswerForm token={token} requestId={randomUUID()} documentHash={view.documentHash} words={s.words} mail={shop.email} approveLabel={`Approve ${money(s.totals.totalMinor, s)}`} hint={`${deposit} We call before anything costs more.`} />
       ) : null}
-      {view.standing === "approved" ? <PayDeposit token={token} justPaid={paid !== undefined} /> : null}
-      {view.standing === "approved" || view.standing === "replaced" || view.standing === "closed" ? <WhereHeadsAre view={view} token={token} /> : null}
-      {seeGain}
     </main>
   );
 }

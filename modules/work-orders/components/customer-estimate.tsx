@@ -1,3 +1,4 @@
+import type { ReactNode } from "react";
 import { amount, date, dateTimeZone, hours, money } from "@/modules/kernel/format";
 import { milliText } from "@/modules/kernel/quantity";
 import { Note } from "@/modules/ui/note";
@@ -62,20 +63,21 @@ export function WhereHeadsAre({ view, token }: { view: CustomerView; token: stri
           <Photos token={token} ids={p.photoIds} label={p.family} />
         </div>
       ))}
-      {view.promisedOn ? <p className="mt-3">Promised for <b className="b">{date(view.promisedOn, view.snapshot.locale)}</b>.</p> : null}
+      {view.promisedOn && view.pieces.some((p) => p.station !== null && !p.isProved) ? <p className="mt-3">Promised for <b className="b">{date(view.promisedOn, view.snapshot.locale)}</b>.</p> : null}
     </section>
   );
 }
 
 /** The estimate behind a link: what we would do, what it costs, and what changed. The form that answers stands beside it. */
-export function CustomerEstimate({ view, token, zone, heading, lead }: { view: CustomerView; token: string; zone: string; heading: string; lead: string }) {
+export function CustomerEstimate({ view, token, zone, heading, lead, children }: { view: CustomerView; token: string; zone: string; heading: string; lead: string; /** Stands before the lines: where the heads are, once it is agreed. */ children?: ReactNode }) {
   const { snapshot: s } = view;
   return (
     <>
       <h1>{heading}</h1>
       <p className="lead">{lead}</p>
       {view.answer ? <p className="mt-3 mid">{view.answer.name} {view.answer.answer === "approved" ? "said yes" : "said no"} {dateTimeZone(view.answer.at, { locale: s.locale, zone })}.</p> : null}
-      {s.message ? <p className="mt-4">{s.message}</p> : null}
+      {children}
+      {s.message ? <p className="mt-6">{s.message}</p> : null}
       {view.findings.length > 0 ? (
         <section>
           <h2 className="eng ink">What we found</h2>

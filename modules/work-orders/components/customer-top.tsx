@@ -7,7 +7,7 @@ export function CustomerTop({ shop, phone }: { shop: string; phone: string }) {
     <header className="cust-top">
       <Mark width={34} />
       <b>{shop}</b>
-      {phone ? <a href={`tel:${phone}`} aria-label={`Call ${shop}`}><Icon name="phone" size={22} /></a> : null}
+      {phone ? <a href={`tel:${phone}`} aria-label={`Call ${shop}`}><Icon name="call" size={22} /></a> : null}
     </header>
   );
 }

@@ -19,9 +19,14 @@ const EACH = 8;
 /** Anything of the shop by any scrap: tag, order number, name, telephone tail, casting, serial, family, part. */
 export async function findAnything(ctx: ShopContext, text: string): Promise<FoundAll> {
   mustBeAble(ctx, "orders.see");
-  // A tag's square code holds an address; its last part is what is meant.
-  const asked = /\/t\/([\w-]{3,40})\s*$/.exec(text)?.[1] ?? text;
-  const q = nameKey(asked);
+  // A tag's square code holds the address of its piece.
+  const onTag = /\/orders\/([A-Z]{2,4}-\d{4}-\d{4,9})\/pieces\/(\d{1,2})\s*$/.exec(text);
+  if (onTag) {
+    const [piece] = await inShop(ctx, (tx) => tx.select({ pieceNo: workPieces.pieceNo }).from(workPieces).innerJoin(workOrders, and(eq(workOrders.shopId, workPieces.shopId), eq(workOrders.id, workPieces.workOrderId)))
+      .where(and(eq(workPieces.shopId, ctx.shop.id), eq(workOrders.number, onTag[1] ?? ""), eq(workPieces.pieceNo, Number(onTag[2])))));
+    return { rows: [], exact: piece ? `/s/${ctx.shop.slug}/orders/${onTag[1] ?? ""}/pieces/${piece.pieceNo}` : null };
+  }
+  const q = nameKey(text);
   if (q === "") return { rows: [], exact: null };
   const like = `%${literal(q)}%`;
   const base = `/s/${ctx.shop.slug}`;
@@ -49,7 +54,7 @@ export async function findAnything(ctx: ShopContext, text: string): Promise<Foun
       rows.push({ kind: "order", id: r.id, title: r.number, detail: `${r.customer}${r.closedAt ? ", gone" : r.wants ? `, ${r.wants.slice(0, 60)}` : ""}`, href });
     }
     if (ableTo(ctx, "customers.see")) {
-      for (const c of (await findCustomers({ ...ctx, tx }, { q: asked, limit: EACH })).rows) {
+      for (const c of (await findCustomers({ ...ctx, tx }, { q: text, limit: EACH })).rows) {
         rows.push({ kind: "customer", id: c.id, title: c.name, detail: [c.phone, c.email].filter(Boolean).join(", "), href: `${base}/customers/${c.id}` });
       }
     }

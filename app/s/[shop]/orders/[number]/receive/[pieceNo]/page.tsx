@@ -1,9 +1,10 @@
-import Link from "next/link";
+import { notFound } from "next/navigation";
 import { orNotFound, shopPage } from "@/modules/access/page";
+import { LinkButton } from "@/modules/ui/button";
+import { EmptyState } from "@/modules/ui/empty-state";
 import { PageHead } from "@/modules/ui/page-head";
-import { Note } from "@/modules/ui/note";
 import { ReceiveForm } from "@/modules/work-orders/components/receive-form";
-import { PHOTOS_WANTED } from "@/modules/work-orders/domain/photos-wanted";
+import { shortNumber } from "@/modules/work-orders/domain/short-number";
 import { piecePage } from "@/modules/work-orders/queries/piece";
 
 export const metadata = { title: "Book in" };
@@ -11,14 +12,18 @@ export const metadata = { title: "Book in" };
 export default async function ReceivePage({ params }: { params: Promise<{ shop: string; number: string; pieceNo: string }> }) {
   const ctx = await shopPage(params, "pieces.receive");
   const { number, pieceNo } = await params;
-  const piece = await orNotFound(piecePage(ctx, decodeURIComponent(number), /^\d{1,3}$/.test(pieceNo) ? Number(pieceNo) : 0));
-  const at = `/s/${ctx.shop.slug}/orders/${piece.orderNumber}`;
+  if (!/^\d{1,2}$/.test(pieceNo)) notFound();
+  const piece = await orNotFound(piecePage(ctx, number, Number(pieceNo)));
+  const order = `/s/${ctx.shop.slug}/orders/${piece.orderNumber}`;
   return (
-    <main id="main" className="page max-w-[880px]">
-      <PageHead title="Book in" sub={<><Link className="lk" href={at}>{piece.orderNumber}</Link>{`  ${piece.customer}, ${piece.family}, head ${piece.pieceNo}`}</>} />
-      {piece.bookedInAt
-        ? <Note tone="info" title={`Booked in under tag ${piece.tag ?? ""}.`}><Link className="lk" href={`${at}/pieces/${piece.pieceNo}`}>See the head</Link></Note>
-        : <ReceiveForm sheet={{ pieceId: piece.id, version: piece.version, pieceNo: piece.pieceNo, number: piece.orderNumber, castingNumber: piece.castingNumber, serial: piece.serial, photoIds: piece.photos.map((f) => f.id), photosWanted: PHOTOS_WANTED }} />}
+    <main id="main" className="page">
+      <PageHead
+        number={shortNumber(piece.orderNumber)} numberLabel={`Book in for order ${piece.orderNumber},`} numberSize="m" title={`Book in: ${piece.family}`}
+        sub={`${piece.customer}${piece.siblings.length > 1 ? `, head ${piece.pieceNo} of ${piece.siblings.length}` : ""}${piece.description ? `. ${piece.description}` : ""}`} actions={<LinkButton href={order}>The order</LinkButton>}
+      />
+      {piece.tag ? <EmptyState title={`Booked in under ${piece.tag}`} action={<LinkButton variant="go" href={`${order}/pieces/${piece.pieceNo}`}>Open it</LinkButton>}>A piece is booked in once.</EmptyState>
+        : !piece.isOrderOpen ? <EmptyState title="This order is closed" action={<LinkButton href={`/s/${ctx.shop.slug}/orders/new`}>New work order</LinkButton>}>A piece that comes now belongs on a new one.</EmptyState>
+        : <div className="max-w-[920px]"><ReceiveForm piece={piece} /></div>}
     </main>
   );
 }
