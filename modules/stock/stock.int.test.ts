@@ -9,6 +9,7 @@ import { countStock } from "./commands/count";
 import { issueStock } from "./commands/issue-stock";
 import { addPart, changePart, setKit } from "./commands/parts";
 import { partsAsk } from "./input";
+import { countSheetFor } from "./queries/count-sheet";
 import { findParts } from "./queries/find-parts";
 import { getPart } from "./queries/get-part";
 import { kitLinesOf } from "./queries/kits";
@@ -204,5 +205,17 @@ describe("reversing", () => {
 
   it("leaves shelf and journal equal", async () => {
     expect(await account("1200")).toEqual(await behindTheCurtain(`select coalesce(sum(value_minor), 0) from stock_balances where shop_id = '${a.shop.id}'`));
+  });
+});
+
+describe("the count sheet", () => {
+  it("lists a shelf or a part, lot by lot, with nothing on it to lean on", async () => {
+    const shelf = await countSheetFor(a.as("rcv"), { bin: "A 4" });
+    expect(shelf.lines.map((l) => [l.sku, l.lotCode])).toEqual([["GV-S250", null]]);
+    expect(shelf.bins).toContain("F 1");
+    expect((await countSheetFor(a.as("rcv"), { part: "EP-04" })).lines.map((l) => l.lotCode)).toEqual(["E-2602", "E-2604"]);
+    expect(JSON.stringify(shelf)).not.toMatch(/onHand|expected/i);
+    expect((await countSheetFor(b.as("owner"), { bin: "A 4" })).lines).toEqual([]);
+    await expect(countSheetFor(a.as("tech"), { bin: "A 4" })).rejects.toThrow(NotFound);
   });
 });

@@ -29,7 +29,7 @@ export function ReceiveForm({ order }: { order: OrderDetail }) {
   const toast = useToast();
   const open = order.lines.filter((l) => l.openMilli > 0);
   const form = useCommandForm({
-    schema: receiveInput, draft: `take-in-${order.id}`,
+    schema: receiveInput, draft: `take-in-${order.id}-${order.version}`,
     defaultValues: { purchaseOrderId: order.id, freight: "", deliveryNote: "", lines: open.map((l) => ({ lineId: l.id, came: "", lotCode: "", expiresOn: "", over: "" as const })) },
     action: (sent) => receiveGoodsAction(slug, sent),
     onDone: (v) => { toast({ text: `Taken in as ${v.number}${v.surplus.length ? `. ${v.surplus.join(", ")}` : ""}` }); router.refresh(); },

@@ -21,7 +21,7 @@ export function CountSheet({ lines, now }: { lines: readonly CountLine[]; now: s
   const router = useRouter();
   const toast = useToast();
   const form = useCommandForm({
-    schema: countInput, draft: "count-sheet",
+    schema: countInput,
     defaultValues: { countedAt: now, cause: "routine count", note: "", lines: lines.map((l) => ({ partId: l.partId, lotId: l.lotId, counted: "" })) },
     action: (sent) => countStockAction(slug, sent),
     onDone: (v) => {

@@ -44,7 +44,7 @@ export function LedgerTable({ partId, stockUnit, first, seesCost, act }: { partI
     <>
       <DataTable
         caption="Ledger of this part" columns={columns} rows={rows} rowKey={(r) => r.id}
-        compact={(r) => <span className="row2"><span className="mid">{shortDate(localDate(new Date(r.at), place.zone), place.locale)}</span><span>{wordsOf(r)}</span><b className="q at-r">{signedQtyText(r.qtyMilli, stockUnit)}</b><span className="l2 mid sm">{r.personName ?? ""}</span><span className="q at-r mid">{qtyText(r.afterMilli, stockUnit)}</span></span>}
+        compact={(r) => <span className="row2" style={{ gridTemplateColumns: "auto 1fr auto" }}><span className="mid nw">{shortDate(localDate(new Date(r.at), place.zone), place.locale)}</span><span>{wordsOf(r)}</span><b className="q at-r">{signedQtyText(r.qtyMilli, stockUnit)}</b><span className="l2 mid sm">{r.personName ?? ""}</span><span className="q at-r mid">{qtyText(r.afterMilli, stockUnit)}</span></span>}
         empty={<EmptyState title="Nothing moved yet" level={3}>Rows come with opening stock, taking in, issuing and counting.</EmptyState>}
       />
       {query.isError ? <Note tone="stop" live>Older rows could not be fetched. Try again.</Note> : null}
