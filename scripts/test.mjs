@@ -107,6 +107,8 @@ async function journeys(chromium) {
   fs.rmSync(file, { force: true });
   const { ok } = await execute([bin("@playwright/test/cli.js"), "test"], {
     env: {
+      // The journeys found their shops through the product's own commands, as the seed does.
+      ...product.ownerEnv,
       E2E_CHROMIUM: chromium, E2E_BASE_URL: product.addresses.app, E2E_INBOX_URL: product.addresses.inbox, E2E_PAY_URL: product.addresses.payments,
       E2E_CLOCK_FILE: product.clockFile, E2E_OWNER_URL: product.ownerEnv.VK_OWNER_URL, E2E_PIN_PEPPER: product.env.VK_PIN_PEPPER,
       E2E_SIGN_INS_FILE: product.env.VK_SIGN_INS_FILE, E2E_REPORT: file,

@@ -73,3 +73,10 @@ export async function finish(page: Page): Promise<void> {
   await page.keyboard.press("Enter");
   await expect(page.getByText(/Before test finished|Before and after are finished/)).toBeVisible();
 }
+
+/** Issues the report of the gain. */
+export async function issueReport(page: Page): Promise<void> {
+  await tabTo(page, "Issue report", "button", 200);
+  await page.keyboard.press("Enter");
+  await expect(page.getByRole("link", { name: /^Report \d+/ })).toBeVisible();
+}

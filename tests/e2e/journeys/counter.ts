@@ -1,5 +1,5 @@
 import { expect, type Page } from "@playwright/test";
-import { HERO_LABOR, HERO_SHELF } from "@/seed/facts/hero";
+import { HERO_FOUND_LABOR, HERO_FOUND_SHELF, HERO_LABOR, HERO_SHELF } from "@/seed/facts/hero";
 import { choose, type Crew } from "../support/crew";
 
 /** A call: the customer is added and the order opened on one page. Returns its number. */
@@ -55,4 +55,16 @@ export async function sendEstimate(crew: Crew): Promise<void> {
   await expect(dialog.getByLabel("E-mail")).toHaveValue("odalys@brennan.example");
   await dialog.getByRole("button", { name: "Send it" }).click();
   await page.waitForURL(/\/orders\/WO-[\d-]+$/);
+}
+
+/** Turns what was found into the next version: two guides with their work and two valves on top of what stands. Ends on the builder. */
+export async function priceFinding(crew: Crew, order: string): Promise<string> {
+  const page = await crew.as("Tobias");
+  await page.goto(crew.at(`/orders/${order}`));
+  await page.getByRole("button", { name: "Ask customer" }).click();
+  await page.waitForURL(/\/estimate$/);
+  for (const [code, qty] of [...HERO_FOUND_LABOR, ...HERO_FOUND_SHELF]) await addLine(page, code, qty);
+  await page.getByLabel("To the customer").fill("Two exhaust guides and two exhaust valves on top of what you agreed. The rest goes on meanwhile.");
+  await expect(page.getByRole("status").filter({ hasText: /^Saved/ })).toBeVisible();
+  return sums(page);
 }

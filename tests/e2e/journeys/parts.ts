@@ -68,3 +68,17 @@ export async function partFigures(crew: Crew, sku: string): Promise<string> {
   await page.goto(crew.at(`/parts/${sku}`));
   return (await page.getByRole("main").innerText()).replace(/\s+/g, " ");
 }
+
+/** The purchase order as its page shows it. */
+export async function orderFigures(crew: Crew, number: string): Promise<string> {
+  const page = await crew.as("Ilse");
+  await page.goto(crew.at(`/purchases/${number}`));
+  return (await page.getByRole("main").innerText()).replace(/\s+/g, " ");
+}
+
+/** Parts in work at cost, on the order's page. */
+export async function costInWork(crew: Crew, order: string): Promise<string> {
+  const page = await crew.as("Ilse");
+  await page.goto(crew.at(`/orders/${order}`));
+  return (await page.getByText(/^Parts in work at cost/).innerText()).trim();
+}

@@ -53,7 +53,7 @@ async function unlock(tablet: Page, shortName: string, by: "badge" | "pin"): Pro
 }
 
 const lock = async (tablet: Page): Promise<void> => {
-  await tablet.getByRole("button", { name: "Lock" }).click();
+  await tablet.getByRole("button", { name: "Lock", exact: true }).click();
   await expect(tablet.getByRole("heading", { name: "Who is working?" })).toBeVisible();
 };
 
@@ -92,4 +92,19 @@ export async function switchTo(tablet: Page, local: string, who: string, code: s
   await unlock(tablet, who, "badge");
   await begin(tablet, code);
   await lock(tablet);
+}
+
+/** Epoxy in the intake floor: grams, ratio, when it was mixed and the cure of its data sheet. Returns what was kept, in words. */
+export async function recordEpoxy(crew: Crew, order: string): Promise<string> {
+  const page = await crew.as("Anselm");
+  await page.goto(crew.at(`/orders/${order}/epoxy/1`));
+  await page.getByLabel("Operation").selectOption({ label: OPERATION.EPX ?? "" });
+  await page.getByLabel("In the port").fill("38");
+  await page.getByLabel("Left in the pot").fill("4");
+  await page.getByLabel("Ratio, resin to hardener").fill("100:20");
+  await page.getByLabel("Cure of the data sheet").fill("24");
+  await page.getByLabel("Mixed at").fill("2026-03-07T11:30");
+  await page.getByLabel("Surface cleaned and keyed as the data sheet says").check();
+  await page.getByRole("button", { name: "Keep the fill, 42 g" }).click();
+  return await page.getByText(/^Epoxy kept: /).innerText();
 }

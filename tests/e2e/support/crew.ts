@@ -45,12 +45,13 @@ export class Crew {
 
   /** The page of somebody with a sign-in, by short name. */
   async as(shortName: string, size: { width: number; height: number } = DESK): Promise<Page> {
-    const known = this.pages.get(shortName);
+    const key = `${shortName} ${size.width}`;
+    const known = this.pages.get(key);
     if (known) return known;
     const page = await this.device(size);
     await signIn(page, `${shortName.toLowerCase()}@${this.slug}.example`);
     await expect(page).toHaveURL(new RegExp(`/s/${this.slug}$`));
-    this.pages.set(shortName, page);
+    this.pages.set(key, page);
     return page;
   }
 
@@ -71,9 +72,4 @@ export async function signIn(page: Page, email: string, password: string = DEMO_
 export async function choose(page: Page, label: string | RegExp, typed: string, option: string | RegExp): Promise<void> {
   await page.getByRole("combobox", { name: label }).fill(typed);
   await page.getByRole("option", { name: option }).first().click();
-}
-
-/** The column of sums that ends in the total: name and amount, as shown. */
-export async function sumsIn(page: Page, bay: string | RegExp): Promise<string> {
-  return (await page.getByRole("region", { name: bay }).innerText()).replace(/\s+/g, " ");
 }

@@ -1,5 +1,7 @@
-import { foundForJourneys } from "./found";
+import { foundForJourneys, foundWithWork } from "./found";
 
 /** Prints what it founded, for the journey that asked. */
-console.log(`FOUNDED ${JSON.stringify(await foundForJourneys(process.env.VK_OWNER_URL ?? "", process.env.VK_PIN_PEPPER ?? "", process.argv[2] ?? ""))}`);
+const [, , slug = "", kind = "empty"] = process.argv;
+const found = kind === "work" ? foundWithWork : foundForJourneys;
+console.log(`FOUNDED ${JSON.stringify(await found(process.env.VK_OWNER_URL ?? "", process.env.VK_PIN_PEPPER ?? "", slug))}`);
 process.exit(0);

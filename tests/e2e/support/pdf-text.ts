@@ -1,7 +1,7 @@
 import { inflateSync } from "node:zlib";
 
 /**
- * The words of a PDF that pdfmake made, page by page in drawing order, without another program. Fonts are embedded with
+ * The words of a PDF that pdfmake made, page by page in drawing order on one line, without another program. Fonts are embedded with
  * their own glyph numbers; the map of each font back to characters (its ToUnicode table, ISO 32000-1, 9.10.3) is read.
  */
 export function textOfPdf(file: Buffer): string {
@@ -21,7 +21,7 @@ export function textOfPdf(file: Buffer): string {
     const contents = /\/Contents (\d+) 0 R/.exec(body);
     if (contents) text.push(drawn(streamOf(Number(contents[1])), fontOf));
   }
-  return text.join("\n").replace(/[ \u00a0]+/g, " ");
+  return text.join("\n").replace(/\s+/g, " ");
 }
 
 function objectsOf(raw: string): Map<number, string> {

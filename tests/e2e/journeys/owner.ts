@@ -1,0 +1,17 @@
+import type { Crew } from "../support/crew";
+
+/** The floor as the owner sees it. */
+export async function floor(crew: Crew): Promise<string> {
+  const page = await crew.as("Marit");
+  await page.goto(crew.at(""));
+  return (await page.getByRole("main").innerText()).replace(/\s+/g, " ");
+}
+
+/** Profit of a job with every part opened. */
+export async function profit(crew: Crew, order: string): Promise<string> {
+  const page = await crew.as("Marit");
+  await page.goto(crew.at(`/orders/${order}`));
+  const bay = page.getByRole("region", { name: "Profit of this job" });
+  for (const part of await bay.locator("summary").all()) await part.click();
+  return (await bay.innerText()).replace(/\s+/g, " ");
+}
