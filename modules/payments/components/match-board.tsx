@@ -87,7 +87,7 @@ export function MatchBoard({ board }: { board: Board }) {
               <label><input type="radio" name="rest" checked={rest === "leave"} onChange={() => setRest("leave")} />Leave {money(-difference, place)} open</label>
               <label><input type="radio" name="rest" checked={rest === "write-off"} onChange={() => setRest("write-off")} disabled={chosen.length > 1} />Write off {money(-difference, place)}{-difference > board.writeOffLimitMinor ? " (owner)" : ""}</label>
             </>
-          ) : first?.kind === "invoice" && difference > 0 ? <span><b>{money(difference, place)} over:</b> it becomes the customer’s credit.</span> : null}
+          ) : first?.kind === "invoice" && difference > 0 ? <span><b>{money(difference, place)} over:</b> it becomes the customer’s credit.</span> : first ? <span><b>{chosen.map((t) => t.label).join(", ")}</b>, {a(line.amountMinor)}: {first.kind === "invoice" ? "pays it in full" : first.kind === "payout" ? "the parts come to it" : "booked before, this only ties it"}</span> : null}
           {first ? null : (
             <label>Book to <select value={account} onChange={(e) => setAccount(e.target.value)} className="in"><option value="">choose an account</option>{FREE_ACCOUNTS.map((x) => <option key={x.code} value={x.code}>{x.code} {x.name}</option>)}</select></label>
           )}
@@ -97,7 +97,7 @@ export function MatchBoard({ board }: { board: Board }) {
       ) : line ? <div className="jb-lock"><span>{line.lockedTo}</span><Button className="ms-auto" pending={unlock.pending} pendingText="Unlocking…" keycap="Backspace" onClick={doUnlock}>Unlock</Button></div> : null}
       {lock.trouble ?? unlock.trouble ? <Note tone="stop" live className="mt-3">{(lock.trouble ?? unlock.trouble)?.text}</Note> : null}
       {first?.kind === "payout" ? <PayoutParts payout={first} invoices={board.targets.filter((t) => t.kind === "invoice")} /> : null}
-      <KeyHints hints={[{ keys: ["↑", "↓"], does: "line" }, { keys: ["→"], does: "pick" }, { keys: ["Enter"], does: "lock" }, { keys: ["Backspace"], does: "unlock" }]} />
+      <div className="mt-3"><KeyHints hints={[{ keys: ["↑", "↓"], does: "line" }, { keys: ["→"], does: "pick" }, { keys: ["Enter"], does: "lock" }, { keys: ["Backspace"], does: "unlock" }]} /></div>
       {free.length ? (
         <section className="mt-6" aria-label="Everything open">
           <h2 className="section-h">Everything else that is open</h2>
