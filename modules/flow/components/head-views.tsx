@@ -4,7 +4,6 @@ import { useState } from "react";
 import { decimal } from "@/modules/kernel/format";
 import { Bay } from "@/modules/ui/bay";
 import { ToggleChip } from "@/modules/ui/chip";
-import { Icon } from "@/modules/ui/icon";
 import { usePlace } from "@/modules/ui/place";
 import type { CoefficientRow } from "../domain/coefficient-rows";
 import { FLOW_FLAGS } from "../domain/flow-flags";
@@ -24,7 +23,7 @@ export function NoiseVerdicts({ port, locale }: { port: Pick<PortFigures, "noise
         <caption className="sr-only">The change at each lift against the measurement noise</caption>
         <thead><tr><th scope="col">Lift, {port.liftUnit}</th><th scope="col" className="r">Change, CFM</th><th scope="col" className="r">U, 95 %</th><th scope="col" className="r">Readings</th><th scope="col">Verdict</th></tr></thead>
         <tbody>{port.noise.map((r) => (
-          <tr key={r.liftUm}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(r.liftUm, port.liftUnit, locale)}</th><td className="r q"><b>{differenceText(r.differenceCfm, locale)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${decimal(r.expandedCfm, 1, locale)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{NOISE_MARK[r.verdict]}</span> {r.words}</td></tr>
+          <tr key={r.liftUm}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{liftWords(r.liftUm, port.liftUnit, locale)}</th><td className="r q"><b>{differenceText(r.differenceCfm, locale)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${decimal(r.expandedCfm, 1, locale)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{NOISE_MARK[r.verdict]}</span> {r.words}</td></tr>
         ))}</tbody>
       </table>
       {port.notStated.length > 0 ? <p className="hint p-3">Uncertainty of {port.notStated.join(" and ")} is not stated for this bench and counts as nothing here.</p> : null}
@@ -32,8 +31,9 @@ export function NoiseVerdicts({ port, locale }: { port: Pick<PortFigures, "noise
   );
 }
 
-function FlagWords({ row }: { row: CoefficientRow | undefined }) {
-  return row && row.flags.length > 0 ? <span className="sm block"><Icon name="warn" size={12} /> {row.flags.map((f) => FLOW_FLAGS[f]).join(" ")}</span> : null;
+/** A triangle beside a doubtful figure; its words stand under the table. */
+function FlagMark({ row }: { row: CoefficientRow | undefined }) {
+  return row && row.flags.length > 0 ? <span className="nw" title={row.flags.map((f) => FLOW_FLAGS[f]).join(" ")}>▲<span className="sr-only"> {row.flags.map((f) => FLOW_FLAGS[f]).join(" ")}</span> </span> : null;
 }
 
 /** Discharge coefficient and curtain speed before and after, in metric or inch units. */
@@ -45,7 +45,7 @@ export function HeadViews({ ports }: { ports: readonly PortFigures[] }) {
   return (
     <>
       <div className="bar noprint"><ToggleChip on={inch} onChange={() => setInch(true)}>in, CFM, ft/s</ToggleChip><ToggleChip on={!inch} onChange={() => setInch(false)}>mm, L/s, m/s</ToggleChip></div>
-      <div className="two">
+      <div className="two mt-4">
         {ports.map((p) => {
           const unit = inch ? "in" : "mm";
           const lifts = [...new Set([...(p.before?.rows ?? []), ...(p.after?.rows ?? [])].map((r) => r.liftUm))].sort((a, b) => a - b);
@@ -60,10 +60,11 @@ export function HeadViews({ ports }: { ports: readonly PortFigures[] }) {
                   <tbody>{lifts.map((um) => {
                     const [b, a] = [row("before", um), row("after", um)];
                     const speed = (r: CoefficientRow | undefined) => n(inch ? r?.speedFtS : r?.speedMS, 0);
-                    return <tr key={um}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(um, unit, locale)}</th><td className="r q">{n((a ?? b)?.liftOverDiameter, 3)}</td><td className="r q">{b ? flow(b.flowCfm) : "—"}</td><td className="r q">{a ? flow(a.flowCfm) : "—"}</td><td className="r q">{n(b?.cd, 3)}<FlagWords row={b} /></td><td className="r q"><b>{n(a?.cd, 3)}</b><FlagWords row={a} /></td><td className="r q">{speed(b)}</td><td className="r q">{speed(a)}</td></tr>;
+                    return <tr key={um}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{liftWords(um, unit, locale)}</th><td className="r q">{n((a ?? b)?.liftOverDiameter, 3)}</td><td className="r q">{b ? flow(b.flowCfm) : "—"}</td><td className="r q">{a ? flow(a.flowCfm) : "—"}</td><td className="r q"><FlagMark row={b} />{n(b?.cd, 3)}</td><td className="r q"><FlagMark row={a} /><b>{n(a?.cd, 3)}</b></td><td className="r q">{speed(b)}</td><td className="r q">{speed(a)}</td></tr>;
                   })}</tbody>
                 </table></div>
               )}
+              {[...new Set([...(p.before?.rows ?? []), ...(p.after?.rows ?? [])].flatMap((r) => r.flags))].map((f) => <p key={f} className="sm px-3 pt-3"><b>▲</b> {FLOW_FLAGS[f]}</p>)}
               <p className="hint p-3">Compressible coefficient on curtain area, {p.valves || "valves unknown"}; dry air at 20 °C and 101.325 kPa; stated at {p.atInH2O} in H₂O{ideal ? `, where air can reach ${n(inch ? ideal.idealFtS : ideal.idealMS, 0)} ${inch ? "ft/s" : "m/s"}` : ""}.</p>
               <div className="border-t border-line"><NoiseVerdicts port={p} locale={locale} /></div>
             </Bay>

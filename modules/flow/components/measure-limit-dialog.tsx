@@ -1,7 +1,6 @@
 "use client";
 
 import { useRouter } from "next/navigation";
-import { Button } from "@/modules/ui/button";
 import { TaskDialog } from "@/modules/ui/dialog";
 import { CommandForm } from "@/modules/ui/form/command-form";
 import { SelectInput } from "@/modules/ui/form/select-input";
@@ -26,7 +25,7 @@ export function MeasureLimitDialog({ family, kind, label, side, units, limit }: 
     onDone: () => { toast({ text: "Limit kept" }); router.refresh(); },
   });
   return (
-    <TaskDialog trigger={<Button size="sm" variant="lo" aria-label={`${limit ? "Change" : "Set"} limit for ${label}${side ? `, ${side}` : ""}`}>{limit ? "Change" : "Set"}</Button>} title={`Limit: ${label}${side ? `, ${side}` : ""}`} description={`For every head of ${family}. Nothing is built in: take it from the service manual.`}>
+    <TaskDialog trigger={<button type="button" className="lk" aria-label={`${limit ? "Change" : "Set"} limit for ${label}${side ? `, ${side}` : ""}`}>{limit ? "Change" : "Set"}{limit === null && side ? (side === "intake" ? " in" : " ex") : ""}</button>} title={`Limit: ${label}${side ? `, ${side}` : ""}`} description={`For every head of ${family}. Nothing is built in: take it from the service manual.`}>
       <CommandForm form={form} toFix="before the limit is kept">
         <div className="fields">
           <TextInput name="min" label="Least" inputMode="decimal" alignEnd optional />

@@ -1,6 +1,6 @@
 "use client";
 
-import { useState } from "react";
+import { useState, useSyncExternalStore } from "react";
 import { dateTime, decimal } from "@/modules/kernel/format";
 import { Bay, Bays } from "@/modules/ui/bay";
 import { Button, LinkButton } from "@/modules/ui/button";
@@ -21,10 +21,14 @@ const GROUPS = Object.keys(GROUP_WORDS) as MeasureGroup[];
 const FIGURES_OF: Readonly<Record<MeasureGroup, RegExp>> = { springs: /Coil|Rate|load/, lash: /Shim to fit|Lash/, clearances: /piston|Retainer/, seats: /Seat (width|offset)|Vacuum/, guides: /Stem/, chamber: /Chamber|Compression/, deck: /Deck/ };
 interface Column { place: LinePlace; head: string; liftMm: number | null }
 
+const never = () => () => undefined;
+
 /** The measurements of one head, by port and place, before and after. Every line is kept as it is left. */
 export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
   const place = usePlace();
   const { slug, locale } = place;
+  // Until the page answers to keys nothing can be typed that it would not know of.
+  const ready = useSyncExternalStore(never, () => true, () => false);
   const [stage, setStage] = useState<Stage>("before");
   const [cylinder, setCylinder] = useState(1);
   const [inch, setInch] = useState(false);
@@ -80,22 +84,21 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
 
   const dialog = (key: string, label: string, dimension: keyof typeof UNITS_OF, scope: MeasureKind["scope"]) => {
     const sides = scope === "valve" ? (["intake", "exhaust"] as const).filter((s) => sheet.valves.some((v) => v.side === s)) : ([""] as const);
-    return sides.map((side) => {
-      const limit = limitFor(key, side);
-      return (
-        <div key={side} className="sm nw">
-          {side ? <span className="dim">{side === "intake" ? "in " : "ex "}</span> : null}
-          {limit ? <>{[limit.minText, limit.maxText].filter(Boolean).join(" to ")} {limit.unit}, <span className="dim">{limit.source}</span></> : <span className="dim">defer to the service manual</span>}
-          {sheet.canSetUp ? <> <MeasureLimitDialog key={limit?.version ?? 0} family={head.family} kind={key} label={label} side={side} units={UNITS_OF[dimension]} limit={limit?.side === side ? limit : null} /></> : null}
-        </div>
-      );
-    });
+    const set = (side: "" | "intake" | "exhaust", limit: LimitView | null) => (sheet.canSetUp ? <> <MeasureLimitDialog key={`${side}${limit?.version ?? 0}`} family={head.family} kind={key} label={label} side={side} units={UNITS_OF[dimension]} limit={limit} /></> : null);
+    const stated = sides.flatMap((side) => { const limit = limitFor(key, side); return limit ? [{ side, limit }] : []; });
+    const open = sides.filter((side) => !stated.some((x) => x.side === side));
+    return (
+      <>
+        {stated.map(({ side, limit }) => <div key={side} className="sm">{side ? <span className="dim">{side === "intake" ? "in " : "ex "}</span> : null}<span className="nw">{[limit.minText, limit.maxText].filter(Boolean).join(" to ")} {limit.unit}</span>, <span className="dim">{limit.source}</span>{set(side, limit.side === side ? limit : null)}</div>)}
+        {open.length === 0 ? null : <div className="sm"><span className="dim">defer to the service manual</span>{open.map((side) => <span key={side} className="nw">{set(side, null)}</span>)}</div>}
+      </>
+    );
   };
   const keysOf = (g: (typeof groups)[number]) => g.rows.flatMap((r) => r.cells.map(({ c, key }) => ({ key, stage, place: c.place, kind: r.kind.key, unit: unitOf(r.kind.key) })));
 
   return (
     <>
-      <div className="bar noprint">
+      <div className="bar noprint mb-4">
         <ToggleChip on={stage === "before"} onChange={() => setStage("before")}>Before work</ToggleChip>
         <ToggleChip on={stage === "after"} onChange={() => setStage("after")}>After work</ToggleChip>
         {head.cylinders > 1 ? Array.from({ length: head.cylinders }, (_, i) => <ToggleChip key={i} on={cylinder === i + 1} onChange={() => setCylinder(i + 1)}>{`Cylinder ${i + 1}`}</ToggleChip>) : null}
@@ -118,7 +121,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
                       <th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{kind.label}</th>
                       {cells.map(({ c, key, verdict }, i) => (
                         <td key={key} className="py-1 align-top"><MeasureCell
-                          id={`${g.scope}-${i}|${key}`} label={`${kind.label}, ${placeWords(c)}`} entry={entries.get(key)} unit={unitOf(kind.key)} verdict={verdict} mayWrite={sheet.canRecord}
+                          id={`${g.scope}-${i}|${key}`} label={`${kind.label}, ${placeWords(c)}`} entry={entries.get(key)} unit={unitOf(kind.key)} verdict={verdict} mayWrite={sheet.canRecord && ready}
                           onType={(text) => type(key, text)} onLeave={() => void send([{ key, stage, place: c.place, kind: kind.key, unit: unitOf(kind.key) }])} onKeep={() => void send([{ key, stage, place: c.place, kind: kind.key, unit: unitOf(kind.key) }], true)} /></td>
                       ))}
                       <td>{dialog(kind.key, kind.label, kind.dimension, g.scope)}</td>
