@@ -180,9 +180,10 @@ async function drill({ commands, kills, seed, fromSources }) {
     })).finally(() => { over = true; });
 
     const done = [];
-    // Moments of the kills, spread over the commands by chance.
-    const moments = Array.from({ length: kills }, () => commands - Math.floor(commands * (0.04 + 0.92 * chance.next()))).sort((a, b) => b - a);
-    const kinds = Array.from({ length: kills }, (_, i) => KINDS[(i + chance.below(2)) % KINDS.length]);
+    // Moments of the kills: one by chance in each stretch of the commands.
+    const moments = Array.from({ length: kills }, (_, i) => commands - Math.floor((commands * 0.96 * (i + chance.next())) / kills));
+    const first = chance.below(KINDS.length);
+    const kinds = Array.from({ length: kills }, (_, i) => KINDS[(first + i) % KINDS.length]);
     for (const [i, left] of moments.entries()) {
       while (!over && budget.left > left) await sleep(5);
       if (over) break;
@@ -222,6 +223,7 @@ function report({ figures: f, faults, seconds, seed, done, seen }) {
   console.log(`  seed                         ${seed}`);
   console.log(`  commands sent                ${f.sent} in ${seconds.toFixed(0)} s, ${f.repeats} sent again under their key`);
   console.log(`  writes acknowledged          ${f.acknowledged}`);
+  for (const [command, n] of Object.entries(f.byCommand)) console.log(`    ${command.padEnd(27)}${n}`);
   console.log(`  refused, as they must be     ${f.refused}`);
   console.log(`  never answered               ${f.unknown}`);
   console.log(`  LOST                         ${f.lost}`);

@@ -38,7 +38,7 @@ export function nextAct(client) {
     case "change customer": {
       const c = chance.pick(known.customers);
       if (!c) break;
-      return act(kind, "customers.change", `${api}/customers/change`, { id: c.id, version: c.version, name: `Changed ${key}`, phone: "5550100" }, { learn: (r) => { c.version = r.version; } });
+      return act(kind, "customers.change", `${api}/customers/change`, { id: c.id, version: c.version, name: `Changed ${key}`, email: c.email }, { learn: (r) => { c.version = r.version; } });
     }
     case "open order":
       return act(kind, "orders.open", `${api}/orders/open`, { newCustomer: { name: `Caller ${key}`, phone: "5550101" }, pieces: [{ family: "S250-4V" }, { family: "S450-4V" }], use: "road", wants: key }, { by: "counter", learn: (r) => known.orders.push(r.id) });
@@ -89,5 +89,6 @@ export function nextAct(client) {
       return act(kind, "stock.opening", `${api}/parts/opening`, { partId: chance.pick(shop.parts), qty: "1", value: "1.00", reason: key }, { by: "counter", expected: "refused" });
     default:
   }
-  return act("add customer", "customers.add", `${api}/customers`, { name: `Customer ${key}`, email: `c-${key}@drill.example` }, { by: chance.pick(["owner", "counter", "bookkeeper"]), learn: (r) => known.customers.push({ id: r.id, version: 1 }) });
+  const email = `c-${key}@drill.example`;
+  return act("add customer", "customers.add", `${api}/customers`, { name: `Customer ${key}`, email }, { by: chance.pick(["owner", "counter", "bookkeeper"]), learn: (r) => known.customers.push({ id: r.id, version: 1, email }) });
 }

@@ -7,7 +7,7 @@ import { readJournal, verdictOf } from "./journal.mjs";
 
 /** How often the effect of an act stands in the database, by the act's own key. */
 const EFFECT = {
-  "customers.add": "select substring(name from '[0-9a-f-]{36}$') as key from customers where name like 'Customer %'",
+  "customers.add": "select substring(email from '^c-([0-9a-f-]{36})@') as key from customers where email like 'c-%@drill.example'",
   "orders.open": "select wants as key from work_orders where wants ~ '^[0-9a-f-]{36}$'",
   "stock.opening": "select reason as key from stock_movements where kind = 'opening' and reason ~ '^[0-9a-f-]{36}$'",
   "stock.count": "select substring(reason from '[0-9a-f-]{36}$') as key from stock_movements where kind = 'count difference'",
@@ -114,7 +114,7 @@ export async function check(o) {
     figures: {
       sent: acts.length, acknowledged: tally("acknowledged"), refused: tally("refused"), unknown: tally("unknown"), lost: new Set(lost.map((l) => l.key)).size, doubled: new Set(doubled.map((d) => d.key)).size,
       repeats: total(acts, (a) => Math.max(0, a.outcomes.length - 1)), mails: mails.length, mailsTwice: total([...arrived.values()], (n) => n - 1), trail: total(await o.ask("select count(*)::int as n from audit_log"), (r) => r.n),
-      brokenInvariants: broken.length,
+      brokenInvariants: broken.length, byCommand: Object.fromEntries([...countBy(acts.filter((a) => a.verdict === "acknowledged").map((a) => ({ key: a.command })))].sort()),
     },
     faults,
   };
