@@ -38,14 +38,13 @@ const percentile = (sorted, p) => sorted[Math.min(sorted.length - 1, Math.floor(
 
 /** Counts what the clients hear while it happens. */
 function ears() {
-  const seen = { statuses: new Map(), latest: [], slow: 0, wrong: [], firstGoodAfter: [] };
+  const seen = { statuses: new Map(), latest: [], slow: 0, firstGoodAfter: [] };
   let waitingSince = null;
   return {
     seen,
     killed: () => { waitingSince ??= Date.now(); },
-    heard({ act, outcome, passedWrongly }) {
+    heard(outcome) {
       seen.statuses.set(outcome.status, (seen.statuses.get(outcome.status) ?? 0) + 1);
-      if (passedWrongly) seen.wrong.push(act.key);
       if (outcome.status >= 200 && outcome.status < 300) {
         seen.latest.push(outcome.ms);
         if (waitingSince !== null) {

@@ -1,6 +1,9 @@
 /** The mix of commands. Each act is made from what the client knows so far; its answer teaches it more. */
 import { randomUUID } from "node:crypto";
 
+/** Acts that must not pass, whatever is killed meanwhile. */
+export const MUST_FAIL = ["wrong input", "foreign id", "wrong role", "stale edit"];
+
 /** Lets a client act at the tablet: its door and bench as it believes them to be. */
 const nextPress = (state, chance) => {
   if (state.door === "out") return "doorIn";
@@ -23,7 +26,7 @@ const COMMAND_OF_PRESS = {
 
 /**
  * @param client `{ shop, n, chance, known }`: facts of the shop from prepare.ts, the client's number, what it learned
- * @returns `{ key, kind, command, path, body, by, expected, learn }`; `expected: "refused"` for acts that must not pass
+ * @returns `{ key, kind, command, path, body, by, learn }`; acts of the kinds in `MUST_FAIL` must be refused
  */
 export function nextAct(client) {
   const { shop, n, chance, known } = client;
@@ -32,7 +35,7 @@ export function nextAct(client) {
   const act = (kind, command, path, body, more = {}) => ({ key, kind, command, path, body, shop: shop.id, by: "owner", learn: () => {}, ...more });
   const kind = chance.weighted([
     [14, "add customer"], [8, "change customer"], [10, "open order"], [8, "need part"], [12, "issue part"], [7, "count"], [5, "opening"], [6, "draft purchase"], [6, "send purchase"], [6, "receive"],
-    [10, "payment"], [12, "reading"], [16, "press"], [3, "wrong input"], [3, "foreign id"], [2, "wrong role"],
+    [10, "payment"], [12, "reading"], [16, "press"], [3, "wrong input"], [3, "foreign id"], [2, "wrong role"], [3, "stale edit"],
   ]);
   switch (kind) {
     case "change customer": {
@@ -81,12 +84,17 @@ export function nextAct(client) {
       if (press === "switchTo" || !known.operation && press === "startOperation") break;
       return act(`press ${press}`, COMMAND_OF_PRESS[press], "/api/v1/clock/punches", { press, input }, { by: "tablet", learn: () => Object.assign(known.clock, AFTER[press]) });
     }
+    case "stale edit": {
+      const c = chance.pick(known.customers.filter((x) => x.version > 1));
+      if (!c) break;
+      return act(kind, "customers.change", `${api}/customers/change`, { id: c.id, version: c.version - 1, name: `Stale ${key}`, email: c.email });
+    }
     case "wrong input":
-      return act(kind, "customers.add", `${api}/customers`, { name: "", phone: "1", note: key }, { expected: "refused" });
+      return act(kind, "customers.add", `${api}/customers`, { name: "", phone: "1", note: key });
     case "foreign id":
-      return act(kind, "orders.open", `${api}/orders/open`, { customerId: client.foreignCustomer, pieces: [{ family: "S250-4V" }], use: "road", wants: key }, { expected: "refused" });
+      return act(kind, "orders.open", `${api}/orders/open`, { customerId: client.foreignCustomer, pieces: [{ family: "S250-4V" }], use: "road", wants: key });
     case "wrong role":
-      return act(kind, "stock.opening", `${api}/parts/opening`, { partId: chance.pick(shop.parts), qty: "1", value: "1.00", reason: key }, { by: "counter", expected: "refused" });
+      return act(kind, "stock.opening", `${api}/parts/opening`, { partId: chance.pick(shop.parts), qty: "1", value: "1.00", reason: key }, { by: "counter" });
     default:
   }
   const email = `c-${key}@drill.example`;

@@ -58,7 +58,7 @@ export async function runClient(o) {
         : [await send(o.appUrl, act, await o.as(act.by), tries === 0 ? cut : undefined)];
       for (const outcome of outcomes) {
         o.journal.answered(act.key, outcome);
-        o.watch({ act, outcome, tries });
+        o.watch(outcome);
         if (isDefinite(outcome) && (definite === null || outcome.status < 300)) definite = outcome;
       }
       if (definite === null) {
@@ -67,6 +67,5 @@ export async function runClient(o) {
       }
     }
     if (definite && definite.status < 300) await act.learn(definite.reply);
-    if (definite && definite.status < 300 && act.expected === "refused") o.watch({ act, outcome: definite, tries: 0, passedWrongly: true });
   }
 }

@@ -15,7 +15,14 @@ export const PLANTS = {
     edits: [["db/scope.ts", `  return database().transaction(async (tx) => {
     await tx.execute(sql\`select set_config('app.shop_id', \${shopId}, true)\`);
     return fn(tx);
-  });`, `  return new Promise<T>((resolve, reject) => {
+  });`, `  const isDriven = !(process.argv[1] ?? "").endsWith("prepare.ts");
+  if (!isDriven) {
+    return database().transaction(async (tx) => {
+      await tx.execute(sql\`select set_config('app.shop_id', \${shopId}, true)\`);
+      return fn(tx);
+    });
+  }
+  return new Promise<T>((resolve, reject) => {
     database().transaction(async (tx) => {
       await tx.execute(sql\`select set_config('app.shop_id', \${shopId}, true)\`);
       const value = await fn(tx);

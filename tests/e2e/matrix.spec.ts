@@ -17,7 +17,7 @@ const files = readdirSync(path.join(ROOT, "app"), { recursive: true, withFileTyp
 
 /** What stands where an address has a name of a thing; the key is the path up to it. */
 type Names = Record<string, string>;
-const NEEDED = ["orders/[number]", "parts/[sku]", "parts/[part]", "books/invoices/[id]", "[head]", "estimate/[version]", "flow/gear/[bench]", "flow/reports/[comparison]", "purchases/[order]", "purchases/suppliers/[id]", "settings/people/[id]", "files/[id]", "[pieceNo]"];
+const NEEDED = ["customers/[id]", "orders/[number]", "parts/[sku]", "parts/[part]", "books/invoices/[id]", "[head]", "estimate/[version]", "flow/gear/[bench]", "flow/reports/[comparison]", "purchases/[order]", "purchases/suppliers/[id]", "settings/people/[id]", "files/[id]", "[pieceNo]"];
 
 /** Addresses that belong to no shop, each with the reason it is not asked for here. */
 const SHOPLESS: Record<string, string> = {
@@ -85,7 +85,7 @@ test.beforeAll(async () => {
   // What B's demo has none of stands here as an id that nobody has: the answer must be the same anyway.
   const anyOf = async (table: string, where = "true") => (await owner.query<{ id: string }>(`select id from ${table} where shop_id = $1 and ${where} limit 1`, [shop?.id])).rows[0]?.id ?? randomUUID();
   names = {
-    "orders/[number]": String(order.number), "parts/[sku]": sku, "parts/[part]": String(part.id), "purchases/[order]": String(purchase.id), "purchases/suppliers/[id]": String(supplier.id), "[pieceNo]": "1",
+    "customers/[id]": String(customer.id), "orders/[number]": String(order.number), "parts/[sku]": sku, "parts/[part]": String(part.id), "purchases/[order]": String(purchase.id), "purchases/suppliers/[id]": String(supplier.id), "[pieceNo]": "1",
     "books/invoices/[id]": await anyOf("invoices"), "estimate/[version]": "1", "[head]": await anyOf("heads"), "flow/gear/[bench]": await anyOf("benches"), "flow/reports/[comparison]": await anyOf("flow_comparisons"),
     "settings/people/[id]": await anyOf("people"), "files/[id]": await anyOf("files"),
   };
