@@ -5,6 +5,7 @@ import { ableTo, inShop, mustBeAble, NotFound, type ShopContext } from "@/module
 import { filesOf } from "@/modules/documents/files";
 import { mailAbout, type MailView } from "@/modules/documents/mail";
 import { localDate } from "@/modules/kernel/instant";
+import { elapsedMinutes } from "@/modules/time/domain/elapsed";
 import { minutesByOperation } from "@/modules/time/queries/minutes";
 import { STATIONS, type Station } from "../domain/floor-station";
 import { leftToPay, type OrderMoney } from "../domain/may-leave";
@@ -107,9 +108,10 @@ async function operationsOf(ctx: ShopContext & { tx: NonNullable<ShopContext["tx
   return rows.map((x): OperationRow => {
     const w = worked.get(x.id);
     const isRunning = (w?.running.length ?? 0) > 0;
+    const onNow = (w?.running ?? []).reduce((n, r) => n + Math.max(0, elapsedMinutes(new Date(r.since), ctx.now)), 0);
     return {
       id: x.id, pieceId: x.pieceId, pieceNo: noOf.get(x.pieceId) ?? 1, sequence: x.sequence, code: x.code, name: x.name, station: STATIONS.find((st) => st === x.station) ?? "Tear-down", skill: x.skill, qtyMilli: x.qtyMilli,
-      bookMinutes: x.bookMinutes, workedMinutes: w?.minutes ?? 0, people: [...(w?.people ?? [])], state: x.skippedAt ? "skipped" : x.doneAt ? "done" : isRunning ? "running" : "open",
+      bookMinutes: x.bookMinutes, workedMinutes: (w?.minutes ?? 0) + onNow, people: [...(w?.people ?? [])], state: x.skippedAt ? "skipped" : x.doneAt ? "done" : isRunning ? "running" : "open",
       notBefore: x.notBefore?.toISOString() ?? null, skipReason: x.skipReason, version: x.version, isPaused: !x.doneAt && !x.skippedAt && !isRunning && (w?.minutes ?? 0) > 0,
     };
   }).sort((a, b) => a.pieceNo - b.pieceNo || a.sequence - b.sequence);

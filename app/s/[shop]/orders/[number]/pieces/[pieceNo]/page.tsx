@@ -52,7 +52,7 @@ export default async function PiecePageView({ params }: { params: Promise<{ shop
         </Bays>
         <Bays>
           <Bay label="Head" aside={isHere ? <MovePieceDialog pieceId={piece.id} version={piece.version} place={piece.place} /> : undefined}>
-            {own ? <p className="mb-3"><Status dial={own.status.dial}>{own.status.station ? `${own.status.station}, ${own.status.word.toLowerCase()}` : own.status.word}</Status></p> : null}
+            {own ? <p className="mb-3"><Status dial={own.status.dial}>{own.status.station ? `${own.status.station}, ${own.running ? own.status.word : own.status.word.toLowerCase()}` : own.status.word}</Status></p> : null}
             <Kv pairs={[["Casting", piece.castingNumber || "–"], ["Serial", piece.serial || "–"], ["Use", USE_WORDS[piece.use as Use] ?? piece.use], ["Declared", piece.declaredValueMinor === null ? "–" : money(piece.declaredValueMinor, place)], ["Lies at", piece.place || "–"], ...(piece.description ? [["Remarks", piece.description] as const] : [])]} />
           </Bay>
           {piece.check ? (
