@@ -71,13 +71,13 @@ export function estimatePaper(s: EstimateSnapshot, link: string | null): TDocume
         sumColumn(220, estimateSums(s), { name: "Estimate", value: money(s.totals.totalMinor, p) }),
       ],
       columnGap: 28, margin: [0, 20, 0, 0], unbreakable: true,
-    } as Content,
+    },
     { stack: [
       engraved("What a yes means", { margin: [0, 0, 0, 5] }), { text: s.words, lineHeight: 1.15 },
       { text: "Rules for written estimates and consent differ by place; local law applies. Replaced parts are returned if you ask before work starts.", fontSize: 8.4, color: PAPER_INK.faint, margin: [0, 5, 0, 0] },
       ...(link ? [{ text: ["Answer on your phone: ", { text: link, bold: true }], margin: [0, 8, 0, 0] } as Content] : []),
-      { columns: [{ width: "*", stack: [{ canvas: [{ type: "line", x1: 0, y1: 26, x2: width * 0.55, y2: 26, lineWidth: 0.75, lineColor: PAPER_INK.edge }] }, { text: "Name and signature", fontSize: 8.2, color: PAPER_INK.faint, margin: [0, 3, 0, 0] }] }, { width: 150, stack: [{ canvas: [{ type: "line", x1: 0, y1: 26, x2: 150, y2: 26, lineWidth: 0.75, lineColor: PAPER_INK.edge }] }, { text: "Date", fontSize: 8.2, color: PAPER_INK.faint, margin: [0, 3, 0, 0] }] }], margin: [0, 10, 0, 0] } as Content,
-    ], margin: [0, 24, 0, 0], unbreakable: true } as Content,
+      { columns: [{ width: "*", stack: [{ canvas: [{ type: "line", x1: 0, y1: 26, x2: width * 0.55, y2: 26, lineWidth: 0.75, lineColor: PAPER_INK.edge }] }, { text: "Name and signature", fontSize: 8.2, color: PAPER_INK.faint, margin: [0, 3, 0, 0] }] }, { width: 150, stack: [{ canvas: [{ type: "line", x1: 0, y1: 26, x2: 150, y2: 26, lineWidth: 0.75, lineColor: PAPER_INK.edge }] }, { text: "Date", fontSize: 8.2, color: PAPER_INK.faint, margin: [0, 3, 0, 0] }] }], margin: [0, 10, 0, 0] },
+    ], margin: [0, 24, 0, 0], unbreakable: true },
   ];
   return paperDefinition({ shop: { ...s.shop, locale: s.locale }, title: `Estimate ${s.number} version ${s.version}`, content, foot: `${s.shop.name}  ${s.number} version ${s.version}` });
 }

@@ -22,7 +22,7 @@ const MM = 72 / 25.4;
 /** Roll of 62 mm; a millimetre and a half is left on both sides for printers that cannot reach the edge. */
 export const TAG_WIDTH = 62 * MM;
 const SIDE = 3 * MM;
-const HEIGHT = 74 * MM;
+const HEIGHT = 92 * MM;
 const NAME_MOST = 26;
 
 /** Short enough for a wire tag; the whole name stands on the papers. */

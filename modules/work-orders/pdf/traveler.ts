@@ -65,8 +65,8 @@ export function traveler(t: TravelerFacts): TDocumentDefinitions {
     lineTable(
       [{ head: "Op", width: 26, faint: true }, { head: "Operation", width: 150 }, { head: "Machine, skill", width: 76, faint: true }, { head: "Book h", width: 38, end: true }, { head: "Record", width: "*" }, { head: "By, time", width: 74 }],
       h.operations.map((o) => [
-        String(o.sequence), { stack: [{ text: `${o.name}${o.qtyMilli === 1000 ? "" : ` × ${milliText(o.qtyMilli)}`}`, bold: true, fontSize: 9.5 }, ...(o.benchNote ? [{ text: o.benchNote, fontSize: 8.4 }] : [])] } as Content,
-        o.skill, hours(o.bookMinutes, t.shop.locale), { stack: [{ text: o.mustRecord, fontSize: 8.4, color: PAPER_INK.soft }, { text: " ", fontSize: 12 }] } as Content, o.state === "done" ? "done" : o.state === "skipped" ? "skipped" : "",
+        String(o.sequence), { stack: [{ text: `${o.name}${o.qtyMilli === 1000 ? "" : ` × ${milliText(o.qtyMilli)}`}`, bold: true, fontSize: 9.5 }, ...(o.benchNote ? [{ text: o.benchNote, fontSize: 8.4 }] : [])] },
+        o.skill, hours(o.bookMinutes, t.shop.locale), { stack: [{ text: o.mustRecord, fontSize: 8.4, color: PAPER_INK.soft }, { text: " ", fontSize: 12 }] }, o.state === "done" ? "done" : o.state === "skipped" ? "skipped" : "",
       ]),
     ),
     ...(h.parts.length > 0 ? [lineTable([{ head: "Bin", width: 46, faint: true }, { head: "Part", width: 96 }, { head: "Description", width: "*" }, { head: "Need", width: 46, end: true, strong: true }], h.parts.map((p) => [p.bin, p.sku, p.description, milliText(p.neededMilli)]))] : []),
