@@ -42,7 +42,7 @@ export const PLANTS = {
   },
   "audit-outside": {
     says: "the row of the trail is written in a transaction of its own",
-    edits: [["modules/access/command.ts", "await writeAudit(ctx, {", "await withShop(ctx.shop.id, (tx) => writeAudit({ ...ctx, tx }, {"], ["modules/access/command.ts", "detail: { input: without(input, spec.secret), value } });", "detail: { input: without(input, spec.secret), value } }));"]],
+    edits: [["modules/access/command.ts", "await writeAudit(ctx, {", "await withShop(ctx.shop.id, (tx) => writeAudit({ ...ctx, tx }, {"], ["modules/access/command.ts", "detail: { input: without(input, spec.secret), value } });", "detail: { input: without(input, spec.secret), value } }));\n    await new Promise((later) => setTimeout(later, 60));"]],
   },
 };
 
