@@ -84,7 +84,7 @@ export function LibraryList({ first, filters, families }: { first: LibraryPage; 
         <TypedFilter label="To" value={filters.to} onSet={(v) => set("to", v)} type="date" />
       </div>
       <DataTable
-        caption="Finished flow tests, newest first" columns={columns} rows={rows} rowKey={(r) => r.testId} hrefOf={(r) => `/s/${slug}/flow/${r.headId}${r.cylinder > 1 ? `?cylinder=${r.cylinder}` : ""}`}
+        caption="Finished flow tests, newest first" columns={columns} rows={rows} rowKey={(r) => r.testId} hrefOf={(r) => `/s/${slug}/flow/${r.headId}${r.cylinder > 1 ? `?port=${r.cylinder}` : ""}`}
         ticked={ticked} onTickedChange={(next) => setTicked(new Set([...next].slice(-2)))} tickLabel={(r) => `Lay ${r.mark} ${portWords(r.cylinder, r.side)} ${PURPOSE_WORDS[r.purpose]} over another`}
         state={list.isError ? "error" : list.isPending ? "loading" : "ready"}
         error={<EmptyState title="The library cannot be read just now" action={<Button onClick={() => void list.refetch()}>Try again</Button>}>Nothing is lost.</EmptyState>}

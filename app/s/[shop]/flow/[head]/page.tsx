@@ -7,6 +7,7 @@ import { flowSheetFor, gearOf } from "@/modules/flow/queries/sheet";
 import { DarkGround } from "@/modules/ui/theme";
 import { PageHead } from "@/modules/ui/page-head";
 import { Tag } from "@/modules/ui/tag";
+import { TextLink } from "@/modules/ui/text-link";
 import { notFound } from "next/navigation";
 
 export const metadata = { title: "Flow sheet" };
@@ -26,6 +27,14 @@ export default async function FlowSheetPage({ params, searchParams }: { params: 
       <PageHead title={<>Flow sheet&ensp;<Tag running={isOpen} runningWord="on the bench">{sheet.head.mark}</Tag></>} sub={sheetSubtitle(sheet)}>
         <PortNav ports={sheet.ports} current={sheet.cylinder} href={(n) => `${at}?port=${n}${isBench ? "&bench=1" : ""}`} />
       </PageHead>
+      {isBench ? null : (
+        <nav aria-label="More of this head" className="bar">
+          <TextLink href={`/s/${ctx.shop.slug}/flow/measure/${sheet.head.id}`}>Measurements</TextLink>
+          <TextLink href={`/s/${ctx.shop.slug}/flow/figures/${sheet.head.id}`}>Coefficients and noise</TextLink>
+          <TextLink href={`/s/${ctx.shop.slug}/flow/library?family=${encodeURIComponent(sheet.head.family)}`}>Library of {sheet.head.family}</TextLink>
+          {sheet.canRecord ? <TextLink href={`/s/${ctx.shop.slug}/flow/upload?head=${sheet.head.id}`}>Read from a file</TextLink> : null}
+        </nav>
+      )}
       <FlowSheetScreen key={`${sheet.cylinder}:${sheet.tests.map((t) => `${t.id}${t.version}${t.state}`).join()}`} sheet={sheet} gear={gear} isBench={isBench} />
     </main>
   );
