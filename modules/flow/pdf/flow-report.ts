@@ -15,7 +15,7 @@ const ROW_MAX = 14.5;
 /** More lifts than this stand beside the curve. */
 const LIFTS_UNDER = 10;
 
-const number = (text: string, more: object = {}): TableCell => ({ text, font: FACE.table, fontSize: 9, alignment: "right", fontFeatures: ["tnum"], ...more } as TableCell);
+const number = (text: string, more: object = {}): TableCell => ({ text, font: FACE.table, fontSize: 9, alignment: "right", fontFeatures: ["tnum"], ...more });
 
 const unitOf = (sides: readonly ReportSide[]): "in" | "mm" => sides.map((x) => x.gain).find((g) => g.state !== "absent")?.liftUnit ?? "in";
 const liftsOf = (sides: readonly ReportSide[]): number[] => [...new Set(sides.flatMap((x) => [...(x.before?.readings ?? []), ...(x.after?.readings ?? [])]).map((r) => r.liftUm))].sort((a, b) => a - b);
@@ -37,7 +37,7 @@ function readingsTable(sides: readonly ReportSide[], s: ReportSnapshot, rowHeigh
   };
   const body: TableCell[][] = [
     heads.map((h, i) => ({ ...(engraved(h, isWide ? {} : { fontSize: 6.4, characterSpacing: 0.3 }) as object), alignment: i === 0 ? "left" : "right" } as TableCell)),
-    ...liftsOf(sides).map((um): TableCell[] => [{ text: liftWords(um, unit, s.locale), font: FACE.table, fontSize: 9, color: PAPER_INK.soft } as TableCell, ...sides.flatMap((side) => cellsOf(side, um))]),
+    ...liftsOf(sides).map((um): TableCell[] => [{ text: liftWords(um, unit, s.locale), font: FACE.table, fontSize: 9, color: PAPER_INK.soft }, ...sides.flatMap((side) => cellsOf(side, um))]),
   ];
   const pad = Math.max(0.6, (rowHeight - 10.6) / 2);
   return {
@@ -120,7 +120,7 @@ export function flowReport(s: ReportSnapshot): TDocumentDefinitions {
     ]),
     { text: shared.length > 0 ? `Tested at ${shared.join(", ")}.` : "Conditions differ; they stand below.", fontSize: 9.2, margin: [0, 10, 0, 0] },
     ...(isLong ? [{ columns: [
-      { width: 216, stack: [...curve, ...s.sides.flatMap((side) => [{ text: SIDE_WORDS[side.side], font: FACE.cut, bold: true, fontSize: 9.5, margin: [2, 8, 0, -4] } as Content, told(toldWords(side, s))])] },
+      { width: 216, stack: [...curve, ...s.sides.flatMap((side) => [{ text: SIDE_WORDS[side.side], font: FACE.cut, bold: true, fontSize: 9.5, margin: [2, 8, 0, -4] }, told(toldWords(side, s))])] },
       { width: "*", stack: [readingsTable(s.sides, s, rowHeight, false)] },
     ], columnGap: 16, margin: [0, 6, 0, 0] } as Content] : [
       { stack: curve, margin: [0, 0, 0, -20] } as Content,

@@ -95,6 +95,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
     sheet.type(active, (isWhole ? "" : sheet.textAt(active)) + d);
   };
 
+  const means = ([["in", intake], ["ex", exhaust]] as const).flatMap(([short, side]) => { const mean = meanText(side, locale); return mean ? [`${mean} mean ${short}`] : []; }).join(", ");
   const name = active && activeColumn ? `${active.side} ${liftWords(active.liftUm, unit, locale)} ${activeColumn.head.toLowerCase()}` : "no cell yet";
   const firstDraft = drafts[0];
   const live = drafts.some((c) => c.when === "before") && !drafts.some((c) => c.when === "after") ? "typing-before" : "typing-after";
@@ -120,7 +121,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
           <NextStep sheet={given} gear={gear} figures={figures} settle={sheet.settle} onChanged={() => router.refresh()} />
         </div>
         <div className="fl-r">
-          <Bay label="Live curve" aside={isBench ? [["in", intake], ["ex", exhaust]].flatMap(([n, s]) => { const t = meanText(s as typeof intake, locale); return t ? [`${t} mean ${String(n)}`] : []; }).join(", ") || undefined : undefined}>
+          <Bay label="Live curve" aside={isBench && means !== "" ? means : undefined}>
             <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 236 : 366} /></div>
             <div className="only-narrow"><CurveReader {...curve} width={350} height={290} mini /></div>
             {isBench ? null : <SheetSummary figures={figures} locale={locale} />}

@@ -38,6 +38,7 @@ export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: F
   const columns = figures.sides.flatMap((s) => [s.before, s.after]).flatMap((c) => (c ? [c.test] : []));
   const drafts = columns.filter((t) => t.state === "draft");
   const finished = columns.filter((t) => t.state === "complete");
+  const newest = figures.sides.flatMap((s) => { const t = (s.after ?? s.before)?.test; return t?.state === "complete" ? [t] : []; });
   const basisOf = (when: "before" | "after"): { intake: RawTest | null; exhaust: RawTest | null } => ({ intake: figures.sides[0]?.[when]?.test ?? null, exhaust: figures.sides[1]?.[when]?.test ?? null });
   const before = basisOf("before");
   const hasBefore = before.intake !== null || before.exhaust !== null;
@@ -80,7 +81,7 @@ export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: F
         </span>
         <span className="ml-auto flex flex-wrap items-center gap-2">
           {drafts.length > 0 ? <ReasonDialog label="Void" question={`Void ${drafts.length > 1 ? "these tests" : "this test"}?`} action="Void it" onAction={(reason) => void run(drafts.map((t) => () => voidTestAction(slug, sent({ testId: t.id, version: t.version, reason }))))} /> : null}
-          {drafts.length === 0 ? finished.slice(-2).map((t) => <ReasonDialog key={t.id} label={`Correct ${t.side}`} question={`Correct the finished ${t.side} ${PURPOSE_WORDS[t.purpose]}?`} action="Correct it" onAction={(reason) => void run([() => correctTestAction(slug, sent({ testId: t.id, reason }))])} />) : null}
+          {drafts.length === 0 ? newest.map((t) => <ReasonDialog key={t.id} label={`Correct ${t.side}`} question={`Correct the finished ${t.side} ${PURPOSE_WORDS[t.purpose]}?`} action="Correct it" onAction={(reason) => void run([() => correctTestAction(slug, sent({ testId: t.id, reason }))])} />) : null}
           {latest ? <LinkButton size="sm" href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">{`Report ${latest.comparisonNo}`}</LinkButton> : null}
           {drafts.length > 0 ? <Button variant="go" pending={pending} pendingText="Finishing…" onClick={() => void finish()}>{drafts.length > 1 ? "Finish both tests" : "Finish test"}</Button> : null}
           {drafts.length === 0 && !hasBefore ? <StartSheetDialog sheet={sheet} gear={gear} purpose="baseline" basis={{ intake: null, exhaust: null }} isMain onStarted={onChanged} /> : null}

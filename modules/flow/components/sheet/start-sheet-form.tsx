@@ -104,7 +104,7 @@ export function StartSheetDialog({ purpose, isMain, onStarted, ...rest }: { shee
   const label = `Start ${PURPOSE_WORDS[purpose]}`;
   if (noGear) return <Button variant={isMain ? "go" : "plain"} disabledReason="a bench and a bore adapter are set up first">{label}</Button>;
   return (
-    <TaskDialog open={open} onOpenChange={setOpen} wide trigger={<Button variant={isMain ? "go" : "plain"} icon="tube">{label}</Button>} title={`Start ${PURPOSE_WORDS[purpose]}, port ${rest.sheet.cylinder}`}>
+    <TaskDialog open={open} onOpenChange={setOpen} wide trigger={<Button variant={isMain ? "go" : "lo"} size={isMain ? "m" : "sm"} icon="tube">{label}</Button>} title={`Start ${PURPOSE_WORDS[purpose]}, port ${rest.sheet.cylinder}`}>
       <StartForm {...rest} purpose={purpose} onStarted={() => { setOpen(false); onStarted(); }} />
     </TaskDialog>
   );
