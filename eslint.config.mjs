@@ -31,6 +31,12 @@ export default defineConfig([
       "@typescript-eslint/switch-exhaustiveness-check": ["error", { considerDefaultExhaustiveForUnions: true }],
       "@typescript-eslint/no-unused-vars": ["error", { argsIgnorePattern: "^_", varsIgnorePattern: "^_", destructuredArrayIgnorePattern: "^_", ignoreRestSiblings: true }],
       "@typescript-eslint/require-await": "off",
+      // Branded whole numbers are numbers; their sign may be turned.
+      "@typescript-eslint/no-unsafe-unary-minus": "off",
+      // Takes out assertions that the inference of a form's values needs.
+      "@typescript-eslint/no-unnecessary-type-assertion": "off",
+      // Advice for the React compiler, which is not in use.
+      "react-hooks/preserve-manual-memoization": "off",
       "no-restricted-syntax": ["error", ...everywhere],
       "max-lines": ["error", { max: 500, skipBlankLines: true, skipComments: true }],
     },

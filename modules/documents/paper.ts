@@ -32,12 +32,12 @@ export const PAPER_INK = { ink: paper.ink, soft: paper["ink-2"], faint: paper["i
 /** Small caps-like heading of a column or a fact. */
 export const engraved = (text: string, more: Partial<ContentText> = {}): Content => ({
   text: text.toUpperCase(), font: FACE.cut, fontSize: 7.6, characterSpacing: 0.75, color: PAPER_INK.soft, ...more,
-} as Content);
+});
 
 /** A big narrow number. */
 export const bigNumber = (text: string, fontSize: number, more: Partial<ContentText> = {}): Content => ({
   text, font: FACE.numeral, fontSize, fontFeatures: ["tnum"], lineHeight: 0.9, ...more,
-} as Content);
+});
 
 /** The mark: two split keepers on a grooved stem, `width` points wide. */
 export function markCanvas(width: number): CanvasElement[] {
@@ -114,11 +114,11 @@ export function lineTable(columns: readonly PaperColumn[], rows: readonly (reado
   const head: TableCell[] = columns.map((c) => ({ ...(engraved(c.head) as object), alignment: c.end ? "right" : "left" } as TableCell));
   const body = rows.map((row) => columns.map((c, i): TableCell => {
     const value = row[i] ?? "";
-    if (typeof value !== "string") return value as TableCell;
+    if (typeof value !== "string") return value;
     return {
       text: value, font: c.end ? FACE.table : FACE.text, fontSize: 9.5,
       ...(c.end ? { alignment: "right" as const, fontFeatures: ["tnum"] } : {}), ...(c.strong ? { bold: true } : {}), ...(c.faint ? { color: PAPER_INK.faint } : {}),
-    } as TableCell;
+    };
   }));
   return {
     table: { headerRows: 1, dontBreakRows: true, keepWithHeaderRows: 1, widths: columns.map((c) => c.width), body: [head, ...body] },
@@ -131,7 +131,7 @@ export function lineTable(columns: readonly PaperColumn[], rows: readonly (reado
     },
     margin: [0, 18, 0, 0],
     ...more,
-  } as Content;
+  };
 }
 
 export interface PaperSum { readonly name: string; readonly value: string; readonly strong?: boolean }
@@ -143,12 +143,12 @@ export const sumColumn = (width: number, sums: readonly PaperSum[], total: { rea
     ...sums.map((s): Content => ({
       columns: [
         { text: s.name, width: "*", fontSize: 9.8, bold: s.strong ?? false },
-        { text: s.value, width: "auto", alignment: "right", font: FACE.table, fontSize: 9.8, bold: true, fontFeatures: ["tnum"] } as Content,
+        { text: s.value, width: "auto", alignment: "right", font: FACE.table, fontSize: 9.8, bold: true, fontFeatures: ["tnum"] },
       ],
       columnGap: 8, margin: [0, 0, 0, 5.6],
-    } as Content)),
+    })),
     { ...(rule(width) as object), margin: [0, 2.5, 0, 8] } as Content,
-    { columns: [{ text: total.name, width: "auto", bold: true, fontSize: 10, margin: [0, 9, 0, 0] }, bigNumber(total.value, 24, { alignment: "right" })], columnGap: 8 } as Content,
+    { columns: [{ text: total.name, width: "auto", bold: true, fontSize: 10, margin: [0, 9, 0, 0] }, bigNumber(total.value, 24, { alignment: "right" })], columnGap: 8 },
     { ...(rule(width, PAPER_INK.line, 0.6) as object), margin: [0, 9, 0, 0] } as Content,
   ],
 });

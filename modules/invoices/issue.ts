@@ -51,7 +51,7 @@ export const issueInvoice = defineCommand({
   act: "invoice.write",
   input: issueInvoiceInput,
   async run(ctx, input) {
-    const { tx, shop } = ctx;
+    const { tx } = ctx;
     const draft = await lockDraft(ctx, input);
     if (!draft.ok) return draft;
     const drawn = await draftSheet(ctx, draft.value);
@@ -73,7 +73,7 @@ export const issueInvoice = defineCommand({
     }).where(draftAt(ctx, draft.value.id));
 
     const surplus = await surplusLines(ctx, orderId, checked.value.depositSurplusMinor);
-    await useDeposits(ctx, orderId, sheet.deposit.appliedMinor + (surplus[0]?.amountMinor ?? 0));
+    await spendDeposits(ctx, orderId, sheet.deposit.appliedMinor + (surplus[0]?.amountMinor ?? 0));
     const post = (rule: string, text: string, lines: readonly EntryLine[]) => lines.length === 0 ? ok(null) : postEntry(ctx, {
       date: sheet.date, text, rule, sourceKind: "invoice", sourceId: draft.value.id, workOrderId: orderId, customerId: draft.value.customerId, lines,
     });
@@ -103,7 +103,7 @@ async function surplusLines(ctx: TxContext, workOrderId: string, surplusMinor: n
 }
 
 /** Marks the deposits of an order as used, the oldest first. */
-async function useDeposits(ctx: TxContext, workOrderId: string, usedMinor: number): Promise<void> {
+async function spendDeposits(ctx: TxContext, workOrderId: string, usedMinor: number): Promise<void> {
   const rows = await ctx.tx.select().from(payments).where(and(eq(payments.shopId, ctx.shop.id), eq(payments.workOrderId, workOrderId), eq(payments.purpose, "deposit"))).orderBy(asc(payments.receivedAt)).for("update");
   let left = usedMinor;
   for (const p of rows) {

@@ -35,7 +35,7 @@ const clockFile = path.join(mkdtempSync(path.join(tmpdir(), "vk-clock-")), "now"
 const setClock = (at: string) => { clock = new Date(at); writeFileSync(clockFile, at); };
 let fake: PaymentsStandIn;
 let hook: Awaited<ReturnType<typeof listen>>;
-let statuses: number[] = [];
+const statuses: number[] = [];
 let a: TestShop;
 let b: TestShop;
 let hero: HeroOrder;

@@ -17,5 +17,5 @@ export const answerFormAction = Object.assign(
     const reply = await answer(token, { requestId: text("requestId"), input: { answer: text("answer"), name, documentHash: text("documentHash") } });
     return { reply, name };
   },
-  { [ACTION_MARK]: answer[ACTION_MARK as unknown as keyof typeof answer] },
+  { [ACTION_MARK]: answer[ACTION_MARK] },
 );

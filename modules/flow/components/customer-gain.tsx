@@ -94,6 +94,9 @@ export function CustomerGain({ gain, locale, zone }: { gain: GainOfPiece } & At)
         const compared = [port.intake, port.exhaust].filter((g): g is ComparableGain => g.comparable);
         const portWords = gain.ports.length > 1 ? `, port ${port.cylinder}` : "";
         const cam = stated?.camLiftUm ?? null;
+        const told = [port.intake, port.exhaust].filter((g): g is Told => g.state !== "absent");
+        // Only what holds for both sides is said of both.
+        const shared = told[0]?.conditions.filter((words) => told.every((g) => g.conditions.includes(words))) ?? [];
         return (
           <Fragment key={port.cylinder}>
             {compared.length === 0 ? null : <div className="bigg">{compared.map((g, i) => <Figure key={g.side} gain={g} locale={locale} isFirst={i === 0} />)}</div>}
@@ -105,7 +108,7 @@ export function CustomerGain({ gain, locale, zone }: { gain: GainOfPiece } & At)
               <PortTable port={port} locale={locale} />
               {[port.intake, port.exhaust].flatMap((g) => sideNotes(g, at)).map((words) => <p key={words} className="hint mt-2">{words}</p>)}
               {cam === null || !stated ? null : <p className="hint mt-2">Your cam lifts {liftWords(cam, stated.liftUnit, locale)} {stated.liftUnit}.</p>}
-              {stated ? <p className="hint mt-2">Tested at {stated.conditions.join(", ")}.</p> : null}
+              {shared.length > 0 ? <p className="hint mt-2">Tested at {shared.join(", ")}.</p> : null}
             </section>
           </Fragment>
         );

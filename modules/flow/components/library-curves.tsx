@@ -23,12 +23,9 @@ export function LibraryCurves({ curves, unit, atInH2O, camLiftUm, locale, title,
     return made.ok && last ? [{ ...c, path: pathText(curveSegments(made.value, scale)), last }] : [];
   });
   // Names keep 15 px between them, from the highest line down.
-  let free = -Infinity;
-  const names = [...drawn].sort((p, q) => q.last.flowCfm - p.last.flowCfm).map((c) => {
-    const y = Math.max(scale.y(c.last.flowCfm) + 4, free + 15);
-    free = y;
-    return { ...c, labelY: y };
-  });
+  const names = [...drawn].sort((p, q) => q.last.flowCfm - p.last.flowCfm).reduce<((typeof drawn)[number] & { labelY: number })[]>((set, c) => [
+    ...set, { ...c, labelY: Math.max(scale.y(c.last.flowCfm) + 4, (set.at(-1)?.labelY ?? -Infinity) + 15) },
+  ], []);
   const words = drawn.map((c) => `${c.name}: ${c.readings.length} lifts, ${flowText(c.last.flowCfm, locale)} CFM at ${liftWords(c.last.liftUm, unit, locale)} ${unit}`).join("; ");
   return (
     <svg className="ch" viewBox={`0 0 ${width} ${height}`} role="img" aria-label={`${title}. ${words}.`}>

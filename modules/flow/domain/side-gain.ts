@@ -51,7 +51,7 @@ const ENTRY_WORDS: Readonly<Record<RawTest["entry"], string>> = { radius: "radiu
 export function conditionWords(test: RawTest): string[] {
   return [
     `${test.nominalInH2O} in H₂O`,
-    `bore adapter ${test.fixture.name} (${test.fixture.boreMm} mm)`,
+    `bore adapter "${test.fixture.name}", ${test.fixture.boreMm} mm`,
     ENTRY_WORDS[test.entry],
     test.valvesOpen === "all" ? "all valves of the port open" : `open: ${test.valvesOpen}`,
     test.testSprings ? "test springs" : "own springs",

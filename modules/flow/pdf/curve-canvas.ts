@@ -58,9 +58,9 @@ export function curveContent(g: CurveGeometry): Content[] {
   drawn.push(line(g.plot.left, g.plot.top, g.plot.left, g.plot.bottom, 0.9, PAPER_INK.ink), line(g.plot.left, g.plot.bottom, g.plot.right, g.plot.bottom, 0.9, PAPER_INK.ink));
   for (const t of g.liftTicks) drawn.push(line(t.x, g.plot.bottom, t.x, g.plot.bottom + (t.isLong ? 5.5 : 3), 0.7, PAPER_INK.ink));
 
-  const word = (text: string, x: number, y: number, more: object = {}): Content => ({ text, fontSize: 7.6, font: FACE.table, relativePosition: { x, y }, ...more } as Content);
+  const word = (text: string, x: number, y: number, more: object = {}): Content => ({ text, fontSize: 7.6, font: FACE.table, relativePosition: { x, y }, ...more });
   const boxed = (text: string, x: number, y: number, width: number, alignment: "right" | "center"): Content =>
-    ({ columns: [{ text, width, alignment, fontSize: 7.6, font: FACE.table, color: PAPER_INK.soft }], relativePosition: { x, y } } as Content);
+    ({ columns: [{ text, width, alignment, fontSize: 7.6, font: FACE.table, color: PAPER_INK.soft }], relativePosition: { x, y } });
   return [
     ...g.flowTicks.map((t) => boxed(t.text, g.plot.left - 34, t.y - 4.6, 28, "right")),
     ...g.liftTicks.flatMap((t) => (t.text ? [boxed(t.text, t.x - 20, g.plot.bottom + 7, 40, "center")] : [])),

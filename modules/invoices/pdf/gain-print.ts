@@ -66,7 +66,7 @@ export function gainBracket(piece: InvoicePiece, width: number, locale: string, 
       { stack: body, margin: [12, 12, 12, 10] },
     ],
     unbreakable: true,
-  } as Column;
+  };
 }
 
 /** Each reading of a piece, lifts across; lower numbers stand as they are, in the same type. */
@@ -91,8 +91,8 @@ export function gainTables(piece: InvoicePiece, locale: string, withTag: boolean
         { text: `${title}. ${notes.join(" ")}`, fontSize: 7.8, color: PAPER_INK.faint, margin: [0, 3, 0, 0] },
       ],
       unbreakable: true,
-    } as Content;
+    };
   });
 }
 
-const bold = (text: string): Content => ({ text, bold: true, alignment: "right", font: FACE.table, fontSize: 9.5, fontFeatures: ["tnum"] } as Content);
+const bold = (text: string): Content => ({ text, bold: true, alignment: "right", font: FACE.table, fontSize: 9.5, fontFeatures: ["tnum"] });

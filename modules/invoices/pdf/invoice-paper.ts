@@ -1,4 +1,4 @@
-import type { Column, Content, TDocumentDefinitions } from "pdfmake/interfaces";
+import type { Content, TDocumentDefinitions } from "pdfmake/interfaces";
 import { engraved, FACE, factRow, lineTable, masthead, PAPER, PAPER_INK, paperDefinition, paperWidth, sumColumn, type PaperSum } from "@/modules/documents/paper";
 import { amount, date, decimal, money } from "@/modules/kernel/format";
 import { milliText } from "@/modules/kernel/quantity";
@@ -61,7 +61,7 @@ function payBlock(s: InvoiceSnapshot, payAddress: string | null, width: number):
 
 const note = (label: string, lines: readonly string[]): Content[] => lines.length === 0 ? [] : [{
   stack: [engraved(label, { margin: [0, 0, 0, 3] }), ...lines.map((text): Content => ({ text, fontSize: 8.8, color: PAPER_INK.soft, margin: [0, 0, 0, 1.5] }))], margin: [0, 12, 0, 0], unbreakable: true,
-} as Content];
+}];
 
 /**
  * The invoice or credit note as a paper, from the frozen snapshot alone: hours, parts, the measured gain or why there is
@@ -95,7 +95,7 @@ export function invoicePaper(s: InvoiceSnapshot, payAddress: string | null): TDo
         { width: right.width, stack: [...right.stack, ...payBlock(s, payAddress, sumWidth)] },
       ],
       columnGap: PAPER.gap, margin: [0, 20, 0, 0], unbreakable: true,
-    } as Content,
+    },
     ...(first ? gainTables(first, s.locale, many) : []),
     ...more.flatMap((x): Content[] => [{ columns: [gainBracket(x, leftWidth, s.locale, many)], margin: [0, 16, 0, 0] }, ...gainTables(x, s.locale, many)]),
     ...(s.pieces.some((x) => x.gain.sides.length > 0) ? [{ text: "Airflow as measured on our bench under the conditions stated; it is no promise of power.", fontSize: 7.8, color: PAPER_INK.faint, margin: [0, 6, 0, 0] } as Content] : []),

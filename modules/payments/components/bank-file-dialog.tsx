@@ -35,7 +35,7 @@ export function BankFileDialog() {
   };
   const set = (change: Partial<BankMapping>) => { if (file && look) void see(file, { ...look.mapping, ...change }); };
   const m = look?.mapping;
-  const Column = ({ id, label, value, onChange, none }: { id: string; label: string; value: number | null; onChange: (v: number | null) => void; none?: string }) => (
+  const column = ({ id, label, value, onChange, none }: { id: string; label: string; value: number | null; onChange: (v: number | null) => void; none?: string }) => (
     <div className="field"><label htmlFor={id}>{label}</label><div className="in"><select id={id} value={value ?? ""} onChange={(e) => onChange(e.target.value === "" ? null : Number(e.target.value))}>{none ? <option value="">{none}</option> : null}{look?.columns.map((c, i) => <option key={i} value={i}>{c}</option>)}</select></div></div>
   );
   return (
@@ -44,11 +44,11 @@ export function BankFileDialog() {
       {look && m ? (
         <>
           <div className="fields mt-3">
-            <Column id="bf-d" label="Date" value={m.dateColumn} onChange={(v) => set({ dateColumn: v ?? 0 })} />
+            {column({ id: "bf-d", label: "Date", value: m.dateColumn, onChange: (v) => set({ dateColumn: v ?? 0 }) })}
             <div className="field"><label htmlFor="bf-o">Order of the date</label><div className="in"><select id="bf-o" value={m.dateOrder} onChange={(e) => set({ dateOrder: e.target.value as BankMapping["dateOrder"] })}><option value="ymd">year, month, day</option><option value="mdy">month, day, year</option><option value="dmy">day, month, year</option></select></div></div>
-            <Column id="bf-t" label="Text" value={m.textColumns[0] ?? 0} onChange={(v) => set({ textColumns: [v ?? 0] })} />
-            <Column id="bf-a" label="Amount, or money in" value={m.amountColumn} onChange={(v) => set({ amountColumn: v ?? 0 })} />
-            <Column id="bf-x" label="Money out" value={m.outColumn} onChange={(v) => set({ outColumn: v })} none="in the same column" />
+            {column({ id: "bf-t", label: "Text", value: m.textColumns[0] ?? 0, onChange: (v) => set({ textColumns: [v ?? 0] }) })}
+            {column({ id: "bf-a", label: "Amount, or money in", value: m.amountColumn, onChange: (v) => set({ amountColumn: v ?? 0 }) })}
+            {column({ id: "bf-x", label: "Money out", value: m.outColumn, onChange: (v) => set({ outColumn: v }), none: "in the same column" })}
             <div className="field"><label htmlFor="bf-p">Decimals</label><div className="in"><select id="bf-p" value={m.decimalComma ? "comma" : "point"} onChange={(e) => set({ decimalComma: e.target.value === "comma" })}><option value="point">1,910.33</option><option value="comma">1.910,33</option></select></div></div>
             <div className="field"><label htmlFor="bf-op">Opening balance, if the bank gives it</label><div className="in"><input id="bf-op" inputMode="decimal" value={balances.opening} onChange={(e) => setBalances({ ...balances, opening: e.target.value })} /></div></div>
             <div className="field"><label htmlFor="bf-cl">Closing balance</label><div className="in"><input id="bf-cl" inputMode="decimal" value={balances.closing} onChange={(e) => setBalances({ ...balances, closing: e.target.value })} /></div></div>

@@ -23,22 +23,22 @@ export interface ShelfPart {
 export async function lockShelf(ctx: TxContext, partIds: readonly string[]): Promise<Map<string, ShelfPart>> {
   const ids = [...new Set(partIds)].sort();
   if (ids.length === 0) return new Map();
+  const locked = await heldRows(ctx, ids);
+  if (locked.length === ids.length) return new Map(locked.map((p) => [p.partId, p]));
+  // A part that never moved has no balance yet. The foreign key refuses a part of another shop; say "not found" first.
   const { tx, shop } = ctx;
   const known = await tx.select({ id: parts.id }).from(parts).where(and(eq(parts.shopId, shop.id), inArray(parts.id, ids)));
   if (known.length !== ids.length) throw new NotFound("part");
   await tx.insert(stockBalances).values(ids.map((partId) => ({ shopId: shop.id, partId }))).onConflictDoNothing();
-  const held = await tx.select().from(stockBalances).where(and(eq(stockBalances.shopId, shop.id), inArray(stockBalances.partId, ids)))
-    .orderBy(asc(stockBalances.partId)).for("update");
-  const facts = await tx.select({
-    partId: parts.id, sku: parts.sku, description: parts.description, stockUnit: parts.stockUnit, bin: parts.bin, isKit: parts.isKit, lotTracked: parts.lotTracked, active: parts.active,
-  }).from(parts).where(and(eq(parts.shopId, shop.id), inArray(parts.id, ids)));
-  const factsOf = new Map(facts.map((f) => [f.partId, f]));
-  return new Map(held.map((h) => {
-    const f = factsOf.get(h.partId);
-    if (!f) throw new NotFound("part");
-    return [h.partId, { ...f, onHandMilli: h.onHandMilli, valueMinor: h.valueMinor, reservedMilli: h.reservedMilli }];
-  }));
+  return new Map((await heldRows(ctx, ids)).map((p) => [p.partId, p]));
 }
+
+const heldRows = (ctx: TxContext, ids: readonly string[]): Promise<ShelfPart[]> =>
+  ctx.tx.select({
+    partId: parts.id, sku: parts.sku, description: parts.description, stockUnit: parts.stockUnit, bin: parts.bin, isKit: parts.isKit, lotTracked: parts.lotTracked, active: parts.active,
+    onHandMilli: stockBalances.onHandMilli, valueMinor: stockBalances.valueMinor, reservedMilli: stockBalances.reservedMilli,
+  }).from(stockBalances).innerJoin(parts, and(eq(parts.shopId, stockBalances.shopId), eq(parts.id, stockBalances.partId)))
+    .where(and(eq(stockBalances.shopId, ctx.shop.id), inArray(stockBalances.partId, [...ids]))).orderBy(asc(stockBalances.partId)).for("update", { of: stockBalances });
 
 export async function lockOne(ctx: TxContext, partId: string): Promise<ShelfPart> {
   const part = (await lockShelf(ctx, [partId])).get(partId);

@@ -32,7 +32,7 @@ export function NowTable({ initial, linksToSheets }: { initial: PersonNow[]; lin
           ))}
         </tbody>
       </table>
-      {isError ? <p className="mid sm mt-2" role="status">No link just now; this is as of {time(new Date(dataUpdatedAt || Date.now()), place)}.</p> : null}
+      {isError ? <p className="mid sm mt-2" role="status">No link just now; {dataUpdatedAt ? `this is as of ${time(new Date(dataUpdatedAt), place)}` : "this is as the page was opened"}.</p> : null}
     </>
   );
 }

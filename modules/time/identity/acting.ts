@@ -29,8 +29,7 @@ export const stampInput = {
   counter: z.number().int().min(0).optional(),
   actId: z.uuid().optional(),
 };
-const stampSchema = z.object(stampInput);
-export type Stamp = z.output<typeof stampSchema>;
+export type Stamp = z.output<z.ZodObject<typeof stampInput>>;
 
 export interface Acting {
   readonly person: { readonly id: string; readonly name: string; readonly roles: readonly Role[] };

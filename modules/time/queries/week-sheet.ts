@@ -4,7 +4,7 @@ import { operations, payRates, people, timeEntries, workPieces } from "@/db/sche
 import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
 import { localDate, startOfDay, addDays } from "@/modules/kernel/instant";
 import { minor } from "@/modules/kernel/money";
-import { minutesWithin, type Span } from "../domain/clipped-minutes";
+import { minutesWithin } from "../domain/clipped-minutes";
 import { daySummary, type DaySummary } from "../domain/day-summary";
 import { elapsedMinutes } from "../domain/elapsed";
 import { PAID_BREAK } from "../domain/indirect-work";
@@ -61,7 +61,7 @@ export async function weekSheet(ctx: ShopContext, ask: { personId?: string | und
     const counted = rows.filter((r) => r.e.voidedAt === null).map((r) => r.e);
     const within = (test: (e: (typeof counted)[number]) => boolean, date: string): number => {
       const end = startOfDay(addDays(date, 1), zone);
-      return minutesWithin(counted.filter(test) as Span[], startOfDay(date, zone), end < ctx.now ? end : ctx.now);
+      return minutesWithin(counted.filter(test), startOfDay(date, zone), end < ctx.now ? end : ctx.now);
     };
     const days = week.days.map((date): SheetDay => ({
       date,

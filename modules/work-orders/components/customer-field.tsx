@@ -43,6 +43,8 @@ export function CustomerField({ initial }: { initial: ComboItem | null }) {
   const [text, setText] = useState("");
   const [kept, setKept] = useState<typeof EMPTY>(EMPTY);
   const [picked, setPicked] = useState<ComboItem | null>(initial);
+  // What was kept from an earlier visit is known only in the browser, after the first paint.
+  // eslint-disable-next-line react-hooks/set-state-in-effect
   useEffect(() => { setPicked((now) => now ?? keptPick()); }, []);
   const customerId = watch("customerId") as string;
   const isNew = watch("newCustomer") !== null;

@@ -37,7 +37,7 @@ export function EstimateBuilder({ editor, menu, maySend }: { editor: EstimateEdi
   const [skuOf, setSkuOf] = useState<Record<string, string>>(() => Object.fromEntries(draft.lines.flatMap((l) => (l.partId && l.sku ? [[l.partId, l.sku]] : []))));
   const [valves, setValves] = useState("4");
   const form = useCommandForm({
-    schema: saveEstimateInput, defaultValues: formOf(draft) as never, guard: false,
+    schema: saveEstimateInput, defaultValues: formOf(draft), guard: false,
     action: async (sent) => saveEstimateAction(place.slug, { ...sent, input: sentOf(sent.input as unknown as EstimateForm) }),
   });
   const rhf = form.rhf as unknown as UseFormReturn<EstimateForm, unknown, never>;

@@ -26,7 +26,7 @@ export function HoldDialog({ piece }: { piece: PieceName }) {
   return (
     <CommandDialog
       trigger={<Button size="sm">Hold</Button>} title={`Put ${piece.label} on hold?`} description="Work on it stands still until the hold is ended." submit="Hold it" schema={holdInput}
-      values={{ pieceId: piece.id, reason: undefined, words: "" } as never} action={(s) => setHoldAction(slug, s)} done={() => `${piece.label} is on hold`}
+      values={{ pieceId: piece.id, reason: undefined, words: "" }} action={(s) => setHoldAction(slug, s)} done={() => `${piece.label} is on hold`}
     >
       <SelectInput name="reason" label="Why" placeholder="Choose" options={HOLD_REASONS.map((r) => ({ value: r, label: r[0]?.toUpperCase() + r.slice(1) }))} />
       <TextareaInput className="mt-3" name="words" label="More" optional rows={2} />

@@ -29,7 +29,7 @@ export function ReceiveForm({ piece }: { piece: PiecePage }) {
   const toast = useToast();
   const form = useCommandForm({
     schema: receiveInput, draft: `receive-${piece.id}`,
-    defaultValues: { pieceId: piece.id, version: piece.version, parcelCondition: undefined, counts: Object.fromEntries(TRAY_KINDS.map((k) => [k, ""])) as never, castingNumber: piece.castingNumber, serial: piece.serial, missing: "", damage: "", notes: "", place: "", fewPhotosOk: false },
+    defaultValues: { pieceId: piece.id, version: piece.version, parcelCondition: undefined, counts: Object.fromEntries(TRAY_KINDS.map((k) => [k, ""])), castingNumber: piece.castingNumber, serial: piece.serial, missing: "", damage: "", notes: "", place: "", fewPhotosOk: false },
     action: (sent) => {
       // Kinds that were left empty did not come.
       const counts = Object.fromEntries(Object.entries(sent.input.counts ?? {}).filter(([, n]) => String(n).trim() !== ""));
