@@ -6,6 +6,7 @@ import { Status } from "@/modules/ui/status";
 import { valveListWords } from "../domain/valve-list";
 import type { GearRoom } from "../queries/gear";
 import { BENCH_SCALE_SHORT } from "./gear-words";
+import { Lane } from "./lane";
 
 export type GearView = "benches" | "plates" | "fixtures" | "lift" | "camshafts" | "families";
 interface TableProps { room: GearRoom; slug: string; locale: string; edit: string | null; when: (iso: string) => string }
@@ -60,7 +61,7 @@ export function GearTable({ view, ...props }: TableProps & { view: GearView }) {
   const { room, slug, edit } = props;
   if (rows.length === 0) return null;
   return (
-    <div className="lane-x relative">
+    <Lane label={caption}>
       <table className="calm">
         <caption className="sr-only">{caption}</caption>
         <thead><tr>{heads.map(([text, right]) => <th key={text} scope="col" className={right ? "r" : undefined}>{text}</th>)}{room.canSetUp ? <th scope="col"><span className="sr-only">Change</span></th> : null}</tr></thead>
@@ -73,6 +74,6 @@ export function GearTable({ view, ...props }: TableProps & { view: GearView }) {
           ))}
         </tbody>
       </table>
-    </div>
+    </Lane>
   );
 }

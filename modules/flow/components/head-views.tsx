@@ -11,6 +11,7 @@ import type { NoiseRow } from "../domain/noise-rows";
 import type { PortFigures } from "../queries/head-figures";
 import { differenceText, flowText, liftWords } from "./flow-words";
 import { portWords } from "./library-words";
+import { Lane } from "./lane";
 
 const NOISE_MARK: Readonly<Record<NoiseRow["verdict"], string>> = { larger_than_noise: "●", within_noise: "○", not_assessed: "◌" };
 
@@ -19,13 +20,13 @@ export function NoiseVerdicts({ port, locale }: { port: Pick<PortFigures, "noise
   if (port.noise === null) return <p className="mid">No change is judged: {port.withheld.join(" ") || "the two tests cannot be compared."}</p>;
   return (
     <>
-      <table className="calm">
+      <Lane label="The change against the noise"><table className="calm">
         <caption className="sr-only">The change at each lift against the measurement noise</caption>
         <thead><tr><th scope="col">Lift, {port.liftUnit}</th><th scope="col" className="r">Change, CFM</th><th scope="col" className="r">U, 95 %</th><th scope="col" className="r">Readings</th><th scope="col">Verdict</th></tr></thead>
         <tbody>{port.noise.map((r) => (
           <tr key={r.liftUm}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{liftWords(r.liftUm, port.liftUnit, locale)}</th><td className="r q"><b>{differenceText(r.differenceCfm, locale)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${decimal(r.expandedCfm, 1, locale)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{NOISE_MARK[r.verdict]}</span> {r.words}</td></tr>
         ))}</tbody>
-      </table>
+      </table></Lane>
       {port.notStated.length > 0 ? <p className="hint p-3">Uncertainty of {port.notStated.join(" and ")} is not stated for this bench and counts as nothing here.</p> : null}
     </>
   );
@@ -54,7 +55,7 @@ export function HeadViews({ ports }: { ports: readonly PortFigures[] }) {
           return (
             <Bay key={`${p.cylinder}${p.side}`} label={`Coefficient and speed, ${portWords(p.cylinder, p.side)}`} flush>
               {lifts.length === 0 ? <p className="mid p-4">Valve sizes are not recorded, or not all valves were open, so there is no coefficient.</p> : (
-                <div className="lane-x relative"><table className="calm">
+                <Lane label={`Coefficients, ${portWords(p.cylinder, p.side)}`}><table className="calm">
                   <caption className="sr-only">Discharge coefficient on curtain area and mean speed through the curtain</caption>
                   <thead><tr><th scope="col">Lift, {unit}</th><th scope="col" className="r">L/D</th><th scope="col" className="r">{inch ? "CFM" : "L/s"} before</th><th scope="col" className="r">after</th><th scope="col" className="r">Cd before</th><th scope="col" className="r">after</th><th scope="col" className="r">{inch ? "ft/s" : "m/s"} before</th><th scope="col" className="r">after</th></tr></thead>
                   <tbody>{lifts.map((um) => {
@@ -62,7 +63,7 @@ export function HeadViews({ ports }: { ports: readonly PortFigures[] }) {
                     const speed = (r: CoefficientRow | undefined) => n(inch ? r?.speedFtS : r?.speedMS, 0);
                     return <tr key={um}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{liftWords(um, unit, locale)}</th><td className="r q">{n((a ?? b)?.liftOverDiameter, 3)}</td><td className="r q">{b ? flow(b.flowCfm) : "—"}</td><td className="r q">{a ? flow(a.flowCfm) : "—"}</td><td className="r q"><FlagMark row={b} />{n(b?.cd, 3)}</td><td className="r q"><FlagMark row={a} /><b>{n(a?.cd, 3)}</b></td><td className="r q">{speed(b)}</td><td className="r q">{speed(a)}</td></tr>;
                   })}</tbody>
-                </table></div>
+                </table></Lane>
               )}
               {[...new Set([...(p.before?.rows ?? []), ...(p.after?.rows ?? [])].flatMap((r) => r.flags))].map((f) => <p key={f} className="sm px-3 pt-3"><b>▲</b> {FLOW_FLAGS[f]}</p>)}
               <p className="hint p-3">Compressible coefficient on curtain area, {p.valves || "valves unknown"}; dry air at 20 °C and 101.325 kPa; stated at {p.atInH2O} in H₂O{ideal ? `, where air can reach ${n(inch ? ideal.idealFtS : ideal.idealMS, 0)} ${inch ? "ft/s" : "m/s"}` : ""}.</p>

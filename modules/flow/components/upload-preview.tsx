@@ -2,6 +2,7 @@
 
 import type { FileRows } from "../domain/file-rows";
 import { portWords } from "./library-words";
+import { Lane } from "./lane";
 
 const FEW = 12;
 
@@ -14,20 +15,20 @@ export function UploadPreview({ read, leaveOut, onLeaveOut }: { read: FileRows; 
     <>
       <p role="status" className="mb-3"><b>{readings.length} reading{readings.length === 1 ? "" : "s"}</b> for {ports.length === 0 ? "no port" : ports.map((p) => portWords(p.cylinder, p.side)).join(", ")}. {refusals.length === 0 ? "No row refused." : `${refusals.length} row${refusals.length === 1 ? "" : "s"} refused.`} {duplicates.length === 0 ? "" : `${duplicates.length} said twice, taken once: row ${duplicates.slice(0, 8).map((d) => `${d.row} like ${d.of}`).join(", ")}.`}</p>
       {refusals.length === 0 ? null : (
-        <div className="lane-x relative mb-4"><table className="calm">
+        <div className="mb-4"><Lane label="Refused rows"><table className="calm">
           <caption className="sr-only">Refused rows</caption>
           <thead><tr><th scope="col">Row</th><th scope="col">What is wrong</th><th scope="col">Leave out</th></tr></thead>
           <tbody>{refusals.slice(0, 100).map((r) => (
             <tr key={r.row}><td className="q">{r.row}</td><td><b className="neg">▲ {r.column}.</b> {r.words}</td><td><label className="tick"><input type="checkbox" checked={leaveOut.has(r.row)} onChange={() => toggle(r.row)} /><span className="sr-only">Leave out row {r.row}</span></label></td></tr>
           ))}</tbody>
-        </table></div>
+        </table></Lane></div>
       )}
       {readings.length === 0 ? null : (
-        <div className="lane-x relative"><table className="calm">
+        <Lane label="First readings"><table className="calm">
           <caption className="sr-only">First readings of the file</caption>
           <thead><tr><th scope="col">Row</th><th scope="col">Port</th><th scope="col" className="r">Lift</th><th scope="col" className="r">Repeat</th><th scope="col" className="r">Reading</th><th scope="col" className="r">Held</th></tr></thead>
           <tbody>{readings.slice(0, FEW).map((r) => <tr key={r.row}><td className="q">{r.row}</td><td>{portWords(r.cylinder, r.side)}</td><td className="r q">{r.liftText}</td><td className="r q">{r.repeatNo}</td><td className="r q"><b>{r.valueText}</b></td><td className="r q">{r.pressureText || "nominal"}</td></tr>)}</tbody>
-        </table>{readings.length > FEW ? <p className="hint">And {readings.length - FEW} more.</p> : null}</div>
+        </table>{readings.length > FEW ? <p className="hint">And {readings.length - FEW} more.</p> : null}</Lane>
       )}
     </>
   );

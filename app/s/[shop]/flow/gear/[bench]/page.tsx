@@ -12,6 +12,7 @@ import { Flag } from "@/modules/ui/flag";
 import { Kv } from "@/modules/ui/kv";
 import { Note } from "@/modules/ui/note";
 import { PageHead } from "@/modules/ui/page-head";
+import { Lane } from "@/modules/flow/components/lane";
 
 export const metadata = { title: "Bench" };
 
@@ -39,7 +40,7 @@ export default async function BenchPage({ params }: { params: Promise<{ shop: st
           )}
           <Bay label="Checks" flush>
             {checks.length === 0 ? <p className="mid p-4">No check is on record.</p> : (
-              <div className="lane-x relative"><table className="calm">
+              <Lane label="Checks"><table className="calm">
                 <caption className="sr-only">Checks of {bench.name}, newest first</caption>
                 <thead><tr><th scope="col">When</th><th scope="col">By</th><th scope="col" className="r">Factor</th><th scope="col" className="r">Moved %</th><th scope="col" className="r">Worst plate %</th><th scope="col">Plates: certified, shown</th></tr></thead>
                 <tbody>{checks.map((c) => (
@@ -49,7 +50,7 @@ export default async function BenchPage({ params }: { params: Promise<{ shop: st
                     <td className="sm">{c.plates.length === 0 ? "looked over" : c.plates.map((p) => `${p.serial}: ${n(p.referenceCfm, 1)}, ${p.indicatedText}`).join("; ")}{c.note ? ` ${c.note}` : ""} {c.flags.map((f) => <Flag key={f} icon="warn">{words(f)}</Flag>)}</td>
                   </tr>
                 ))}</tbody>
-              </table></div>
+              </table></Lane>
             )}
           </Bay>
         </Bays>

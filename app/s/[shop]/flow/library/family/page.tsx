@@ -13,6 +13,7 @@ import { LinkButton } from "@/modules/ui/button";
 import { EmptyState } from "@/modules/ui/empty-state";
 import { PageHead } from "@/modules/ui/page-head";
 import { Views } from "@/modules/ui/views";
+import { Lane } from "@/modules/flow/components/lane";
 
 export const metadata = { title: "What a family did" };
 const LAST = 10;
@@ -64,7 +65,7 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
       <Bays className="mt-7">
         <Bay label="These heads" flush>
           {p.ports.length === 0 ? <p className="mid p-4">No head of this family was flowed after work yet.</p> : (
-            <div className="lane-x relative"><table className="calm">
+            <Lane label="These heads"><table className="calm">
               <caption className="sr-only">Ports of the last heads flowed after work, newest first</caption>
               <thead><tr><th scope="col">Head</th><th scope="col">Port</th><th scope="col">Work done</th><th scope="col" className="r">Mean change, CFM</th><th scope="col" className="r">%</th><th scope="col">What stands beside it</th><th scope="col" className="r">Flowed</th></tr></thead>
               <tbody>{p.ports.map((x) => (
@@ -75,15 +76,15 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
                   <td className="sm">{x.gain === "absent" ? "No before test." : [...x.reasons, ...x.notes].join(" ") || "—"}</td><td className="r nw">{day(x.flowedAt)}</td>
                 </tr>
               ))}</tbody>
-            </table></div>
+            </table></Lane>
           )}
         </Bay>
         <Bay label="Gains as figures" flush>
-          <div className="lane-x relative"><table className="calm">
+          <Lane label="Gains as figures"><table className="calm">
             <caption className="sr-only">Gain at each lift: middle, least and most</caption>
             <thead><tr><th scope="col">Lift, {unitOf}</th><th scope="col" className="r">Ports</th><th scope="col" className="r">Least</th><th scope="col" className="r">Middle</th><th scope="col" className="r">Most</th><th scope="col" className="r">Lost flow</th></tr></thead>
             <tbody>{p.gains.map((g) => <tr key={g.liftUm} className={g.isThin ? "dim" : undefined}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(g.liftUm, unitOf, locale)}</th><td className="r q">{g.n}</td><td className="r q">{differenceText(g.dots.at(-1)?.gainCfm ?? 0, locale)}</td><td className="r q"><b>{differenceText(g.medianCfm, locale)}</b></td><td className="r q">{differenceText(g.dots[0]?.gainCfm ?? 0, locale)}</td><td className="r q">{g.losses === 0 ? "none" : g.losses}</td></tr>)}</tbody>
-          </table></div>
+          </table></Lane>
         </Bay>
       </Bays>
     </main>
