@@ -18,6 +18,9 @@ import type { TrayKind } from "../domain/tray-kinds";
 import { refuseReleaseInput, releaseInput } from "../input";
 import { CommandDialog } from "./command-dialog";
 
+/** Where a loose part that came in is now. */
+const FATES = [["fitted", "fitted"], ["returned", "go back"], ["scrapped", "scrapped, agreed"]] as const;
+
 /** Final inspection of one piece: what is missing named first, then the list to tick and the tray to account for. */
 export function InspectForm({ pieceId, version, tag, came, missing, alone, back }: { pieceId: string; version: number; tag: string; came: Readonly<Record<string, number>>; missing: readonly string[]; alone: boolean; back: string }) {
   const { slug } = usePlace();
@@ -51,7 +54,7 @@ export function InspectForm({ pieceId, version, tag, came, missing, alone, back 
         <Bay label="Parts that came in" flush>
           {kinds.length === 0 ? <p className="mid px-[18px] pb-3 pt-1">No loose parts came with it.</p> : (
             <table className="calm">
-              <thead><tr><th scope="col">Kind</th><th scope="col" className="r">Came</th><th scope="col">Fitted</th><th scope="col">Returned</th><th scope="col">Scrapped, agreed</th><th scope="col" className="r">Open</th></tr></thead>
+              <thead><tr><th scope="col">Kind</th><th scope="col" className="r">Came</th><th scope="col">Fitted</th><th scope="col">Go back</th><th scope="col">Scrapped, agreed</th><th scope="col" className="r">Open</th></tr></thead>
               <tbody>
                 {kinds.map(([kind, n], i) => {
                   const row = rows?.[i];
@@ -59,7 +62,7 @@ export function InspectForm({ pieceId, version, tag, came, missing, alone, back 
                   return (
                     <tr key={kind}>
                       <td className="b">{kind}</td><td className="r q">{n}</td>
-                      {(["fitted", "returned", "scrapped"] as const).map((f) => <td key={f} style={{ minWidth: 76 }}><NumberInput hideLabel name={`tray.${i}.${f}`} label={`${kind}, ${f}`} /></td>)}
+                      {FATES.map(([f, words]) => <td key={f} style={{ minWidth: 76 }}><NumberInput hideLabel whole name={`tray.${i}.${f}`} label={`${kind}, ${words}`} /></td>)}
                       <td className="r q b">{left === 0 ? "0" : left}</td>
                     </tr>
                   );

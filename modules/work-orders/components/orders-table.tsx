@@ -34,7 +34,7 @@ const POLL_MS = 30_000;
 export interface OrdersAskText { view: OrderView; q: string; station: string; person: string; promised: string; sort: string; descending: string }
 
 /** The open orders and their saved views; what is picked lives in the address, so that Back and bookmarks work. */
-export function OrdersTable({ ask, first, mayOpen }: { ask: OrdersAskText; first: OrdersPage; mayOpen: boolean }) {
+export function OrdersTable({ ask, first, may }: { ask: OrdersAskText; first: OrdersPage; may: { open: boolean; customers: boolean; menu: boolean } }) {
   const place = usePlace();
   const router = useRouter();
   const [q, setQ] = useState(ask.q);
@@ -69,7 +69,7 @@ export function OrdersTable({ ask, first, mayOpen }: { ask: OrdersAskText; first
   const order = sort.column === "number" ? (sort.descending ? "newest first" : "oldest first") : sort.column === "promised" ? "by promise" : "by customer";
   return (
     <>
-      <PageHead title="Work orders" close actions={<Button className="hide-s" icon="print" onClick={() => window.print()}>Print list</Button>} />
+      <PageHead title="Work orders" close actions={<>{may.customers ? <LinkButton href={`/s/${place.slug}/customers`}>Customers</LinkButton> : null}{may.menu ? <LinkButton className="hide-s" href={`/s/${place.slug}/settings/menu`}>Menu</LinkButton> : null}<Button className="hide-s" icon="print" onClick={() => window.print()}>Print list</Button></>} />
       <Views label="Saved views" current={ask.view} views={VIEW_WORDS.map(([v, text]) => ({ key: v, label: text, href: href({ view: v }), count: newest.counts[v] }))} />
       <div className="bar">
         <SearchWell label="Narrow the list" placeholder="Narrow by name, engine or tag" value={q} onChange={(e) => setQ(e.target.value)} />
@@ -83,7 +83,7 @@ export function OrdersTable({ ask, first, mayOpen }: { ask: OrdersAskText; first
         compact={(o) => <CompactRow order={o} place={place} now={newest.now} />} sort={sort} onSortChange={(s) => setSort(s ?? { column: "number", descending: true })}
         state={isError && rows.length === 0 ? "error" : isPending ? "loading" : "ready"} loadingLabel="Fetching orders."
         error={<ErrorState title="The list did not come" action={<Button onClick={() => void refetch()}>Try again</Button>}>Nothing is lost. The shop&rsquo;s records did not answer.</ErrorState>}
-        empty={<EmptyState title={narrowed ? "No order fits" : `No orders here`} action={narrowed ? <LinkButton href={`/s/${place.slug}/orders`}>Show all open orders</LinkButton> : mayOpen && ask.view === "open" ? <Button variant="go" onClick={() => router.push(`/s/${place.slug}/orders/new`)}>New work order</Button> : undefined}>{narrowed ? "Take a filter off, or type less." : EMPTY_WORDS[ask.view]}</EmptyState>}
+        empty={<EmptyState title={narrowed ? "No order fits" : `No orders here`} action={narrowed ? <LinkButton href={`/s/${place.slug}/orders`}>Show all open orders</LinkButton> : may.open && ask.view === "open" ? <Button variant="go" onClick={() => router.push(`/s/${place.slug}/orders/new`)}>New work order</Button> : undefined}>{narrowed ? "Take a filter off, or type less." : EMPTY_WORDS[ask.view]}</EmptyState>}
       />
       {hasNextPage ? <div className="mt-3 text-center noprint"><Button onClick={() => void fetchNextPage()} pending={isFetchingNextPage} pendingText="Fetching…">Show more</Button></div> : null}
       <div className="foot hide-s">

@@ -14,12 +14,12 @@ import { Note } from "@/modules/ui/note";
 import { usePlace } from "@/modules/ui/place";
 import { useToast } from "@/modules/ui/toast";
 import { receivePieceAction } from "../actions";
+import { PHOTOS_WANTED } from "../domain/photos-wanted";
 import { TRAY_KINDS } from "../domain/tray-kinds";
 import { receiveInput } from "../input";
 import type { PiecePage } from "../queries/piece";
 import { PhotoStrip } from "./photo-strip";
 
-const PHOTOS_WANTED = 4;
 const CONDITIONS = [["sound", "Sound"], ["handed over", "Handed over"], ["crushed", "Crushed"], ["wet", "Wet"], ["open", "Open"]] as const;
 
 /** Books a piece in at the back door: photos, parcel, what lies in the tray, what is missing. Then the tag. */
@@ -29,7 +29,7 @@ export function ReceiveForm({ piece }: { piece: PiecePage }) {
   const toast = useToast();
   const form = useCommandForm({
     schema: receiveInput, draft: `receive-${piece.id}`,
-    defaultValues: { pieceId: piece.id, version: piece.version, parcelCondition: undefined, counts: Object.fromEntries(TRAY_KINDS.map((k) => [k, ""])), castingNumber: piece.castingNumber, serial: piece.serial, missing: "", damage: "", notes: "", place: "", fewPhotosOk: false },
+    defaultValues: { pieceId: piece.id, version: piece.version, parcelCondition: "sound", counts: Object.fromEntries(TRAY_KINDS.map((k) => [k, ""])), castingNumber: piece.castingNumber, serial: piece.serial, missing: "", damage: "", notes: "", place: "", fewPhotosOk: false },
     action: (sent) => {
       // Kinds that were left empty did not come.
       const counts = Object.fromEntries(Object.entries(sent.input.counts ?? {}).filter(([, n]) => String(n).trim() !== ""));
@@ -46,7 +46,7 @@ export function ReceiveForm({ piece }: { piece: PiecePage }) {
     <CommandForm form={form} toFix="before the tag is given" label="Book in">
       <Bays className="mt-2">
         <Bay label={`Photos, ${piece.photos.length}`}>
-          <PhotoStrip subject={{ kind: "piece", id: piece.id }} photoIds={piece.photos.map((p) => p.id)} label="Photo" mayAdd wanted={PHOTOS_WANTED} />
+          <PhotoStrip subject={{ kind: "piece", id: piece.id }} photoIds={piece.photos.map((p) => p.id)} label="Photo of the head" mayAdd wanted={PHOTOS_WANTED} />
           {few ? <Checkbox className="mt-2" name="fewPhotosOk" label={`Fewer than ${PHOTOS_WANTED} photos, it is so`} /> : null}
         </Bay>
         <Bay label="Parcel">
@@ -65,13 +65,13 @@ export function ReceiveForm({ piece }: { piece: PiecePage }) {
             <TextInput name="serial" label="Serial" optional hint={piece.serial ? `Announced as ${piece.serial}` : "As stamped"} />
             <TextareaInput name="damage" label="Damage seen" optional rows={2} hint="The customer is told." />
             <TextareaInput name="missing" label="Missing" optional rows={2} hint="The customer is told." />
-            <TextInput name="place" label="Lies at" optional hint="Rack, shelf or bench." />
+            <TextInput name="place" label="Where it lies" optional hint="Rack, shelf or bench. Left out: the counter." />
             <TextInput name="notes" label="Note for the bench" optional />
           </div>
         </Bay>
       </Bays>
       <div className="form-act">
-        <SubmitButton hotkey="F9" size="xl" pendingText="Booking in…">Book in and give the tag</SubmitButton>
+        <SubmitButton hotkey="F9" size="xl" pendingText="Booking in…">Book in</SubmitButton>
       </div>
     </CommandForm>
   );

@@ -15,7 +15,7 @@ export default async function OrdersPage({ params, searchParams }: { params: Pro
   return (
     <main id="main" className="page">
       <OrdersTable
-        key={`${ask.view}${ask.station}${ask.person}${ask.promised}`} first={await findOrders(ctx, ask)} mayOpen={ableTo(ctx, "orders.open")}
+        key={`${ask.view}${ask.station}${ask.person}${ask.promised}`} first={await findOrders(ctx, ask)} may={{ open: ableTo(ctx, "orders.open"), customers: ableTo(ctx, "customers.see"), menu: ableTo(ctx, "menu.write") }}
         ask={{ view: ask.view, q: ask.q, station: ask.station, person: ask.person, promised: ask.promised, sort: ask.sort, descending: ask.descending }}
       />
     </main>

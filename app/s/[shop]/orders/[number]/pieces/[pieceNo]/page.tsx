@@ -1,3 +1,4 @@
+import Link from "next/link";
 import { notFound } from "next/navigation";
 import { ableTo } from "@/modules/access/context";
 import { orNotFound, shopPage } from "@/modules/access/page";
@@ -34,10 +35,10 @@ export default async function PiecePageView({ params }: { params: Promise<{ shop
   return (
     <main id="main" className="page">
       <PageHead
-        number={piece.tag ?? `–`} numberLabel={`Tag ${piece.tag ?? "not given yet"},`} numberSize="m" title={piece.family}
-        sub={<><a className="lk" href={at}>{piece.orderNumber}</a>, {piece.customer}{piece.promisedOn ? `, promised ${shortDate(piece.promisedOn, place.locale)}` : ""}</>}
+        title={piece.tag ? <span className="num n-m">{piece.tag}</span> : `Head ${piece.pieceNo}`}
+        sub={<>{piece.family}. <Link className="lk" href={at}>{piece.orderNumber}</Link>, {piece.customer}{piece.promisedOn ? `, promised ${shortDate(piece.promisedOn, place.locale)}` : ""}</>}
         actions={<>
-          {piece.tag ? <LinkButton icon="print" href={`${at}/tag/${piece.pieceNo}`} newTab>Print tag</LinkButton> : null}
+          {piece.tag && ableTo(ctx, "pieces.receive") ? <LinkButton icon="print" href={`${at}/tag/${piece.pieceNo}`} newTab>Print tag</LinkButton> : null}
           <LinkButton icon="print" href={`${at}/traveler?head=${piece.pieceNo}`} newTab>Traveler</LinkButton>
           {piece.tag ? <LinkButton icon="tube" href={`/s/${place.slug}/flow?tag=${piece.tag}`}>Flow sheet</LinkButton> : null}
           {!piece.tag && ableTo(ctx, "pieces.receive") ? <LinkButton variant="go" icon="box" href={`${at}/receive/${piece.pieceNo}`}>Book in</LinkButton> : null}
@@ -48,7 +49,7 @@ export default async function PiecePageView({ params }: { params: Promise<{ shop
         <Bays>
           <RoutingBay order={{ ...order, pieces: own ? [own] : [], operations: order.operations.filter((o) => o.pieceId === piece.id) }} place={place} />
           <FlowCheck ctx={ctx} pieceIds={[piece.id]} />
-          <Bay label={`Photos, ${piece.photos.length}`}><PhotoStrip subject={{ kind: "piece", id: piece.id }} photoIds={piece.photos.map((p) => p.id)} label="Photo" mayAdd={piece.handedOverAt === null} /></Bay>
+          <Bay label={`Photos, ${piece.photos.length}`}><PhotoStrip subject={{ kind: "piece", id: piece.id }} photoIds={piece.photos.map((p) => p.id)} label="Photo of the head" mayAdd={piece.handedOverAt === null && ableTo(ctx, "files.add")} /></Bay>
         </Bays>
         <Bays>
           <Bay label="Head" aside={isHere ? <MovePieceDialog pieceId={piece.id} version={piece.version} place={piece.place} /> : undefined}>

@@ -23,7 +23,7 @@ export default async function InspectPage({ params }: { params: Promise<{ shop: 
       {piece.releasedAt ? <EmptyState title="Released already" action={<LinkButton href={back}>Open it</LinkButton>}>A lead opens it again, with a reason.</EmptyState> : (
         <div className="split" style={{ "--side": "340px" } as React.CSSProperties}>
           <InspectForm pieceId={piece.id} version={piece.version} tag={piece.tag ?? ""} came={facts.came} missing={missing} alone={facts.isOwnPorting && facts.isAlone} back={back} />
-          <Bay label="As it came"><PhotoStrip subject={{ kind: "piece", id: piece.id }} photoIds={piece.photos.map((p) => p.id)} label="Photo" mayAdd />{piece.check?.damage ? <p className="mt-2">Damage seen then: {piece.check.damage}</p> : null}</Bay>
+          <Bay label="As it came"><PhotoStrip subject={{ kind: "piece", id: piece.id }} photoIds={piece.photos.map((p) => p.id)} label="Photo of the head" mayAdd />{piece.check?.damage ? <p className="mt-2">Damage seen then: {piece.check.damage}</p> : null}</Bay>
         </div>
       )}
     </main>
