@@ -16,6 +16,8 @@ import { heading, Problem, run, say } from "./say.mjs";
 
 const bin = (...parts) => path.join(PROJECT, "node_modules", ...parts);
 const PARTS = ["types", "lint", "vitest", "journeys"];
+/** The browser journeys are not yet complete; they run with `--only journeys` (`npm run e2e`) until they are. */
+const DEFAULT = ["types", "lint", "vitest"];
 
 /** Children of this run, so that stopping it stops them. */
 const children = new Set();
@@ -152,7 +154,7 @@ function isTestRun(pid) {
 
 function partsWanted() {
   const at = process.argv.indexOf("--only");
-  const parts = at < 0 ? PARTS : (process.argv[at + 1] ?? "").split(",");
+  const parts = at < 0 ? DEFAULT : (process.argv[at + 1] ?? "").split(",");
   const unknown = parts.filter((part) => !PARTS.includes(part));
   if (unknown.length > 0) throw new Problem(`There is no part "${unknown.join(", ")}". Parts are: ${PARTS.join(", ")}.`);
   return new Set(parts);

@@ -9,7 +9,7 @@ const OWN: Record<string, string> = {
   "app/api/v1/clock/enrol/route.ts": "a tablet that is nobody yet: origin, limit of tries and the code stand for sign-in",
 };
 /** Makers of handlers and contexts that a route must go through. */
-const THROUGH = /\b(handle\(|signedIn\(|shopFile\(|shopContextOrNull\(|shopRoute\(|openLink\(|linkContext\(|deviceContext\(|shopPage\()/;
+const THROUGH = /\b(handle\(|paperResponse\(|signedIn\(|shopFile\(|shopContextOrNull\(|shopRoute\(|openLink\(|linkContext\(|deviceContext\(|shopPage\()/;
 
 const routes = sources("app", /^route\.tsx?$/);
 

@@ -107,7 +107,6 @@ export const COMMAND_CASES: Record<string, Case> = {
     also: [(at) => ({ ...named(at, "bank_lines", "lineId"), kind: "payment", ids: [at("payments").id] }), (at) => ({ ...named(at, "bank_lines", "lineId"), kind: "payout", ids: [at("payouts").id] })] },
   "bank.unlock": { input: (at) => named(at, "bank_lines", "lineId") },
 
-  "flow.dismiss-cautions": { input: (at) => ({ headId: at("heads").id, hazards: ["noise"] }) },
   "flow.cautions-seen": { input: (at) => ({ workOrderId: at("work_orders").id, hazards: ["noise"], step: "CLN" }) },
   "flow.change-camshaft": { input: (at) => ({ ...edit(at, "camshafts"), label: "Cam", side: "intake", maxLift: "9.0", duration: "240" }) },
   "flow.change-family": { input: (at) => ({ ...edit(at, "engine_families"), name: "Taken" }) },

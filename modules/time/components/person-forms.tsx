@@ -15,7 +15,7 @@ import { useCommandForm } from "@/modules/ui/form/use-command-form";
 import { useField } from "@/modules/ui/form/use-field";
 import { usePlace } from "@/modules/ui/place";
 import { addPersonAction, changePersonAction, setBadgeAction, setPinAction, setRateAction } from "../actions";
-import { ROLE_WORDS } from "../domain/role-words";
+import { ROLE_WORDS } from "../role-words";
 import { badgeInput, personEditInput, personInput, pinInput, rateInput } from "../input";
 import type { PersonRow } from "../queries/settings-lists";
 import { ActButton } from "./act-button";

@@ -8,7 +8,7 @@ import { Note } from "@/modules/ui/note";
 import { WallClock } from "@/modules/ui/wall-clock";
 import type { BoardJob, BoardPerson, ClockBoard } from "../board";
 import { elapsedMinutes } from "../domain/elapsed";
-import { jobsFor } from "../domain/kept-board";
+import { jobsFor } from "./kept-board";
 import { LeftPanel, ReasonPanel } from "./ask-panel";
 import { NotOnAHead, WorkList } from "./choices";
 import { KeptList } from "./kept-list";

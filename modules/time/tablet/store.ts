@@ -1,6 +1,6 @@
 import { openDB, type DBSchema, type IDBPDatabase } from "idb";
 import type { ClockBoard } from "../board";
-import type { TabletPress } from "../domain/kept-board";
+import type { TabletPress } from "./kept-board";
 
 /** A press on its way. It is written here first and leaves only when the server has it. No PIN, no badge: at most sealed. */
 export interface KeptItem {

@@ -2,7 +2,7 @@
 
 import { useCallback, useEffect, useRef, useState } from "react";
 import type { ClockBoard, OwnScreen } from "../board";
-import { boardAfter, type TabletPress } from "../domain/kept-board";
+import { boardAfter, type TabletPress } from "./kept-board";
 import { badgeDigest, sealProof } from "./seal-proof";
 import { askToStay, keep, keptItems, readBoard, readOffset, writeBoard, type KeptItem } from "./store";
 import { askWho, fetchBoard, sendKept, type Said } from "./send";

@@ -184,6 +184,7 @@ describe("events", () => {
     await bench.close();
     bench = await openBench({ now: () => now, file: path.join(folder, "payments.json") });
     await bench.until(() => bench.heard.length === 2, "both after the restart");
+    expect(bench.heard).toHaveLength(2);
   });
 });
 

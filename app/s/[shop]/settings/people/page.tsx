@@ -1,7 +1,7 @@
 import { ableTo } from "@/modules/access/context";
 import { shopPage } from "@/modules/access/page";
 import { AddPersonForm } from "@/modules/time/components/person-forms";
-import { roleWord } from "@/modules/time/domain/role-words";
+import { roleWord } from "@/modules/time/role-words";
 import { peopleList } from "@/modules/time/queries/settings-lists";
 import { Bay } from "@/modules/ui/bay";
 import { Flag } from "@/modules/ui/flag";

@@ -6,7 +6,7 @@ import { notFound } from "next/navigation";
 import { InvitationBay } from "@/modules/time/components/invitation-bay";
 import { LeaveButton } from "@/modules/time/components/leave-button";
 import { ChangePersonForm, ClockKeys, RatesBay } from "@/modules/time/components/person-forms";
-import { roleWord } from "@/modules/time/domain/role-words";
+import { roleWord } from "@/modules/time/role-words";
 import { invitationFor } from "@/modules/time/identity/invitation";
 import { getPerson } from "@/modules/time/queries/settings-lists";
 import { Bay, Bays } from "@/modules/ui/bay";

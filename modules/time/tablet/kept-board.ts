@@ -1,5 +1,5 @@
 import type { BoardJob, BoardPerson, ClockBoard } from "../board";
-import { elapsedMinutes } from "./elapsed";
+import { elapsedMinutes } from "../domain/elapsed";
 
 export const TABLET_PRESSES = ["doorIn", "doorOut", "mealOut", "mealIn", "startOperation", "switchTo", "stopClock", "operationDone", "startIndirect", "sayWhenLeft"] as const;
 export type TabletPress = (typeof TABLET_PRESSES)[number];
