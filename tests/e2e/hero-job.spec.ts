@@ -175,7 +175,7 @@ test("inspector: whoever ported it may not release it, somebody else does", asyn
   const ported = await inspector.inspect(crew, "Anselm", order);
   await expect(ported.getByText("You ported this piece. Somebody else must release it.").first()).toBeVisible();
   const released = await inspector.inspect(crew, "June", order);
-  await expect(released.getByText(`${TAG} released`)).toBeVisible();
+  await expect(released.getByText(`${TAG} is released`)).toBeVisible();
 });
 
 test("bookkeeper: drafts the invoice, issues it and mails it with its paper", async () => {

@@ -17,6 +17,7 @@ export async function timelineOf(ctx: TxContext, workOrderId: string): Promise<T
   const { tx, shop } = ctx;
   const s = shop.id;
   const seesPrices = ableTo(ctx, "prices.see");
+  const seesCustomer = ableTo(ctx, "customers.see");
   const out: TimelineItem[] = [];
   const add = (at: Date | null, who: string | null, words: string, isNow = false) => { if (at) out.push({ at: at.toISOString(), who: who ?? "", words, isNow }); };
   const names = new Map((await tx.select({ id: people.id, name: people.shortName }).from(people).where(eq(people.shopId, s))).map((p) => [p.id, p.name]));
@@ -29,7 +30,7 @@ export async function timelineOf(ctx: TxContext, workOrderId: string): Promise<T
   const ids = pieces.map((p) => p.id);
   const tag = (id: string) => pieces.find((p) => p.id === id)?.tag ?? "";
   const versions = await tx.select().from(estimates).where(and(eq(estimates.shopId, s), eq(estimates.workOrderId, workOrderId)));
-  for (const e of versions) add(e.sentAt, null, `Estimate version ${e.estimateNo} sent${e.sentTo ? ` to ${e.sentTo}` : " in print"}`);
+  for (const e of versions) add(e.sentAt, null, `Estimate version ${e.estimateNo} sent${!e.sentTo ? " in print" : seesCustomer ? ` to ${e.sentTo}` : ""}`);
   const answered = versions.length === 0 ? [] : await tx.select().from(approvals).where(and(eq(approvals.shopId, s), inArray(approvals.estimateId, versions.map((v) => v.id))));
   for (const a of answered) {
     const e = versions.find((v) => v.id === a.estimateId);

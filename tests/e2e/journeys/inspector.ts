@@ -7,7 +7,7 @@ export async function inspect(crew: Crew, who: string, order: string): Promise<P
   await page.goto(crew.at(`/orders/${order}/pieces/1/inspect`));
   const form = page.getByRole("form", { name: "Final inspection" });
   for (const box of await form.getByRole("checkbox").all()) await box.check();
-  for (const back of await form.getByLabel("Go back").all()) await back.fill("4");
+  for (const back of await form.getByLabel(/, go back$/).all()) await back.fill("4");
   await form.getByRole("button", { name: /^Release / }).click();
   return page;
 }
