@@ -156,6 +156,13 @@ describe("two tests over each other", () => {
     const over = await overlayOf(a.as("tech"), { a: before, b: after });
     expect(over).toMatchObject({ comparable: true, samePort: false });
     expect(over.rows.at(-1)).toMatchObject({ liftUm: 10160, a: 127, b: 143.6, difference: 16.6 });
+    const late = await heroTest(one, "intake", "after", "2026-06-20T15:00:00Z");
+    const apart = await overlayOf(a.as("tech"), { a: late, b: after });
+    expect(apart.notes.map((n) => n.words)).toContain("The two were read 159 days apart.");
+    const bench2 = await overlayOf(a.as("tech"), { a: before, b: load.aTest });
+    expect(bench2.comparable).toBe(false);
+    expect(bench2.reasons.map((r) => r.words).join(" ")).toMatch(/The first was read on Bench 1, the second on Load bench L\./);
+    expect(bench2.reasons.map((r) => r.words).join(" ")).not.toMatch(/the the/i);
     const exhaust = await heroTest(two, "exhaust", "after", "2026-01-13T15:00:00Z");
     const withheld = await overlayOf(a.as("tech"), { a: before, b: exhaust });
     expect(withheld.comparable).toBe(false);

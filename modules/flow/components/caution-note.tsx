@@ -29,14 +29,12 @@ export function CautionNote({ hazards, workOrderId, step, big = false }: { hazar
   };
   return (
     <section aria-label="Before you begin" className="noprint">
-      <Note
-        big={big}
-        action={workOrderId === null ? undefined : <Button size={big ? "xl" : "sm"} pending={state === "sending"} pendingText="Writing it down…" onClick={() => void read(workOrderId)}>I have read this</Button>}
-      >
+      <Note big={big}>
         {cautions.map((c) => (
           <span key={c.hazard} className="mb-1 block"><b>{c.title}</b> {c.words} <span className="dim sm">{c.source}.</span></span>
         ))}
         <span className="mid block">{CAUTION_CLOSE}</span>
+        {workOrderId === null ? null : <span className="mt-2 block"><Button size={big ? "xl" : "sm"} pending={state === "sending"} pendingText="Writing it down…" onClick={() => void read(workOrderId)}>I have read this</Button></span>}
         {state === "failed" ? <span role="alert" className="block"><b>Not written down.</b> The work can go on; try again when the link is back.</span> : null}
       </Note>
     </section>

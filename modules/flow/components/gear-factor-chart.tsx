@@ -19,7 +19,7 @@ export function GearFactorChart({ points, locale, dateText }: { points: readonly
   const ticks = [middle - half * 0.8, middle, middle + half * 0.8];
   const label = `Bench factor over ${points.length} check${points.length === 1 ? "" : "s"}: from ${decimal(first.factor, 4, locale)} on ${dateText(first.at)} to ${decimal(last.factor, 4, locale)} on ${dateText(last.at)}. The axis does not begin at zero.`;
   return (
-    <svg className="ch" viewBox={`0 0 ${W} ${H}`} role="img" aria-label={label}>
+    <svg className="ch max-w-[720px]" viewBox={`0 0 ${W} ${H}`} role="img" aria-label={label}>
       {ticks.map((t) => (
         <g key={t}>
           <path className="gr" d={`M${LEFT} ${y(t)}H${W - RIGHT}`} />

@@ -10,7 +10,7 @@ const BLANKS = ["Tag or mark", "Port", "Order", "Date", "By", "Bench", "Fixture,
 
 /** An empty ladder for one port, both sides, two readings a lift; prints alone on one page. */
 export function LadderPaper({ shopName, nominal, families }: { shopName: string; nominal: number; families: readonly FamilyLift[] }) {
-  const [family, setFamily] = useState(families[0]?.name ?? "");
+  const [family, setFamily] = useState((families.find((f) => f.camLiftIntakeUm !== null || f.camLiftExhaustUm !== null) ?? families[0])?.name ?? "");
   const [unit, setUnit] = useState<LiftUnit>("in");
   const camOf = (name: string, u: LiftUnit) => { const f = families.find((x) => x.name === name); const um = Math.max(f?.camLiftIntakeUm ?? 0, f?.camLiftExhaustUm ?? 0); return um > 0 ? liftText(um, u) : ""; };
   const [camLift, setCamLift] = useState(camOf(family, "in"));

@@ -118,11 +118,14 @@ export interface Overlay {
 }
 
 /** Two castings are not one port before and after: they are the first and the second. */
-const asFirstAndSecond = <C extends string>(reasons: readonly Reason<C>[], samePort: boolean): Reason<string>[] =>
-  reasons.map((r) => ({
-    code: r.code,
-    words: samePort ? r.words : r.words.replace(/\b[Bb]efore\b/g, (w) => (w === "Before" ? "The first" : "the first")).replace(/\bafter\b/g, "the second").replace(/\bthe the\b/g, "the"),
-  }));
+const asFirstAndSecond = <C extends string>(reasons: readonly Reason<C>[], samePort: boolean, daysApart: number): Reason<string>[] =>
+  reasons.map((r) => {
+    if (samePort) return r;
+    // Which of the two castings came first says nothing here.
+    if (r.code === "OLD_BASELINE") return { code: r.code, words: `The two were read ${daysApart} days apart.` };
+    const word = (name: string) => (whole: string) => (/^[A-Z]/.test(whole) ? `The ${name}` : `the ${name}`);
+    return { code: r.code, words: r.words.replace(/\b(the )?before\b/gi, word("first")).replace(/\b(the )?after\b/gi, word("second")) };
+  });
 
 /**
  * Any two tests over each other, and whether they may be compared. Figures of a difference exist only when they may.
@@ -147,12 +150,13 @@ export async function overlayOf(ctx: ShopContext, ask: { a: string; b: string })
     const camLiftUm = b.camLiftUm ?? a.camLiftUm;
     const compared = compareSets({ before: readingSetOf(a), after: readingSetOf(b), camLiftUm, benchCheckHoursMax: benchCheckHours });
     const base = { a: sideOf(a), b: sideOf(b), camLiftUm, samePort: a.headId === b.headId && a.cylinder === b.cylinder && a.side === b.side };
+    const daysApart = Math.floor(Math.abs(Date.parse(b.startedAt) - Date.parse(a.startedAt)) / 86_400_000);
     if (!compared.ok) return { ...base, comparable: false, reasons: [{ code: compared.refusal.code, words: compared.refusal.message }], notes: [], rows: [], meanDifferenceCfm: null };
     const value = compared.value;
     if (!value.comparable) {
-      return { ...base, comparable: false, reasons: asFirstAndSecond(value.reasons, base.samePort), notes: asFirstAndSecond(value.notes, base.samePort), rows: value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null })), meanDifferenceCfm: null };
+      return { ...base, comparable: false, reasons: asFirstAndSecond(value.reasons, base.samePort, daysApart), notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null })), meanDifferenceCfm: null };
     }
     const rows = [...value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: r.gainCfm })), ...value.unpairedRows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null }))];
-    return { ...base, comparable: true, reasons: [], notes: asFirstAndSecond(value.notes, base.samePort), rows: rows.sort((x, y) => x.liftUm - y.liftUm), meanDifferenceCfm: value.meanGainCfm };
+    return { ...base, comparable: true, reasons: [], notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: rows.sort((x, y) => x.liftUm - y.liftUm), meanDifferenceCfm: value.meanGainCfm };
   });
 }
