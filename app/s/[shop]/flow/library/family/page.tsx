@@ -70,7 +70,7 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
               <thead><tr><th scope="col">Head</th><th scope="col">Port</th><th scope="col">Work done</th><th scope="col" className="r">Mean change, CFM</th><th scope="col" className="r">%</th><th scope="col">What stands beside it</th><th scope="col" className="r">Flowed</th></tr></thead>
               <tbody>{p.ports.map((x) => (
                 <tr key={`${x.headId}${x.cylinder}`}>
-                  <td><Link className="lk ord" href={`/s/${slug}/flow/${x.headId}`}>{x.mark}</Link>{x.ownerKind === "development" ? <span className="dim sm"> own</span> : null}</td>
+                  <td><Link className="lk ord nw" href={`/s/${slug}/flow/${x.headId}`}>{x.mark}</Link>{x.ownerKind === "development" ? <span className="dim sm"> own</span> : null}</td>
                   <td>{portWords(x.cylinder, side)}</td><td className="sm">{x.workDone.join(", ") || "—"}</td>
                   <td className="r q"><b>{x.meanGainCfm === null ? "withheld" : differenceText(x.meanGainCfm, locale)}</b></td><td className="r q">{x.meanPercent === null ? "" : differenceText(x.meanPercent, locale)}</td>
                   <td className="sm">{x.gain === "absent" ? "No before test." : [...x.reasons, ...x.notes].join(" ") || "—"}</td><td className="r nw">{day(x.flowedAt)}</td>
