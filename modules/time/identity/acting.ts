@@ -10,6 +10,8 @@ import { personOfPass } from "./pass";
 import { checkPin } from "./pin";
 import { openSeal } from "./seal";
 
+const MS_OF_CENTURY = 100 * 366 * 86_400_000;
+
 /**
  * Who is pressing, beside the tablet's own token: a pass the server gave after a badge or PIN, or, made without a link,
  * a badge or PIN sealed to the server for this one act.
@@ -25,7 +27,8 @@ export const stampInput = {
   proof: proofInput.optional(),
   /** The tablet's own clock at the tap, the offset it measured (server less tablet), its running number and the act's id. */
   deviceAt: z.iso.datetime({ offset: true }).optional(),
-  offsetMs: z.number().int().min(-10_000_000_000).max(10_000_000_000).nullish(),
+  /** Any: a tablet whose battery died may believe in another century, and its presses must not be lost for it. */
+  offsetMs: z.number().int().min(-MS_OF_CENTURY).max(MS_OF_CENTURY).nullish(),
   counter: z.number().int().min(0).optional(),
   actId: z.uuid().optional(),
 };
