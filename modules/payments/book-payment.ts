@@ -101,7 +101,7 @@ async function mailReceipt(
   if (!c?.email) return;
   const sum = money(r.p.amountMinor, ctx.shop);
   await queueMail(ctx, {
-    kind: r.what.startsWith("Deposit") ? "deposit-receipt" : "receipt", to: c.email, toName: c.name, subject: `Receipt ${r.receiptNumber}: ${sum}, ${r.what.toLowerCase()}`,
+    kind: r.what.startsWith("Deposit") ? "deposit-receipt" : "receipt", to: c.email, toName: c.name, subject: `Receipt ${r.receiptNumber}: ${sum}, ${r.what.charAt(0).toLowerCase()}${r.what.slice(1)}`,
     paragraphs: [
       `Receipt ${r.receiptNumber}\n${sum} received by ${METHOD_WORDS[r.p.method]} on ${dateTimeZone(r.p.receivedAt, ctx.shop)}.\nFor: ${r.what}.`,
       ...(r.creditMinor > 0 ? [`${money(r.creditMinor, ctx.shop)} of it was more than is due. We keep it as your credit: it is taken off your next invoice, or paid back when you ask.`] : []),
