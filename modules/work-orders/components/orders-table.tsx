@@ -48,9 +48,8 @@ export function OrdersTable({ ask, first, may }: { ask: OrdersAskText; first: Or
     initialPageParam: null as string | null, getNextPageParam: (page: OrdersPage) => page.next, refetchInterval: POLL_MS,
     ...(isFirst ? { initialData: { pages: [first], pageParams: [null] } } : {}),
   });
-  const pages = data?.pages ?? [];
-  const newest = pages[0] ?? first;
-  const rows = useMemo(() => pages.flatMap((p) => p.rows), [pages]);
+  const newest = data?.pages[0] ?? first;
+  const rows = useMemo(() => (data?.pages ?? []).flatMap((p) => p.rows), [data]);
 
   const href = (change: Partial<OrdersAskText>) => {
     const next = { ...ask, q, sort: key.sort, descending: key.descending, ...change };

@@ -71,7 +71,7 @@ export function ReceiveForm({ piece }: { piece: PiecePage }) {
         </Bay>
       </Bays>
       <div className="form-act">
-        <SubmitButton hotkey="F9" size="xl" pendingText="Booking in…">Book in</SubmitButton>
+        <SubmitButton size="xl" pendingText="Booking in…">Book in</SubmitButton>
       </div>
     </CommandForm>
   );

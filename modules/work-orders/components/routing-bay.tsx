@@ -25,7 +25,7 @@ export function RoutingBay({ order, place, aside }: { order: OrderPage; place: P
             <caption className="sr-only">Operations with hours worked and book hours</caption>
             <thead>
               <tr>
-                <th scope="col">Op</th><th scope="col">Operation</th>{many ? <th scope="col">Head</th> : null}<th scope="col" className="hide-s">Station</th><th scope="col" className="hide-s">Tech</th>
+                <th scope="col" className="hide-s">Op</th><th scope="col">Operation</th>{many ? <th scope="col">Head</th> : null}<th scope="col" className="hide-s">Station</th><th scope="col" className="hide-s">Tech</th>
                 <th scope="col" className="r">Actual</th><th scope="col" className="r">Book</th><th scope="col" className="hide-s" style={{ width: 132 }}><span className="sr-only">Actual of book</span></th><th scope="col">State</th><th scope="col"><span className="sr-only">More</span></th>
               </tr>
             </thead>
@@ -36,7 +36,7 @@ export function RoutingBay({ order, place, aside }: { order: OrderPage; place: P
                 const cures = o.state === "open" && o.notBefore !== null && o.notBefore > order.now;
                 return (
                   <tr key={o.id} className={o.state === "running" ? "sel" : undefined}>
-                    <td className="q mid">{o.sequence}</td>
+                    <td className="q mid hide-s">{o.sequence}</td>
                     <td className="b">{o.name}{o.qtyMilli === 1000 ? "" : ` × ${milliText(o.qtyMilli)}`}</td>
                     {many ? <td className="q mid">{order.pieces.find((p) => p.id === o.pieceId)?.tag?.slice(-2) ?? o.pieceNo}</td> : null}
                     <td className="mid hide-s">{o.station}</td>
