@@ -1,6 +1,7 @@
 "use client";
 import { useQuery } from "@tanstack/react-query";
 import { useRouter } from "next/navigation";
+import { useState } from "react";
 import { useFieldArray, useWatch } from "react-hook-form";
 import { currencyDecimals, money } from "@/modules/kernel/format";
 import { extend, minorText, parseMinor } from "@/modules/kernel/money";
@@ -30,6 +31,8 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
   const router = useRouter();
   const toast = useToast();
   const decimals = currencyDecimals(currency);
+  // Until the page has what was saved (this form is made anew for it), sending would send the version before.
+  const [fetching, setFetching] = useState(false);
   const form = useCommandForm({
     schema: changeOrderInput,
     defaultValues: {
@@ -37,7 +40,7 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
       lines: order.lines.map((l) => ({ id: l.id, partId: l.partId, supplierNumber: l.supplierNumber, qty: milliText(l.qtyMilli), price: !l.unitPriceMinor ? "" : minorText(l.unitPriceMinor, decimals), workOrderId: l.workOrderId ?? "" })),
     },
     action: (sent) => changePurchaseOrderAction(slug, sent),
-    onDone: (v) => { toast({ text: order.rawState === "sent" ? `Revision ${v.revision} goes to ${order.supplier.name}` : "Lines saved" }); onDone?.(); router.refresh(); },
+    onDone: (v) => { toast({ text: order.rawState === "sent" ? `Revision ${v.revision} goes to ${order.supplier.name}` : "Lines saved" }); onDone?.(); setFetching(true); router.refresh(); },
   });
   const lines = useFieldArray({ control: form.rhf.control, name: "lines", keyName: "key" });
   const typed = useWatch({ control: form.rhf.control, name: "lines" });
@@ -74,7 +77,7 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
       <div className="form-act">
         {order.rawState === "sent" ? <SubmitButton pendingText="Saving…">{`Save and send revision ${order.revision + 1}`}</SubmitButton> : <>
           <SubmitButton variant="plain" pendingText="Saving…">Save lines</SubmitButton>
-          <SendDialog order={order} {...(form.rhf.formState.isDirty ? { waits: "Save the lines first." } : order.lines.length === 0 ? { waits: "Add a part and save." } : {})} />
+          <SendDialog order={order} {...(form.rhf.formState.isDirty ? { waits: "Save the lines first." } : fetching ? { waits: "Fetching what was saved." } : order.lines.length === 0 ? { waits: "Add a part and save." } : {})} />
         </>}
       </div>
     </CommandForm>

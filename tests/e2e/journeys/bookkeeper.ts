@@ -1,11 +1,9 @@
 import { expect, type Page } from "@playwright/test";
 import { inboxAt, linkIn } from "@/tests/support/stand-ins";
-import type { Crew } from "../support/crew";
+import { mainOf, type Crew } from "../support/crew";
 import { textOfPdf } from "../support/pdf-text";
 import { product } from "../support/product";
 import { CUSTOMER } from "./customer";
-
-const words = async (page: Page): Promise<string> => (await page.getByRole("main").innerText()).replace(/\s+/g, " ");
 
 /** Draws the draft of a released order. Returns the words of the sheet. */
 export async function draftInvoice(crew: Crew, order: string): Promise<string> {
@@ -14,7 +12,7 @@ export async function draftInvoice(crew: Crew, order: string): Promise<string> {
   await page.getByRole("row").filter({ hasText: order }).getByRole("button", { name: "Start invoice" }).click();
   await page.waitForURL(/\/books\/invoices\/[0-9a-f-]{36}$/);
   await page.getByRole("heading", { name: "Draft, issue, send" }).waitFor();
-  return words(page);
+  return mainOf(page);
 }
 
 /** Issues it by F9, after the question with the amount. Returns its number. */
@@ -25,7 +23,7 @@ export async function issueInvoice(crew: Crew): Promise<string> {
   await expect(question).toContainText("$2,633.43");
   await question.getByRole("button", { name: "Issue it" }).click();
   await expect(page.getByText(/^Invoice INV-[\d-]+ issued$/)).toBeVisible();
-  return /INV-\d{4}-\d{5}/.exec(await words(page))?.[0] ?? "";
+  return /INV-\d{4}-\d{5}/.exec(await mainOf(page))?.[0] ?? "";
 }
 
 /** The paper as the shop downloads it. */
@@ -92,7 +90,7 @@ export async function explainSale(page: Page, amount: string, invoice: string): 
 /** How many lines are locked. */
 export async function matched(page: Page): Promise<string> {
   await page.reload();
-  return (await page.getByRole("main").innerText()).replace(/\s+/g, " ");
+  return mainOf(page);
 }
 
 /** Words of the receipt in the mail. */
@@ -108,5 +106,5 @@ export async function openOf(crew: Crew, order: string): Promise<string> {
   await page.getByRole("link", { name: /^INV-/ }).first().click();
   await page.waitForURL(/\/books\/invoices\//);
   await page.getByRole("heading", { name: "Draft, issue, send" }).waitFor();
-  return words(page);
+  return mainOf(page);
 }

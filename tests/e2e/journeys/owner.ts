@@ -1,10 +1,10 @@
-import type { Crew } from "../support/crew";
+import { mainOf, type Crew } from "../support/crew";
 
 /** The floor as the owner sees it. */
 export async function floor(crew: Crew): Promise<string> {
   const page = await crew.as("Marit");
   await page.goto(crew.at(""));
-  return (await page.getByRole("main").innerText()).replace(/\s+/g, " ");
+  return mainOf(page);
 }
 
 /** Profit of a job with every part opened. */

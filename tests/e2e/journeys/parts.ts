@@ -1,6 +1,6 @@
 import { expect, type Page } from "@playwright/test";
 import { inboxAt } from "@/tests/support/stand-ins";
-import { choose, type Crew } from "../support/crew";
+import { mainOf, choose, type Crew } from "../support/crew";
 import { textOfPdf } from "../support/pdf-text";
 import { product } from "../support/product";
 
@@ -66,14 +66,14 @@ export async function issueAll(crew: Crew, order: string): Promise<number> {
 export async function partFigures(crew: Crew, sku: string): Promise<string> {
   const page = await crew.as("Ilse");
   await page.goto(crew.at(`/parts/${sku}`));
-  return (await page.getByRole("main").innerText()).replace(/\s+/g, " ");
+  return mainOf(page);
 }
 
 /** The purchase order as its page shows it. */
 export async function orderFigures(crew: Crew, number: string): Promise<string> {
   const page = await crew.as("Ilse");
   await page.goto(crew.at(`/purchases/${number}`));
-  return (await page.getByRole("main").innerText()).replace(/\s+/g, " ");
+  return mainOf(page);
 }
 
 /** Parts in work at cost, on the order's page. */

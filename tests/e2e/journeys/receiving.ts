@@ -24,7 +24,7 @@ export async function bookIn(crew: Crew, order: string): Promise<string> {
   await expect(page.getByLabel("Casting number")).toHaveValue("K7-2201");
   await page.getByLabel("Where it lies").fill("Rack A");
   await page.getByLabel("Damage seen").fill("Nick on the deck edge, exhaust side. Photographed.");
-  await page.getByRole("button", { name: "Book in", exact: true }).click();
+  await page.getByRole("button", { name: /^Book in/ }).click();
   await page.waitForURL(/\/pieces\/1$/);
   return await page.getByRole("heading", { level: 1 }).innerText();
 }

@@ -1,6 +1,6 @@
 import { expect, type Page } from "@playwright/test";
 import { NINEBARK } from "@/seed/facts/ninebark";
-import { itIs } from "../support/clock";
+import { instantIn, itIs } from "../support/clock";
 import { TABLET, type Crew } from "../support/crew";
 
 const person = (shortName: string) => {
@@ -15,8 +15,10 @@ const OPERATION: Record<string, string> = {
   SEA: "Seat cutting, each", LAP: "Lap and vacuum check", SPR: "Spring setup", FLF: "Final flow", LSH: "Lash shims", ASM: "Assembly", INS: "Final inspection",
 };
 
-/** A manager names a tablet and gets its code; the tablet takes it. Returns the tablet's page. */
-export async function enrolTablet(crew: Crew, name: string): Promise<Page> {
+/** A manager names a tablet and gets its code; the tablet, whose own clock says `local`, takes it. Returns the tablet's page. */
+export async function enrolTablet(crew: Crew, name: string, local: string): Promise<Page> {
+  itIs(local);
+  const now = instantIn(local);
   const desk = await crew.as("Ilse");
   await desk.goto(crew.at("/settings/devices"));
   await desk.getByLabel("Name, by its place").fill(name);
@@ -24,6 +26,7 @@ export async function enrolTablet(crew: Crew, name: string): Promise<Page> {
   const plate = desk.getByRole("status").filter({ hasText: "Once, until" });
   const code = /[0-9A-Z]{4}-[0-9A-Z]{4}/.exec(await plate.innerText())?.[0] ?? "";
   const tablet = await crew.device(TABLET, { hasTouch: true });
+  await tablet.clock.setSystemTime(now);
   await tablet.goto("/clock");
   await tablet.getByLabel("Code").fill(code.toLowerCase());
   await tablet.getByRole("button", { name: "Enrol this tablet" }).click();
@@ -34,6 +37,7 @@ export async function enrolTablet(crew: Crew, name: string): Promise<Page> {
 /** Hours have passed: the tablet looks at the shop anew, as it does by itself every few seconds. */
 async function wake(tablet: Page, local: string): Promise<void> {
   itIs(local);
+  await tablet.clock.setSystemTime(instantIn(local));
   const board = tablet.waitForResponse((r) => r.url().endsWith("/api/v1/clock/board"));
   await tablet.evaluate(() => dispatchEvent(new Event("online")));
   await board;

@@ -73,3 +73,10 @@ export async function choose(page: Page, label: string | RegExp, typed: string, 
   await page.getByRole("combobox", { name: label }).fill(typed);
   await page.getByRole("option", { name: option }).first().click();
 }
+
+/** Words of a page's main part on one line, once it has come. */
+export async function mainOf(page: Page): Promise<string> {
+  const main = page.getByRole("main");
+  await main.getByRole("heading", { level: 1 }).waitFor();
+  return (await main.innerText()).replace(/\s+/g, " ");
+}
