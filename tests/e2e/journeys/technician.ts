@@ -70,9 +70,9 @@ async function begin(tablet: Page, code: string): Promise<void> {
   await row.click();
   const running = tablet.getByRole("region", { name: "Running now" });
   const reason = tablet.getByRole("button", { name: "Machine was free now" });
-  await expect(running.getByText(name).or(reason)).toBeVisible();
+  await expect(running.getByText(name, { exact: true }).or(reason)).toBeVisible();
   if (await reason.isVisible()) await reason.click();
-  await expect(running.getByText(name)).toBeVisible();
+  await expect(running.getByText(name, { exact: true })).toBeVisible();
 }
 
 /** One stretch at the bench: comes in at the door if not in, starts at `from`, is done or stops at `to`; then home when told. */
