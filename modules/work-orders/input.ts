@@ -110,7 +110,11 @@ export const openOrderInput = z.strictObject({
   use: z.enum(USES, { error: "Say what it is used on; other will do." }),
   promisedOn: dayOrNone.default(null),
   customerReference: line(60).default(""),
-}).refine((o) => o.customerId !== "" || o.newCustomer !== null, { error: "Pick a customer, or add a new one.", path: ["customerId"] });
+}).refine((o) => o.customerId !== "" || o.newCustomer !== null, {
+  error: "Pick a customer, or add a new one.", path: ["customerId"],
+  // Said together with what else is wrong, not only once that is mended.
+  when: ({ value }) => typeof value === "object" && value !== null && "customerId" in value,
+});
 
 export const changeOrderInput = z.strictObject({
   id: z.uuid(), version: z.number().int(), wants: words(2000), use: z.enum(USES), customerReference: line(60), notes: words(2000),

@@ -2,15 +2,14 @@
 import { signIn } from "next-auth/react";
 import Link from "next/link";
 import { useRouter } from "next/navigation";
-import { useState, useSyncExternalStore, type FormEvent } from "react";
+import { useState, type FormEvent } from "react";
 import { Note } from "@/modules/ui/note";
+import { useReady } from "@/modules/ui/use-ready";
 
 const WORDS: Record<string, string> = {
   CredentialsSignin: "That e-mail address and password do not go together. Check both, or ask the shop's owner for a new password.",
   TOO_MANY_TRIES: "Too many tries. Wait a minute, then try again; the right password still works.",
 };
-
-const never = () => () => undefined;
 
 export function SignInForm({ next }: { next: string }) {
   const router = useRouter();
@@ -18,7 +17,7 @@ export function SignInForm({ next }: { next: string }) {
   const [pending, setPending] = useState(false);
   const [shown, setShown] = useState(false);
   // Until the script runs the button is off: a plain form post has nobody to take it.
-  const ready = useSyncExternalStore(never, () => true, () => false);
+  const ready = useReady();
 
   async function submit(event: FormEvent<HTMLFormElement>) {
     event.preventDefault();

@@ -1,5 +1,6 @@
 import { amount, date } from "@/modules/kernel/format";
 import { EmptyState } from "@/modules/ui/empty-state";
+import { Lane } from "@/modules/ui/lane";
 import { TextLink } from "@/modules/ui/text-link";
 import type { EntryView } from "../queries";
 
@@ -13,7 +14,7 @@ function sourceHref(slug: string, e: EntryView): string | null {
 export function JournalList({ rows, slug, place }: { rows: readonly EntryView[]; slug: string; place: { locale: string; currency: string } }) {
   if (rows.length === 0) return <EmptyState title="Nothing booked here">Documents post by fixed rules: an invoice when it is issued, parts when they leave the shelf.</EmptyState>;
   return (
-    <div className="lane-x">
+    <Lane label="Journal">
       <table>
         <caption className="sr-only">Journal, newest first</caption>
         <thead><tr><th scope="col">No.</th><th scope="col">Date</th><th scope="col">Entry</th><th scope="col">Account</th><th scope="col" className="r">Debit</th><th scope="col" className="r">Credit</th></tr></thead>
@@ -33,6 +34,6 @@ export function JournalList({ rows, slug, place }: { rows: readonly EntryView[];
           })}
         </tbody>
       </table>
-    </div>
+    </Lane>
   );
 }

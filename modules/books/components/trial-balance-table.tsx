@@ -1,4 +1,5 @@
 import { amount } from "@/modules/kernel/format";
+import { Lane } from "@/modules/ui/lane";
 import { TextLink } from "@/modules/ui/text-link";
 import type { TrialBalanceView } from "../queries";
 
@@ -6,7 +7,7 @@ import type { TrialBalanceView } from "../queries";
 export function TrialBalanceTable({ view, slug, place }: { view: TrialBalanceView; slug: string; place: { locale: string; currency: string } }) {
   const a = (minor: number) => amount(minor, place);
   return (
-    <div className="lane-x">
+    <Lane label="Trial balance">
       <table>
         <caption className="sr-only">Trial balance</caption>
         <thead><tr><th scope="col">Account</th><th scope="col">Name</th><th scope="col" className="r">Debit</th><th scope="col" className="r">Credit</th><th scope="col" className="r">Balance</th></tr></thead>
@@ -17,6 +18,6 @@ export function TrialBalanceTable({ view, slug, place }: { view: TrialBalanceVie
         </tbody>
         <tfoot><tr><th scope="row" colSpan={2}>Sum</th><td className="r q b">{a(view.debitMinor)}</td><td className="r q b">{a(view.creditMinor)}</td><td className="r q b">{a(view.sumMinor)}</td></tr></tfoot>
       </table>
-    </div>
+    </Lane>
   );
 }

@@ -6,7 +6,7 @@ import { Status } from "@/modules/ui/status";
 import { valveListWords } from "../domain/valve-list";
 import type { GearRoom } from "../queries/gear";
 import { BENCH_SCALE_SHORT } from "./gear-words";
-import { Lane } from "./lane";
+import { Lane } from "@/modules/ui/lane";
 
 export type GearView = "benches" | "plates" | "fixtures" | "lift" | "camshafts" | "families";
 interface TableProps { room: GearRoom; slug: string; locale: string; edit: string | null; when: (iso: string) => string }

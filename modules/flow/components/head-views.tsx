@@ -11,7 +11,7 @@ import type { NoiseRow } from "../domain/noise-rows";
 import type { PortFigures } from "../queries/head-figures";
 import { differenceText, flowText, liftWords } from "./flow-words";
 import { portWords } from "./library-words";
-import { Lane } from "./lane";
+import { Lane } from "@/modules/ui/lane";
 
 const NOISE_MARK: Readonly<Record<NoiseRow["verdict"], string>> = { larger_than_noise: "●", within_noise: "○", not_assessed: "◌" };
 

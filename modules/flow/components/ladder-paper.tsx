@@ -2,6 +2,7 @@
 
 import { useId, useState } from "react";
 import { Button } from "@/modules/ui/button";
+import { Lane } from "@/modules/ui/lane";
 import { liftLadder, liftText, type LiftUnit } from "../domain/lift-ladder";
 import { Pick } from "./upload-mapping";
 
@@ -35,8 +36,8 @@ export function LadderPaper({ shopName, nominal, families }: { shopName: string;
         <section className="sheet mt-6" aria-label="Empty ladder">
           <h2 className="mb-1 font-cut text-h3">{shopName}: flow sheet</h2>
           <p className="mb-4">{family}. Stated at {nominal} in H₂O. CFM or percent and range; strike out what does not hold.</p>
-          <dl className="mb-5 grid grid-cols-3 gap-x-6 gap-y-4 text-small">{BLANKS.map((b) => <div key={b} className="border-b border-line-2 pb-4"><dt className="eng">{b}</dt><dd className="sr-only">to fill in</dd></div>)}</dl>
-          <table className="calm">
+          <dl className="mb-5 grid grid-cols-2 gap-x-6 sm:grid-cols-3 print:grid-cols-3 gap-y-4 text-small">{BLANKS.map((b) => <div key={b} className="border-b border-line-2 pb-4"><dt className="eng">{b}</dt><dd className="sr-only">to fill in</dd></div>)}</dl>
+          <Lane label="Lifts to read"><table className="calm">
             <caption className="sr-only">Lifts to read, with room for two readings a side</caption>
             <thead>
               <tr><th scope="col" rowSpan={2}>Lift, {unit}</th><th scope="colgroup" colSpan={4}>Intake</th><th scope="colgroup" colSpan={4}>Exhaust</th></tr>
@@ -45,7 +46,7 @@ export function LadderPaper({ shopName, nominal, families }: { shopName: string;
             <tbody>{rungs.map((r) => (
               <tr key={r.text}><th scope="row" className="border-b border-line-2 normal-case tracking-normal text-ink">{r.text}{ladder?.ok && r.liftUm > ladder.value.camLiftUm ? <span className="sm dim"> past cam</span> : null}</th>{Array.from({ length: 8 }, (_, i) => <td key={i} className="h-9 border-l border-line-2" />)}</tr>
             ))}</tbody>
-          </table>
+          </table></Lane>
           <p className="mt-4 text-small">Zero the indicator on the closed seat. Wear hearing protection; shut the blower before reaching in. Notes:</p>
         </section>
       )}

@@ -6,6 +6,7 @@ import { Bay, Bays } from "@/modules/ui/bay";
 import { Button, LinkButton } from "@/modules/ui/button";
 import { ToggleChip } from "@/modules/ui/chip";
 import { KeyHints } from "@/modules/ui/key-hints";
+import { Lane } from "@/modules/ui/lane";
 import { Note } from "@/modules/ui/note";
 import { usePlace } from "@/modules/ui/place";
 import { cylinderFigures, headFigures, valveFigures, type Derived } from "../domain/measure-derived";
@@ -112,7 +113,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
         <Bays>
           {groups.map((g) => (
             <Bay key={g.group} label={GROUP_WORDS[g.group]} flush>
-              <div className="lane-x relative"><table className="calm">
+              <Lane label={GROUP_WORDS[g.group]}><table className="calm">
                 <caption className="sr-only">{GROUP_WORDS[g.group]}, {stage} work</caption>
                 <thead><tr><th scope="col">{inch ? "in, lbf" : "mm, N"}</th>{g.columns.map((c) => <th key={c.head} scope="col">{c.head}</th>)}<th scope="col">Limit</th></tr></thead>
                 <tbody>
@@ -135,7 +136,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
                     </tr>
                   ))}
                 </tbody>
-              </table></div>
+              </table></Lane>
             </Bay>
           ))}
         </Bays>

@@ -2,7 +2,7 @@
 
 import type { FileRows } from "../domain/file-rows";
 import { portWords } from "./library-words";
-import { Lane } from "./lane";
+import { Lane } from "@/modules/ui/lane";
 
 const FEW = 12;
 

@@ -48,6 +48,8 @@ export function CommandForm<Input extends FieldValues, Output>({
     <FormProvider {...form.rhf}>
       <FormContext value={context}>
         <form
+          id={form.formId}
+          method="post"
           noValidate
           className={clsx(className)}
           aria-label={label}

@@ -2,8 +2,9 @@
 
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useCallback, useEffect, useId, useRef, useState } from "react";
-import { useForm, type DefaultValues, type FieldValues, type Path, type UseFormReturn } from "react-hook-form";
+import { useForm, type DefaultValues, type FieldValues, type Path, type PathValue, type UseFormReturn } from "react-hook-form";
 import type { z } from "@/modules/kernel/zod";
+import { earlyInput, type EarlyInput } from "./early-input";
 import { keepDraft, readDraft, dropDraft } from "./draft";
 import { noLink, readReply, type Reading, type Trouble } from "./form-trouble";
 import type { Reply } from "./reply";
@@ -35,6 +36,12 @@ export interface CommandForm<Input extends FieldValues, Output> {
   failed: number;
 }
 
+/** Read while React takes the server's page over, before the fields are set to their defaults. */
+function readEarly(formId: string): readonly EarlyInput[] {
+  const form = typeof document === "undefined" ? null : document.getElementById(formId);
+  return form instanceof HTMLFormElement ? earlyInput(form.elements as unknown as Iterable<HTMLInputElement>) : [];
+}
+
 export function useCommandForm<Input extends FieldValues, Output, Value>({
   schema,
   defaultValues,
@@ -46,6 +53,7 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
 }: CommandFormOptions<Input, Output, Value>): CommandForm<Input, Output> {
   const formId = useId();
   const [requestId] = useState(() => new RequestId(() => crypto.randomUUID()));
+  const [early] = useState(() => readEarly(formId));
   const [trouble, setTrouble] = useState<Trouble | null>(null);
   const [pending, setPending] = useState(false);
   const [failed, setFailed] = useState(0);
@@ -56,7 +64,7 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
     mode: "onTouched",
     shouldFocusError: false,
   });
-  const { handleSubmit, setError, reset, subscribe, getValues, formState } = rhf;
+  const { handleSubmit, setError, setValue, reset, subscribe, getValues, formState } = rhf;
   const dirty = formState.isDirty;
 
   useEffect(() => {
@@ -65,6 +73,14 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
     if (kept !== null) reset({ ...getValues(), ...kept }, { keepDefaultValues: true });
     return subscribe({ formState: { values: true }, callback: ({ values }) => keepDraft(draft, values) });
   }, [draft, reset, subscribe, getValues]);
+
+  useEffect(() => {
+    for (const { name, value } of early) {
+      const path = name as Path<Input>;
+      const kept = typeof value === "string" ? value : Array.isArray(getValues(path)) ? value.all : value.ticked;
+      setValue(path, kept as PathValue<Input, Path<Input>>, { shouldDirty: true });
+    }
+  }, [early, getValues, setValue]);
 
   useEffect(() => {
     if (!guard || !dirty) return;

@@ -49,7 +49,10 @@ export function OpenOrderForm({ families, today, customer }: { families: readonl
   const { control, setFocus, watch } = form.rhf;
   const pieces = useFieldArray({ control, name: "pieces" });
   const use = watch("use");
-  useEffect(() => setFocus(customer ? "pieces.0.family" : "customerId"), [setFocus, customer]);
+  useEffect(() => {
+    // Whoever typed before the page came alive keeps the field they are in.
+    if (document.activeElement === document.body) setFocus(customer ? "pieces.0.family" : "customerId");
+  }, [setFocus, customer]);
   return (
     <CommandForm form={form} toFix="before this order opens" label="New work order" className="max-w-[1120px]">
       {first ? <Note tone="stop" live title="That head is here already." action={<LinkButton size="sm" href={`/s/${slug}/orders/${first}`}>Open {first}</LinkButton>}>A head stands on one open order at a time.</Note> : null}

@@ -3,6 +3,7 @@ import { milliText } from "@/modules/kernel/quantity";
 import { Bay } from "@/modules/ui/bay";
 import type { DialName } from "@/modules/ui/dial";
 import { Flag } from "@/modules/ui/flag";
+import { Lane } from "@/modules/ui/lane";
 import type { PlaceFacts } from "@/modules/ui/place";
 import { Status } from "@/modules/ui/status";
 import { Tube } from "@/modules/ui/tube";
@@ -20,7 +21,7 @@ export function RoutingBay({ order, place, aside }: { order: OrderPage; place: P
   return (
     <Bay label="Routing" flush aside={aside}>
       {order.operations.length === 0 ? <p className="mid px-[18px] pb-4 pt-2">{order.versions.some((v) => v.state === "sent") ? "The routing comes with the customer's yes." : "The routing comes with an agreed estimate."}</p> : (
-        <div className="lane-x">
+        <Lane label="Routing">
           <table>
             <caption className="sr-only">Operations with hours worked and book hours</caption>
             <thead>
@@ -57,7 +58,7 @@ export function RoutingBay({ order, place, aside }: { order: OrderPage; place: P
               })}
             </tbody>
           </table>
-        </div>
+        </Lane>
       )}
     </Bay>
   );

@@ -7,6 +7,7 @@ import { getCustomer } from "@/modules/customers/queries";
 import { amount, date, shortDate } from "@/modules/kernel/format";
 import { Bay, Bays } from "@/modules/ui/bay";
 import { LinkButton } from "@/modules/ui/button";
+import { Lane } from "@/modules/ui/lane";
 import { Note } from "@/modules/ui/note";
 import { PageHead } from "@/modules/ui/page-head";
 import { Status } from "@/modules/ui/status";
@@ -32,7 +33,7 @@ export default async function CustomerPage({ params }: { params: Promise<{ shop:
       <Bays className="mt-4">
         <Bay label="Orders" flush>
           {orders.length === 0 ? <p className="mid px-[18px] pb-3 pt-1">No order yet.</p> : (
-            <div className="lane-x"><table>
+            <Lane label="Orders"><table>
               <thead><tr><th scope="col">Order</th><th scope="col">Job</th><th scope="col">Status</th><th scope="col">Promised</th><th scope="col" className="r">Agreed {ctx.shop.currency}</th><th scope="col" className="r">Left</th></tr></thead>
               <tbody>{orders.map((o) => (
                 <tr key={o.number}>
@@ -40,7 +41,7 @@ export default async function CustomerPage({ params }: { params: Promise<{ shop:
                   <td className="q">{o.promisedOn ? shortDate(o.promisedOn, locale) : "–"}</td><td className="r q">{o.totalMinor === null ? "–" : amount(o.totalMinor, ctx.shop)}</td><td className="r q">{o.leftMinor ? amount(o.leftMinor, ctx.shop) : "–"}</td>
                 </tr>
               ))}</tbody>
-            </table></div>
+            </table></Lane>
           )}
         </Bay>
         <Bay label="Card" className="max-w-[920px]"><CustomerForm key={customer.version} customer={customer} mayChange={ableTo(ctx, "customers.write")} /></Bay>

@@ -12,7 +12,7 @@ import { Flag } from "@/modules/ui/flag";
 import { Kv } from "@/modules/ui/kv";
 import { Note } from "@/modules/ui/note";
 import { PageHead } from "@/modules/ui/page-head";
-import { Lane } from "@/modules/flow/components/lane";
+import { Lane } from "@/modules/ui/lane";
 
 export const metadata = { title: "Bench" };
 

@@ -13,7 +13,7 @@ import { LinkButton } from "@/modules/ui/button";
 import { EmptyState } from "@/modules/ui/empty-state";
 import { PageHead } from "@/modules/ui/page-head";
 import { Views } from "@/modules/ui/views";
-import { Lane } from "@/modules/flow/components/lane";
+import { Lane } from "@/modules/ui/lane";
 
 export const metadata = { title: "What a family did" };
 const LAST = 10;
