@@ -150,6 +150,9 @@ const valvesFit = (f: z.output<typeof familyFields>, ctx: z.RefinementCtx) => {
 export const familyInput = familyFields.superRefine(valvesFit);
 export const familyEditInput = familyFields.extend(edited).superRefine(valvesFit);
 
+/** Kinds of work the library looks for. */
+export const HEAD_WORK = ["epoxy", "weld", "valve size", "seat", "port shape", "chamber"] as const;
+
 /** A casting of the shop's own, for development: no customer, no order. */
 export const ownHeadInput = z.strictObject({
   mark: line(60).min(1, "Give the casting a mark: a serial, or what is written on it."),
@@ -159,7 +162,7 @@ export const ownHeadInput = z.strictObject({
   bore: optionalField({ min: 10, max: 300, unit: "mm" }),
   stroke: optionalField({ min: 10, max: 300, unit: "mm" }),
   seatMaterial: z.enum(["unknown", "steel", "iron", "bronze", "copper-beryllium"]).default("unknown"),
-  workDone: z.array(z.enum(["epoxy", "weld", "valve size", "seat", "port shape", "chamber"])).max(6).default([]),
+  workDone: z.array(z.enum(HEAD_WORK)).max(6).default([]),
   notes: words(2000).default(""),
 });
 /** Work done and notes of any head, as searched in the library. */

@@ -1,4 +1,5 @@
 import { z } from "@/modules/kernel/zod";
+import { HEAD_WORK } from "./gear-input";
 import { line } from "./typed-field";
 
 const day = z.union([z.literal(""), z.iso.date("A date such as 2026-03-31.")]).default("");
@@ -10,7 +11,7 @@ export const libraryInput = z.strictObject({
   side: z.enum(["", "intake", "exhaust"]).default(""),
   purpose: z.enum(["", "baseline", "after", "interim", "check"]).default(""),
   owner: z.enum(["", "customer", "development"]).default(""),
-  work: z.enum(["", "epoxy", "weld", "valve size", "seat", "port shape", "chamber"]).default(""),
+  work: z.enum(["", ...HEAD_WORK]).default(""),
   /** Valve head diameter in mm, met within a quarter of a millimetre. */
   valve: line(12).default(""),
   seat: line(60).default(""),

@@ -1,4 +1,4 @@
-import type { ShopContext, TxContext } from "@/modules/access/context";
+import type { ShopContext } from "@/modules/access/context";
 import type { Act } from "@/modules/access/roles";
 import { libraryInput } from "@/modules/flow/library-input";
 import { CANARY, type At } from "./world";
@@ -15,7 +15,7 @@ export interface QueryCase {
 }
 
 /** What B's papers are called; A has none of these names. */
-export const OF_B = { order: "WO-2026-0900", sku: "QF-900", tag: "260224-90" };
+const OF_B = { order: "WO-2026-0900", sku: "QF-900", tag: "260224-90" };
 
 const byId = (act: Act | null, table: string): QueryCase => ({ act, call: (fn, ctx, at) => fn(ctx, at(table).id) });
 const byIds = (act: Act | null, table: string): QueryCase => ({ act, call: (fn, ctx, at) => fn(ctx, [at(table).id]) });
@@ -67,10 +67,10 @@ export const QUERY_CASES: Record<string, QueryCase> = {
   "invoices/queries getInvoice": byId("books.see", "invoices"),
   "invoices/queries invoicePdf": byId("books.see", "invoices"),
   "invoices/queries agingView": plain("books.see"),
-  "invoices/queries openSumOf": byId(null, "work_orders"),
   "invoices/queries invoicesOfOrder": byId("prices.see", "work_orders"),
   "invoices/queries invoiceForCustomer": { act: null, as: "customer", call: (fn, ctx) => fn(ctx) },
   "payments/queries findSetAside": plain("books.see"),
+  "payments/queries findDisputes": plain("books.see"),
   "payments/queries paymentsFor": { act: "books.see", call: (fn, ctx, at) => fn(ctx, { invoiceId: at("invoices").id, workOrderId: at("work_orders").id }) },
   // Shows nobody anything but those who may answer.
   "payments/queries findWaitingRefunds": plain(null),
@@ -83,6 +83,7 @@ export const QUERY_CASES: Record<string, QueryCase> = {
   "flow/queries/gear benchHistory": byId("flow.see", "benches"),
   "flow/queries/head-figures headFigures": byId("flow.see", "heads"),
   "flow/queries/job-cautions cautionsToShow": { act: "clock.use", call: (fn, ctx, at) => fn(ctx, { workOrderId: at("work_orders").id, step: "CLN", hazards: ["noise"] }) },
+  "flow/queries/job-cautions cautionsOfOwnHead": { act: "clock.use", call: (fn, ctx, at) => fn(ctx, { headId: at("heads").id, step: "CLN", hazards: ["noise"] }) },
   "flow/queries/job-cautions cautionsSeenOn": byId("orders.see", "work_orders"),
   "flow/queries/library-family familyPicture": asked("flow.see", { family: q, side: "intake", last: 3 }),
   "flow/queries/library-family overlayOf": { act: "flow.see", call: (fn, ctx, at) => fn(ctx, { a: at("flow_tests").id, b: at("flow_tests").id }) },
@@ -103,7 +104,6 @@ export const QUERY_CASES: Record<string, QueryCase> = {
 
   "work-orders/queries/bench-list clockBoard": plain("clock.use"),
   "work-orders/queries/bench-list openOperations": plain(null),
-  "work-orders/queries/bench-list benchList": plain("clock.use"),
   "work-orders/queries/customer-view customerView": { act: null, as: "customer", call: (fn, ctx) => fn(ctx) },
   "work-orders/queries/customer-view customerFile": { act: null, as: "customer", call: (fn, ctx, at) => fn(ctx, at("files").id, false) },
   "work-orders/queries/customer-view customerPaperId": { act: null, as: "customer", call: (fn, ctx) => fn(ctx) },
@@ -116,7 +116,6 @@ export const QUERY_CASES: Record<string, QueryCase> = {
   "work-orders/queries/deposit depositOf": byId(null, "work_orders"),
   "work-orders/queries/estimates estimateEditor": byText("estimate.write", OF_B.order),
   "work-orders/queries/estimates versionsOf": byId("prices.see", "work_orders"),
-  "work-orders/queries/estimates sentEstimate": byId("prices.see", "estimates"),
   "work-orders/queries/find findAnything": byText("orders.see", q),
   "work-orders/queries/floor floorOf": plain("floor.see"),
   "work-orders/queries/house houseOrders": { act: null, call: (fn, ctx) => fn(ctx, undefined) },
@@ -142,9 +141,6 @@ export const READS_NOTHING: Record<string, string> = {
   "flow/queries/gain portGains": "computes from tests it is given",
   "flow/queries/gain seesCustomers": "asks the actor's roles only",
 };
-
-/** Inner parts want the open transaction in their context. */
-export const inside = (ctx: ShopContext, tx: TxContext["tx"]): TxContext => ({ ...ctx, tx });
 
 /** Cases of endpoints, by method and path: B's ids in a query string or body. Those without ids are asked for the canary by themselves. */
 export const ENDPOINT_CASES: Record<string, (at: At) => Record<string, unknown>> = {

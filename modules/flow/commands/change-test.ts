@@ -58,22 +58,36 @@ export const changeSheetConditions = defineCommand({
   subject: (input) => ({ kind: "flow-test", id: input.intake?.testId ?? input.exhaust?.testId ?? "" }),
 });
 
-/** One more lift on the ladder of a draft. */
+type LiftAdded = { testId: string; version: number };
+
+async function addOneLift(ctx: TxContext, { testId, version }: LiftAdded, lift: string, reason: string): Promise<Result<LiftAdded>> {
+  const test = await draftTest(ctx, testId, version);
+  if (!test.ok) return test;
+  const added = plannedLifts([lift], test.value.liftUnit as LiftUnit, reason);
+  if (!added.ok) return refuse(added.refusal.code, added.refusal.message, { field: "lift" });
+  if (added.value.some((l) => test.value.lifts.some((o) => o.liftUm === l.liftUm))) return refuse("LIFT_THERE", "That lift is on the sheet already.", { field: "lift" });
+  const lifts = [...test.value.lifts, ...added.value].sort((a, b) => a.liftUm - b.liftUm);
+  const all = plannedLifts(lifts.map((l) => l.text), test.value.liftUnit as LiftUnit, reason);
+  if (!all.ok) return refuse(all.refusal.code, all.refusal.message, { field: all.refusal.field === "lifts" ? "reason" : "lift" });
+  await ctx.tx.update(flowTests).set({ lifts, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId)));
+  return ok({ testId, version: version + 1 });
+}
+
+/** One more lift on the ladder of a draft, and of the other side's draft where asked: on every one that lacks it, or on none. */
 export const addLift = defineCommand({
   name: "flow.add-lift",
   act: "flow.record",
   input: addLiftInput,
-  async run(ctx, { testId, version, lift, reason }) {
-    const test = await draftTest(ctx, testId, version);
-    if (!test.ok) return test;
-    const added = plannedLifts([lift], test.value.liftUnit as LiftUnit, reason);
-    if (!added.ok) return refuse(added.refusal.code, added.refusal.message, { field: "lift" });
-    if (added.value.some((l) => test.value.lifts.some((o) => o.liftUm === l.liftUm))) return refuse("LIFT_THERE", "That lift is on the sheet already.", { field: "lift" });
-    const lifts = [...test.value.lifts, ...added.value].sort((a, b) => a.liftUm - b.liftUm);
-    const all = plannedLifts(lifts.map((l) => l.text), test.value.liftUnit as LiftUnit, reason);
-    if (!all.ok) return refuse(all.refusal.code, all.refusal.message, { field: "lift" });
-    await ctx.tx.update(flowTests).set({ lifts, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId)));
-    return ok({ testId, version: version + 1 });
+  async run(ctx, { testId, version, lift, reason, also }) {
+    const added: LiftAdded[] = [];
+    const sheet = [{ testId, version }, ...(also ? [also] : [])];
+    for (const test of sheet) {
+      const one = await addOneLift(ctx, test, lift, reason);
+      if (one.ok) added.push(one.value);
+      // One side may have it already; the other still gets it.
+      else if (one.refusal.code !== "LIFT_THERE" || (test === sheet.at(-1) && added.length === 0)) return one;
+    }
+    return ok({ testId, version: added.find((a) => a.testId === testId)?.version ?? version, added });
   },
   subject: (input) => ({ kind: "flow-test", id: input.testId }),
 });

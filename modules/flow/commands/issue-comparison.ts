@@ -53,7 +53,7 @@ export const issueComparison = defineCommand({
     const unit = tests.at(-1)?.liftUnit ?? "in";
     const liftWords = (um: number) => scaleLiftText(um, unit, (v, d) => decimal(v, d, shop.locale));
     const snapshot: ReportSnapshot = {
-      kind: 1, shop: { name: shop.name, address: settings.address, phone: settings.phone, email: settings.email }, locale: shop.locale, zone: shop.zone,
+      kind: 2, shop: { name: shop.name, address: settings.address, phone: settings.phone, email: settings.email }, locale: shop.locale, zone: shop.zone,
       head: { mark: row.h.mark, family: row.h.family, castingNumber: row.h.castingNumber, orderNumber: row.orderNumber, customerName: row.customerName },
       cylinder, cylinders: row.h.cylinders, comparisonNo,
       sides: sides.map(({ side, standing, gain }) => ({ side, gain, before: standing.before && reportTest(standing.before), after: standing.after && reportTest(standing.after) })),

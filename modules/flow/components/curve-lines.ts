@@ -1,4 +1,5 @@
 import type { CurveLine } from "../domain/curve-geometry";
+import { marginsOf } from "../domain/noise-band";
 import type { LiftReading } from "../domain/repeats";
 import type { PortGain, SideGain } from "../domain/side-gain";
 
@@ -11,6 +12,9 @@ const half = (gain: SideGain, when: "before" | "after"): LiftReading[] => {
   });
 };
 
+/** What a curve may say of a side: the gain with the noise about it, or neither. */
+export const shownOf = (gain: SideGain | null): Pick<CurveLine, "gain" | "margins"> => (gain?.comparable ? { gain: "shown", margins: marginsOf(gain.noise?.rows ?? []) } : { gain: "withheld" });
+
 /** Curves of a port as handed out. A withheld gain draws both curves and nothing between them. */
 export const linesOfPort = (port: PortGain): CurveLine[] =>
-  ([port.intake, port.exhaust] as const).map((gain): CurveLine => ({ side: gain.side, before: half(gain, "before"), after: half(gain, "after"), gain: gain.comparable ? "shown" : "withheld" }));
+  ([port.intake, port.exhaust] as const).map((gain): CurveLine => ({ side: gain.side, before: half(gain, "before"), after: half(gain, "after"), ...shownOf(gain) }));

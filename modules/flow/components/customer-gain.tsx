@@ -6,6 +6,7 @@ import { AIRFLOW_WORDS } from "../domain/report-snapshot";
 import type { ComparableGain, GainOfPiece, PortGain, SideGain, WithheldGain } from "../domain/side-gain";
 import { differenceText, flowText, liftWords } from "./flow-words";
 import { withheldWords } from "./gain-words";
+import { noiseWords } from "./noise-verdicts";
 import { MiniCurve } from "./mini-curve";
 
 interface At { locale: string; zone: string }
@@ -74,10 +75,12 @@ function sideNotes(gain: SideGain, at: At): string[] {
   if (withheld) return [withheld];
   if (!gain.comparable) return [];
   const name = gain.side === "intake" ? "The intake" : "The exhaust";
+  const noise = noiseWords(gain, at.locale);
   const day = (iso: string) => date(localDate(new Date(iso), at.zone), at.locale);
   return [
     `${name} averages ${differenceText(gain.meanGainCfm, at.locale, 2)} CFM${gain.meanPercent === null ? "" : ` (${decimal(gain.meanPercent, 2, at.locale)} %)`} over the lifts tested.`,
     ...(gain.losses.length > 0 ? [`${name} reads lower at ${gain.losses.map((l) => `${liftWords(l.liftUm, gain.liftUnit, at.locale)} (${differenceText(l.gainCfm, at.locale)})`).join(", ")}.`] : []),
+    ...(noise === null ? [] : [`${name}: ${noise[0]?.toLowerCase() ?? ""}${noise.slice(1)}`]),
     `Before ${day(gain.before.takenAt)} by ${gain.before.operator}, after ${day(gain.after.takenAt)} by ${gain.after.operator}. Seats before: ${gain.before.seat}; after: ${gain.after.seat}.`,
   ];
 }

@@ -6,6 +6,7 @@ import type { GainOfPiece, PortGain, SideGain } from "../domain/side-gain";
 import { gainForPiece } from "../queries/gain";
 import { differenceText, liftWords } from "./flow-words";
 import { withheldWords } from "./gain-words";
+import { noiseWords } from "./noise-verdicts";
 import { MiniCurve } from "./mini-curve";
 
 function SideFigure({ gain, locale }: { gain: SideGain; locale: string }) {
@@ -29,28 +30,45 @@ export function FlowCheckPort({ port, locale }: { port: PortGain; locale: string
         <SideFigure gain={port.intake} locale={locale} />
         <SideFigure gain={port.exhaust} locale={locale} />
       </p>
+      {[port.intake, port.exhaust].map((g) => { const words = noiseWords(g, locale); return words === null ? null : <p key={g.side} className="hint"><b>{g.side === "intake" ? "Intake" : "Exhaust"}.</b> {words}</p>; })}
       {withheld.length === 0 ? null : <p className="hint">{withheld.join(" ")}</p>}
     </div>
   );
 }
 
-/** The bay FLOW CHECK of an order page: one curve a head, its first tested port. Renders nothing without a head that was flowed. */
+/** Every tested port of one head, by cylinder; a head of one port needs no heading. Pure. */
+export function FlowCheckHead({ gain, slug, locale }: { gain: GainOfPiece; slug: string; locale: string }) {
+  const { headId, ports } = gain;
+  if (headId === null || ports.length === 0) return null;
+  const at = `/s/${slug}/flow/${headId}`;
+  if (ports.length === 1) return ports.map((port) => <FlowCheckPort key={port.cylinder} port={port} locale={locale} />);
+  return (
+    <div className="grid gap-6">
+      {ports.map((port) => (
+        <section key={port.cylinder} aria-label={`Port ${port.cylinder}`}>
+          <h3 className="mb-2 flex items-baseline justify-between gap-3"><span>Port {port.cylinder}</span> <Link className="lk sm" href={`${at}?port=${port.cylinder}`}>Flow sheet<span className="sr-only">, port {port.cylinder}</span></Link></h3>
+          <FlowCheckPort port={port} locale={locale} />
+        </section>
+      ))}
+    </div>
+  );
+}
+
+/** The bay FLOW CHECK of an order page: every tested port of every head. Renders nothing without a head that was flowed. */
 export async function FlowCheck({ ctx, pieceIds }: { ctx: ShopContext; pieceIds: readonly string[] }) {
   const gains: GainOfPiece[] = [];
   for (const id of pieceIds) gains.push(await gainForPiece(ctx, id));
-  const shown = gains.filter((g) => g.ports.length > 0);
-  if (shown.length === 0) return null;
+  const { slug, locale } = ctx.shop;
   return (
     <>
-      {shown.map((gain) => {
-        const [port] = gain.ports;
-        if (!port || !gain.headId) return null;
+      {gains.filter((g) => g.headId !== null && g.ports.length > 0).map((gain) => {
+        const only = gain.ports.length === 1 ? gain.ports[0] : undefined;
         return (
           <Bay
-            key={gain.pieceId} label={`Flow check, ${gain.mark}${gain.ports.length > 1 ? ` port ${port.cylinder}` : ""}`}
-            aside={<Link className="lk" href={`/s/${ctx.shop.slug}/flow/${gain.headId}`}>{gain.ports.length > 1 ? `All ${gain.ports.length} ports` : "Flow sheet"}</Link>}
+            key={gain.pieceId} label={`Flow check, ${gain.mark}${only && only.cylinder > 1 ? ` port ${only.cylinder}` : ""}`}
+            aside={only ? <Link className="lk" href={`/s/${slug}/flow/${gain.headId}${only.cylinder > 1 ? `?port=${only.cylinder}` : ""}`}>Flow sheet</Link> : `${gain.ports.length} ports`}
           >
-            <FlowCheckPort port={port} locale={ctx.shop.locale} />
+            <FlowCheckHead gain={gain} slug={slug} locale={locale} />
           </Bay>
         );
       })}

@@ -29,7 +29,8 @@ export function geometryOf(p: Pick<GainCurveProps, "lines" | "unit" | "atInH2O" 
 
 /**
  * Flow against lift, before and after, intake and exhaust: plain SVG, the same on the server and in the browser. The gain is
- * the fluid between the lines; a loss is hatched and plated; a withheld gain leaves the space between them empty.
+ * the fluid between the lines; a loss is hatched and plated; a withheld gain leaves the space between them empty. The dotted band
+ * about before is the noise: a change that stays in it cannot be told from nothing.
  */
 export function GainCurve(props: GainCurveProps) {
   const hatch = useId().replaceAll(":", "");
@@ -52,6 +53,8 @@ export function GainCurve(props: GainCurveProps) {
       {g.areas.map((a) => (
         <path key={`${a.side}${a.path}`} className={a.kind === "gain" ? (a.side === "intake" ? "gain" : "gain2") : undefined} fill={a.kind === "loss" ? `url(#${hatch})` : undefined} d={a.path} />
       ))}
+      {g.bands.map((b) => <path key={`${b.side}${b.path}`} className="band" d={b.path} />)}
+      {g.bars.map((b) => <path key={`${b.side}${b.liftUm}`} className="bar-u" d={`M${b.x - 3} ${b.top}h6M${b.x} ${b.top}V${b.bottom}M${b.x - 3} ${b.bottom}h6`} />)}
       {g.liftTicks.map((t) => (
         <g key={t.liftUm}>
           <path className="tk" d={`M${t.x} ${g.plot.bottom}v${t.lengthPx}`} />

@@ -7,7 +7,7 @@ import { HERO_FLOWS, HERO_LIFTS_UM } from "@/tests/support/hero-flow";
 import { POWER_ESTIMATE_WORDS } from "../domain/power-estimate";
 import type { EstimateFacts } from "../queries/head-figures";
 import { HeadEstimates } from "./head-estimates";
-import { NoiseVerdicts } from "./head-views";
+import { NoiseVerdicts } from "./noise-verdicts";
 
 const place = { slug: "s", locale: "en-US", currency: "USD", zone: "America/Denver" };
 const facts: EstimateFacts = {
@@ -43,8 +43,8 @@ describe("estimates on a screen", () => {
 describe("the noise verdict on a screen", () => {
   it("is said in words beside its shape, and nothing is called a gain where the tests differ", () => {
     const shown = renderToStaticMarkup(<NoiseVerdicts locale="en-US" port={{ liftUnit: "in", withheld: [], notStated: ["lift"], noise: [
-      { liftUm: 1270, verdict: "not_assessed", words: "not assessed", differenceCfm: 0.4, expandedCfm: null, before: 1, after: 1 },
-      { liftUm: 2540, verdict: "within_noise", words: "not distinguishable from zero", differenceCfm: -0.2, expandedCfm: 0.9, before: 3, after: 3 },
+      { liftUm: 1270, verdict: "not_assessed", words: "not assessed", differenceCfm: 0.4, expandedCfm: null, marginCfm: null, before: 1, after: 1 },
+      { liftUm: 2540, verdict: "within_noise", words: "not distinguishable from zero", differenceCfm: -0.2, expandedCfm: 0.9, marginCfm: 0.9, before: 3, after: 3 },
     ] }} />);
     expect(shown).toContain("not assessed");
     expect(shown).toContain("not distinguishable from zero");

@@ -7,30 +7,11 @@ import { ToggleChip } from "@/modules/ui/chip";
 import { usePlace } from "@/modules/ui/place";
 import type { CoefficientRow } from "../domain/coefficient-rows";
 import { FLOW_FLAGS } from "../domain/flow-flags";
-import type { NoiseRow } from "../domain/noise-rows";
 import type { PortFigures } from "../queries/head-figures";
-import { differenceText, flowText, liftWords } from "./flow-words";
+import { flowText, liftWords } from "./flow-words";
 import { portWords } from "./library-words";
 import { Lane } from "@/modules/ui/lane";
-
-const NOISE_MARK: Readonly<Record<NoiseRow["verdict"], string>> = { larger_than_noise: "●", within_noise: "○", not_assessed: "◌" };
-
-/** Is the change larger than the noise, lift by lift, in words and shape. Without repeats it is not assessed. */
-export function NoiseVerdicts({ port, locale }: { port: Pick<PortFigures, "noise" | "withheld" | "notStated" | "liftUnit">; locale: string }) {
-  if (port.noise === null) return <p className="mid">No change is judged: {port.withheld.join(" ") || "the two tests cannot be compared."}</p>;
-  return (
-    <>
-      <Lane label="The change against the noise"><table className="calm">
-        <caption className="sr-only">The change at each lift against the measurement noise</caption>
-        <thead><tr><th scope="col">Lift, {port.liftUnit}</th><th scope="col" className="r">Change, CFM</th><th scope="col" className="r">U, 95 %</th><th scope="col" className="r">Readings</th><th scope="col">Verdict</th></tr></thead>
-        <tbody>{port.noise.map((r) => (
-          <tr key={r.liftUm}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{liftWords(r.liftUm, port.liftUnit, locale)}</th><td className="r q"><b>{differenceText(r.differenceCfm, locale)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${decimal(r.expandedCfm, 1, locale)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{NOISE_MARK[r.verdict]}</span> {r.words}</td></tr>
-        ))}</tbody>
-      </table></Lane>
-      {port.notStated.length > 0 ? <p className="hint p-3">Uncertainty of {port.notStated.join(" and ")} is not stated for this bench and counts as nothing here.</p> : null}
-    </>
-  );
-}
+import { NoiseVerdicts } from "./noise-verdicts";
 
 /** A triangle beside a doubtful figure; its words stand under the table. */
 function FlagMark({ row }: { row: CoefficientRow | undefined }) {

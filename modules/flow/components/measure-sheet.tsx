@@ -12,6 +12,7 @@ import { usePlace } from "@/modules/ui/place";
 import { cylinderFigures, headFigures, valveFigures, type Derived } from "../domain/measure-derived";
 import { DERIVED_KINDS, GROUP_WORDS, MEASURE_KINDS, measureKind, UNITS_OF, type MeasureGroup, type MeasureKind } from "../domain/measure-kinds";
 import { againstLimit, limitWords } from "../domain/measure-value";
+import { proposeFinding } from "../domain/proposed-finding";
 import type { LimitView, MeasurementSheet } from "../queries/measurements";
 import { MeasureCell } from "./measure-cell";
 import { MeasureLimitDialog } from "./measure-limit-dialog";
@@ -47,7 +48,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
     if (scope === "valve") return valveFigures(values, c.liftMm, (key) => limitFor(key, c.place.side));
     return scope === "cylinder" ? cylinderFigures(values, head.boreMm, head.strokeMm) : headFigures(values);
   };
-  const out: { what: string; words: string }[] = [];
+  const out: { what: string; where: string; words: string }[] = [];
   const placeWords = (c: Column) => (c.place.side === "" ? c.head.toLowerCase() : `${head.cylinders > 1 ? `cylinder ${cylinder} ` : ""}${c.place.side}${c.place.position === "single" ? "" : ` ${c.place.position}`}`);
   const order = sheet.orderNumber;
 
@@ -62,7 +63,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
         const base = measured(stage, c.place, unitOf).get(kind.key);
         const judged = base === undefined || limit === null ? null : againstLimit(base, limit);
         const verdict = judged === null ? null : { out: judged === "below" || judged === "above", words: limitWords(judged, limit) };
-        if (verdict?.out) out.push({ what: `${kind.label}, ${placeWords(c)}: ${entries.get(key)?.text.trim()}`, words: verdict.words });
+        if (verdict?.out) out.push({ what: `${kind.label}, ${placeWords(c)}: ${entries.get(key)?.text.trim()}`, where: placeWords(c), words: verdict.words });
         return { c, key, verdict };
       }),
     }));
@@ -76,7 +77,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
         const judged = figure.key === null ? null : againstLimit(figure.value, limit);
         const isOut = judged === "below" || judged === "above";
         const words = [...figure.words, ...(judged === null ? [] : [limitWords(judged, limit)])];
-        if (isOut) out.push({ what: `${label}, ${placeWords(c)}: ${decimal(figure.value, figure.digits, locale)} ${figure.unit}`, words: limitWords(judged, limit) });
+        if (isOut) out.push({ what: `${label}, ${placeWords(c)}: ${decimal(figure.value, figure.digits, locale)} ${figure.unit}`, where: placeWords(c), words: limitWords(judged, limit) });
         return { figure, isOut, words };
       }),
     }));
@@ -145,7 +146,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
             {out.length === 0 ? <p className="mid">Nothing is outside a limit entered here. Where none is entered, defer to the service manual.</p> : (
               <ul className="grid gap-3">{out.map((o) => (
                 <li key={o.what}><b>▲ {o.what}</b><span className="mid block">{o.words}</span>
-                  {sheet.canFind && order ? <LinkButton size="sm" icon="flag" href={`/s/${slug}/orders/${order}?piece=${sheet.pieceId ?? ""}&finding=${encodeURIComponent(`${o.what}, ${o.words}.`)}`}>Write a finding</LinkButton> : null}
+                  {sheet.canFind && order ? <LinkButton size="sm" icon="flag" href={proposeFinding(`/s/${slug}/orders/${order}`, { pieceId: sheet.pieceId ?? "", words: `${o.what}, ${o.words}.`, position: o.where })}>Write a finding</LinkButton> : null}
                 </li>
               ))}</ul>
             )}

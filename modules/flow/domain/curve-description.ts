@@ -9,6 +9,7 @@ interface DescribedLine {
   readonly before: readonly LiftReading[];
   readonly after: readonly LiftReading[];
   readonly gain: "shown" | "withheld";
+  readonly margins?: readonly { readonly liftUm: number; readonly marginCfm: number }[];
 }
 const SIDE_WORDS: Readonly<Record<PortSide, string>> = { intake: "Intake", exhaust: "Exhaust" };
 
@@ -34,7 +35,8 @@ export function curveDescription(lines: readonly DescribedLine[], unit: LiftUnit
       const gain = a ? gainAt(b.flowCfm, a.flowCfm) : 0;
       return gain < 0 ? [`${words} lost ${decimalText(-gain, 1)} at ${lift(b.liftUm)}.`] : [];
     });
-    return [...parts, ...losses];
+    const band = (line.margins ?? []).map((m) => `±${decimalText(m.marginCfm, 1)} at ${lift(m.liftUm)}`);
+    return [...parts, ...losses, ...(band.length === 0 ? [] : [`Band of the measurement noise about ${words.toLowerCase()} before: ${band.join(", ")}.`])];
   });
   const cam = camLiftUm === null ? [] : [`Cam lift ${lift(camLiftUm)}.`];
   return ["Flow in CFM against valve lift.", ...sentences, ...cam].join(" ");

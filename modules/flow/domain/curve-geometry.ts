@@ -8,6 +8,7 @@ import { areasBetween } from "./gain-area";
 import type { LiftUnit } from "./lift-ladder";
 import { endLabels, textWidthPx, type EndLabel, type LineEnd } from "./line-end-labels";
 import { lossMarkers, type LossMarker } from "./loss-markers";
+import { noiseBand, type LiftMargin, type MarginBar } from "./noise-band";
 import { pathText, type Segment } from "./path-segments";
 import type { LiftReading } from "./repeats";
 
@@ -20,6 +21,8 @@ export interface CurveLine {
   readonly after: readonly LiftReading[];
   /** `withheld` when the sets are not comparable: curves stand, no area and no loss mark is made. */
   readonly gain: "shown" | "withheld";
+  /** What a change must exceed at the lifts that were judged against the noise; drawn as a band about before. */
+  readonly margins?: readonly LiftMargin[];
 }
 export interface CurveGeometryInput {
   readonly widthPx: number;
@@ -48,6 +51,15 @@ export interface DrawnArea {
   readonly kind: "gain" | "loss";
   readonly path: string;
   readonly segments: readonly Segment[];
+}
+/** Inside it a change cannot be told from nothing. */
+export interface DrawnBand {
+  readonly side: PortSide;
+  readonly path: string;
+  readonly segments: readonly Segment[];
+}
+export interface DrawnBar extends MarginBar {
+  readonly side: PortSide;
 }
 export interface DrawnPoint {
   readonly side: PortSide;
@@ -78,6 +90,8 @@ export interface CurveGeometry {
   readonly flowTitle: { readonly text: string; readonly x: number; readonly y: number; readonly anchor: "start" | "end" } | null;
   readonly liftTitle: { readonly text: string; readonly x: number; readonly y: number; readonly anchor: "end" } | null;
   readonly areas: readonly DrawnArea[];
+  readonly bands: readonly DrawnBand[];
+  readonly bars: readonly DrawnBar[];
   readonly lines: readonly DrawnLine[];
   readonly points: readonly DrawnPoint[];
   readonly cam: CamMark | null;
@@ -94,6 +108,7 @@ const SIDE_WORDS: Readonly<Record<PortSide, string>> = { intake: "Intake", exhau
 interface ReadyLine {
   readonly side: PortSide;
   readonly gain: CurveLine["gain"];
+  readonly margins: readonly LiftMargin[];
   readonly before: DrawnCurve;
   readonly after: DrawnCurve;
 }
@@ -140,9 +155,9 @@ export function curveGeometry(input: CurveGeometryInput): Result<CurveGeometry> 
   const { widthPx, heightPx, unit, atInH2O, camLiftUm, lines } = input;
   const decimalText: DecimalText = input.decimalText ?? ((value, digits) => value.toFixed(digits));
   const all = lines.flatMap((l) => [...l.before, ...l.after]);
-  const bad = refuseNotFinite({ widthPx, heightPx, lifts: all.map((r) => r.liftUm), flowsCfm: all.map((r) => r.flowCfm), camLiftUm: camLiftUm ?? undefined });
+  const bad = refuseNotFinite({ widthPx, heightPx, lifts: all.map((r) => r.liftUm), flowsCfm: all.map((r) => r.flowCfm), camLiftUm: camLiftUm ?? undefined, marginsCfm: lines.flatMap((l) => (l.margins ?? []).map((m) => m.marginCfm)) });
   if (bad) return bad;
-  if (all.some((r) => r.liftUm < 0 || r.flowCfm < 0)) return refuseFlow("READING_OUT_OF_RANGE", "lines", { min: 0 });
+  if (all.some((r) => r.liftUm < 0 || r.flowCfm < 0) || lines.some((l) => l.margins?.some((m) => m.marginCfm < 0))) return refuseFlow("READING_OUT_OF_RANGE", "lines", { min: 0 });
   const mini = input.mini ?? widthPx < MINI_BELOW_PX;
   const plot: PlotBox = mini
     ? { left: 34, right: widthPx - 78, top: 14, bottom: heightPx - 26 }
@@ -155,9 +170,11 @@ export function curveGeometry(input: CurveGeometryInput): Result<CurveGeometry> 
     if (!before.ok) return before;
     const after = drawnCurve(line.after);
     if (!after.ok) return after;
-    ready.push({ side: line.side, gain: line.gain, before: before.value, after: after.value });
+    ready.push({ side: line.side, gain: line.gain, margins: line.gain === "shown" ? (line.margins ?? []) : [], before: before.value, after: after.value });
   }
-  const scale = curveScale(plot, [...all.map((r) => r.liftUm), camLiftUm ?? 0], all.map((r) => r.flowCfm));
+  const bandTops = ready.flatMap((l) => l.before.readings.map((r) => r.flowCfm + (l.margins.find((m) => m.liftUm === r.liftUm)?.marginCfm ?? 0)));
+  const scale = curveScale(plot, [...all.map((r) => r.liftUm), camLiftUm ?? 0], [...all.map((r) => r.flowCfm), ...bandTops]);
+  const bands = ready.map((l) => ({ side: l.side, ...noiseBand(l.before, l.margins, scale) }));
   const labels = endLabels(lineEnds(ready, scale.x, scale.y, mini), plot);
   const shown = ready.filter((l) => l.gain === "shown");
   const camText = camLiftUm === null ? "" : `Cam lift ${scaleLiftText(camLiftUm, unit, decimalText)}`;
@@ -177,6 +194,8 @@ export function curveGeometry(input: CurveGeometryInput): Result<CurveGeometry> 
     areas: shown.flatMap((l) =>
       areasBetween(l.before, l.after, scale).map(({ kind, segments }) => ({ side: l.side, kind, path: pathText(segments), segments })),
     ),
+    bands: bands.flatMap(({ side, outlines }) => outlines.map((segments) => ({ side, path: pathText(segments), segments }))),
+    bars: bands.flatMap(({ side, bars }) => bars.map((bar) => ({ ...bar, side }))),
     lines: ready.flatMap((l) =>
       (["before", "after"] as const).flatMap((when) => {
         const segments = curveSegments(l[when], scale);

@@ -3,9 +3,9 @@ import { HERO_FLOWS, HERO_LIFTS_UM } from "@/tests/support/hero-flow";
 import { refusalOf, valueOf } from "@/tests/support/value-of";
 import { coefficientTable } from "./coefficient-rows";
 import { engineEstimate } from "./engine-estimate";
-import { noiseRows, otherUncertaintyCfm, type KnownUncertainty } from "./noise-rows";
+import { noiseRows, otherUncertaintyCfm } from "./noise-rows";
 import { POWER_ESTIMATE_WORDS } from "./power-estimate";
-import type { RawCell, RawTest } from "./raw-test";
+import type { KnownUncertainty, RawCell, RawTest } from "./raw-test";
 import { figuresOfTest } from "./test-figures";
 
 describe("coefficients lift by lift", () => {

@@ -1,15 +1,8 @@
 import { compareWithNoise, NOISE_WORDS, type NoiseVerdict } from "./noise";
+import type { KnownUncertainty, RawTest } from "./raw-test";
 import { combinedUncertainty, liftSettingUncertainty, pressureSettingUncertainty, resolutionUncertainty } from "./setting-uncertainty";
 import type { TestFigures } from "./test-figures";
 
-/** What the bench and the lift device are known to; null = not stated, and then taken as nothing, which is said. */
-export interface KnownUncertainty {
-  readonly pressureInH2O: number | null;
-  readonly readingCfm: number | null;
-  readonly liftMm: number | null;
-  /** Step the indicator shows, mm. */
-  readonly liftStepMm: number | null;
-}
 export interface NoiseRow {
   readonly liftUm: number;
   readonly verdict: NoiseVerdict["verdict"];
@@ -17,6 +10,8 @@ export interface NoiseRow {
   readonly differenceCfm: number;
   /** Expanded uncertainty at 95 %; null when not assessed. */
   readonly expandedCfm: number | null;
+  /** What the change had to exceed; null when not assessed. */
+  readonly marginCfm: number | null;
   readonly before: number;
   readonly after: number;
 }
@@ -43,7 +38,28 @@ export function noiseRows(before: TestFigures, after: TestFigures, atInH2O: numb
     if (!made.ok) return [];
     const { value } = made;
     return [{
-      liftUm, verdict: value.verdict, words: NOISE_WORDS[value.verdict], differenceCfm: value.differenceCfm, expandedCfm: value.verdict === "not_assessed" ? null : value.expandedUCfm, before: beforeCfm.length, after: afterCfm.length,
+      liftUm, verdict: value.verdict, words: NOISE_WORDS[value.verdict], differenceCfm: value.differenceCfm, expandedCfm: value.verdict === "not_assessed" ? null : value.expandedUCfm,
+      marginCfm: value.verdict === "not_assessed" ? null : value.marginCfm, before: beforeCfm.length, after: afterCfm.length,
     }];
   });
+}
+
+/** The verdicts of two tests that may be compared, and what they could not take into account. */
+export interface GainNoise {
+  readonly rows: readonly NoiseRow[];
+  /** Uncertainties nobody stated; they count as nothing in the verdict. */
+  readonly notStated: readonly string[];
+}
+
+const NOTHING_STATED: KnownUncertainty = { pressureInH2O: null, readingCfm: null, liftMm: null, liftStepMm: null };
+
+/** Lift by lift against the noise of the bench that read `after`. Ask only for tests that may be compared. */
+export function noiseOfTests(before: TestFigures, after: TestFigures, newer: Pick<RawTest, "known" | "nominalInH2O">): GainNoise {
+  const known = newer.known ?? NOTHING_STATED;
+  return {
+    rows: noiseRows(before, after, newer.nominalInH2O, known),
+    notStated: [
+      ...(known.pressureInH2O === null ? ["pressure held"] : []), ...(known.readingCfm === null ? ["reading"] : []), ...(known.liftMm === null && known.liftStepMm === null ? ["lift"] : []),
+    ],
+  };
 }

@@ -24,6 +24,8 @@ export type NoiseVerdict =
       readonly effectiveDof: number;
       readonly k: number;
       readonly expandedUCfm: number;
+      /** What the change must exceed: U, and across a pressure conversion 3 % of the before reading more. */
+      readonly marginCfm: number;
       readonly flags: readonly FlowFlag[];
     }
   | {
@@ -98,6 +100,7 @@ export function compareWithNoise(input: {
     effectiveDof,
     k: k.value,
     expandedUCfm,
+    marginCfm: expandedUCfm + allowance,
     flags: [...(single.length > 0 ? (["BENCH_HISTORY"] as const) : []), ...(isConverted ? (["CONVERTED_PRESSURE"] as const) : [])],
   });
 }

@@ -24,6 +24,15 @@ export interface BenchFacts {
   readonly waterUnit: WaterUnit;
 }
 
+/** Standard uncertainties of a bench and its lift device; null = not stated, and then taken as nothing, which is said. */
+export interface KnownUncertainty {
+  readonly pressureInH2O: number | null;
+  readonly readingCfm: number | null;
+  readonly liftMm: number | null;
+  /** Step the indicator shows, mm. */
+  readonly liftStepMm: number | null;
+}
+
 /** One cell of a sheet as it was typed: the newest revision of one lift and repeat. Empty text = cleared. */
 export interface RawCell {
   readonly liftUm: number;
@@ -51,6 +60,8 @@ export interface RawTest {
   readonly bench: BenchFacts;
   readonly benchFactor: number;
   readonly benchCheckedAt: string | null;
+  /** Left out: nothing is stated. */
+  readonly known?: KnownUncertainty;
   readonly fixture: { readonly id: string; readonly name: string; readonly boreMm: number };
   readonly nominalInH2O: number;
   readonly lifts: readonly { readonly liftUm: number; readonly text: string }[];

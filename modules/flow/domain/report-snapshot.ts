@@ -36,7 +36,8 @@ export interface ReportSide {
 }
 /** A comparison as issued: everything its paper needs, so that it can be made again unchanged. */
 export interface ReportSnapshot {
-  readonly kind: 1;
+  /** 1: issued before the noise and the hatched loss were drawn; such a paper stays as it was. */
+  readonly kind: 1 | 2;
   readonly shop: { readonly name: string; readonly address: string; readonly phone: string; readonly email: string };
   readonly locale: string;
   readonly zone: string;

@@ -1,6 +1,7 @@
 import { ok, type Result } from "@/modules/kernel/result";
 import type { NoteCode, PortSide, Reason, WithheldCode } from "./comparison-reasons";
 import type { LiftUnit } from "./lift-ladder";
+import { noiseOfTests, type GainNoise } from "./noise-rows";
 import type { RawTest } from "./raw-test";
 import { compareSets, type ComparableSets, type PlainRow } from "./shop-comparison";
 import type { Standing } from "./standing-tests";
@@ -28,6 +29,8 @@ interface BothSets {
 export interface ComparableGain extends BothSets, Omit<ComparableSets, "comparable" | "notes"> {
   readonly state: "comparable";
   readonly comparable: true;
+  /** Absent only in papers that were issued before verdicts were frozen with them. */
+  readonly noise?: GainNoise;
 }
 /** Both tables and why no difference is shown. There is no figure here to print by mistake. */
 export interface WithheldGain extends BothSets {
@@ -70,14 +73,15 @@ export function sideGain(standing: Standing, side: PortSide, benchCheckHoursMax:
   const { before, after } = standing;
   if (!before || !after) return ok({ state: "absent", comparable: false, side, absent: before ? "after" : after ? "before" : "both" });
   const camLiftUm = after.camLiftUm ?? before.camLiftUm;
-  const compared = compareSets({ before: readingSetOf(before, figuresOfTest(before)), after: readingSetOf(after, figuresOfTest(after)), camLiftUm, benchCheckHoursMax });
+  const [figuresBefore, figuresAfter] = [figuresOfTest(before), figuresOfTest(after)];
+  const compared = compareSets({ before: readingSetOf(before, figuresBefore), after: readingSetOf(after, figuresAfter), camLiftUm, benchCheckHoursMax });
   if (!compared.ok) return compared;
   const shared = conditionWords(before).filter((words) => conditionWords(after).includes(words));
   const both: BothSets = {
     side, liftUnit: after.liftUnit, atInH2O: after.nominalInH2O, camLiftUm, before: setFacts(before), after: setFacts(after), conditions: shared, notes: compared.value.notes,
   };
   if (!compared.value.comparable) return ok({ ...both, state: "withheld", comparable: false, reasons: compared.value.reasons, rows: compared.value.rows });
-  return ok({ ...compared.value, ...both, state: "comparable" });
+  return ok({ ...compared.value, ...both, state: "comparable", noise: noiseOfTests(figuresBefore, figuresAfter, after) });
 }
 
 /** One port pair of a head. */

@@ -4,6 +4,7 @@ import { dateTimeZone, decimal } from "@/modules/kernel/format";
 import { linesOfPort } from "../components/curve-lines";
 import { differenceText, flowText, liftWords } from "../components/flow-words";
 import { withheldWords } from "../components/gain-words";
+import { isAssessed, noiseSummary, notStatedWords } from "../domain/noise-summary";
 import { curveGeometry } from "../domain/curve-geometry";
 import { AIRFLOW_WORDS, type ReportSide, type ReportSnapshot, type ReportTest } from "../domain/report-snapshot";
 import { curveContent } from "./curve-canvas";
@@ -20,18 +21,24 @@ const number = (text: string, more: object = {}): TableCell => ({ text, font: FA
 const unitOf = (sides: readonly ReportSide[]): "in" | "mm" => sides.map((x) => x.gain).find((g) => g.state !== "absent")?.liftUnit ?? "in";
 const liftsOf = (sides: readonly ReportSide[]): number[] => [...new Set(sides.flatMap((x) => [...(x.before?.readings ?? []), ...(x.after?.readings ?? [])]).map((r) => r.liftUm))].sort((a, b) => a - b);
 
+const isJudged = (gain: ReportSide["gain"]): boolean => gain.comparable && isAssessed(gain.noise);
+const uncertaintyAt = (gain: ReportSide["gain"], um: number, locale: string): string => {
+  const expanded = gain.comparable ? gain.noise?.rows.find((r) => r.liftUm === um)?.expandedCfm : undefined;
+  return expanded === undefined || expanded === null ? "" : `±${decimal(expanded, 1, locale)}`;
+};
+
 /** Lift and, for each side, before, after and, only where the two may be compared, the difference. */
 function readingsTable(sides: readonly ReportSide[], s: ReportSnapshot, rowHeight: number, isWide: boolean): Content {
   const unit = unitOf(sides);
   const at = (test: ReportTest | null, um: number): string => { const r = test?.readings.find((x) => x.liftUm === um); return r ? flowText(r.flowCfm, s.locale) : ""; };
-  const heads = [`Lift, ${unit}`, ...sides.flatMap(({ side, gain }) => [isWide ? "Before" : `${side === "intake" ? "In" : "Ex"} before`, "After", ...(gain.comparable ? ["Gain", ...(isWide ? ["%"] : [])] : [])])];
+  const heads = [`Lift, ${unit}`, ...sides.flatMap(({ side, gain }) => [isWide ? "Before" : `${side === "intake" ? "In" : "Ex"} before`, "After", ...(gain.comparable ? ["Gain", ...(isWide ? ["%", ...(isJudged(gain) ? ["U, 95 %"] : [])] : [])] : [])])];
   const cellsOf = ({ before, after, gain }: ReportSide, um: number): TableCell[] => {
     const row = gain.comparable ? gain.rows.find((r) => r.liftUm === um) : undefined;
     return [
       number(at(before, um)), number(at(after, um)),
       ...(gain.comparable ? [
         number(row ? `${row.gainCfm < 0 ? "loss " : ""}${differenceText(row.gainCfm, s.locale)}` : "", { bold: true }),
-        ...(isWide ? [number(row === undefined || row.gainPercent === null ? "" : decimal(row.gainPercent, 1, s.locale), { color: PAPER_INK.soft })] : []),
+        ...(isWide ? [number(row === undefined || row.gainPercent === null ? "" : decimal(row.gainPercent, 1, s.locale), { color: PAPER_INK.soft }), ...(isJudged(gain) ? [number(uncertaintyAt(gain, um, s.locale), { color: PAPER_INK.soft })] : [])] : []),
       ] : []),
     ];
   };
@@ -41,7 +48,7 @@ function readingsTable(sides: readonly ReportSide[], s: ReportSnapshot, rowHeigh
   ];
   const pad = Math.max(0.6, (rowHeight - 10.6) / 2);
   return {
-    table: { headerRows: 1, widths: [40, ...heads.slice(1).map((h) => (h === "%" ? 30 : ("*" as const)))], body },
+    table: { headerRows: 1, widths: [40, ...heads.slice(1).map((h) => (h === "%" ? 30 : h === "U, 95 %" ? 38 : ("*" as const)))], body },
     layout: {
       hLineWidth: (i) => (i === 0 ? 0 : i === 1 ? 0.9 : 0.5), vLineWidth: () => 0, hLineColor: (i) => (i === 1 ? PAPER_INK.ink : PAPER_INK.line),
       paddingLeft: () => 2, paddingRight: () => 2, paddingTop: () => pad, paddingBottom: () => pad,
@@ -59,6 +66,9 @@ function toldWords({ gain }: ReportSide, s: ReportSnapshot): string {
     words.push(`Mean ${differenceText(gain.meanGainCfm, s.locale, 2)} CFM${gain.meanPercent === null ? "" : ` (${decimal(gain.meanPercent, 2, s.locale)} %)`} over ${gain.rows.length} lifts${cam}.`);
     if (gain.losses.length > 0) words.push(`Lower after than before at ${gain.losses.map((l) => `${liftWords(l.liftUm, unit, s.locale)} (${differenceText(l.gainCfm, s.locale)})`).join(", ")}.`);
   }
+  // Without repeats there is no verdict; that stands once under what was not tested.
+  const noise = gain.comparable && isAssessed(gain.noise) ? noiseSummary(gain.noise, (um) => liftWords(um, unit, s.locale)) : null;
+  if (noise) words.push(noise);
   if (gain.state !== "absent") words.push(...gain.notes.map((n) => n.words));
   return words.join(" ");
 }
@@ -90,6 +100,12 @@ function whoWords(s: ReportSnapshot, shared: readonly string[]): string[] {
   });
 }
 
+/** What the dotted band is, and what it leaves out; nothing on a paper without a verdict. */
+const bandWords = (s: ReportSnapshot): string[] => {
+  const judged = s.sides.flatMap(({ gain }) => (gain.comparable && isAssessed(gain.noise) ? [gain.noise] : []));
+  return judged.length === 0 ? [] : ["The dotted band on the curve is the measurement noise about the before test (95 %).", ...new Set(judged.flatMap((n) => notStatedWords(n) ?? []))];
+};
+
 const small = (text: string): Content => ({ text, fontSize: 8.2, lineHeight: 1.12, color: PAPER_INK.soft, margin: [0, 0, 0, 2.5] });
 
 /** The flow report of one port pair on one sheet: figures, curve, conditions, who and when, and what was not tested. */
@@ -101,16 +117,17 @@ export function flowReport(s: ReportSnapshot): TDocumentDefinitions {
   const lifts = Math.max(1, liftsOf(s.sides).length);
   // A long ladder stands beside its curve, both sides in one table; a short one under it, a table a side.
   const isLong = lifts > LIFTS_UNDER;
-  const rowHeight = Math.min(ROW_MAX, TABLE_HEIGHT / (lifts + 1));
+  const hasVerdict = s.sides.some((side) => isJudged(side.gain));
+  const rowHeight = hasVerdict ? Math.min(ROW_MAX - 2.3, (TABLE_HEIGHT - 40) / (lifts + 1)) : Math.min(ROW_MAX, TABLE_HEIGHT / (lifts + 1));
   const shared = tests.reduce<readonly string[]>((common, t, i) => (i === 0 ? t.conditions : common.filter((c) => t.conditions.includes(c))), []);
   // Sides without a comparison are drawn from their tests, so that a single test has its curve too.
   const lines = linesOfPort(port).map((line, i) => (line.before.length + line.after.length > 0 ? line : { ...line, before: s.sides[i]?.before?.readings ?? [], after: s.sides[i]?.after?.readings ?? [] }));
   const unit = unitOf(s.sides);
   const geometry = curveGeometry({
-    widthPx: isLong ? 216 : width, heightPx: isLong ? 210 : 190, unit, atInH2O: stated?.atInH2O ?? 28, camLiftUm: stated?.camLiftUm ?? null, lines, mini: isLong,
+    widthPx: isLong ? 216 : width, heightPx: isLong ? 210 : hasVerdict ? 170 : 190, unit, atInH2O: stated?.atInH2O ?? 28, camLiftUm: stated?.camLiftUm ?? null, lines, mini: isLong,
     decimalText: (v, d) => decimal(v, d, s.locale),
   });
-  const curve = geometry.ok ? curveContent(geometry.value) : [];
+  const curve = geometry.ok ? curveContent(geometry.value, s.kind === 1) : [];
   const content: Content[] = [
     ...masthead({ ...s.shop, locale: s.locale }, `Flow report ${s.comparisonNo}`, s.head.mark),
     factRow([
@@ -130,7 +147,7 @@ export function flowReport(s: ReportSnapshot): TDocumentDefinitions {
     { stack: [
       engraved("Who, when, how", { margin: [0, 10, 0, 3] }),
       ...whoWords(s, shared).map(small),
-      engraved("What was not tested", { margin: [0, 6, 0, 3] }), small(s.notTested.join(" ")),
+      engraved("What was not tested", { margin: [0, 6, 0, 3] }), small([...s.notTested, ...bandWords(s)].join(" ")),
       { text: AIRFLOW_WORDS, fontSize: 8.6, bold: true, margin: [0, 6, 0, 0] },
     ] },
   ];

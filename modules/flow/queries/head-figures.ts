@@ -1,13 +1,13 @@
 import "server-only";
-import { and, asc, eq, inArray } from "drizzle-orm";
-import { benches, camshafts, engineFamilies, flowTests, heads, liftDevices } from "@/db/schema";
+import { and, asc, eq } from "drizzle-orm";
+import { camshafts, engineFamilies, heads } from "@/db/schema";
 import { ableTo, inShop, mustBeAble, NotFound, settingsOf, type ShopContext } from "@/modules/access/context";
 import type { CamPoint } from "../domain/cam-table";
 import { coefficientTable, type CoefficientTable } from "../domain/coefficient-rows";
 import type { PortSide } from "../domain/comparison-reasons";
 import type { EstimateCam } from "../domain/engine-estimate";
 import type { LiftUnit } from "../domain/lift-ladder";
-import { noiseRows, type KnownUncertainty, type NoiseRow } from "../domain/noise-rows";
+import type { NoiseRow } from "../domain/noise-rows";
 import type { RawTest } from "../domain/raw-test";
 import type { LiftReading } from "../domain/repeats";
 import { sideGain } from "../domain/side-gain";
@@ -22,10 +22,10 @@ export interface PortFigures {
   valves: string;
   before: CoefficientTable | null; after: CoefficientTable | null;
   /** Null when the two may not be compared. */
-  noise: NoiseRow[] | null;
+  noise: readonly NoiseRow[] | null;
   withheld: string[];
   /** Uncertainties nobody stated; they count as nothing in the verdict. */
-  notStated: string[];
+  notStated: readonly string[];
 }
 export interface EstimateFacts { cylinders: number; boreMm: number | null; strokeMm: number | null; cams: (EstimateCam & { id: string; label: string })[]; ports: { cylinder: number; when: "before" | "after"; atInH2O: number; readings: LiftReading[] }[] }
 export interface HeadFigures {
@@ -38,19 +38,7 @@ export interface HeadFigures {
 
 type Test = RawTest & { headId: string; cylinder: number };
 
-async function uncertaintiesOf(ctx: ShopContext, tests: readonly Test[]): Promise<Map<string, KnownUncertainty>> {
-  const s = ctx.shop.id;
-  if (tests.length === 0) return new Map();
-  return inShop(ctx, async (tx) => {
-    const rows = await tx.select({ id: flowTests.id, pressure: benches.pressureUncertaintyInH2O, reading: benches.readingUncertaintyCfm, lift: liftDevices.uncertaintyMm, step: liftDevices.resolutionMm }).from(flowTests)
-      .innerJoin(benches, and(eq(benches.shopId, flowTests.shopId), eq(benches.id, flowTests.benchId)))
-      .leftJoin(liftDevices, and(eq(liftDevices.shopId, flowTests.shopId), eq(liftDevices.id, flowTests.liftDeviceId)))
-      .where(and(eq(flowTests.shopId, s), inArray(flowTests.id, tests.map((t) => t.id))));
-    return new Map(rows.map((r) => [r.id, { pressureInH2O: r.pressure, readingCfm: r.reading, liftMm: r.lift, liftStepMm: r.step }]));
-  });
-}
-
-function portFigures(cylinder: number, side: PortSide, tests: readonly Test[], valves: readonly ValveOfFamily[], known: ReadonlyMap<string, KnownUncertainty>, hoursMax: number): PortFigures | null {
+function portFigures(cylinder: number, side: PortSide, tests: readonly Test[], valves: readonly ValveOfFamily[], hoursMax: number): PortFigures | null {
   const standing = standingTests(tests.filter((t) => t.cylinder === cylinder), side, "complete");
   const newest = standing.after ?? standing.before;
   if (!newest) return null;
@@ -63,14 +51,13 @@ function portFigures(cylinder: number, side: PortSide, tests: readonly Test[], v
     return coefficientTable({ readings: figuresOfTest(test).readings, side, valveDiametersMm: diameters, atInH2O: test.nominalInH2O });
   };
   const gain = sideGain(standing, side, hoursMax);
-  const u = known.get(newest.id) ?? { pressureInH2O: null, readingCfm: null, liftMm: null, liftStepMm: null };
-  const comparable = gain.ok && gain.value.state === "comparable" && standing.before && standing.after;
+  const noise = gain.ok && gain.value.comparable ? (gain.value.noise ?? null) : null;
   return {
     cylinder, side, liftUnit: newest.liftUnit, atInH2O: newest.nominalInH2O, camLiftUm: newest.camLiftUm, valves: sizes(newest).map((d) => `${d} mm`).join(" + "),
     before: table(standing.before), after: table(standing.after),
-    noise: comparable && standing.before && standing.after ? noiseRows(figuresOfTest(standing.before), figuresOfTest(standing.after), newest.nominalInH2O, u) : null,
+    noise: noise?.rows ?? null,
     withheld: gain.ok && gain.value.state === "withheld" ? gain.value.reasons.map((r) => r.words) : gain.ok && gain.value.state === "absent" ? ["One of the two tests is missing."] : [],
-    notStated: [...(u.pressureInH2O === null ? ["pressure held"] : []), ...(u.readingCfm === null ? ["reading"] : []), ...(u.liftMm === null && u.liftStepMm === null ? ["lift"] : [])],
+    notStated: noise?.notStated ?? [],
   };
 }
 
@@ -86,8 +73,7 @@ export async function headFigures(ctx: ShopContext, headId: string): Promise<Hea
     const [family] = await tx.select().from(engineFamilies).where(and(eq(engineFamilies.shopId, s), eq(engineFamilies.name, head.family)));
     const valves = (family?.valves ?? []) as ValveOfFamily[];
     const tests = (await rawTests(inner, { headIds: [headId] })).filter((t) => t.state === "complete");
-    const known = await uncertaintiesOf(inner, tests);
-    const ports = Array.from({ length: head.cylinders }, (_, i) => i + 1).flatMap((cylinder) => (["intake", "exhaust"] as const).flatMap((side) => portFigures(cylinder, side, tests, valves, known, settings.benchCheckHours) ?? []));
+    const ports = Array.from({ length: head.cylinders }, (_, i) => i + 1).flatMap((cylinder) => (["intake", "exhaust"] as const).flatMap((side) => portFigures(cylinder, side, tests, valves, settings.benchCheckHours) ?? []));
     let estimates: EstimateFacts | null = null;
     if (settings.showFlowEstimates) {
       const cams = await tx.select().from(camshafts).where(and(eq(camshafts.shopId, s), eq(camshafts.side, "intake"), eq(camshafts.active, true))).orderBy(asc(camshafts.label));

@@ -5,6 +5,7 @@ import { inShop, mustBeAble, NotFound, settingsOf, type ShopContext } from "@/mo
 import type { Reason, PortSide } from "../domain/comparison-reasons";
 import { gainsByLift, type LiftGains } from "../domain/family-gains";
 import type { LiftUnit } from "../domain/lift-ladder";
+import { noiseOfTests, type GainNoise } from "../domain/noise-rows";
 import type { LiftReading } from "../domain/repeats";
 import { compareSets } from "../domain/shop-comparison";
 import { conditionWords, sideGain, type SideGain } from "../domain/side-gain";
@@ -115,6 +116,8 @@ export interface Overlay {
   reasons: Reason<string>[]; notes: Reason<string>[];
   rows: OverlayRow[];
   meanDifferenceCfm: number | null;
+  /** Each common lift against the noise; null where no difference is shown. */
+  noise: GainNoise | null;
 }
 
 /** Two castings are not one port before and after: they are the first and the second. */
@@ -151,12 +154,12 @@ export async function overlayOf(ctx: ShopContext, ask: { a: string; b: string })
     const compared = compareSets({ before: readingSetOf(a), after: readingSetOf(b), camLiftUm, benchCheckHoursMax: benchCheckHours });
     const base = { a: sideOf(a), b: sideOf(b), camLiftUm, samePort: a.headId === b.headId && a.cylinder === b.cylinder && a.side === b.side };
     const daysApart = Math.floor(Math.abs(Date.parse(b.startedAt) - Date.parse(a.startedAt)) / 86_400_000);
-    if (!compared.ok) return { ...base, comparable: false, reasons: [{ code: compared.refusal.code, words: compared.refusal.message }], notes: [], rows: [], meanDifferenceCfm: null };
+    if (!compared.ok) return { ...base, comparable: false, reasons: [{ code: compared.refusal.code, words: compared.refusal.message }], notes: [], rows: [], meanDifferenceCfm: null, noise: null };
     const value = compared.value;
     if (!value.comparable) {
-      return { ...base, comparable: false, reasons: asFirstAndSecond(value.reasons, base.samePort, daysApart), notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null })), meanDifferenceCfm: null };
+      return { ...base, comparable: false, reasons: asFirstAndSecond(value.reasons, base.samePort, daysApart), notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null })), meanDifferenceCfm: null, noise: null };
     }
     const rows = [...value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: r.gainCfm })), ...value.unpairedRows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null }))];
-    return { ...base, comparable: true, reasons: [], notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: rows.sort((x, y) => x.liftUm - y.liftUm), meanDifferenceCfm: value.meanGainCfm };
+    return { ...base, comparable: true, reasons: [], notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: rows.sort((x, y) => x.liftUm - y.liftUm), meanDifferenceCfm: value.meanGainCfm, noise: noiseOfTests(figuresOfTest(a), figuresOfTest(b), b) };
   });
 }

@@ -5,7 +5,7 @@ import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type Shop
 import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
 import { rawTests } from "./tests-of-head";
 import { seesCustomers } from "./gain";
-import { cautionsToShow } from "./job-cautions";
+import { cautionsOfOwnHead, cautionsToShow } from "./job-cautions";
 
 /** The step of a job at which the hazards of the bench are told. */
 export const BENCH_STEP = "bench session";
@@ -14,6 +14,7 @@ const BENCH_HAZARDS = ["noise", "suction", "springs"] as const;
 export interface SheetHead {
   id: string; mark: string; family: string; pieceId: string | null; workOrderId: string | null; orderNumber: string | null; customerName: string | null; castingNumber: string; seatMaterial: string;
   cylinders: number; camLiftIntakeUm: number | null; camLiftExhaustUm: number | null;
+  version: number; workDone: string[]; notes: string;
 }
 export interface PortMark { cylinder: number; state: "empty" | "part" | "done" }
 /** Everything a flow sheet shows, raw. Figures are computed from it by `figuresOfTest` and `sideGain`, here and in the browser alike. */
@@ -85,7 +86,7 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
     const personId = personIdOf(ctx);
     const canRecord = ableTo(ctx, "flow.record");
     const isTold = canRecord && personId !== null;
-    const cautions = !isTold ? [] : row.orderId ? await cautionsToShow(inner, { workOrderId: row.orderId, step: BENCH_STEP, hazards: BENCH_HAZARDS }) : [...BENCH_HAZARDS];
+    const cautions = !isTold ? [] : row.orderId ? await cautionsToShow(inner, { workOrderId: row.orderId, step: BENCH_STEP, hazards: BENCH_HAZARDS }) : await cautionsOfOwnHead(inner, { headId, step: BENCH_STEP, hazards: BENCH_HAZARDS });
     const issued = await tx.select({ id: flowComparisons.id, comparisonNo: flowComparisons.comparisonNo, issuedAt: flowComparisons.issuedAt, issuedBy: people.shortName }).from(flowComparisons)
       .innerJoin(people, and(eq(people.shopId, flowComparisons.shopId), eq(people.id, flowComparisons.issuedBy)))
       .where(and(eq(flowComparisons.shopId, s), eq(flowComparisons.headId, headId), eq(flowComparisons.cylinder, cylinder))).orderBy(desc(flowComparisons.comparisonNo));
@@ -93,6 +94,7 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
       head: {
         id: h.id, mark: h.mark, family: h.family, pieceId: h.pieceId, workOrderId: row.orderId, orderNumber: row.orderNumber, customerName: seesCustomers(ctx) ? row.customerName : null, castingNumber: h.castingNumber,
         seatMaterial: h.seatMaterial, cylinders: h.cylinders, camLiftIntakeUm: h.camLiftIntakeUm, camLiftExhaustUm: h.camLiftExhaustUm,
+        version: h.version, workDone: h.workDone, notes: h.notes,
       },
       cylinder, ports: portMarks(h.cylinders, all), tests: all.filter((t) => t.cylinder === cylinder).map(({ headId: _, cylinder: __, ...t }) => t),
       benchCheckHours, nominalInH2O: nominalPressureInH2O, canRecord, canIssue: ableTo(ctx, "flow.issue"), viewer: { id: ctx.actor.id, name: ctx.actor.name },

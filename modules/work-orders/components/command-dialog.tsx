@@ -25,12 +25,16 @@ interface Props<I extends FieldValues, O, V> {
   submit: string;
   pendingText?: string;
   wide?: boolean;
+  /** Open from the first look at the page. */
+  startsOpen?: boolean;
+  /** Keeps what is typed in this tab under the given name until it is sent, also when the dialog is closed. */
+  draft?: string;
   children: ReactNode | ((watch: (name: string) => unknown) => ReactNode);
 }
 
 /** A small form over the page that sends one command, then closes and lets the page look again. */
 export function CommandDialog<I extends FieldValues, O, V>(props: Props<I, O, V>) {
-  const [open, setOpen] = useState(false);
+  const [open, setOpen] = useState(props.startsOpen === true);
   const { trigger, title, description, wide } = props;
   return (
     <TaskDialog trigger={trigger} open={open} onOpenChange={setOpen} title={title} {...(description === undefined ? {} : { description })} {...(wide === undefined ? {} : { wide })}>
@@ -40,11 +44,11 @@ export function CommandDialog<I extends FieldValues, O, V>(props: Props<I, O, V>
 }
 
 /** Mounted with the dialog, so that each opening begins with the values of now. */
-function Body<I extends FieldValues, O, V>({ schema, values, action, done, onDone, safe = "Not yet", submit, pendingText, title, children, close }: Props<I, O, V> & { close: () => void }) {
+function Body<I extends FieldValues, O, V>({ schema, values, action, done, onDone, safe = "Not yet", submit, pendingText, title, draft, children, close }: Props<I, O, V> & { close: () => void }) {
   const router = useRouter();
   const toast = useToast();
   const form = useCommandForm<I, O, V>({
-    schema, defaultValues: values, guard: false, action,
+    schema, defaultValues: values, guard: false, action, ...(draft === undefined ? {} : { draft }),
     onDone: (value) => {
       close();
       toast({ text: done(value) });

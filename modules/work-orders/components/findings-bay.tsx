@@ -9,7 +9,8 @@ import { Status } from "@/modules/ui/status";
 import type { DialName } from "@/modules/ui/dial";
 import { askAboutFindingAction, withdrawFindingAction } from "../actions";
 import type { FindingRow } from "../queries/order-page";
-import { FindingDialog, type PieceName } from "./order-dialogs";
+import { FindingDialog } from "./finding-dialog";
+import type { PieceName } from "./order-dialogs";
 import { PhotoStrip } from "./photo-strip";
 import { useToastAct } from "./use-toast-act";
 

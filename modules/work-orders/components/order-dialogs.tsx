@@ -12,10 +12,10 @@ import { TextInput } from "@/modules/ui/form/text-input";
 import { TextareaInput } from "@/modules/ui/form/textarea-input";
 import { Note } from "@/modules/ui/note";
 import { usePlace } from "@/modules/ui/place";
-import { addPieceAction, cancelOrderAction, changeOrderAction, enterSpokenAnswerAction, handOverAction, movePromiseAction, recordFindingAction, setHoldAction, shipPiecesAction } from "../actions";
+import { addPieceAction, cancelOrderAction, changeOrderAction, enterSpokenAnswerAction, handOverAction, movePromiseAction, setHoldAction, shipPiecesAction } from "../actions";
 import { HOLD_REASONS } from "../domain/hold-reasons";
 import { ROAD_CAUTION, USE_WORDS, USES } from "../domain/uses";
-import { addPieceInput, cancelOrderInput, changeOrderInput, findingInput, handOverInput, holdInput, promiseInput, shipInput, spokenAnswerInput } from "../input";
+import { addPieceInput, cancelOrderInput, changeOrderInput, handOverInput, holdInput, promiseInput, shipInput, spokenAnswerInput } from "../input";
 import { CommandDialog } from "./command-dialog";
 
 /** A piece as the dialogs name it. */
@@ -30,22 +30,6 @@ export function HoldDialog({ piece }: { piece: PieceName }) {
     >
       <SelectInput name="reason" label="Why" placeholder="Choose" options={HOLD_REASONS.map((r) => ({ value: r, label: r[0]?.toUpperCase() + r.slice(1) }))} />
       <TextareaInput className="mt-3" name="words" label="More" optional rows={2} />
-    </CommandDialog>
-  );
-}
-
-export function FindingDialog({ pieces, onRecorded }: { pieces: readonly PieceName[]; onRecorded?: (id: string) => void }) {
-  const { slug } = usePlace();
-  return (
-    <CommandDialog
-      trigger={<Button size="sm" icon="flag">Record finding</Button>} title="What was found?" description="Nothing of it is started before the customer says yes." submit="Record it" pendingText="Recording…"
-      schema={findingInput} values={{ pieceId: pieces[0]?.id ?? "", words: "", position: "", goOnMeanwhile: true }} action={(s) => recordFindingAction(slug, s)} done={() => "Finding recorded. Add its photo beside it"}
-      onDone={(v) => onRecorded?.(v.id)}
-    >
-      {pieces.length > 1 ? <SelectInput name="pieceId" label="Head" options={pieces.map((p) => ({ value: p.id, label: p.label }))} /> : null}
-      <TextInput className="mt-3" name="position" label="Where" optional hint="Such as: exhaust, 1 and 2." />
-      <TextareaInput className="mt-3" name="words" label="In words for the customer" rows={3} />
-      <Checkbox className="mt-3" name="goOnMeanwhile" label="The agreed work goes on meanwhile" hint="Otherwise the head is held for the answer." />
     </CommandDialog>
   );
 }

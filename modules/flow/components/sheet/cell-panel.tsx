@@ -6,6 +6,7 @@ import { liftWords, flowText } from "../flow-words";
 import { cellDoubts } from "./cell-words";
 import { cellAt, flowAt, type SheetColumn } from "./sheet-figures";
 import { posOf } from "./reading-grid";
+import { SCALE_SIGN } from "./scale-words";
 import type { Pos, Sheet } from "./use-sheet";
 
 /** Asked for where something doubtful was typed; the value is kept with the reason. */
@@ -40,15 +41,18 @@ export function CellPanel({ sheet, pos, col, locale }: { sheet: Sheet; pos: Pos;
   const shownRepeats = Array.from({ length: Math.min(9, Math.max(repeats.at(-1) ?? 1, extra)) }, (_, i) => i + 1);
   const name = `${pos.side} ${liftWords(pos.liftUm, test.liftUnit, locale)} ${col.head.toLowerCase()}`;
   const rangeNow = sheet.keptAt(pos)?.edits.at(-1)?.range ?? computed?.rangeLabel ?? sheet.range ?? test.bench.ranges[0]?.label ?? null;
+  const typedText = sheet.textAt(pos);
+  const asRead = test.bench.scale === "direct" || typedText === "" ? null : `${typedText} ${SCALE_SIGN[test.bench.scale]} of range ${rangeNow ?? "not chosen"} =`;
   const again = () => setExtra((repeats.at(-1) ?? 1) + 1);
   return (
     <section className="cp" aria-label={`Reading in hand: ${name}`}>
-      <p className="cp-h"><b className="capitalize">{name}</b> {flow === null ? <span className="mid">not read</span> : <span><b className="num">{flowText(flow, locale)}</b> <span className="unit">CFM at {test.nominalInH2O} in H₂O</span></span>}
+      <p className="cp-h"><b className="capitalize">{name}</b> {asRead === null ? null : <span className="mid">{asRead}</span>} {flow === null ? <span className="mid">not read</span> : <span><b className="num">{flowText(flow, locale)}</b> <span className="unit">CFM at {test.nominalInH2O} in H₂O</span></span>}
         {reading && reading.count > 1 ? <span className="mid"> mean of {reading.count}{reading.agrees ? "" : ", more than 1 % apart: read again"}</span> : null}
       </p>
       <div className="flex flex-wrap items-center gap-3">
         {test.bench.scale === "direct" ? null : (
-          <div role="group" aria-label="Range" className="flex gap-1">
+          // A press on a range leaves the cell as it is: the hand goes back to the number.
+          <div role="group" onMouseDown={(e) => e.preventDefault()} aria-label="Range" className="flex gap-1">
             {test.bench.ranges.map((r) => <ToggleChip key={r.label} on={rangeNow === r.label} onChange={() => { sheet.setRange(r.label); if (sheet.textAt(pos) !== "") sheet.mark(pos, { range: r.label }); }}>{r.label}</ToggleChip>)}
           </div>
         )}

@@ -4,18 +4,23 @@ import { useRouter } from "next/navigation";
 import { useState, type KeyboardEvent } from "react";
 import { KeyHints } from "@/modules/ui/key-hints";
 import { Bay } from "@/modules/ui/bay";
+import { ToggleChip } from "@/modules/ui/chip";
 import { usePlace } from "@/modules/ui/place";
 import type { PortSide } from "../../domain/comparison-reasons";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
 import { CautionNote } from "../caution-note";
 import { CurveReader } from "../curve-reader";
 import { liftWords } from "../flow-words";
+import { NoiseLines } from "../noise-verdicts";
+import { AddLiftDialog } from "./add-lift-dialog";
 import { BenchKeypad } from "./bench-keypad";
 import { CellPanel } from "./cell-panel";
 import { ConditionStrip } from "./condition-strip";
 import { ConditionsDialog } from "./conditions-form";
 import { NextStep } from "./next-step";
+import { PassCurves, sidesWithPasses } from "./pass-curves";
 import { cellId, posOf, ReadingGrid } from "./reading-grid";
+import { readingsLabel } from "./scale-words";
 import { SaveState } from "./save-state";
 import { notesOf, SheetNotes } from "./sheet-notes";
 import { meanText, SheetSummary } from "./sheet-summary";
@@ -35,6 +40,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const sheet = useSheet(given, slug);
   const [active, setActive] = useState<Pos | null>(null);
   const [said, setSaid] = useState("");
+  const [everyPass, setEveryPass] = useState(false);
   const { figures } = sheet;
   const columns = figures.sides.flatMap((s) => [s.before, s.after]).filter((c): c is SheetColumn => c !== null);
   const drafts = columns.filter((c) => c.test.state === "draft");
@@ -101,18 +107,21 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const live = drafts.some((c) => c.when === "before") && !drafts.some((c) => c.when === "after") ? "typing-before" : "typing-after";
   const draftOf = (i: 0 | 1) => { const s = figures.sides[i]; return [s?.after, s?.before].find((c) => c?.test.state === "draft")?.test ?? null; };
   const change = drafts.length > 0 && given.canRecord ? <ConditionsDialog gear={gear} drafts={{ intake: draftOf(0), exhaust: draftOf(1) }} onChanged={() => router.refresh()} /> : undefined;
+  const canAddLift = drafts.length > 0 && given.canRecord && !isBench;
+  const passed = sidesWithPasses(sheet.tests);
   const curve = { lines: figures.lines, unit, atInH2O: nominal, camLiftUm: cam, locale, label: "Read the curve point by point" } as const;
 
   return (
     <div className={`flow-sheet ${live}${isBench ? " bench" : ""}`}>
-      {drafts.length > 0 ? <div className="mb-5 empty:hidden"><CautionNote hazards={given.cautions} workOrderId={given.head.workOrderId} step="bench session" /></div> : null}
+      {drafts.length > 0 ? <div className="mb-5 empty:hidden"><CautionNote hazards={given.cautions} workOrderId={given.head.workOrderId} headId={given.head.id} step="bench session" /></div> : null}
       <ConditionStrip figures={figures} locale={locale} change={change} />
       <div className="fl">
         <div className="fl-l">
           {columns.length === 0 ? <Bay label="Readings, CFM"><p className="mid">No test of this port yet. The before test is read before any work is done.</p></Bay> : (
-            <Bay label="Readings, CFM" flush className="fg">
+            <Bay label={readingsLabel(columns.map((c) => c.test.bench.scale))} flush className="fg" aside={canAddLift ? <AddLiftDialog drafts={drafts.map((c) => c.test)} settle={sheet.settle} onAdded={() => router.refresh()} /> : undefined}>
               <ReadingGrid sheet={sheet} unit={unit} locale={locale} port={given.cylinder} canRecord={given.canRecord} isBench={isBench} active={active} onActive={setActive} onKey={onKey} />
               {active && activeColumn?.test.state === "draft" ? <CellPanel key={`${active.testId}${active.liftUm}`} sheet={sheet} pos={active} col={activeColumn} locale={locale} /> : null}
+              {isBench ? null : <NoiseLines gains={figures.sides.map((s) => s.gain)} locale={locale} />}
             </Bay>
           )}
           {isBench ? (notes.length === 0 ? null : (
@@ -122,8 +131,18 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
         </div>
         <div className="fl-r">
           <Bay label="Live curve" aside={isBench && means !== "" ? means : undefined}>
-            <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 236 : 366} /></div>
-            <div className="only-narrow"><CurveReader {...curve} width={350} height={290} mini /></div>
+            {passed.length > 0 && !isBench ? (
+              <div role="group" aria-label="What the curve shows" className="mb-2 flex flex-wrap gap-1">
+                <ToggleChip on={!everyPass} onChange={() => setEveryPass(false)}>Before and newest</ToggleChip>
+                <ToggleChip on={everyPass} onChange={() => setEveryPass(true)}>Every pass</ToggleChip>
+              </div>
+            ) : null}
+            {everyPass && passed.length > 0 && !isBench ? <PassCurves tests={sheet.tests} place={place} sides={passed} /> : (
+              <>
+                <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 236 : 366} /></div>
+                <div className="only-narrow"><CurveReader {...curve} width={350} height={290} mini /></div>
+              </>
+            )}
             {isBench ? null : <SheetSummary figures={figures} locale={locale} />}
           </Bay>
           {isBench ? (

@@ -6,6 +6,7 @@ import { interpolateFlow } from "../../domain/interpolate-flow";
 import type { LiftUnit } from "../../domain/lift-ladder";
 import { typedNumber } from "../../domain/typed-number";
 import { differenceText, flowText, liftWords } from "../flow-words";
+import { NoiseMark } from "../noise-verdicts";
 import { cellDoubts } from "./cell-words";
 import { ReadingCell } from "./reading-cell";
 import { cellAt, flowAt, type SheetColumn, type SheetSide, type When } from "./sheet-figures";
@@ -30,11 +31,12 @@ const SIDE_WORDS = { intake: "Intake", exhaust: "Exhaust" } as const;
 function GainCell({ side, liftUm, locale, top }: { side: SheetSide; liftUm: number; locale: string; top: number }) {
   const row = side.gain?.comparable ? side.gain.rows.find((r) => r.liftUm === liftUm) : undefined;
   if (!row) return <td className="g" />;
-  if (row.gainCfm < 0) return <td className="g"><span className="flag">▼ {differenceText(row.gainCfm, locale)}</span></td>;
+  const mark = <NoiseMark gain={side.gain} liftUm={liftUm} />;
+  if (row.gainCfm < 0) return <td className="g">{mark}<span className="flag">▼ {differenceText(row.gainCfm, locale)}</span></td>;
   return (
     <td className="g">
       {row.gainCfm > 0 ? <i style={{ "--g": row.gainCfm / top } as React.CSSProperties} aria-hidden="true" /> : null}
-      <b>{differenceText(row.gainCfm, locale)}</b>
+      {mark}<b>{differenceText(row.gainCfm, locale)}</b>
     </td>
   );
 }

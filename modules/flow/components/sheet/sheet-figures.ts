@@ -4,6 +4,7 @@ import type { PortSide } from "../../domain/comparison-reasons";
 import type { RawCell, RawTest } from "../../domain/raw-test";
 import { sideGain, type SideGain } from "../../domain/side-gain";
 import { standingTests } from "../../domain/standing-tests";
+import { shownOf } from "../curve-lines";
 import { figuresOfTest, type ComputedCell, type TestFigures } from "../../domain/test-figures";
 
 export type When = "before" | "after";
@@ -47,7 +48,7 @@ export function sheetFigures(tests: readonly RawTest[], benchCheckHours: number)
   const liftsUm = [...new Set(columns.flatMap((c) => [...c.test.lifts.map((l) => l.liftUm), ...c.figures.cells.map((x) => x.liftUm)]))].sort((a, b) => a - b);
   return {
     sides, liftsUm,
-    lines: sides.map((s) => ({ side: s.side, before: s.before?.figures.readings ?? [], after: s.after?.figures.readings ?? [], gain: s.gain?.comparable ? "shown" : "withheld" })),
+    lines: sides.map((s) => ({ side: s.side, before: s.before?.figures.readings ?? [], after: s.after?.figures.readings ?? [], ...shownOf(s.gain) })),
   };
 }
 

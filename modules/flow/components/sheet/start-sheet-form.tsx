@@ -14,6 +14,13 @@ import { startSheetAction } from "../../actions";
 import type { Purpose, RawTest } from "../../domain/raw-test";
 import { startSheetInput } from "../../input";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
+import { SCALE_READ, SCALE_WORDS } from "./scale-words";
+
+/** How readings of this bench are typed, told before the test starts. */
+export function benchHint(bench: BenchGear["benches"][number] | undefined): string {
+  if (!bench || bench.scale === "direct") return "Readings are typed in CFM.";
+  return `Readings are typed as ${SCALE_WORDS[bench.scale]}, on range ${bench.ranges.map((r) => r.label).join(", ") || "none yet"}; the flow in CFM stands beside each.`;
+}
 
 export const PURPOSE_WORDS: Record<Purpose, string> = { baseline: "before test", after: "after test", interim: "pass in between", check: "check" };
 const liftTyped = (um: number | null, unit: "in" | "mm"): string => (um === null ? "" : unit === "in" ? (um / 25_400).toFixed(3) : String(um / 1000));
@@ -76,7 +83,7 @@ function StartForm({ sheet, gear, purpose, basis, onStarted }: { sheet: FlowShee
   return (
     <CommandForm form={form} toFix="before the test starts">
       <div className="fields">
-        <SelectInput name="benchId" label="Bench" options={gear.benches.map((b) => ({ value: b.id, label: b.name }))} />
+        <SelectInput name="benchId" label="Bench" options={gear.benches.map((b) => ({ value: b.id, label: `${b.name}, ${SCALE_READ[b.scale]}` }))} hint={benchHint(gear.benches.find((b) => b.id === form.rhf.watch("benchId")))} />
         <SelectInput name="operatorId" label="At the bench" options={gear.operators.map((o) => ({ value: o.id, label: o.name }))} />
         <SelectInput name="liftUnit" label="Lifts in" options={[{ value: "in", label: "inches" }, { value: "mm", label: "millimetres" }]} />
         <TextInput name="step" label="Step" inputMode="decimal" hint="The ladder is made of its multiples" />

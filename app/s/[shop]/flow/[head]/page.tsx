@@ -1,5 +1,6 @@
 import { orNotFound, shopPage } from "@/modules/access/page";
 import { FlowSheetScreen } from "@/modules/flow/components/sheet/flow-sheet";
+import { HeadWork } from "@/modules/flow/components/head-work";
 import { PortNav } from "@/modules/flow/components/port-nav";
 import { sheetSubtitle } from "@/modules/flow/components/sheet-subtitle";
 import { sheetInput } from "@/modules/flow/input";
@@ -35,6 +36,7 @@ export default async function FlowSheetPage({ params, searchParams }: { params: 
           {sheet.canRecord ? <TextLink href={`/s/${ctx.shop.slug}/flow/upload?head=${sheet.head.id}`}>Read from a file</TextLink> : null}
         </nav>
       )}
+      {isBench ? null : <div className="mb-4 noprint"><HeadWork head={sheet.head} mayChange={sheet.canRecord} /></div>}
       <FlowSheetScreen key={`${sheet.cylinder}:${sheet.tests.map((t) => `${t.id}${t.version}${t.state}`).join()}`} sheet={sheet} gear={gear} isBench={isBench} />
     </main>
   );

@@ -3,6 +3,7 @@ import { notFound } from "next/navigation";
 import { orNotFound, shopPage } from "@/modules/access/page";
 import { differenceText, flowText, liftWords } from "@/modules/flow/components/flow-words";
 import { LibraryCurves } from "@/modules/flow/components/library-curves";
+import { NoiseVerdicts } from "@/modules/flow/components/noise-verdicts";
 import { portWords, PURPOSE_WORDS } from "@/modules/flow/components/library-words";
 import type { Purpose } from "@/modules/flow/domain/raw-test";
 import { overlayInput } from "@/modules/flow/library-input";
@@ -47,6 +48,7 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
             <tbody>{over.rows.map((r) => <tr key={r.liftUm}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(r.liftUm, unit, locale)}</th><td className="r q">{r.a === null ? "—" : flowText(r.a, locale)}</td><td className="r q">{r.b === null ? "—" : flowText(r.b, locale)}</td>{over.comparable ? <td className="r q"><b>{r.difference === null ? "—" : differenceText(r.difference, locale)}</b></td> : null}</tr>)}</tbody>
             {over.meanDifferenceCfm === null ? null : <tfoot><tr><td colSpan={3}>Mean over the common lifts</td><td className="r q">{differenceText(over.meanDifferenceCfm, locale)}</td></tr></tfoot>}
           </table>
+          {over.noise === null ? null : <NoiseVerdicts port={{ noise: over.noise.rows, withheld: [], notStated: over.noise.notStated, liftUnit: unit }} locale={locale} />}
           <div className="p-4">
             {[over.a, over.b].map((s, i) => <p key={s.testId} className="sm mid mb-2"><b>{i === 0 ? "First" : "Second"}: <Link className="lk" href={`/s/${slug}/flow/${s.headId}`}>{s.mark}</Link></b>, {day(s.startedAt)}, {s.operator}. {s.conditions.join(", ")}.</p>)}
           </div>

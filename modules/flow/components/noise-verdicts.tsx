@@ -1,0 +1,57 @@
+import { decimal } from "@/modules/kernel/format";
+import type { LiftUnit } from "../domain/lift-ladder";
+import { NOISE_WORDS } from "../domain/noise";
+import type { NoiseRow } from "../domain/noise-rows";
+import { isAssessed, noiseSummary, notStatedWords } from "../domain/noise-summary";
+import type { SideGain } from "../domain/side-gain";
+import { differenceText, liftWords } from "./flow-words";
+import { Lane } from "@/modules/ui/lane";
+
+/** Filled: larger than the noise; open: within it; dotted: not assessed. */
+export const NOISE_MARK: Readonly<Record<NoiseRow["verdict"], string>> = { larger_than_noise: "●", within_noise: "○", not_assessed: "◌" };
+
+export interface NoisePort { noise: readonly NoiseRow[] | null; withheld: readonly string[]; notStated: readonly string[]; liftUnit: LiftUnit }
+
+/** Is the change larger than the noise, lift by lift, in words and shape. Without repeats it is not assessed. */
+export function NoiseVerdicts({ port, locale }: { port: NoisePort; locale: string }) {
+  if (port.noise === null) return <p className="mid">No change is judged: {port.withheld.join(" ") || "the two tests cannot be compared."}</p>;
+  return (
+    <>
+      <Lane label="The change against the noise"><table className="calm">
+        <caption className="sr-only">The change at each lift against the measurement noise</caption>
+        <thead><tr><th scope="col">Lift, {port.liftUnit}</th><th scope="col" className="r">Change, CFM</th><th scope="col" className="r">U, 95 %</th><th scope="col" className="r">Readings</th><th scope="col">Verdict</th></tr></thead>
+        <tbody>{port.noise.map((r) => (
+          <tr key={r.liftUm}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{liftWords(r.liftUm, port.liftUnit, locale)}</th><td className="r q"><b>{differenceText(r.differenceCfm, locale)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${decimal(r.expandedCfm, 1, locale)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{NOISE_MARK[r.verdict]}</span> {r.words}</td></tr>
+        ))}</tbody>
+      </table></Lane>
+      {port.notStated.length > 0 ? <p className="hint p-3">Uncertainty of {port.notStated.join(" and ")} is not stated for this bench and counts as nothing here.</p> : null}
+    </>
+  );
+}
+
+/** One line for a side whose tests may be compared; null for any other. */
+export const noiseWords = (gain: SideGain | null, locale: string): string | null =>
+  gain?.comparable && gain.noise ? [noiseSummary(gain.noise, (um) => liftWords(um, gain.liftUnit, locale)), notStatedWords(gain.noise)].filter(Boolean).join(" ") || null : null;
+
+/** The verdict beside a gain: shape for the eye, words for the ear. Nothing where no lift of the side was judged. */
+export function NoiseMark({ gain, liftUm }: { gain: SideGain | null; liftUm: number }) {
+  if (!gain?.comparable || !isAssessed(gain.noise)) return null;
+  const row = gain.noise.rows.find((r) => r.liftUm === liftUm);
+  if (!row) return null;
+  return <span className="nv" title={NOISE_WORDS[row.verdict]}><span aria-hidden="true">{NOISE_MARK[row.verdict]}</span><span className="sr-only">{NOISE_WORDS[row.verdict]}, </span></span>;
+}
+
+const SIDE_WORDS = { intake: "Intake", exhaust: "Exhaust" } as const;
+
+/** The line under a sheet or a curve: what the marks and the band mean, and the verdict of each side in words. */
+export function NoiseLines({ gains, locale }: { gains: readonly (SideGain | null)[]; locale: string }) {
+  const told = gains.flatMap((gain) => { const words = noiseWords(gain, locale); return gain && words ? [{ side: gain.side, words, hasMarks: gain.comparable && isAssessed(gain.noise) }] : []; });
+  if (told.length === 0) return null;
+  const words = new Set(told.map((t) => t.words));
+  return (
+    <div className="nvl">
+      {words.size === 1 && told.length > 1 ? <p>{told[0]?.words}</p> : told.map((t) => <p key={t.side}><b>{SIDE_WORDS[t.side]}.</b> {t.words}</p>)}
+      {told.some((t) => t.hasMarks) ? <p className="dim">{NOISE_MARK.larger_than_noise} {NOISE_WORDS.larger_than_noise}. {NOISE_MARK.within_noise} {NOISE_WORDS.within_noise}. {NOISE_MARK.not_assessed} {NOISE_WORDS.not_assessed}. The dotted band on the curve is the noise about the before test.</p> : null}
+    </div>
+  );
+}
