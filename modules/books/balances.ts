@@ -2,7 +2,7 @@ import "server-only";
 import { and, eq, inArray, sql } from "drizzle-orm";
 import { journalEntries, journalLines } from "@/db/schema";
 import { inShop, type ShopContext } from "@/modules/access/context";
-import { minor, type Minor } from "@/modules/kernel/money";
+import { minor, ZERO, type Minor } from "@/modules/kernel/money";
 import type { AccountCode } from "./domain/accounts";
 
 /**
@@ -17,16 +17,17 @@ export async function balanceFor(ctx: ShopContext, account: AccountCode, of: { w
   return minor(Number(row?.sum ?? 0));
 }
 
-/** Balances by account over the entries of one work order. */
-export async function balancesOfOrder(ctx: ShopContext, workOrderId: string, accounts?: readonly AccountCode[]): Promise<Record<string, Minor>> {
-  const rows = await inShop(ctx, (tx) => tx.select({ account: journalLines.accountCode, sum: sql<string>`sum(${journalLines.amountMinor})` }).from(journalLines)
+/** Deposits held for work orders and not yet applied; an order without entries holds none and is not in the map. */
+export async function depositsHeld(ctx: ShopContext, workOrderIds: readonly string[]): Promise<Map<string, Minor>> {
+  if (workOrderIds.length === 0) return new Map();
+  const rows = await inShop(ctx, (tx) => tx.select({ id: journalEntries.workOrderId, sum: sql<string>`sum(${journalLines.amountMinor})` }).from(journalLines)
     .innerJoin(journalEntries, and(eq(journalEntries.shopId, journalLines.shopId), eq(journalEntries.id, journalLines.entryId)))
-    .where(and(eq(journalLines.shopId, ctx.shop.id), eq(journalEntries.workOrderId, workOrderId), accounts ? inArray(journalLines.accountCode, [...accounts]) : undefined))
-    .groupBy(journalLines.accountCode));
-  return Object.fromEntries(rows.map((r) => [r.account, minor(Number(r.sum))]));
+    .where(and(eq(journalLines.shopId, ctx.shop.id), eq(journalLines.accountCode, "2100"), inArray(journalEntries.workOrderId, [...workOrderIds])))
+    .groupBy(journalEntries.workOrderId));
+  return new Map(rows.flatMap((r) => (r.id === null ? [] : [[r.id, minor(0 - Number(r.sum))]])));
 }
 
 /** Deposit held for a work order and not yet applied. */
-export const depositHeld = async (ctx: ShopContext, workOrderId: string): Promise<Minor> => minor(-(await balanceFor(ctx, "2100", { workOrderId })));
+export const depositHeld = async (ctx: ShopContext, workOrderId: string): Promise<Minor> => (await depositsHeld(ctx, [workOrderId])).get(workOrderId) ?? ZERO;
 /** What the shop owes a customer as credit. */
 export const creditOf = async (ctx: ShopContext, customerId: string): Promise<Minor> => minor(-(await balanceFor(ctx, "2110", { customerId })));

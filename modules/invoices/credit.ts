@@ -14,7 +14,7 @@ import { localDate } from "@/modules/kernel/instant";
 import { minor } from "@/modules/kernel/money";
 import { ok, refuse } from "@/modules/kernel/result";
 import { creditedSum, creditLines } from "./domain/credit-lines";
-import { openOf } from "./domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import type { InvoiceSnapshot } from "./domain/invoice-snapshot";
 import { checkCredit } from "./domain/totals";
 import { applyCreditInput, creditInvoiceInput, writeOffInput } from "./input";

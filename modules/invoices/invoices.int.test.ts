@@ -13,7 +13,7 @@ import { asCustomer, hashOf, heroLines, heroMenu, heroParts, openHero, sendVersi
 import { must, testShop, type TestShop } from "@/tests/support/shop";
 import { applyCredit, creditInvoice, writeOffInvoice } from "./credit";
 import type { InvoiceSnapshot } from "./domain/invoice-snapshot";
-import { openOf } from "./domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import { draftInvoice, dropDraft, saveDraft } from "./draft";
 import { issueInvoice } from "./issue";
 import { invoicePaper } from "./pdf/invoice-paper";

@@ -4,9 +4,11 @@ import { estimates, invoices, workOrders } from "@/db/schema";
 import { ableTo, inShop, type ShopContext } from "@/modules/access/context";
 import { balanceFor } from "@/modules/books/balances";
 import { decimal } from "@/modules/kernel/format";
+import { leftToPay } from "@/modules/work-orders/domain/may-leave";
 import { depositOf } from "@/modules/work-orders/queries/deposit";
+import { moneyOfOrder } from "@/modules/work-orders/queries/order-money";
 import type { EstimateSnapshot } from "@/modules/work-orders/domain/estimate-snapshot";
-import { invoicesOfOrder, openSumOf } from "./queries";
+import { invoicesOfOrder } from "./queries";
 
 export interface OrderMoneyView {
   leftMinor: number; isBilled: boolean; sums: { name: string; minor: number; strong?: boolean }[]; depositMinor: number; paidMinor: number; costMinor: number | null; seesBooks: boolean;
@@ -23,7 +25,7 @@ export async function orderMoneyOf(ctx: ShopContext, workOrderId: string): Promi
     const snapshot = row?.snapshot as EstimateSnapshot | undefined;
     if (!snapshot) return null;
     const t = snapshot.totals;
-    const open = await openSumOf(inner, workOrderId);
+    const order = await moneyOfOrder(inner, workOrderId);
     const deposit = await depositOf(inner, workOrderId);
     const rows = await tx.select({ paid: invoices.paidMinor }).from(invoices).where(and(eq(invoices.shopId, ctx.shop.id), eq(invoices.workOrderId, workOrderId), eq(invoices.state, "issued")));
     const minutes = snapshot.lines.reduce((a, l) => a + l.bookMinutes, 0);
@@ -37,7 +39,7 @@ export async function orderMoneyOf(ctx: ShopContext, workOrderId: string): Promi
     ];
     const depositMinor = deposit?.paidMinor ?? 0;
     return {
-      leftMinor: open.isBilled ? open.openMinor : Math.max(0, t.totalMinor - depositMinor), isBilled: open.isBilled, sums, depositMinor, paidMinor: rows.reduce((a, r) => a + r.paid, 0),
+      leftMinor: leftToPay(order), isBilled: order.invoices > 0, sums, depositMinor, paidMinor: rows.reduce((a, r) => a + r.paid, 0),
       costMinor: ableTo(ctx, "cost.see") ? await balanceFor(inner, "1250", { workOrderId }) : null, seesBooks: ableTo(ctx, "books.see"), invoices: await invoicesOfOrder(inner, workOrderId),
     };
   });

@@ -2,12 +2,12 @@ import "server-only";
 import { and, asc, desc, eq, gt, ilike, inArray, isNotNull, isNull, lt, ne, or, sql, type SQL } from "drizzle-orm";
 import { customers, files, invoices, mailMessages, workOrders, workPieces } from "@/db/schema";
 import { inShop, mustBeAble, NotFound, type ShopContext } from "@/modules/access/context";
-import { creditOf, depositHeld } from "@/modules/books/balances";
+import { creditOf } from "@/modules/books/balances";
 import { readFile } from "@/modules/documents/files";
 import { daysBetween, localDate } from "@/modules/kernel/instant";
 import { agingOf, AGING_BUCKETS, bucketOf, type AgingBucket } from "./domain/aging";
 import type { InvoiceSnapshot } from "./domain/invoice-snapshot";
-import { openOf } from "./domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import type { FindInvoices } from "./input";
 import { draftSheet } from "./sheet";
 
@@ -162,18 +162,6 @@ export async function agingView(ctx: ShopContext): Promise<AgingView> {
     for (const c of credits.rows) rowOf(c.customer_id, c.name).creditMinor = Number(c.credit);
     const all = agingOf(open.map(({ i }) => ({ due: i.dueOn ?? asOf, openMinor: openOf(i) })), asOf);
     return { asOf, rows: [...by.values()].sort((x, y) => y.totalMinor - x.totalMinor), buckets: { ...all.buckets }, totalMinor: all.totalMinor };
-  });
-}
-
-export interface OpenSum { openMinor: number; invoicedMinor: number; depositHeldMinor: number; isBilled: boolean }
-
-/** What is still to pay on an order, from its issued invoices: asked before a piece leaves. */
-export async function openSumOf(ctx: ShopContext, workOrderId: string): Promise<OpenSum> {
-  return inShop(ctx, async (tx) => {
-    const rows = await tx.select().from(invoices).where(and(eq(invoices.shopId, ctx.shop.id), eq(invoices.workOrderId, workOrderId), eq(invoices.kind, "invoice"), eq(invoices.state, "issued")));
-    return {
-      openMinor: rows.reduce((a, i) => a + openOf(i), 0), invoicedMinor: rows.reduce((a, i) => a + i.totalMinor - i.creditedMinor, 0), depositHeldMinor: await depositHeld({ ...ctx, tx }, workOrderId), isBilled: rows.length > 0,
-    };
   });
 }
 

@@ -1,13 +1,13 @@
 "use server";
 import { secretAction, shopAction } from "@/modules/access/action";
 import { linkContext } from "@/modules/access/link";
+import { askInvoicePaymentNow, startPaymentNow } from "./ask-payment";
 import { takeInBankFile } from "./bank-import";
 import { lockMatch, unlockMatch } from "./bank-match";
-import { answerRefund, askInvoicePayment, askRefund, closeEvent, explainPayoutItem, retryEvent, takePayment } from "./commands";
-import { startPaymentNow } from "./start-payment";
+import { answerRefund, askRefund, closeEvent, explainPayoutItem, retryEvent, takePayment } from "./commands";
 
 export const takePaymentAction = shopAction(takePayment);
-export const askInvoicePaymentAction = shopAction(askInvoicePayment);
+export const askInvoicePaymentAction = shopAction(askInvoicePaymentNow);
 export const askRefundAction = shopAction(askRefund);
 export const answerRefundAction = shopAction(answerRefund);
 export const retryEventAction = shopAction(retryEvent);

@@ -2,7 +2,7 @@ import "server-only";
 import { and, asc, desc, eq, gte, inArray, isNull, isNotNull, ne, or, sql } from "drizzle-orm";
 import { bankFiles, bankLines, customers, invoices, journalEntries, journalLines, payments, payoutItems, payouts } from "@/db/schema";
 import { inShop, mustBeAble, settingsOf, type ShopContext } from "@/modules/access/context";
-import { openOf } from "@/modules/invoices/domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import { amount } from "@/modules/kernel/format";
 import { addDays, daysBetween, localDate } from "@/modules/kernel/instant";
 import { minor } from "@/modules/kernel/money";

@@ -10,7 +10,7 @@ const balanceText = z.string().trim().default("").transform((text, ctx) => {
   return value;
 });
 
-export const bankMappingInput = z.strictObject({
+const bankMappingInput = z.strictObject({
   hasHeader: z.boolean(), dateColumn: column, dateOrder: z.enum(DATE_ORDERS), textColumns: z.array(column).max(10), amountColumn: column,
   outColumn: column.nullable(), decimalComma: z.boolean(),
 });

@@ -7,7 +7,7 @@ import { accountOf } from "@/modules/books/domain/accounts";
 import { credit, debit, entryOf, mirror, type EntryLine } from "@/modules/books/domain/entry";
 import { writtenOff } from "@/modules/books/domain/posting-sales";
 import { openDateFrom, postEntry } from "@/modules/books/post";
-import { openOf } from "@/modules/invoices/domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import { money } from "@/modules/kernel/format";
 import { startOfDay } from "@/modules/kernel/instant";
 import { minor, sumMinor } from "@/modules/kernel/money";

@@ -5,7 +5,7 @@ import { invoices, payoutItems, payouts } from "@/db/schema";
 import { withShop } from "@/db/scope";
 import { NotFound } from "@/modules/access/context";
 import { draftInvoice } from "@/modules/invoices/draft";
-import { openOf } from "@/modules/invoices/domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import { issueInvoice } from "@/modules/invoices/issue";
 import { draftSheet } from "@/modules/invoices/sheet";
 import { answerByLink } from "@/modules/work-orders/commands/answer-estimate";

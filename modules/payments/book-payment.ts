@@ -7,7 +7,7 @@ import { takeYearNumber } from "@/modules/access/numbers";
 import { moneyReceived } from "@/modules/books/domain/posting-receipt";
 import { openDateFrom, postEntry } from "@/modules/books/post";
 import { queueMail } from "@/modules/documents/mail";
-import { openOf } from "@/modules/invoices/domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import { dateTimeZone, money } from "@/modules/kernel/format";
 import { localDate } from "@/modules/kernel/instant";
 import { minor, ZERO, type Minor } from "@/modules/kernel/money";

@@ -1,13 +1,13 @@
 import "server-only";
 import { randomUUID } from "node:crypto";
 import { and, arrayOverlaps, eq, inArray, isNull, ne, sql } from "drizzle-orm";
-import { invoices, paymentRequests, payments, payoutItems, people, providerEvents, refunds } from "@/db/schema";
+import { invoices, payments, payoutItems, people, providerEvents, refunds } from "@/db/schema";
 import { withShop } from "@/db/scope";
 import { defineCommand } from "@/modules/access/command";
 import { personIdOf, type ShopContext, type TxContext } from "@/modules/access/context";
 import { leaveJob } from "@/modules/access/jobs";
 import { rolesFor } from "@/modules/access/roles";
-import { openOf } from "@/modules/invoices/domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import { money } from "@/modules/kernel/format";
 import { minor } from "@/modules/kernel/money";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
@@ -19,7 +19,8 @@ import { answerRefundInput, askPaymentInput, askRefundInput, closeEventInput, ev
 import { askForPayment, type AskedPayment, type PayFor } from "./payment-page";
 import { bookPayout } from "./payouts";
 import { paymentPort } from "./provider";
-import { bookRefund, lockPayment } from "./refund-ledger";
+import { disputedOf, lockPayment } from "./payment-parts";
+import { bookRefund } from "./refund-ledger";
 
 /** Cash, a check or a transfer taken by a person. The first unusual look is asked about; yes books it. */
 export const takePayment = defineCommand({
@@ -97,6 +98,8 @@ export const askRefund = defineCommand({
     if (!p || p.purpose === "undone") return refuse("NOT_FOUND", "This payment is not here.");
     const waiting = await ctx.tx.select({ amountMinor: refunds.amountMinor }).from(refunds).where(and(eq(refunds.shopId, ctx.shop.id), eq(refunds.paymentId, p.id), inArray(refunds.state, ["asked", "accepted", "sent"])));
     const left = p.amountMinor - p.refundedMinor - waiting.reduce((a, r) => a + r.amountMinor, 0);
+    const disputed = await disputedOf(ctx, p);
+    if (input.amount > left && disputed > 0) return refuse("DISPUTED", `The customer's bank took ${money(disputed, ctx.shop)} of this payment back in a dispute. At most ${money(left, ctx.shop)} of it can still be given back.`, { field: "amount", data: { leftMinor: left } });
     if (input.amount > left) return refuse("REFUND_EXCEEDS_PAYMENT", `At most ${money(left, ctx.shop)} of this payment can still be given back.`, { field: "amount", data: { leftMinor: left } });
     const id = randomUUID();
     await ctx.tx.insert(refunds).values({ shopId: ctx.shop.id, id, paymentId: p.id, amountMinor: input.amount, reason: input.reason, state: "asked", askedBy: personIdOf(ctx), at: ctx.now });
@@ -215,11 +218,3 @@ export const explainPayoutItem = defineCommand({
   },
   subject: (_, value) => ({ kind: "payment", id: value.paymentId }),
 });
-
-/** The request of a customer's link as it stands, for the page that waits. */
-export async function requestState(ctx: ShopContext, requestId: string): Promise<{ state: string; url: string | null } | null> {
-  return withShop(ctx.shop.id, async (tx) => {
-    const [r] = await tx.select({ state: paymentRequests.state, url: paymentRequests.url, customerId: paymentRequests.customerId }).from(paymentRequests).where(and(eq(paymentRequests.shopId, ctx.shop.id), eq(paymentRequests.id, requestId)));
-    return r && (ctx.actor.kind !== "customer" || r.customerId === ctx.actor.id) ? { state: r.state, url: r.url } : null;
-  });
-}

@@ -7,7 +7,7 @@ const CARD = "This looks like a card number. Card numbers are never written down
 const words = (max: number) => z.string().trim().max(max, `At most ${max} characters.`).refine((s) => !holdsCardNumber(s), CARD);
 
 /** An amount as typed, more than 0, at most two decimals; refused, never rounded. */
-export const amountText = z.string().trim().transform((text, ctx) => {
+const amountText = z.string().trim().transform((text, ctx) => {
   const value = parseMinor(text);
   if (value === null) {
     ctx.addIssue({ code: "custom", message: "Type an amount such as 1,910.33, with at most two decimals." });

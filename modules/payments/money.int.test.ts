@@ -1,6 +1,3 @@
-import { mkdtempSync, writeFileSync } from "node:fs";
-import { tmpdir } from "node:os";
-import path from "node:path";
 import { and, eq } from "drizzle-orm";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { invoices, paymentRequests, payments, payouts, shopSettings } from "@/db/schema";
@@ -16,60 +13,31 @@ import { draftSheet } from "@/modules/invoices/sheet";
 import { minor } from "@/modules/kernel/money";
 import { jobProfitOf } from "@/modules/reports/queries";
 import { answerByLink } from "@/modules/work-orders/commands/answer-estimate";
-import { startPayments, type PaymentsStandIn } from "@/tests/fakes/stripe/server";
-import { listen } from "@/tests/fakes/shared/http";
-import { behindTheCurtain, currentDatabase } from "@/tests/support/database";
+import { behindTheCurtain } from "@/tests/support/database";
 import { asCustomer, HERO_FOUND, HERO_LABOR, HERO_SHELF, hashOf, heroLines, heroMenu, heroParts, openHero, sendVersion, type HeroOrder } from "@/tests/support/hero-order";
+import { openProviderScene, type ProviderScene } from "@/tests/support/provider-scene";
 import { must, testShop, type TestShop } from "@/tests/support/shop";
-import { handlers } from "@/worker/handlers";
-import { drain } from "@/worker/queue";
 import { askInvoicePayment, askRefund, answerRefund, explainPayoutItem, startPayment, takePayment } from "./commands";
-import { receiveEvent } from "./events";
 import { openPaymentPage } from "./payment-page";
 import { reconcile } from "./reconcile";
 
 /* Figures of docs/hero-job.md throughout. */
-let clock = new Date(0);
-const clockFile = path.join(mkdtempSync(path.join(tmpdir(), "vk-clock-")), "now");
-/** The application, the worker and the provider read one clock. */
-const setClock = (at: string) => { clock = new Date(at); writeFileSync(clockFile, at); };
-let fake: PaymentsStandIn;
-let hook: Awaited<ReturnType<typeof listen>>;
-const statuses: number[] = [];
+let scene: ProviderScene;
 let a: TestShop;
 let b: TestShop;
 let hero: HeroOrder;
 let invoiceId = "";
 
-const card = { email: "odalys@brennan.example", number: "4242 4242 4242 4242", expiry: "12/34", cvc: "123", name: "Odalys Brennan", way: "card" };
-const control = async (what: string, input: unknown = {}): Promise<unknown> => {
-  const answer = await fetch(`${fake.url}/_control/${what}`, { method: "POST", body: JSON.stringify(input) });
-  if (!answer.ok) throw new Error(`${what}: ${answer.status} ${await answer.text()}`);
-  return answer.json();
-};
-const payPage = (session: string) => fetch(`${fake.url}/c/pay/${session}`, { method: "POST", body: new URLSearchParams(card), redirect: "manual" });
-const until = async (fits: () => boolean | Promise<boolean>, what: string) => {
-  const end = Date.now() + 8000;
-  while (!(await fits())) {
-    if (Date.now() > end) throw new Error(`waited in vain: ${what}`);
-    await new Promise((resolve) => setTimeout(resolve, 20));
-  }
-};
-/** The worker's turn, as the worker's role. */
-const work = async () => {
-  const { appUrl, jobUrl } = currentDatabase();
-  process.env.VK_DATABASE_URL = jobUrl;
-  try {
-    await drain({ ...handlers, "mail.send": async () => undefined });
-  } finally {
-    process.env.VK_DATABASE_URL = appUrl;
-  }
-};
+const setClock = (at: string) => scene.setClock(at);
+const control = (what: string, input?: unknown) => scene.control(what, input);
+const payPage = (session: string) => scene.payPage(session);
+const until = (fits: () => boolean | Promise<boolean>, what: string) => scene.until(fits, what);
+const work = () => scene.work();
+const events = () => scene.events();
 const row = async <T>(fn: Parameters<typeof withShop<T>>[1], shop = a) => withShop(shop.shop.id, fn);
 const request = (id: string) => row(async (tx) => (await tx.select().from(paymentRequests).where(eq(paymentRequests.id, id)))[0]);
 const sessionOf = async (id: string) => (await request(id))?.providerSessionId ?? "";
 const invoiceRow = (id: string) => row(async (tx) => (await tx.select().from(invoices).where(eq(invoices.id, id)))[0]);
-const events = () => statuses.length;
 
 /** Balances by account of one order's entries, as text with two decimals; zero ones left out. */
 async function balances(orderId: string): Promise<Record<string, number>> {
@@ -78,22 +46,15 @@ async function balances(orderId: string): Promise<Record<string, number>> {
 }
 
 beforeAll(async () => {
-  hook = await listen(async (call) => {
-    const header = call.headers["stripe-signature"];
-    const status = await receiveEvent(call.body, typeof header === "string" ? header : null);
-    statuses.push(status);
-    return { status };
-  }, 0);
-  fake = await startPayments({ port: 0, file: null, secretKey: "sk_test_money", webhookSecret: "whsec_money", webhookUrl: `http://127.0.0.1:${hook.port}/`, now: () => clock });
+  scene = await openProviderScene();
   setClock("2026-02-19T17:42:00Z");
-  Object.assign(process.env, { VK_CLOCK_FILE: clockFile, STRIPE_SECRET_KEY: "sk_test_money", STRIPE_WEBHOOK_SECRET: "whsec_money", STRIPE_API_BASE: fake.url });
   a = await testShop("first", { numbersFrom: { "INV-2026": 318 } });
   b = await testShop("second");
   await row((tx) => tx.update(shopSettings).set({ referencePrefix: "NB" }).where(eq(shopSettings.shopId, a.shop.id)));
   await heroMenu(a);
   hero = await openHero(a, await heroParts(a));
 });
-afterAll(async () => { await fake.close(); await hook.close(); });
+afterAll(() => scene.close());
 
 describe("the hero job's money", () => {
   it("asks for the deposit when the estimate is approved, opens one page for it, and books it once when it is paid", async () => {
@@ -106,7 +67,7 @@ describe("the hero job's money", () => {
     const [one, two] = await Promise.all([openPaymentPage(customer, asked.requestId, "short"), openPaymentPage(customer, asked.requestId)]);
     expect(one).toBe(two);
     await work();
-    expect(fake.provider.state.sessions).toHaveLength(1);
+    expect(scene.fake.provider.state.sessions).toHaveLength(1);
     expect(must(await startPayment(customer, {}))).toMatchObject({ requestId: asked.requestId, url: one });
 
     await payPage(await sessionOf(asked.requestId));
@@ -182,7 +143,7 @@ describe("the hero job's money", () => {
 
   it("is paid at the provider's page, and a second phone's payment becomes the customer's credit", async () => {
     setClock("2026-03-14T16:20:00Z");
-    const counter = a.as("counter", clock.toISOString());
+    const counter = a.as("counter", "2026-03-14T16:20:00Z");
     const asked = must(await askInvoicePayment(counter, { invoiceId }));
     await work();
     const before = events();
@@ -191,7 +152,7 @@ describe("the hero job's money", () => {
     await work();
     expect(await invoiceRow(invoiceId)).toMatchObject({ paidMinor: 191033 });
     expect(await askInvoicePayment(counter, { invoiceId })).toMatchObject({ ok: false, refusal: { code: "NOTHING_DUE" } });
-    const again = must(await takePayment(a.as("book", clock.toISOString()), { invoiceId, method: "cash", amount: "12.00", confirmed: true }));
+    const again = must(await takePayment(a.as("book", "2026-03-14T16:20:00Z"), { invoiceId, method: "cash", amount: "12.00", confirmed: true }));
     expect(again).toMatchObject({ receivableMinor: 0, creditMinor: 1200 });
     expect(await creditOf(a.as("book"), hero.customerId)).toBe(1200);
     // Given back, so that the job's own balances stand as in the worked example.

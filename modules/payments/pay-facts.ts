@@ -2,7 +2,7 @@ import "server-only";
 import { and, eq } from "drizzle-orm";
 import { invoices, links } from "@/db/schema";
 import { inShop, mustBeAble, type ShopContext } from "@/modules/access/context";
-import { openOf } from "@/modules/invoices/domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import { depositOf } from "@/modules/work-orders/queries/deposit";
 
 export interface PayFacts { purpose: "deposit" | "invoice"; openMinor: number; paidMinor: number }

@@ -6,7 +6,7 @@ import { withShop } from "@/db/scope";
 import { inShop, type ShopContext, type TxContext } from "@/modules/access/context";
 import { leaveJob } from "@/modules/access/jobs";
 import { linkAddress, linkFor } from "@/modules/access/link";
-import { openOf } from "@/modules/invoices/domain/open-sum";
+import { openOf } from "@/modules/books/domain/open-sum";
 import { minor, type Minor } from "@/modules/kernel/money";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
 import { PaymentFailure } from "@/modules/outbound/payments/port";

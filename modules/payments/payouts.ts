@@ -13,8 +13,6 @@ import type { BalanceTransaction, Payout } from "@/modules/outbound/payments/por
 import { setAside, shopOfPayment } from "./events";
 import { paymentPort, systemContext } from "./provider";
 
-/** `booked`: in the ledger. `open`: a part of it is not in the books yet, so nothing is posted. */
-export const PAYOUT_STATES = ["booked", "open"] as const;
 /** Kinds that must lead back to a payment of ours before a payout is explained. */
 const NEEDS_PAYMENT = new Set(["charge", "payment", "refund", "payment_refund"]);
 /** A payout as it travels in a job: dates are text there. */

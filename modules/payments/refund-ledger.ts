@@ -1,10 +1,9 @@
 import "server-only";
 import { randomUUID } from "node:crypto";
-import { and, asc, eq, inArray, sql } from "drizzle-orm";
-import { customers, invoices, journalEntries, journalLines, payments, refunds } from "@/db/schema";
+import { and, asc, eq } from "drizzle-orm";
+import { customers, payments, refunds } from "@/db/schema";
 import type { TxContext } from "@/modules/access/context";
-import { creditOf, depositHeld } from "@/modules/books/balances";
-import { moneyReceived, moneyReturned, refundParts } from "@/modules/books/domain/posting-receipt";
+import { moneyReceived, moneyReturned } from "@/modules/books/domain/posting-receipt";
 import { openDateFrom, postEntry } from "@/modules/books/post";
 import { queueMail } from "@/modules/documents/mail";
 import { money } from "@/modules/kernel/format";
@@ -14,31 +13,15 @@ import { ok, refuse, type Result } from "@/modules/kernel/result";
 import type { ProviderFact, Refund } from "@/modules/outbound/payments/port";
 import { METHOD_WORDS, WAY_OF_METHOD, type PaymentMethod } from "./domain/payment-words";
 import { UNKNOWN_PAYMENT } from "./events";
+import { lockPayment, moveBack, takenFrom, type Payment } from "./payment-parts";
 
-type Payment = typeof payments.$inferSelect;
 type RefundRow = typeof refunds.$inferSelect;
 type Booked = Result<{ booked: boolean }>;
-
-export const lockPayment = async (ctx: TxContext, by: ReturnType<typeof eq>): Promise<Payment | undefined> =>
-  (await ctx.tx.select().from(payments).where(and(eq(payments.shopId, ctx.shop.id), by)).for("update"))[0];
-
-/** The part of a payment that became the customer's credit when it was booked. */
-async function creditedBy(ctx: TxContext, paymentId: string): Promise<number> {
-  const [row] = await ctx.tx.select({ sum: sql<string>`coalesce(-sum(${journalLines.amountMinor}), 0)` }).from(journalLines)
-    .innerJoin(journalEntries, and(eq(journalEntries.shopId, journalLines.shopId), eq(journalEntries.id, journalLines.entryId)))
-    .where(and(eq(journalLines.shopId, ctx.shop.id), eq(journalLines.accountCode, "2110"), eq(journalEntries.sourceKind, "payment"), eq(journalEntries.sourceId, paymentId)));
-  return Number(row?.sum ?? 0);
-}
 
 /** Books a refund that has happened: money out, and what it was taken from. Once for one refund. */
 export async function bookRefund(ctx: TxContext, p: Payment, r: RefundRow): Promise<Booked> {
   const { tx, shop } = ctx;
-  const credit = Math.min(await creditOf(ctx, p.customerId), await creditedBy(ctx, p.id));
-  const deposit = p.workOrderId && p.purpose === "deposit" ? await depositHeld(ctx, p.workOrderId) : ZERO;
-  // A deposit that was used stands on the order's invoice; giving it back opens that invoice again.
-  const whose = p.invoiceId ? eq(invoices.id, p.invoiceId) : p.workOrderId ? eq(invoices.workOrderId, p.workOrderId) : null;
-  const [invoice] = whose ? await tx.select().from(invoices).where(and(eq(invoices.shopId, shop.id), whose, eq(invoices.kind, "invoice"), eq(invoices.state, "issued"))).orderBy(asc(invoices.issuedAt)).limit(1).for("update") : [];
-  const parts = refundParts({ wantedMinor: r.amountMinor, creditMinor: credit, depositMinor: deposit, paidMinor: invoice ? p.amountMinor : 0 });
+  const { parts, invoiceId } = await takenFrom(ctx, p, r.amountMinor);
   if (parts.missingMinor > 0) return refuse("NOTHING_TO_REFUND", "What this payment paid for has been used or given back already.");
   const posted = await postEntry(ctx, {
     date: await openDateFrom(ctx, localDate(ctx.now, shop.zone)), text: `Refund of ${p.receiptNumber}, ${METHOD_WORDS[p.method as PaymentMethod]}: ${r.reason}`.slice(0, 240),
@@ -46,9 +29,7 @@ export async function bookRefund(ctx: TxContext, p: Payment, r: RefundRow): Prom
     lines: moneyReturned({ ...parts, way: WAY_OF_METHOD[p.method as PaymentMethod] }),
   });
   if (!posted.ok) return posted;
-  if (invoice && parts.receivableMinor > 0) await tx.update(invoices).set({ paidMinor: sql`${invoices.paidMinor} - ${parts.receivableMinor}` }).where(and(eq(invoices.shopId, shop.id), eq(invoices.id, invoice.id)));
-  await tx.update(payments).set({ refundedMinor: sql`${payments.refundedMinor} + ${r.amountMinor}`, appliedMinor: sql`greatest(0, ${payments.appliedMinor} - ${parts.receivableMinor + parts.creditMinor})` })
-    .where(and(eq(payments.shopId, shop.id), eq(payments.id, p.id)));
+  await moveBack(ctx, p, parts, invoiceId, -1);
   await tx.update(refunds).set({ state: "done" }).where(and(eq(refunds.shopId, shop.id), eq(refunds.id, r.id)));
   const [c] = await tx.select({ name: customers.name, email: customers.email }).from(customers).where(and(eq(customers.shopId, shop.id), eq(customers.id, p.customerId)));
   if (c?.email) {
@@ -64,30 +45,34 @@ export async function bookRefund(ctx: TxContext, p: Payment, r: RefundRow): Prom
 async function refundFailed(ctx: TxContext, p: Payment, r: RefundRow): Promise<Booked> {
   const { tx, shop } = ctx;
   if (r.state === "done") {
+    // What it was taken from is settled anew by a person: until then the money is the customer's credit.
+    const parts = { depositMinor: ZERO, receivableMinor: ZERO, creditMinor: minor(r.amountMinor) };
     const posted = await postEntry(ctx, {
       date: await openDateFrom(ctx, localDate(ctx.now, shop.zone)), text: `Refund of ${p.receiptNumber} did not arrive`, rule: "refundFailed", sourceKind: "refund", sourceId: r.id,
       workOrderId: p.workOrderId, customerId: p.customerId,
-      // What it was taken from is settled anew by a person: until then the money is the customer's credit.
-      lines: moneyReceived({ way: WAY_OF_METHOD[p.method as PaymentMethod], depositMinor: ZERO, receivableMinor: ZERO, creditMinor: minor(r.amountMinor) }),
+      lines: moneyReceived({ ...parts, way: WAY_OF_METHOD[p.method as PaymentMethod] }),
     });
     if (!posted.ok) return posted;
-    await tx.update(payments).set({ refundedMinor: sql`${payments.refundedMinor} - ${r.amountMinor}` }).where(and(eq(payments.shopId, shop.id), eq(payments.id, p.id)));
+    await moveBack(ctx, p, parts, null, 1);
   }
   await tx.update(refunds).set({ state: "failed" }).where(and(eq(refunds.shopId, shop.id), eq(refunds.id, r.id)));
   return ok({ booked: true });
 }
+
+const sameUnnamed = (seen: Refund, states: readonly string[]) => (r: RefundRow): boolean => r.providerRefundId === null && r.amountMinor === seen.amountMinor && states.includes(r.state);
 
 /** `refund.*`: the provider tells how one refund stands. */
 export async function refundSeen(ctx: TxContext, seen: Refund): Promise<Booked> {
   const p = seen.paymentIntent ? await lockPayment(ctx, eq(payments.providerPaymentId, seen.paymentIntent)) : undefined;
   if (!p) return refuse("UNKNOWN_PAYMENT", UNKNOWN_PAYMENT);
   const all = await ctx.tx.select().from(refunds).where(and(eq(refunds.shopId, ctx.shop.id), eq(refunds.paymentId, p.id)));
-  const r = all.find((x) => x.providerRefundId === seen.id) ?? all.find((x) => x.providerRefundId === null && x.amountMinor === seen.amountMinor && ["accepted", "sent"].includes(x.state));
-  // Made at the provider's own pages: `charge.refunded` brings the total and makes the row.
-  if (!r) return ok({ booked: false });
+  // One made at the provider's own pages gets its number here, once `charge.refunded` has made its row.
+  const r = all.find((x) => x.providerRefundId === seen.id) ?? all.find(sameUnnamed(seen, ["accepted", "sent"])) ?? all.find(sameUnnamed(seen, ["done"]));
+  const isOff = seen.status === "failed" || seen.status === "canceled";
+  if (!r) return isOff ? refuse("UNKNOWN_REFUND", `A refund of ${money(seen.amountMinor, ctx.shop)} on receipt ${p.receiptNumber} did not arrive, and no refund of that sum is in the books. Compare the payment with the provider's records.`) : ok({ booked: false });
   if (r.providerRefundId === null) await ctx.tx.update(refunds).set({ providerRefundId: seen.id }).where(and(eq(refunds.shopId, ctx.shop.id), eq(refunds.id, r.id)));
-  if (seen.status === "succeeded") return r.state === "done" ? ok({ booked: false }) : bookRefund(ctx, p, r);
-  if (seen.status === "failed" || seen.status === "canceled") return r.state === "failed" ? ok({ booked: false }) : refundFailed(ctx, p, r);
+  if (seen.status === "succeeded") return r.state === "done" || r.state === "failed" ? ok({ booked: false }) : bookRefund(ctx, p, r);
+  if (isOff) return r.state === "failed" ? ok({ booked: false }) : refundFailed(ctx, p, r);
   return ok({ booked: false });
 }
 
@@ -96,10 +81,11 @@ export async function refundTotalSeen(ctx: TxContext, fact: Extract<ProviderFact
   const p = fact.paymentIntent ? await lockPayment(ctx, eq(payments.providerPaymentId, fact.paymentIntent)) : undefined;
   if (!p) return refuse("UNKNOWN_PAYMENT", UNKNOWN_PAYMENT);
   if (fact.currency !== ctx.shop.currency) return refuse("CURRENCY_DIFFERS", `A refund in ${fact.currency} cannot be booked in ${ctx.shop.currency}.`);
-  let rest = fact.refundedMinor - p.refundedMinor;
-  const waiting = await ctx.tx.select().from(refunds).where(and(eq(refunds.shopId, ctx.shop.id), eq(refunds.paymentId, p.id), inArray(refunds.state, ["accepted", "sent"]))).orderBy(asc(refunds.at));
+  const all = await ctx.tx.select().from(refunds).where(and(eq(refunds.shopId, ctx.shop.id), eq(refunds.paymentId, p.id))).orderBy(asc(refunds.at));
+  // Refunds only: what a dispute took back is not in the provider's sum.
+  let rest = fact.refundedMinor - all.filter((r) => r.state === "done").reduce((sum, r) => sum + r.amountMinor, 0);
   let booked = false;
-  for (const r of waiting) {
+  for (const r of all.filter((x) => x.state === "accepted" || x.state === "sent")) {
     if (r.amountMinor > rest) continue;
     const fresh = await lockPayment(ctx, eq(payments.id, p.id));
     const done = await bookRefund(ctx, fresh ?? p, r);

@@ -1,18 +1,15 @@
 import "server-only";
-import { and, eq, sql } from "drizzle-orm";
-import { invoices, paymentRequests, payments, providerEvents } from "@/db/schema";
+import { and, eq } from "drizzle-orm";
+import { paymentRequests, providerEvents } from "@/db/schema";
 import { withShop } from "@/db/scope";
 import type { ShopContext, TxContext } from "@/modules/access/context";
 import { leaveJob } from "@/modules/access/jobs";
-import { disputeOpened, disputeWon } from "@/modules/books/domain/posting-sales";
-import { openDateFrom, postEntry } from "@/modules/books/post";
 import { money } from "@/modules/kernel/format";
-import { localDate } from "@/modules/kernel/instant";
-import { minor, ZERO } from "@/modules/kernel/money";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
 import type { CheckoutSession, ProviderFact } from "@/modules/outbound/payments/port";
 import { bookPayment } from "./book-payment";
-import { openEvent, setAside, UNKNOWN_PAGE, UNKNOWN_PAYMENT } from "./events";
+import { disputeSeen } from "./dispute-ledger";
+import { openEvent, setAside, UNKNOWN_PAGE } from "./events";
 import { refundSeen, refundTotalSeen } from "./refund-ledger";
 
 /** What an event led to; a refusal sets it aside with its sentence. */
@@ -45,33 +42,12 @@ async function settleCheckout(ctx: TxContext, type: string, session: CheckoutSes
   return ok({ booked: true });
 }
 
-/** A disputed charge: the money leaves clearing and the receivable is open again; a dispute won brings it back. */
-async function settleDispute(ctx: TxContext, d: Extract<ProviderFact, { kind: "dispute" }>): Promise<Settled> {
-  const { tx, shop } = ctx;
-  const [p] = d.paymentIntent ? await tx.select().from(payments).where(and(eq(payments.shopId, shop.id), eq(payments.providerPaymentId, d.paymentIntent))).for("update") : [];
-  if (!p) return refuse("UNKNOWN_PAYMENT", UNKNOWN_PAYMENT);
-  const entry = {
-    date: await openDateFrom(ctx, localDate(ctx.now, shop.zone)), sourceKind: "dispute", sourceId: d.id, workOrderId: p.workOrderId, customerId: p.customerId,
-  };
-  const change = async (rule: string, text: string, lines: ReturnType<typeof disputeOpened>, sign: 1 | -1): Promise<Settled> => {
-    const before = await tx.execute(sql`select 1 from journal_entries where shop_id = ${shop.id} and rule = ${rule} and source_kind = 'dispute' and source_id = ${d.id}`);
-    if (before.rows.length) return nothing;
-    const posted = await postEntry(ctx, { ...entry, rule, text, lines });
-    if (!posted.ok) return posted;
-    if (p.invoiceId) await tx.update(invoices).set({ paidMinor: sql`${invoices.paidMinor} + ${sign * d.amountMinor}` }).where(and(eq(invoices.shopId, shop.id), eq(invoices.id, p.invoiceId)));
-    return ok({ booked: true });
-  };
-  const opened = await change("disputeOpened", `Charge of ${p.receiptNumber} disputed`, disputeOpened({ amountMinor: minor(d.amountMinor), feeMinor: ZERO }), -1);
-  if (!opened.ok || d.status !== "won") return opened;
-  return change("disputeWon", `Dispute of ${p.receiptNumber} won`, disputeWon({ amountMinor: minor(d.amountMinor) }), 1);
-}
-
 async function settleFact(ctx: TxContext, type: string, eventId: string, fact: ProviderFact): Promise<Settled> {
   switch (fact.kind) {
     case "checkout": return settleCheckout(ctx, type, fact.session);
     case "refunded": return refundTotalSeen(ctx, fact);
     case "refund": return refundSeen(ctx, fact.refund);
-    case "dispute": return settleDispute(ctx, fact);
+    case "dispute": return disputeSeen(ctx, fact);
     case "payout": {
       if (fact.payout.status === "paid") await leaveJob(ctx, "payments.payout", { payout: fact.payout, eventId });
       return nothing;

@@ -1,5 +1,4 @@
-export const ACCOUNT_KINDS = ["asset", "liability", "equity", "income", "expense"] as const;
-export type AccountKind = (typeof ACCOUNT_KINDS)[number];
+export type AccountKind = "asset" | "liability" | "equity" | "income" | "expense";
 
 /** Chart of accounts every shop begins with. Names may be edited; the posting rules go by code. */
 export const ACCOUNTS = [

@@ -2,8 +2,7 @@ import { compareFractions, fraction, ratio, roundWhole, times } from "@/modules/
 import { allocate, basisPointsOf, minor, sumMinor, type Minor } from "@/modules/kernel/money";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
 
-export const LINE_KINDS = ["labor", "part", "outside", "supplies", "freight", "core", "discount", "note"] as const;
-export type LineKind = (typeof LINE_KINDS)[number];
+export type LineKind = "labor" | "part" | "outside" | "supplies" | "freight" | "core" | "discount" | "note";
 
 export const TAX_BASES = ["invoice", "line"] as const;
 /** Tax rounded once per rate group of the document, or line by line. A shop setting, stored with the document. */
@@ -104,7 +103,7 @@ export function documentTotals(input: TotalsInput): Result<DocumentTotals> {
 }
 
 /** Tax on one base, rounded half-up on the absolute value. `percent` is decimal text. */
-export const taxOn = (baseMinor: Minor, percent: string): Minor =>
+const taxOn = (baseMinor: Minor, percent: string): Minor =>
   minor(roundWhole(times(ratio(baseMinor, 100), fraction(percent))));
 
 /** Takes tax out of a price that includes it: net = gross * 100 / (100 + percent), tax = the rest. */

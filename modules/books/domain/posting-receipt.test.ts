@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { minor, sumMinor } from "@/modules/kernel/money";
-import { moneyReceived, moneyReturned, payoutLine, refundParts } from "./posting-receipt";
+import { moneyReceived, moneyReturned, payoutLine, refundParts, restoredParts } from "./posting-receipt";
 
 const at = (lines: readonly { account: string; amountMinor: number }[]) => Object.fromEntries(lines.map((l) => [l.account, l.amountMinor]));
 
@@ -19,6 +19,19 @@ describe("money in and out", () => {
   it("takes a refund from credit first, then deposit, then the payment", () => {
     expect(refundParts({ wantedMinor: 10000, creditMinor: 1200, depositMinor: 3000, paidMinor: 50000 })).toEqual({ creditMinor: 1200, depositMinor: 3000, receivableMinor: 5800, missingMinor: 0 });
     expect(refundParts({ wantedMinor: 100, creditMinor: 0, depositMinor: 0, paidMinor: 60 }).missingMinor).toBe(40);
+  });
+  // The demo's disputed charge of 330.00 with a fee of 15.00, which the payout that holds it keeps back.
+  it("a disputed charge opens the receivable again, its fee is an expense of its own", () => {
+    const taken = moneyReturned({ ...refundParts({ wantedMinor: 33_000, creditMinor: 0, depositMinor: 0, paidMinor: 33_000 }), way: "card" });
+    const kept = payoutLine({ grossMinor: -33_000, feeMinor: 1500, isDispute: true });
+    expect(at(taken)).toEqual({ 1020: -33_000, 1100: 33_000 });
+    expect(at(kept)).toEqual({ 1010: -34_500, 6150: 1500, 1020: 33_000 });
+  });
+  it("money that comes back pays what is open now, then the deposit it was taken from; the rest is credit", () => {
+    expect(restoredParts({ amountMinor: 33_000, openMinor: 33_000, depositMinor: 0 })).toEqual({ receivableMinor: 33_000, depositMinor: 0, creditMinor: 0 });
+    expect(restoredParts({ amountMinor: 33_000, openMinor: 10_000, depositMinor: 0 })).toEqual({ receivableMinor: 10_000, depositMinor: 0, creditMinor: 23_000 });
+    expect(restoredParts({ amountMinor: 33_000, openMinor: 0, depositMinor: 33_000 })).toEqual({ receivableMinor: 0, depositMinor: 33_000, creditMinor: 0 });
+    expect(restoredParts({ amountMinor: 100, openMinor: -500, depositMinor: 0 })).toEqual({ receivableMinor: 0, depositMinor: 0, creditMinor: 100 });
   });
   it("sums to zero whatever the parts", () => {
     const parts = { depositMinor: minor(1), receivableMinor: minor(20), creditMinor: minor(300) };

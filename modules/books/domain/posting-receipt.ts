@@ -31,6 +31,16 @@ export function refundParts(p: { readonly wantedMinor: number; readonly creditMi
   return { creditMinor, depositMinor, receivableMinor, missingMinor: minor(p.wantedMinor - creditMinor - depositMinor - receivableMinor) };
 }
 
+/**
+ * Where money goes that comes back after a dispute is won: to the invoice as far as it is open, to the deposit it was
+ * taken from, the rest is the customer's credit.
+ */
+export function restoredParts(p: { readonly amountMinor: number; readonly openMinor: number; readonly depositMinor: number }): MoneyParts {
+  const receivableMinor = minor(Math.max(0, Math.min(p.amountMinor, p.openMinor)));
+  const depositMinor = minor(Math.max(0, Math.min(p.amountMinor - receivableMinor, p.depositMinor)));
+  return { receivableMinor, depositMinor, creditMinor: minor(p.amountMinor - receivableMinor - depositMinor) };
+}
+
 /** Money back the way it came: the receipt turned round. */
 export const moneyReturned = (p: MoneyParts & { readonly way: MoneyWay }): EntryLine[] =>
   mirror(moneyReceived(p));

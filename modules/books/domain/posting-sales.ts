@@ -58,14 +58,6 @@ const ACCOUNT_OF_SOURCE = { deposit: "2100", credit: "2110", payment: "1100" } a
 export const refunded = (p: { readonly amountMinor: Minor; readonly way: MoneyWay; readonly from: RefundSource }): EntryLine[] =>
   entryOf(debit(ACCOUNT_OF_SOURCE[p.from], p.amountMinor), credit(ACCOUNT_OF_WAY[p.way], p.amountMinor));
 
-/** A customer disputes a card charge: the money and a fee leave clearing, the receivable is open again. */
-export const disputeOpened = (p: { readonly amountMinor: Minor; readonly feeMinor: Minor }): EntryLine[] =>
-  entryOf(debit("1100", p.amountMinor), debit("6150", p.feeMinor), credit("1020", p.amountMinor + p.feeMinor));
-
-/** A dispute won: the money is back in clearing. */
-export const disputeWon = (p: { readonly amountMinor: Minor }): EntryLine[] =>
-  entryOf(debit("1020", p.amountMinor), credit("1100", p.amountMinor));
-
 /** A balance nobody will pay. Dr bad debt / Cr receivable. */
 export const writtenOff = (p: { readonly amountMinor: Minor }): EntryLine[] =>
   entryOf(debit("6200", p.amountMinor), credit("1100", p.amountMinor));

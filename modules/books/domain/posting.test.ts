@@ -5,7 +5,7 @@ import { documentTotals, type TotalsInput } from "./document-totals";
 import { checkEntry, type EntryLine } from "./entry";
 import { cashBanked, drawerDifference, payoutSettled } from "./posting-money";
 import {
-  creditNote, creditUsed, depositApplied, depositReceived, disputeOpened, disputeWon, invoiceIssued, MONEY_WAYS,
+  creditNote, creditUsed, depositApplied, depositReceived, invoiceIssued, MONEY_WAYS,
   overpaymentCredited, paymentReceived, REFUND_SOURCES, refunded, writtenOff,
 } from "./posting-sales";
 import {
@@ -91,11 +91,6 @@ describe("posting rules", () => {
     expect(plain(countDifference({ differenceMinor: m(-3140) }))).toEqual([["1200", -3140], ["5400", 3140]]);
   });
 
-  it("a disputed charge of 330.00 with a fee of 15.00 reopens the receivable", () => {
-    expect(plain(disputeOpened({ amountMinor: m(33_000), feeMinor: m(1500) }))).toEqual([["1100", 33_000], ["6150", 1500], ["1020", -34_500]]);
-    expect(plain(disputeWon({ amountMinor: m(33_000) }))).toEqual([["1020", 33_000], ["1100", -33_000]]);
-  });
-
   it("a refund goes back the way the money came", () => {
     expect(REFUND_SOURCES.map((from) => plain(refunded({ amountMinor: m(8500), way: "card", from })))).toEqual([
       [["2100", 8500], ["1020", -8500]], [["2110", 8500], ["1020", -8500]], [["1100", 8500], ["1020", -8500]],
@@ -127,7 +122,6 @@ describe("posting rules", () => {
       fc.tuple(amount, amount).map(([a, b]) => creditNote(invoiceIssued(invoice(a, b)))),
       fc.tuple(amount, amount, amount).map(([a, b, c]) => supplierBilled({ receivedMinor: a, toStockMinor: b, toVarianceMinor: c })),
       amount.map((a) => partsIssued({ costMinor: a })),
-      fc.tuple(amount, amount).map(([a, b]) => disputeOpened({ amountMinor: a, feeMinor: b })),
       fc.tuple(amount, amount).map(([a, b]) => drawerDifference({ countedMinor: a, expectedMinor: b })),
     );
     fc.assert(fc.property(fc.array(entry, { maxLength: 20 }), (entries) => {

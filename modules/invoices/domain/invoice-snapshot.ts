@@ -5,12 +5,9 @@ import type { PieceGain } from "./gain-block";
 /** The rules an issued document was made by; a later change of the arithmetic gets another name. */
 export const RULE_SET = "2026-1";
 
-export const INVOICE_STATES = ["draft", "issued", "dropped"] as const;
-export type InvoiceState = (typeof INVOICE_STATES)[number];
-export const INVOICE_KINDS = ["invoice", "credit"] as const;
-export type InvoiceKind = (typeof INVOICE_KINDS)[number];
-export const INVOICE_LINE_KINDS = ["labor", "part", "outside", "freight", "supplies", "discount", "core", "note"] as const;
-export type InvoiceLineKind = (typeof INVOICE_LINE_KINDS)[number];
+export type InvoiceState = "draft" | "issued" | "dropped";
+export type InvoiceKind = "invoice" | "credit";
+export type InvoiceLineKind = "labor" | "part" | "outside" | "freight" | "supplies" | "discount" | "core" | "note";
 
 export interface InvoiceLine {
   readonly id: string;

@@ -78,7 +78,9 @@ const balanceTransaction = z
   }));
 
 const charge = z.object({ id, object: z.literal("charge"), amount_refunded: amount, currency, payment_intent: reference });
-const dispute = z.object({ id, object: z.literal("dispute"), status: z.string(), amount, currency, payment_intent: reference });
+const dispute = z.object({
+  id, object: z.literal("dispute"), status: z.string(), amount, currency, payment_intent: reference, evidence_details: z.object({ due_by: seconds.nullish() }).nullish(),
+});
 
 const envelope = z.object({
   id,
@@ -109,7 +111,7 @@ function factOf(type: string, object: unknown): ProviderFact {
   }
   if (type.startsWith("charge.dispute.")) {
     const d = parsed(dispute, object, "dispute");
-    return { kind: "dispute", id: d.id, paymentIntent: d.payment_intent, status: d.status, amountMinor: d.amount, currency: d.currency };
+    return { kind: "dispute", id: d.id, paymentIntent: d.payment_intent, status: d.status, amountMinor: d.amount, currency: d.currency, evidenceBy: d.evidence_details?.due_by ?? null };
   }
   if (type.startsWith("refund.")) return { kind: "refund", refund: readRefund(object) };
   if (type.startsWith("payout.") && type !== "payout.reconciliation_completed") return { kind: "payout", payout: readPayout(object) };

@@ -82,8 +82,8 @@ export type ProviderFact =
   /** `charge.refunded` and `refund.*`: totals of the charge so far, or the refund itself. */
   | { readonly kind: "refunded"; readonly paymentIntent: string | null; readonly refundedMinor: number; readonly currency: string }
   | { readonly kind: "refund"; readonly refund: Refund }
-  /** `charge.dispute.*` */
-  | { readonly kind: "dispute"; readonly id: string; readonly paymentIntent: string | null; readonly status: string; readonly amountMinor: number; readonly currency: string }
+  /** `charge.dispute.*`; `evidenceBy`: until when the shop may answer, null when the provider names no such instant. */
+  | { readonly kind: "dispute"; readonly id: string; readonly paymentIntent: string | null; readonly status: string; readonly amountMinor: number; readonly currency: string; readonly evidenceBy: Date | null }
   /** `payout.*` */
   | { readonly kind: "payout"; readonly payout: Payout }
   /** Kinds we have no use for. They are acknowledged and kept, nothing else. */

@@ -15,9 +15,11 @@ import { useRouter } from "next/navigation";
 import { usePlace } from "@/modules/ui/place";
 import { useToast } from "@/modules/ui/toast";
 import { askRefundAction, takePaymentAction } from "../actions";
+import { DISPUTE_WORDS } from "../domain/dispute";
 import { METHOD_WORDS, type PaymentMethod } from "../domain/payment-words";
 import { askRefundInput, takePaymentInput } from "../input";
 import type { PaymentView } from "../queries";
+import { CardPageKey } from "./card-page-key";
 
 /** Money taken for an invoice and its order; take more, or ask for a refund. */
 export function PaymentsBay({ invoiceId, openMinor, payments, may }: { invoiceId: string; openMinor: number; payments: readonly PaymentView[]; may: { take: boolean; refund: boolean } }) {
@@ -25,16 +27,18 @@ export function PaymentsBay({ invoiceId, openMinor, payments, may }: { invoiceId
   const [taking, setTaking] = useState(false);
   return (
     <Bay label="Money taken" aside={may.take && openMinor > 0 ? (
-      <TaskDialog trigger={<Button size="sm" variant="lo">Take payment</Button>} open={taking} onOpenChange={setTaking} title={`Take payment, ${money(openMinor, place)} open`} description="Cash, check or transfer. Cards are taken at the payment page behind the customer’s link.">
+      <TaskDialog trigger={<Button size="sm" variant="lo">Take payment</Button>} open={taking} onOpenChange={setTaking} title={`Take payment, ${money(openMinor, place)} open`} description="Cash, check or transfer. Cards are taken at the payment page.">
         {taking ? <TakeForm invoiceId={invoiceId} openMinor={openMinor} onDone={() => setTaking(false)} /> : null}
       </TaskDialog>
     ) : undefined}>
+      {may.take && openMinor > 0 ? <CardPageKey invoiceId={invoiceId} /> : null}
       {payments.length === 0 ? <p className="mid sm">Nothing yet.</p> : (
         <ul>{payments.map((p) => (
           <li key={p.id} className="border-b border-line py-2 last:border-0">
             <span className="flex items-baseline justify-between gap-3"><span><b>{p.receiptNumber}</b> {p.purpose === "undone" ? "taken back" : `${p.purpose}, ${METHOD_WORDS[p.method as PaymentMethod]}`}</span><b className="q">{amount(p.amountMinor, place)}</b></span>
             <span className="sm mid">{dateTime(p.receivedAt, place)}{p.note ? `, ${p.note}` : ""}</span>
             {p.refunds.map((r) => <span key={r.id} className="sm block">Refund {amount(r.amountMinor, place)}: {r.state === "asked" ? "waits for a second person" : r.state}. {r.reason}</span>)}
+            {p.disputes.map((d) => <span key={d.id} className="sm block"><b>Disputed {amount(d.amountMinor, place)}</b>: {DISPUTE_WORDS[d.phase]}{d.evidenceBy ? ` by ${dateTime(d.evidenceBy, place)}` : ""}.</span>)}
             {may.refund && p.purpose !== "undone" && p.amountMinor > p.refundedMinor ? <RefundDialog payment={p} /> : null}
           </li>
         ))}</ul>

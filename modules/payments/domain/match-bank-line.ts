@@ -19,8 +19,7 @@ export interface PayableDocument {
   readonly openMinor: Minor;
 }
 
-export const OFFER_REASONS = ["reference, other amount", "document number in the text", "same amount only"] as const;
-export type OfferReason = (typeof OFFER_REASONS)[number];
+export type OfferReason = "reference, other amount" | "document number in the text" | "same amount only";
 
 export type BankMatch =
   /** The only kind that may be booked without a person. */

@@ -7,10 +7,7 @@ export const METHOD_WORDS: Record<PaymentMethod, string> = { card: "card", cash:
 export const WAY_OF_METHOD: Record<PaymentMethod, MoneyWay> = { card: "card", cash: "cash", cheque: "bank", transfer: "bank" };
 
 /** What a payment was for once it was booked. `credit`: nothing was due. `undone`: a bank match taken back. */
-export const PAYMENT_PURPOSES = ["deposit", "invoice", "credit", "undone"] as const;
-export type PaymentPurpose = (typeof PAYMENT_PURPOSES)[number];
+export type PaymentPurpose = "deposit" | "invoice" | "credit" | "undone";
 
-export const REQUEST_STATES = ["new", "ready", "paid", "expired", "replaced"] as const;
-export type RequestState = (typeof REQUEST_STATES)[number];
-export const REFUND_STATES = ["asked", "accepted", "sent", "done", "failed", "declined"] as const;
-export type RefundState = (typeof REFUND_STATES)[number];
+export type RequestState = "new" | "ready" | "paid" | "expired" | "replaced";
+export type RefundState = "asked" | "accepted" | "sent" | "done" | "failed" | "declined";

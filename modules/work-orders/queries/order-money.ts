@@ -1,10 +1,15 @@
 import "server-only";
 import { and, eq, inArray, sql } from "drizzle-orm";
-import { estimates, invoices, payments, workOrders } from "@/db/schema";
+import { estimates, invoices, workOrders } from "@/db/schema";
 import { inShop, type ShopContext } from "@/modules/access/context";
+import { depositsHeld } from "@/modules/books/balances";
+import { openOf } from "@/modules/books/domain/open-sum";
 import type { OrderMoney } from "../domain/may-leave";
 
-/** The money of several orders in one go. Deposits held are those taken and neither applied to an invoice nor given back. */
+/**
+ * The money of several orders in one go: what is open on their issued invoices, and the deposits the books hold for them.
+ * The one rule for it: floor, order page, invoices and hand-over ask here.
+ */
 export async function moneyOfOrders(ctx: ShopContext, workOrderIds: readonly string[]): Promise<Map<string, OrderMoney>> {
   if (workOrderIds.length === 0) return new Map();
   const ids = [...workOrderIds];
@@ -12,18 +17,15 @@ export async function moneyOfOrders(ctx: ShopContext, workOrderIds: readonly str
     const agreed = await tx.select({ id: workOrders.id, total: sql<string | null>`${estimates.snapshot} #>> '{totals,totalMinor}'` }).from(workOrders)
       .leftJoin(estimates, and(eq(estimates.shopId, workOrders.shopId), eq(estimates.id, workOrders.agreedEstimateId)))
       .where(and(eq(workOrders.shopId, ctx.shop.id), inArray(workOrders.id, ids)));
-    const billed = await tx.select({
-      id: invoices.workOrderId, n: sql<number>`count(*) filter (where ${invoices.kind} = 'invoice')::int`,
-      total: sql<string>`coalesce(sum(case when ${invoices.kind} = 'invoice' then ${invoices.totalMinor} else 0 end), 0)`,
-      open: sql<string>`coalesce(sum(case when ${invoices.kind} = 'invoice' then ${invoices.totalMinor} - ${invoices.depositAppliedMinor} - ${invoices.paidMinor} - ${invoices.creditedMinor} else 0 end), 0)`,
-    }).from(invoices).where(and(eq(invoices.shopId, ctx.shop.id), inArray(invoices.workOrderId, ids), eq(invoices.state, "issued"))).groupBy(invoices.workOrderId);
-    const deposits = await tx.select({ id: payments.workOrderId, held: sql<string>`coalesce(sum(${payments.amountMinor} - ${payments.appliedMinor} - ${payments.refundedMinor}), 0)` })
-      .from(payments).where(and(eq(payments.shopId, ctx.shop.id), inArray(payments.workOrderId, ids), eq(payments.purpose, "deposit"))).groupBy(payments.workOrderId);
-    const b = new Map(billed.map((r) => [r.id, r]));
-    const d = new Map(deposits.map((r) => [r.id, Number(r.held)]));
-    return new Map(agreed.map((a) => [a.id, {
-      agreedMinor: Number(a.total ?? 0), invoicedMinor: Number(b.get(a.id)?.total ?? 0), invoices: b.get(a.id)?.n ?? 0, openMinor: Number(b.get(a.id)?.open ?? 0), depositHeldMinor: d.get(a.id) ?? 0,
-    }]));
+    const issued = await tx.select().from(invoices).where(and(eq(invoices.shopId, ctx.shop.id), inArray(invoices.workOrderId, ids), eq(invoices.kind, "invoice"), eq(invoices.state, "issued")));
+    const held = await depositsHeld({ ...ctx, tx }, ids);
+    return new Map(agreed.map((a) => {
+      const own = issued.filter((i) => i.workOrderId === a.id);
+      return [a.id, {
+        agreedMinor: Number(a.total ?? 0), invoicedMinor: own.reduce((sum, i) => sum + i.totalMinor - i.creditedMinor, 0), invoices: own.length,
+        openMinor: own.reduce((sum, i) => sum + openOf(i), 0), depositHeldMinor: held.get(a.id) ?? 0,
+      }];
+    }));
   });
 }
 

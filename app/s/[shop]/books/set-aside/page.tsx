@@ -1,8 +1,9 @@
 import { BooksHead } from "@/modules/books/components/books-head";
 import { ableTo } from "@/modules/access/context";
 import { shopPage } from "@/modules/access/page";
+import { DisputeList } from "@/modules/payments/components/dispute-list";
 import { SetAsideList, WaitingRefunds } from "@/modules/payments/components/set-aside-list";
-import { findSetAside, findWaitingRefunds } from "@/modules/payments/queries";
+import { findDisputes, findSetAside, findWaitingRefunds } from "@/modules/payments/queries";
 
 export const metadata = { title: "Set aside" };
 
@@ -12,6 +13,7 @@ export default async function SetAsidePage({ params }: { params: Promise<{ shop:
     <main id="main" className="page">
       <BooksHead slug={ctx.shop.slug} title="Set aside" current="set-aside" mayMatch={ableTo(ctx, "bank.match")} />
       <WaitingRefunds rows={await findWaitingRefunds(ctx)} />
+      <DisputeList rows={await findDisputes(ctx)} place={ctx.shop} />
       <SetAsideList rows={await findSetAside(ctx)} mayAct={ableTo(ctx, "bank.match")} />
     </main>
   );
