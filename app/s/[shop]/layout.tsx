@@ -2,6 +2,7 @@ import type { ReactNode } from "react";
 import { ableTo } from "@/modules/access/context";
 import { shopPage } from "@/modules/access/page";
 import { PlaceProvider } from "@/modules/ui/place";
+import { settingsFor } from "./settings/settings-head";
 import { ShopRail } from "./shop-rail";
 
 const ROLE_WORDS = { owner: "Owner", manager: "Manager", bookkeeper: "Bookkeeper", counter: "Counter", lead: "Lead", inspector: "Inspection", technician: "Technician", receiving: "Receiving", accountant: "Accountant" } as const;
@@ -16,7 +17,7 @@ export default async function ShopLayout({ children, params }: { children: React
       <ShopRail
         slug={shop.slug} shopName={shop.name}
         person={{ name: actor.name, initials: actor.name.split(/\s+/).map((w) => w[0] ?? "").join("").slice(0, 2).toUpperCase(), role: role ? ROLE_WORDS[role] : "" }}
-        may={{ open: ableTo(ctx, "orders.open"), books: ableTo(ctx, "books.see"), settings: ableTo(ctx, "settings.write") || ableTo(ctx, "devices.write") }}
+        may={{ open: ableTo(ctx, "orders.open"), books: ableTo(ctx, "books.see"), settings: settingsFor(ctx)[0]?.href ?? null }}
       />
       {children}
     </PlaceProvider>

@@ -9,7 +9,7 @@ const ROOMS: readonly [key: string, label: string, path: string][] = [
 
 /** The rail of a shop's pages; the room is read from the address. */
 export function ShopRail({ slug, shopName, person, may }: {
-  slug: string; shopName: string; person: { name: string; initials: string; role: string }; may: { open: boolean; books: boolean; settings: boolean };
+  slug: string; shopName: string; person: { name: string; initials: string; role: string }; may: { open: boolean; books: boolean; settings: string | null };
 }) {
   const at = usePathname().split("/")[3] ?? "";
   const rooms: Room[] = ROOMS.filter(([key]) => key !== "books" || may.books).map(([key, label, path]) => ({ key, label, href: `/s/${slug}${path}` }));
@@ -22,7 +22,7 @@ export function ShopRail({ slug, shopName, person, may }: {
       person={{
         ...person,
         menu: [
-          ...(may.settings ? [{ key: "settings", label: "Shop settings", href: `/s/${slug}/settings` }] : []),
+          ...(may.settings ? [{ key: "settings", label: "Shop settings", href: may.settings }] : []),
           { key: "sign-out", label: "Sign out", onSelect: () => void signOut({ callbackUrl: "/sign-in" }) },
         ],
       }}

@@ -3,7 +3,7 @@ import { ShopSettingsForm } from "@/modules/books/components/shop-settings-form"
 import { shopSettingsView } from "@/modules/books/settings";
 import { Bay, Bays } from "@/modules/ui/bay";
 import { Kv } from "@/modules/ui/kv";
-import { PageHead } from "@/modules/ui/page-head";
+import { SettingsHead } from "./settings-head";
 
 export const metadata = { title: "Shop settings" };
 
@@ -12,7 +12,7 @@ export default async function SettingsPage({ params }: { params: Promise<{ shop:
   const { values, series } = await shopSettingsView(ctx);
   return (
     <main id="main" className="page">
-      <PageHead title="Shop settings" sub={`${ctx.shop.name}, ${ctx.shop.currency}, ${ctx.shop.zone}`} />
+      <SettingsHead ctx={ctx} current="shop" title="Shop settings" sub={`${ctx.shop.name}, ${ctx.shop.currency}, ${ctx.shop.zone}`} />
       <div className="split">
         <ShopSettingsForm values={values} />
         <Bays>

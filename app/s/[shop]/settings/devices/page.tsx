@@ -1,7 +1,7 @@
 import { shopPage } from "@/modules/access/page";
 import { DeviceList } from "@/modules/time/components/device-list";
 import { deviceList } from "@/modules/time/queries/settings-lists";
-import { PageHead } from "@/modules/ui/page-head";
+import { SettingsHead } from "../settings-head";
 
 export const metadata = { title: "Tablets" };
 
@@ -9,7 +9,7 @@ export default async function DevicesPage({ params }: { params: Promise<{ shop: 
   const ctx = await shopPage(params, "devices.write");
   return (
     <main id="main" className="page">
-      <PageHead title="Tablets" sub="Shop clocks and bench computers" />
+      <SettingsHead ctx={ctx} current="tablets" title="Tablets" sub="Shop clocks and bench computers" />
       <DeviceList devices={await deviceList(ctx)} />
     </main>
   );

@@ -5,8 +5,8 @@ import { roleWord } from "@/modules/time/role-words";
 import { peopleList } from "@/modules/time/queries/settings-lists";
 import { Bay } from "@/modules/ui/bay";
 import { Flag } from "@/modules/ui/flag";
-import { PageHead } from "@/modules/ui/page-head";
 import { TextLink } from "@/modules/ui/text-link";
+import { SettingsHead } from "../settings-head";
 
 export const metadata = { title: "People" };
 
@@ -33,7 +33,7 @@ export default async function PeoplePage({ params }: { params: Promise<{ shop: s
   );
   return (
     <main id="main" className="page">
-      <PageHead title="People" sub={`${people.filter((p) => !p.leftAt).length} work here`} />
+      <SettingsHead ctx={ctx} current="people" title="People" sub={`${people.filter((p) => !p.leftAt).length} work here`} />
       {ableTo(ctx, "people.write") ? <div className="split">{list}<Bay label="Add a person"><AddPersonForm /></Bay></div> : list}
     </main>
   );
