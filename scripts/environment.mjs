@@ -114,7 +114,7 @@ export function assemble({ folder, ports, secrets, database, clockFile, environm
       STRIPE_WEBHOOK_SECRET: secrets.paymentWebhookSecret,
       STRIPE_API_BASE: `http://127.0.0.1:${ports.pay}`,
     }),
-    ...(outside.files ? {} : { VK_FILES_DIR: environment.VK_FILES_DIR || path.join(folder, "files") }),
+    ...(outside.files ? {} : { VK_FILES_DIR: path.resolve(environment.VK_FILES_DIR || path.join(folder, "files")) }),
     ...(clockFile === undefined ? {} : { VK_CLOCK_FILE: clockFile }),
   };
   return {

@@ -51,6 +51,10 @@ describe("the environment of the processes", () => {
     expect(local).toEqual({ database: true, mail: true, payments: true });
     expect(env.VK_CLOCK_FILE).toBeUndefined();
   });
+  it("names the folder of files by its whole path, whatever folder a process runs in", () => {
+    expect(assembled().env.VK_FILES_DIR).toBe(path.resolve(folder, "files"));
+    expect(assembled({ VK_FILES_DIR: "our/files" }).env.VK_FILES_DIR).toBe(path.resolve("our/files"));
+  });
   it("points at real services where they are named, and starts no stand-in for them", () => {
     const real = { STRIPE_SECRET_KEY: "sk_live_x", STRIPE_WEBHOOK_SECRET: "whsec_x", SMTP_URL: "smtps://mail.example", VK_MAIL_FROM: "shop@heads.example", S3_BUCKET: "b", S3_REGION: "r", S3_ACCESS_KEY_ID: "k", S3_SECRET_ACCESS_KEY: "s" };
     const { env, local } = assembled(real);

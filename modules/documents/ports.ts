@@ -1,5 +1,4 @@
 import "server-only";
-import path from "node:path";
 import { env } from "@/modules/access/env";
 import { openFiles } from "@/modules/outbound/files/open";
 import type { FilePort } from "@/modules/outbound/files/port";
@@ -18,7 +17,7 @@ export function filePort(): FilePort {
         kind: "s3", bucket: e.S3_BUCKET, region: e.S3_REGION, ...(e.S3_ENDPOINT ? { endpoint: e.S3_ENDPOINT } : {}),
         accessKeyId: e.S3_ACCESS_KEY_ID ?? "", secretAccessKey: e.S3_SECRET_ACCESS_KEY ?? "",
       })
-    : openFiles({ kind: "folder", root: path.resolve(e.VK_FILES_DIR ?? ".data/files") });
+    : openFiles({ kind: "folder", root: e.VK_FILES_DIR ?? "" });
   return files;
 }
 

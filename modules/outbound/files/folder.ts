@@ -27,7 +27,7 @@ async function ensureFolder(root: string, folder: string): Promise<void> {
  * temporary file, are synced, and get their name by a hard link, which fails rather than replaces.
  */
 export function folderFiles(root: string): FilePort {
-  const base = path.resolve(root);
+  const base = path.resolve(/* turbopackIgnore: true */ root);
   const temporary = path.join(base, ".incoming");
   const at = (key: string) => path.join(base, checkKey(key));
 
@@ -83,7 +83,7 @@ export function folderFiles(root: string): FilePort {
 
 /** Remove what interrupted uploads left behind, older than `olderThanMs` at `now`. Returns how many. */
 export async function sweepIncoming(root: string, now: Date, olderThanMs = 3_600_000): Promise<number> {
-  const folder = path.join(path.resolve(root), ".incoming");
+  const folder = path.join(path.resolve(/* turbopackIgnore: true */ root), ".incoming");
   let names: string[];
   try {
     names = await readdir(folder);
