@@ -2,8 +2,6 @@
 import { shopAction } from "@/modules/access/action";
 import { acceptCorrection, askCorrection, enterTime, refuseCorrection, setAsideEntry, settlePunch } from "./commands/corrections";
 import { addDevice, makeEnrolCode, revokeDevice } from "./commands/devices";
-import { doorIn, doorOut } from "./commands/door";
-import { stopClock } from "./commands/indirect";
 import { addPerson, changePerson, leaveShop, setBadge, setPin, setRate } from "./commands/people";
 
 export const askCorrectionAction = shopAction(askCorrection);
@@ -15,9 +13,6 @@ export const settlePunchAction = shopAction(settlePunch);
 export const addDeviceAction = shopAction(addDevice);
 export const makeEnrolCodeAction = shopAction(makeEnrolCode);
 export const revokeDeviceAction = shopAction(revokeDevice);
-export const doorInAction = shopAction(doorIn);
-export const doorOutAction = shopAction(doorOut);
-export const stopClockAction = shopAction(stopClock);
 export const addPersonAction = shopAction(addPerson);
 export const changePersonAction = shopAction(changePerson);
 export const setBadgeAction = shopAction(setBadge);

@@ -1,6 +1,7 @@
 "use server";
 import { shopAction } from "@/modules/access/action";
 import { enterSpokenAnswer } from "./commands/answer-estimate";
+import { reopenOperation } from "./commands/bench-clock";
 import { cancelOrder, changeOrder, movePromise } from "./commands/change-order";
 import { saveEstimate, startEstimate } from "./commands/estimate-draft";
 import { askAboutFinding, recordFinding, withdrawFinding } from "./commands/findings";
@@ -30,6 +31,7 @@ export const recordFindingAction = shopAction(recordFinding);
 export const askAboutFindingAction = shopAction(askAboutFinding);
 export const withdrawFindingAction = shopAction(withdrawFinding);
 export const markOperationAction = shopAction(markOperation);
+export const reopenOperationAction = shopAction(reopenOperation);
 export const releasePieceAction = shopAction(releasePiece);
 export const refuseReleaseAction = shopAction(refuseRelease);
 export const reopenPieceAction = shopAction(reopenPiece);

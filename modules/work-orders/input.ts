@@ -12,20 +12,20 @@ import { ESTIMATE_LINE_KINDS } from "./domain/estimate-snapshot";
 
 const NO_CARD = "This looks like a card number. Card numbers are never written here; send the payment link instead.";
 /** One line of text. */
-export const line = (max: number) =>
+const line = (max: number) =>
   z.string().trim().max(max, `At most ${max} characters.`).refine((s) => !/\p{Cc}/u.test(s), "Line breaks and control characters do not belong here.").refine((s) => !holdsCardNumber(s), NO_CARD);
 /** A maker's number as stamped: any digits may be one, so it is not taken for a card number. */
 const stamped = z.string().trim().max(40, "At most 40 characters.").refine((s) => !/\p{Cc}/u.test(s), "Line breaks and control characters do not belong here.");
 /** Several lines of text. */
-export const words = (max: number) =>
+const words = (max: number) =>
   z.string().trim().max(max, `At most ${max} characters.`).refine((s) => !/[^\P{Cc}\n\r\t]/u.test(s), "Control characters do not belong here.").refine((s) => !holdsCardNumber(s), NO_CARD);
 const isoDate = z.string().trim().regex(/^\d{4}-\d{2}-\d{2}$/, "A date such as 2026-03-20.").refine((s) => !Number.isNaN(Date.parse(`${s}T00:00:00Z`)), "There is no such day.");
 /** A day, or none. */
-export const dayOrNone = z.union([z.literal(""), isoDate]).transform((s) => s || null);
+const dayOrNone = z.union([z.literal(""), isoDate]).transform((s) => s || null);
 
 const AMOUNT_MAX = 100_000_000_00;
 /** An amount as typed, to minor units; not below 0. */
-export const amountText = z.string().trim().transform((s, ctx) => {
+const amountText = z.string().trim().transform((s, ctx) => {
   const value = parseMinor(s);
   if (value === null || value < 0 || value > AMOUNT_MAX) {
     ctx.addIssue({ code: "custom", message: "An amount such as 1250 or 1,250.00, not below 0." });
@@ -34,7 +34,7 @@ export const amountText = z.string().trim().transform((s, ctx) => {
   return value;
 });
 /** An amount or nothing: "" is null. */
-export const amountOrNone = z.string().trim().transform((s, ctx) => {
+const amountOrNone = z.string().trim().transform((s, ctx) => {
   if (s === "") return null;
   const value = parseMinor(s);
   if (value === null || value < 0 || value > AMOUNT_MAX) {
@@ -54,7 +54,7 @@ export const percentText = z.string().trim().transform((s, ctx) => {
   return bp;
 });
 /** A quantity above 0, to thousandths. */
-export const qtyText = z.string().trim().transform((s, ctx) => {
+const qtyText = z.string().trim().transform((s, ctx) => {
   const q = parseMilli(s);
   if (q === null || q <= 0 || q > 1_000_000_000) {
     ctx.addIssue({ code: "custom", message: "A quantity above 0, such as 4 or 1.5." });
@@ -63,7 +63,7 @@ export const qtyText = z.string().trim().transform((s, ctx) => {
   return q;
 });
 /** Hours as typed (`4.5`), to whole minutes. */
-export const hoursText = z.string().trim().transform((s, ctx) => {
+const hoursText = z.string().trim().transform((s, ctx) => {
   const p = parseDecimal(s.replace(",", "."));
   const minutes = p && p.units >= 0n ? Number((p.units * 60n * 2n + 10n ** BigInt(p.scale)) / (2n * 10n ** BigInt(p.scale))) : -1;
   if (minutes < 0 || minutes > 60_000) {
@@ -218,7 +218,7 @@ export const shipInput = z.strictObject({
 export const reopenPieceInput = z.strictObject({ pieceId: z.uuid(), version: z.number().int(), reason: line(200).min(3, "Say why it is opened again.") });
 
 export const ORDER_VIEWS = ["open", "due", "approval", "short", "over", "to-invoice", "gone"] as const;
-export const ORDER_SORTS = ["number", "promised", "customer"] as const;
+const ORDER_SORTS = ["number", "promised", "customer"] as const;
 export const findOrdersInput = z.strictObject({
   view: z.enum(ORDER_VIEWS).default("open"),
   q: z.string().trim().max(100).default(""),

@@ -92,6 +92,8 @@ describe("final inspection", () => {
     }
     const [id = "", , version = ""] = ops[0] ?? [];
     expect(await markOperation(a.as("tech", AT), { operationId: id, version: Number(version), to: "done" })).toMatchObject({ ok: false, refusal: { code: "CHANGED_MEANWHILE" } });
+    // A finished one is opened again with its reason only: without it the time after would count as book hours earned.
+    expect(await markOperation(a.as("lead", AT), { operationId: id, version: Number(version) + 1, to: "open" })).toMatchObject({ ok: false, refusal: { code: "DONE_ALREADY" } });
   });
   it("wants the reading sets of its flow operations", async () => {
     const r = await releasePiece(a.as("insp", AT), { pieceId: hero.pieceId, version: await pieceVersion(a, hero.pieceId), checked: every, tray: trayOf(4) });

@@ -29,7 +29,7 @@ const cureText = line(8).transform((s, issue) => {
   return Math.round((q * 60) / 1000);
 });
 
-export const EPOXY_PORTS = ["intake", "exhaust"] as const;
+const EPOXY_PORTS = ["intake", "exhaust"] as const;
 export const epoxyInput = z.strictObject({
   pieceId: z.uuid(), operationId: z.uuid("Choose the operation this belongs to."), partId: z.uuid("Choose the epoxy."),
   port: z.enum(EPOXY_PORTS, "Say which port."),

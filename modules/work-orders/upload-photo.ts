@@ -10,7 +10,7 @@ import { addPhoto } from "./commands/photos";
 export const uploadInput = z.strictObject({ subjectKind: z.enum(["piece", "finding"]), subjectId: z.uuid(), name: z.string().trim().max(200).default("photo.jpg"), note: z.string().trim().max(200).default("") });
 
 /** The bytes of a request, read piece by piece; null as soon as there are more than `most`. */
-export async function bytesUpTo(body: ReadableStream<Uint8Array> | null, most: number): Promise<Uint8Array | null> {
+async function bytesUpTo(body: ReadableStream<Uint8Array> | null, most: number): Promise<Uint8Array | null> {
   if (!body) return new Uint8Array();
   const parts: Uint8Array[] = [];
   let size = 0;

@@ -7,7 +7,7 @@ import { clockState } from "../ledger/clock-state";
 import { moveBench, moveDoor } from "../ledger/move-clocks";
 import { press, type Pressed } from "../ledger/press";
 
-export const indirectInput = z.strictObject({
+const indirectInput = z.strictObject({
   ...stampInput,
   work: z.enum(INDIRECT_WORK, { error: "Choose what it is: clean-up, waiting for parts, break and so on." }),
   note: z.string().trim().max(300, "At most 300 characters.").default(""),
@@ -30,7 +30,7 @@ export const startIndirect = defineCommand({
   subject: (_, value: Pressed) => ({ kind: "person", id: value.personId }),
 });
 
-export const stopClockInput = z.strictObject({ ...stampInput });
+const stopClockInput = z.strictObject({ ...stampInput });
 /** Ends what runs on the bench clock; the operation stays open. */
 export const stopClock = defineCommand({
   name: "time.stopClock", act: "clock.punch", input: stopClockInput, secret: ["proof"],

@@ -16,9 +16,9 @@ import { TextInput } from "@/modules/ui/form/text-input";
 import { TextareaInput } from "@/modules/ui/form/textarea-input";
 import { useCommandForm } from "@/modules/ui/form/use-command-form";
 import { usePlace } from "@/modules/ui/place";
-import { askCorrectionAction, enterTimeAction } from "../actions";
+import { askCorrectionAction, enterTimeAction, setAsideEntryAction } from "../actions";
 import { INDIRECT_WORK } from "../domain/indirect-work";
-import { askCorrectionInput, enterTimeInput } from "../input";
+import { askCorrectionInput, enterTimeInput, setAsideInput } from "../input";
 import type { OperationChoice } from "../queries/find-operations";
 import type { SheetEntry } from "../queries/week-sheet";
 import { capital } from "../tablet/words";
@@ -75,6 +75,28 @@ function EnterForm({ entry, date, personId, people, onDone }: { entry?: SheetEnt
       <SpanFields clock={form.rhf.watch("clock") ?? "bench"} which={form.trouble !== null} fixedClock={entry !== undefined} initial={choiceOf(entry)} />
       {operationId ? <div className="mt-3"><Checkbox name="isDone" label="The operation is done with it" /></div> : null}
       <div className="dlg-act"><DialogClose>Not now</DialogClose><SubmitButton pendingText="Entering…">{entry ? "Put it right" : "Enter time"}</SubmitButton></div>
+    </CommandForm>
+  );
+}
+
+/** Takes another person's time out of the count; it stays to be seen with the reason. */
+export function SetAsideDialog({ trigger, entry }: { trigger: ReactElement; entry: SheetEntry }) {
+  const [open, setOpen] = useState(false);
+  return (
+    <TaskDialog trigger={trigger} open={open} onOpenChange={setOpen} title="Take this time out?" description="It no longer counts, for pay or for the job. It stays to be seen, with the reason.">
+      {open ? <SetAsideForm entry={entry} onDone={() => setOpen(false)} /> : null}
+    </TaskDialog>
+  );
+}
+
+function SetAsideForm({ entry, onDone }: { entry: SheetEntry; onDone: () => void }) {
+  const { slug } = usePlace();
+  const router = useRouter();
+  const form = useCommandForm({ schema: setAsideInput, guard: false, defaultValues: { id: entry.id, reason: "" }, action: (sent) => setAsideEntryAction(slug, sent), onDone: () => { onDone(); router.refresh(); } });
+  return (
+    <CommandForm form={form} label="Take the time out">
+      <TextInput className="mt-3" name="reason" label="Reason" />
+      <div className="dlg-act"><DialogClose>Keep it</DialogClose><SubmitButton pendingText="Taking out…">Take it out</SubmitButton></div>
     </CommandForm>
   );
 }

@@ -11,7 +11,7 @@ import { TextLink } from "@/modules/ui/text-link";
 import { Tube } from "@/modules/ui/tube";
 import type { SheetDay, SheetEntry, WeekSheet } from "../queries/week-sheet";
 import { capital, spell } from "../tablet/words";
-import { AskCorrectionDialog, EnterTimeDialog } from "./time-dialog";
+import { AskCorrectionDialog, EnterTimeDialog, SetAsideDialog } from "./time-dialog";
 
 const WEEK = 40 * 60;
 
@@ -49,7 +49,7 @@ export function WeekView({ sheet, people, mayEnter, today }: { today: string; sh
                 <td>{capital(e.words)}{e.isRework ? <> <Flag tone="open">Rework</Flag></> : null}{e.isReplaced ? <span className="mid"> · corrected</span> : null}{e.reason ? <span className="mid block">{e.reason}</span> : null}</td>
                 <td className="r q nw">{e.isReplaced ? <s>{spell(e.minutes)}</s> : spell(e.minutes)}</td>
                 <td className="w2 mid">{SOURCE[e.source] ?? e.source}</td>
-                <td className="r">{e.isReplaced ? null : correct(e, d.date, "Correct")}</td>
+                <td className="r">{e.isReplaced ? null : correct(e, d.date, "Correct")}{e.isReplaced || sheet.isOwn || !mayEnter || e.endedAt === null ? null : <SetAsideDialog entry={e} trigger={<Button size="sm" variant="lo">Take out</Button>} />}</td>
               </tr>
             ))}
           </tbody>

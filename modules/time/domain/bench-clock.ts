@@ -3,8 +3,7 @@ import { cureMinutesLeft } from "./cure";
 import { elapsedMinutes } from "./elapsed";
 import { type IndirectWork } from "./indirect-work";
 
-export const BENCH_PUNCHES = ["start", "switch", "stop", "done"] as const;
-export type BenchPunchKind = (typeof BENCH_PUNCHES)[number];
+export type BenchPunchKind = "start" | "switch" | "stop" | "done";
 
 /** A device clock this far ahead is believed; beyond it the punch is refused as a future time. */
 export const CLOCK_AHEAD_SECONDS_MAX = 120;
@@ -49,8 +48,7 @@ export interface BenchState {
   readonly open: OpenBenchEntry | null;
 }
 
-export const BENCH_FLAGS = ["cure overridden", "out of order", "longer than 16 h"] as const;
-export type BenchFlag = (typeof BENCH_FLAGS)[number];
+export type BenchFlag = "cure overridden" | "out of order" | "longer than 16 h";
 
 export interface BenchChange {
   readonly closed: ClosedBenchEntry | null;

@@ -1,7 +1,7 @@
 import { fixedText, ratio } from "@/modules/kernel/fraction";
 
 /** Unexplained minutes a day that are let pass (shop rule, settable). More is asked next morning, never deducted. */
-export const UNEXPLAINED_MINUTES_DEFAULT = 15;
+const UNEXPLAINED_MINUTES_DEFAULT = 15;
 
 export interface DaySummary {
   readonly doorMinutes: number;

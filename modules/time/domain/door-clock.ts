@@ -4,11 +4,9 @@ import { CLOCK_AHEAD_SECONDS_MAX } from "./bench-clock";
 export const DOOR_PUNCHES = ["in", "out", "meal out", "meal in"] as const;
 export type DoorPunchKind = (typeof DOOR_PUNCHES)[number];
 
-export const DOOR_STATES = ["out", "in", "at meal"] as const;
-export type DoorState = (typeof DOOR_STATES)[number];
+export type DoorState = "out" | "in" | "at meal";
 
-export const DOOR_FLAGS = ["in missing", "meal out missing", "meal in missing"] as const;
-export type DoorFlag = (typeof DOOR_FLAGS)[number];
+export type DoorFlag = "in missing" | "meal out missing" | "meal in missing";
 
 /**
  * What a door punch does. Work done is work time, so an early, late or incomplete punch is never refused: a missing

@@ -1,8 +1,8 @@
 import { addDays, localDate, startOfDay } from "@/modules/kernel/instant";
 
 /** An attendance may stay open so long, or so long past the midnight after it began, before it is asked about. */
-export const OPEN_HOURS_MAX = 16;
-export const PAST_MIDNIGHT_HOURS = 4;
+const OPEN_HOURS_MAX = 16;
+const PAST_MIDNIGHT_HOURS = 4;
 
 /** Whether an open attendance looks forgotten. Nothing is stopped by it; the person is asked. */
 export const isOutMissing = (since: Date, now: Date, zone: string): boolean =>

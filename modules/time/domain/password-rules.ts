@@ -1,6 +1,6 @@
 /** A password that stands alone. Source: NIST SP 800-63B-4, 3.1.1.2: at least 15 characters, every printable one allowed, no rules of composition. */
 export const PASSWORD_LENGTH_MIN = 15;
-export const PASSWORD_LENGTH_MAX = 256;
+const PASSWORD_LENGTH_MAX = 256;
 
 /** Phrases that are long enough and tried first all the same. Ours; grows with the list a shop brings. */
 const KNOWN = ["password", "passwort", "qwertyuiop", "asdfghjkl", "letmein", "iloveyou", "administrator", "1234567890", "welcome", "valvekeeper", "correcthorsebatterystaple"];

@@ -2,7 +2,7 @@
 export const PIN_DIGITS_MIN = 6;
 export const PIN_DIGITS_MAX = 8;
 /** Wrong PINs in a row before the first wait, and before the PIN is dead until a manager resets it. */
-export const PIN_TRIES_FREE = 5;
+const PIN_TRIES_FREE = 5;
 export const PIN_TRIES_MAX = 10;
 const FIRST_WAIT_SECONDS = 30;
 

@@ -1,9 +1,9 @@
 /** The tablet's clock may be this far off before a punch is flagged. */
-export const SKEW_SECONDS_MAX = 120;
+const SKEW_SECONDS_MAX = 120;
 /** A punch that arrives later than this after the tap was kept on the tablet meanwhile; up to here it is live. */
 export const LIVE_SECONDS_MAX = 15;
 /** Older than this is not taken as time without somebody looking at it. */
-export const KEPT_DAYS_MAX = 14;
+const KEPT_DAYS_MAX = 14;
 
 export interface PunchTime {
   /** The instant that counts, to the second. */

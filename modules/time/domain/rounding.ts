@@ -9,7 +9,7 @@ export type RoundingStep = (typeof ROUNDING_STEPS)[number];
  * Nearest step of whole minutes; an exact tie goes up. The same rule for in and out.
  * Source: 29 CFR 785.48(b) (5 minutes, tenth or quarter of an hour); the tie rule is ours. State law may restrict it.
  */
-export const roundMinutes = (minutes: number, step: RoundingStep): number =>
+const roundMinutes = (minutes: number, step: RoundingStep): number =>
   Math.floor((2 * minutes + step) / (2 * step)) * step;
 
 /** A punch rounded on the wall clock of its zone. 23:58 at 5 minutes is 00:00 of the next day. */

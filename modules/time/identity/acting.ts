@@ -16,7 +16,7 @@ const MS_OF_CENTURY = 100 * 366 * 86_400_000;
  * Who is pressing, beside the tablet's own token: a pass the server gave after a badge or PIN, or, made without a link,
  * a badge or PIN sealed to the server for this one act.
  */
-export const proofInput = z.discriminatedUnion("kind", [
+const proofInput = z.discriminatedUnion("kind", [
   z.strictObject({ kind: z.literal("pass"), personId: z.uuid(), pass: z.string().max(300) }),
   z.strictObject({ kind: z.literal("sealed"), personId: z.uuid(), box: z.string().max(2000) }),
 ]);

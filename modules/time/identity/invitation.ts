@@ -9,7 +9,7 @@ import { env } from "@/modules/access/env";
 import { isUuid } from "@/modules/kernel/id";
 
 /** An invitation works so long, once, and only the newest: it is bound to the person's version, which taking it changes. */
-export const INVITATION_HOURS = 72;
+const INVITATION_HOURS = 72;
 
 const sign = (body: string): string => createHmac("sha256", env().NEXTAUTH_SECRET).update(`invitation:${body}`).digest("base64url");
 

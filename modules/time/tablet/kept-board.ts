@@ -1,8 +1,7 @@
 import type { BoardJob, BoardPerson, ClockBoard } from "../board";
 import { elapsedMinutes } from "../domain/elapsed";
 
-export const TABLET_PRESSES = ["doorIn", "doorOut", "mealOut", "mealIn", "startOperation", "switchTo", "stopClock", "operationDone", "startIndirect", "sayWhenLeft"] as const;
-export type TabletPress = (typeof TABLET_PRESSES)[number];
+export type TabletPress = "doorIn" | "doorOut" | "mealOut" | "mealIn" | "startOperation" | "switchTo" | "stopClock" | "operationDone" | "startIndirect" | "sayWhenLeft";
 
 export interface KeptPress {
   readonly press: TabletPress;

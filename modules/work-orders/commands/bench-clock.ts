@@ -12,6 +12,7 @@ import { clockState, workLabel, type ClockState } from "@/modules/time/ledger/cl
 import { moveBench, moveDoor } from "@/modules/time/ledger/move-clocks";
 import { press, type Pressed } from "@/modules/time/ledger/press";
 import { writePunch } from "@/modules/time/ledger/write";
+import { reopenInput } from "../reopen-input";
 
 const reason = z.string().trim().max(500, "At most 500 characters.").default("");
 const startInput = z.strictObject({
@@ -148,8 +149,6 @@ export const operationDone = defineCommand({
   }),
   subject,
 });
-
-const reopenInput = z.strictObject({ operationId: z.uuid(), reason: z.string().trim().min(3, "Say why it is done again: the cause.").max(500, "At most 500 characters.") });
 
 /** A lead opens a finished operation again. Time on it from now on is rework: cost, never book hours earned. */
 export const reopenOperation = defineCommand({

@@ -6,7 +6,7 @@ import { ableTo, personIdOf } from "@/modules/access/context";
 import { ok, refuse } from "@/modules/kernel/result";
 import { operationStateInput } from "../input";
 
-/** Marks an operation done, opens it again, or skips it with a reason. Skipping and opening again are for the lead. */
+/** Marks an operation done, skips it with a reason, or takes the skip back. Skipping is for the lead; a finished one is opened again by `reopenOperation`, which keeps why. */
 export const markOperation = defineCommand({
   name: "operations.mark",
   act: "work.record",
@@ -21,6 +21,7 @@ export const markOperation = defineCommand({
     if (!row.bookedIn) return refuse("NOT_BOOKED_IN", "This piece is not booked in. Nothing can be done on it yet.");
     if (o.version !== input.version) return changedMeanwhile("This operation");
     if (input.to !== "done" && !ableTo(ctx, "work.override")) return refuse("LEAD_ONLY", "Only the lead or a manager skips an operation or opens it again.");
+    if (input.to !== "done" && o.doneAt) return refuse("DONE_ALREADY", "This operation is done. Open it again with a reason first: time on it is rework from then on.");
     if (input.to === "done" && o.doneAt) return refuse("DONE_ALREADY", "This operation is done already.");
     const [running] = await ctx.tx.select({ id: timeEntries.id }).from(timeEntries)
       .where(and(eq(timeEntries.shopId, ctx.shop.id), eq(timeEntries.operationId, o.id), eq(timeEntries.clock, "bench"), isNull(timeEntries.endedAt), isNull(timeEntries.voidedAt))).limit(1);

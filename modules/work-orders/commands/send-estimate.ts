@@ -20,7 +20,7 @@ import { rulesFor } from "../queries/rules";
 const LINK_DAYS_AFTER = 60;
 
 /** Everything the version prints, computed anew from the stored lines; no total ever comes from a browser. */
-export async function snapshotOf(ctx: TxContext, estimateId: string): Promise<Result<{ snapshot: EstimateSnapshot; workOrderId: string; customerId: string; customerEmail: string | null }>> {
+async function snapshotOf(ctx: TxContext, estimateId: string): Promise<Result<{ snapshot: EstimateSnapshot; workOrderId: string; customerId: string; customerEmail: string | null }>> {
   const { tx, shop } = ctx;
   const [row] = await tx.select({ e: estimates, o: workOrders, c: customers }).from(estimates)
     .innerJoin(workOrders, and(eq(workOrders.shopId, estimates.shopId), eq(workOrders.id, estimates.workOrderId)))

@@ -3,8 +3,7 @@ import { money, type Place } from "@/modules/kernel/format";
 import type { DocumentRules } from "./document-rules";
 import { ROAD_CAUTION } from "./uses";
 
-export const ESTIMATE_STATES = ["draft", "sent", "replaced", "approved", "declined"] as const;
-export type EstimateState = (typeof ESTIMATE_STATES)[number];
+export type EstimateState = "draft" | "sent" | "replaced" | "approved" | "declined";
 
 /** Words of a state as people read them. `expired` is not stored: it is a sent version past its day. */
 export const ESTIMATE_STATE_WORDS: Record<EstimateState | "expired", string> = {

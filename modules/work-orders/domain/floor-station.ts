@@ -38,8 +38,7 @@ export const STATION_OF_OPERATION = {
   INS: "Assembly",
 } as const satisfies Record<OperationCode, Station>;
 
-export const OPERATION_STATES = ["open", "running", "done", "skipped"] as const;
-export type OperationState = (typeof OPERATION_STATES)[number];
+export type OperationState = "open" | "running" | "done" | "skipped";
 
 export interface RoutedOperation {
   /** Order on the piece, ascending. */

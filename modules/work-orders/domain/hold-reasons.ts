@@ -1,6 +1,3 @@
 /** Why work on a piece stands still. */
 export const HOLD_REASONS = ["customer answer", "parts", "outside service", "machine", "payment", "quality", "safety"] as const;
 export type HoldReason = (typeof HOLD_REASONS)[number];
-
-/** Only these stop the promise: the wait is on the customer's side. */
-export const STOPS_THE_PROMISE: readonly HoldReason[] = ["customer answer", "payment"];

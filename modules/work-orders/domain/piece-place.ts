@@ -20,7 +20,7 @@ export const PIECE_PLACES = [
 export type PiecePlace = (typeof PIECE_PLACES)[number];
 
 /** Days after ready at which the last reminder has gone out and the piece counts as left behind (shop rule). */
-export const LEFT_BEHIND_DAYS = 60;
+const LEFT_BEHIND_DAYS = 60;
 
 /** What has happened to one piece. Dates are kept elsewhere; here only whether it is so. */
 export interface PieceFacts {

@@ -90,9 +90,3 @@ export async function openOperations(ctx: TxContext, only: { personSkills?: read
     };
   });
 }
-
-/** Open operations for a person at the desk: their skills first if they have any set. */
-export async function benchList(ctx: ShopContext, skills: readonly string[] = []): Promise<BoardJob[]> {
-  mustBeAble(ctx, "clock.use");
-  return inShop(ctx, (tx) => openOperations({ ...ctx, tx }, skills.length ? { personSkills: skills } : {}));
-}

@@ -91,11 +91,3 @@ export async function versionsOf(ctx: ShopContext, workOrderId: string): Promise
     });
   });
 }
-
-/** A sent version as frozen, for its paper on the screen and in print. @throws NotFound for a draft */
-export async function sentEstimate(ctx: ShopContext, estimateId: string): Promise<{ snapshot: EstimateSnapshot; sentAt: Date; workOrderId: string }> {
-  mustBeAble(ctx, "prices.see");
-  const [row] = await inShop(ctx, (tx) => tx.select().from(estimates).where(and(eq(estimates.shopId, ctx.shop.id), eq(estimates.id, estimateId))));
-  if (!row?.snapshot || !row.sentAt) throw new NotFound("estimate");
-  return { snapshot: row.snapshot as EstimateSnapshot, sentAt: row.sentAt, workOrderId: row.workOrderId };
-}

@@ -4,6 +4,7 @@ import { FlowCheck } from "@/modules/flow/components/flow-check";
 import { OrderMoney } from "@/modules/invoices/components/order-money";
 import { StartInvoice } from "@/modules/invoices/components/ready-table";
 import { date } from "@/modules/kernel/format";
+import { JobProfitBay } from "@/modules/reports/components/job-profit-bay";
 import { Bays } from "@/modules/ui/bay";
 import { LinkButton } from "@/modules/ui/button";
 import { Note } from "@/modules/ui/note";
@@ -42,7 +43,7 @@ export default async function OrderPage({ params }: { params: Promise<{ shop: st
     <main id="main" className="page">
       <PageHead
         number={shortNumber(order.number)} numberLabel={`Order ${order.number},`} title={order.customer.name}
-        sub={<>{[[...new Set(order.pieces.map((p) => p.family))].join(", "), order.wants.split("\n")[0], `${USE_WORDS[order.use as Use] ?? order.use} use`, order.customerReference && `ref ${order.customerReference}`].filter(Boolean).join(". ")}.{order.customer.phone ? <> <a className="lk" href={`tel:${order.customer.phone}`}>{order.customer.phone}</a></> : null} {order.may.edit && isOpen ? <EditOrderDialog order={order} /> : null}</>}
+        sub={<>{[[...new Set(order.pieces.map((p) => p.family))].join(", "), order.wants.split("\n")[0]?.replace(/[.\s]+$/, ""), `${USE_WORDS[order.use as Use] ?? order.use} use`, order.customerReference && `ref ${order.customerReference}`].filter(Boolean).join(". ")}.{order.customer.phone ? <> <a className="lk" href={`tel:${order.customer.phone}`}>{order.customer.phone}</a></> : null} {order.may.edit && isOpen ? <EditOrderDialog order={order} /> : null}</>}
         actions={<>
           <LinkButton icon="print" href={`${at}/traveler`} newTab>Traveler</LinkButton>
           {first?.tag ? <LinkButton icon="tube" href={`/s/${slug}/flow?tag=${first.tag}`}>Flow sheet</LinkButton> : null}
@@ -68,6 +69,7 @@ export default async function OrderPage({ params }: { params: Promise<{ shop: st
         </Bays>
         <Bays>
           <OrderMoney ctx={ctx} workOrderId={order.id} />
+          <JobProfitBay ctx={ctx} workOrderId={order.id} />
           <HeadsBay number={order.number} orderId={order.id} pieces={order.pieces} isOpen={isOpen} may={order.may} />
           <PromisesBay order={order} place={ctx.shop} />
           <TimelineBay order={order} place={ctx.shop} />
