@@ -1,5 +1,5 @@
 /** What PostgreSQL said, without its words: SQLSTATE and the constraint, found through the driver's wrapping. */
-export function databaseFault(error: unknown): { state: string; constraint: string } | null {
+function databaseFault(error: unknown): { state: string; constraint: string } | null {
   let e: unknown = error;
   for (let depth = 0; depth < 4 && e instanceof Error; depth++) {
     const { code, constraint } = e as { code?: unknown; constraint?: unknown };

@@ -56,10 +56,14 @@ async function types() {
 
 const lint = () => execute([bin("eslint/bin/eslint.js"), "--max-warnings=0", "."], { captured: true });
 
-/** Types and lint use one core each: side by side, shown one after the other. */
+/** Files, exports and packages that nothing uses. */
+const deadCode = () => execute([bin("knip/bin/knip.js")], { captured: true });
+
+/** Types and lint use one core each: side by side, shown one after the other; dead code is looked for behind the types. */
 async function checkSources(parts) {
   const start = Date.now();
   const jobs = [["types", "Types", types], ["lint", "Lint", lint]].filter(([part]) => parts.has(part)).map(([, name, work]) => [name, work()]);
+  if (jobs[0]?.[0] === "Types") jobs.splice(1, 0, ["Dead code", jobs[0][1].then(deadCode)]);
   for (const [name, work] of jobs) {
     heading(name);
     const { ok, text } = await work;

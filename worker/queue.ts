@@ -10,7 +10,7 @@ export type Handler = (ctx: ShopContext, payload: Record<string, unknown>) => Pr
 
 const LEASE_SECONDS = 60;
 /** After so many tries a job is parked with its reason, for a person to look at. */
-export const TRIES_MAX = 8;
+const TRIES_MAX = 8;
 
 /**
  * Leases the next ready job. Of the shops that wait, the one whose turn is longest ago comes first, so that one shop's

@@ -1,4 +1,4 @@
-import { bigint, customType, date, text, timestamp, uuid } from "drizzle-orm/pg-core";
+import { bigint, customType, date, timestamp, uuid } from "drizzle-orm/pg-core";
 
 /** An instant, UTC inside; the shop's zone stands beside it where it is shown. */
 export const instant = (name: string) => timestamp(name, { withTimezone: true, mode: "date" });
@@ -13,5 +13,4 @@ export const id = () => uuid("id").notNull();
 export const createdAt = () => instant("created_at").notNull().defaultNow();
 /** Counts accepted edits; a stale one is refused. */
 export const version = () => bigint("version", { mode: "number" }).notNull().default(1);
-export const words = (name: string) => text(name);
 export const timeRange = customType<{ data: string }>({ dataType: () => "tstzrange" });

@@ -13,7 +13,7 @@ export const ACTION_MARK = Symbol.for("valvekeeper.action");
 export interface Sent { requestId: string; input: unknown }
 
 /** A result as the browser gets it. */
-export function replyOf<T>(result: Result<T>): Reply<T> {
+function replyOf<T>(result: Result<T>): Reply<T> {
   if (result.ok) return { status: "ok", value: result.value };
   const { code, message, field, fields, data } = result.refusal;
   if (fields) return { status: "invalid", fields: [...fields] };

@@ -70,5 +70,5 @@ export function authOptions(): NextAuthOptions {
   };
 }
 
-export const endSession = (id: string): Promise<unknown> =>
+const endSession = (id: string): Promise<unknown> =>
   withSystem("sign out", (tx) => tx.update(sessions).set({ revokedAt: new Date() }).where(eq(sessions.id, id)));

@@ -4,17 +4,17 @@ import { devices, shops } from "@/db/schema";
 import { withSecret } from "@/db/scope";
 import { now } from "./clock";
 import type { ShopContext } from "./context";
+import { isDeviceKind, type DeviceKind } from "./device-kinds";
 import type { Act } from "./roles";
 import { hashToken } from "./secret-token";
 
 /** What an enrolled thing may do by itself; a person's acts on it need that person's badge or PIN. */
-const ACTS: Record<string, readonly Act[]> = {
+const ACTS: Record<DeviceKind, readonly Act[]> = {
   clock: ["clock.use", "clock.punch"],
   bench: ["flow.record", "flow.see"],
 };
-export const DEVICE_KINDS = ["clock", "bench"] as const;
 /** Put out of use, a clock may still hand over the times it kept; they are looked at before they count. */
-const ACTS_REVOKED: Record<string, readonly Act[]> = { clock: ["clock.punch"] };
+const ACTS_REVOKED: Partial<Record<DeviceKind, readonly Act[]>> = { clock: ["clock.punch"] };
 /** Where a tablet's token lives: out of reach of scripts, of this site only. */
 export const DEVICE_COOKIE = "__Host-vk-device";
 
@@ -38,7 +38,7 @@ export async function deviceContext(token: string, slug?: string, options: { rev
   const { createdAt: _, ...shop } = found.shop;
   return {
     shop,
-    actor: { kind: "device", id: found.device.id, name: found.device.name, acts: (revokedAt ? ACTS_REVOKED : ACTS)[kind] ?? [] },
+    actor: { kind: "device", id: found.device.id, name: found.device.name, acts: isDeviceKind(kind) ? ((revokedAt ? ACTS_REVOKED : ACTS)[kind] ?? []) : [] },
     now: now(),
     request: { ip: "", agent: "" },
   };

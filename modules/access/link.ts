@@ -10,8 +10,7 @@ import { allowed } from "./rate-limit";
 import { hashToken, linkToken } from "./secret-token";
 import { requestFacts } from "./session";
 
-export const LINK_PURPOSES = ["estimate", "invoice", "gain"] as const;
-export type LinkPurpose = (typeof LINK_PURPOSES)[number];
+export type LinkPurpose = "estimate" | "invoice" | "gain";
 
 export interface CustomerLink {
   readonly ctx: ShopContext;

@@ -65,7 +65,6 @@ const MATRIX = {
 } as const satisfies Record<string, readonly Role[]>;
 
 export type Act = keyof typeof MATRIX;
-export const ACTS = Object.keys(MATRIX) as Act[];
 
 export type Actor =
   | { readonly kind: "person"; readonly id: string; readonly name: string; readonly roles: readonly Role[]; readonly sessionId: string | null }

@@ -20,7 +20,7 @@ const SHEETS = { LETTER: { width: 612, height: 792 }, A4: { width: 595.28, heigh
 export type SheetName = keyof typeof SHEETS;
 
 /** Letter where it is at home (United States, Canada, Mexico), A4 elsewhere. Source: ANSI/ASME Y14.1, ISO 216. */
-export const sheetFor = (locale: string): SheetName => (/-(US|CA|MX)$/i.test(locale) ? "LETTER" : "A4");
+const sheetFor = (locale: string): SheetName => (/-(US|CA|MX)$/i.test(locale) ? "LETTER" : "A4");
 /** Width between the margins. */
 export const paperWidth = (locale: string): number => SHEETS[sheetFor(locale)].width - 2 * PAPER.side;
 
@@ -40,7 +40,7 @@ export const bigNumber = (text: string, fontSize: number, more: Partial<ContentT
 });
 
 /** The mark: two split keepers on a grooved stem, `width` points wide. */
-export function markCanvas(width: number): CanvasElement[] {
+function markCanvas(width: number): CanvasElement[] {
   const k = width / 34;
   const at = (points: readonly (readonly [number, number])[]) => points.map(([x, y]) => ({ x: x * k, y: y * k }));
   const left = [[0.4, 6], [1.4, 5.5], [12, 5.5], [12.7, 6.3], [12.7, 10.6], [14.2, 12.2], [14.2, 14.8], [12.7, 16.4], [12.7, 33.5], [10.5, 33.5], [8.6, 32.2]] as const;
@@ -66,7 +66,7 @@ export function ruler(width: number, tick = 4.6): Content {
   return { canvas: [...ticks, { type: "line", x1: 0, y1: tick, x2: width, y2: tick, lineWidth: 0.9, lineColor: PAPER_INK.ink }] };
 }
 
-export const rule = (width: number, color: string = PAPER_INK.ink, lineWidth = 0.9): Content =>
+const rule = (width: number, color: string = PAPER_INK.ink, lineWidth = 0.9): Content =>
   ({ canvas: [{ type: "line", x1: 0, y1: 0, x2: width, y2: 0, lineWidth, lineColor: color }] });
 
 /** Shop at the left, kind and number of the paper at the right, ruler under both. */

@@ -83,6 +83,3 @@ export const daysBetween = (a: string, b: string): number => dayjs.utc(b).diff(d
 
 /** Day of week of a business date, 0 = Sunday. */
 export const weekday = (date: string): number => dayjs.utc(date).day();
-
-/** Elapsed whole seconds; absolute time, so a clock change neither adds nor takes any. */
-export const elapsedSeconds = (from: Date, to: Date): number => Math.round((to.getTime() - from.getTime()) / 1000);

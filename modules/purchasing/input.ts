@@ -37,7 +37,7 @@ const cameText = line(16).transform((s, issue) => {
   if (q === null || q < 0) { issue.addIssue({ code: "custom", message: "A quantity such as 6, or empty when none came." }); return z.NEVER; }
   return q;
 });
-export const OVER_CHOICES = ["keep", "return", "refuse"] as const;
+const OVER_CHOICES = ["keep", "return", "refuse"] as const;
 export const receiveInput = z.strictObject({
   purchaseOrderId: z.uuid(), freight: optionalAmountText.default(""), deliveryNote: line(120).default(""),
   lines: z.array(z.strictObject({

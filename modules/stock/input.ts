@@ -14,7 +14,7 @@ export const qtyText = line(16).transform((s, issue) => {
   return q;
 });
 /** Quantity of 0 or more; empty is null. */
-export const levelText = line(16).transform((s, issue) => {
+const levelText = line(16).transform((s, issue) => {
   if (s === "") return null;
   const q = parseMilli(s);
   if (q === null || q < 0) { issue.addIssue({ code: "custom", message: "A quantity of 0 or more, or leave it empty." }); return z.NEVER; }

@@ -1,5 +1,5 @@
 /** What the HTTP API said when it said no. */
-export class ApiProblem extends Error {
+class ApiProblem extends Error {
   override readonly name = "ApiProblem";
   constructor(readonly status: number, title: string, readonly code: string | undefined, readonly reference: string | undefined) { super(title); }
 }

@@ -22,7 +22,7 @@ export function SkeletonRows({ rows = 5, label }: { rows?: number; label: string
 }
 
 /** One still shape of a given size, e.g. `<Skeleton width="100%" height={240} />`. */
-export const Skeleton = ({ width = "100%", height = 14 }: { width?: number | string; height?: number | string }) => (
+const Skeleton = ({ width = "100%", height = 14 }: { width?: number | string; height?: number | string }) => (
   <span className="sk" style={{ width, height }} aria-hidden="true" />
 );
 

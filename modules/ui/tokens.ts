@@ -82,7 +82,7 @@ export const lightShadow = {
   float: "0 1px 0 rgb(16 23 21/.2),0 14px 34px -10px rgb(16 23 21/.38)",
 } as const;
 
-export const darkShadow = {
+const darkShadow = {
   engrave: "0 -1px 0 rgb(0 0 0/.7)",
   sunk: "inset 0 1px 3px rgb(0 0 0/.6)",
   float: "0 0 0 1px #33413D,0 18px 44px rgb(0 0 0/.7)",
@@ -104,27 +104,27 @@ export const typeScale = {
 } as const;
 
 /** Numerals stand narrow, like a dial face; table figures a little wider. */
-export const stretch = { num: "75%", table: "88%" } as const;
+const stretch = { num: "75%", table: "88%" } as const;
 
 /** 4 px pitch, px. `gutter`, `row` and `ctl` change with the screen; see `touchSize` and `phoneSize`. */
-export const space = { 1: 4, 2: 8, 3: 12, 4: 16, 5: 24, 6: 32, 7: 48, 8: 64 } as const;
+const space = { 1: 4, 2: 8, 3: 12, 4: 16, 5: 24, 6: 32, 7: 48, 8: 64 } as const;
 
 export const size = { row: "38px", ctl: "40px", touch: "64px", gutter: "24px" } as const;
 /** Any coarse pointer. */
-export const touchSize = { row: "48px", ctl: "48px" } as const;
+const touchSize = { row: "48px", ctl: "48px" } as const;
 /** Below 900 px. */
-export const phoneSize = { gutter: "16px" } as const;
+const phoneSize = { gutter: "16px" } as const;
 
 /** Control, bay, sheet. */
 export const radius = { 1: "3px", 2: "5px", 3: "10px" } as const;
-export const rule = { hair: "1px", rule: "1.5px", heavy: "2.5px" } as const;
+const rule = { hair: "1px", rule: "1.5px", heavy: "2.5px" } as const;
 
 /** Press, move, one filling of a tube. All 0 when less motion is asked for. */
 export const motion = { tap: "80ms", move: "160ms", fill: "420ms" } as const;
 export const ease = "cubic-bezier(.2,.7,.2,1)";
 
 /** A fluid gap inside an ink ring: seen on panel, plate, well, key and on fluid itself. */
-export const ring = "0 0 0 2px var(--fluid),0 0 0 4.5px var(--ink)";
+const ring = "0 0 0 2px var(--fluid),0 0 0 4.5px var(--ink)";
 
 export const screens = { phoneMax: 899, tabletMax: 1279 } as const;
 

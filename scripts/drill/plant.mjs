@@ -9,7 +9,7 @@ import path from "node:path";
 import { PROJECT } from "../environment.mjs";
 import { heading, Problem, say } from "../say.mjs";
 
-export const PLANTS = {
+const PLANTS = {
   "answer-before-commit": {
     says: "the answer goes out while the transaction is still open",
     edits: [["db/scope.ts", `  return database().transaction(async (tx) => {

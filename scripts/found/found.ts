@@ -20,7 +20,7 @@ const isLocale = (locale: string): boolean => {
   }
 };
 
-export const newShopInput = z.strictObject({
+const newShopInput = z.strictObject({
   slug: z.string().regex(/^[a-z0-9](?:[a-z0-9-]{1,38}[a-z0-9])$/, "--slug: lower-case letters, digits and dashes, 3 to 40 of them, such as ninebark."),
   name: z.string().trim().min(2, "--name: the name on papers.").max(80),
   zone: z.string().refine(isZone, "--zone: a time zone such as America/Denver."),

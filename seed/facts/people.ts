@@ -1,7 +1,7 @@
 import { Faker, en } from "@faker-js/faker";
 
 /** Names that the demo does not give itself, from a fixed seed: the same shop every time. */
-export function demoNames(seed = 20260217): Faker {
+function demoNames(seed = 20260217): Faker {
   const faker = new Faker({ locale: [en] });
   faker.seed(seed);
   return faker;

@@ -38,7 +38,7 @@ export function offerLines(parts: Readonly<Record<string, string>>, labor: reado
 }
 
 /** Both sides of a port at the bench. */
-export async function bothSides(cast: Cast, s: HeroScene, at: string, tag: string, purpose: "baseline" | "after", seatNote: string): Promise<void> {
+async function bothSides(cast: Cast, s: HeroScene, at: string, tag: string, purpose: "baseline" | "after", seatNote: string): Promise<void> {
   for (const side of ["intake", "exhaust"] as const) {
     must(await postWholeTest(cast.as("June", at), {
       tag, side, purpose, benchId: s.benchId, fixtureId: s.fixtureId, nominal: "28", camLift: HERO_CAM_LIFT_IN, seatNote, complete: true,

@@ -14,7 +14,7 @@ import { offerLines } from "./hero";
 import { answer, bill, bookIn, offer, paidByCard, versionOf } from "./orders";
 
 /** How far a demo job has come. */
-export const REACHED = ["asked", "sent", "agreed", "booked in", "in work", "released", "invoiced", "paid", "gone"] as const;
+const REACHED = ["asked", "sent", "agreed", "booked in", "in work", "released", "invoiced", "paid", "gone"] as const;
 export type Reached = (typeof REACHED)[number];
 
 /** Who does what in the demo, by operation. */

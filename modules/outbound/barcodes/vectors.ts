@@ -13,8 +13,8 @@ export interface Rect {
 const rect = (x: number, y: number, w: number, h: number, color: string): Rect => ({ type: "rect", x, y, w, h, color });
 
 /** Quiet zone of a QR code in modules (ISO/IEC 18004) and of Code 128 (ISO/IEC 15417). */
-export const QR_QUIET = 4;
-export const CODE128_QUIET = 10;
+const QR_QUIET = 4;
+const CODE128_QUIET = 10;
 
 /**
  * A QR code as rectangles, `sidePt` wide with its quiet zone. Runs of dark modules in a row become one

@@ -1,7 +1,6 @@
 import Papa from "papaparse";
 
-export const DELIMITERS = ["auto", ",", ";", "\t"] as const;
-export type Delimiter = (typeof DELIMITERS)[number];
+export type Delimiter = "auto" | "," | ";" | "\t";
 
 /** A text of separated values as rows of cells, blanks around cells taken off, empty lines left out. Quoting as in RFC 4180. */
 export function readCsv(text: string, delimiter: Delimiter = "auto"): { rows: string[][]; delimiter: string } {

@@ -21,7 +21,7 @@ export interface Photo {
 /** Largest upload, bytes: a 48-megapixel phone photo is about 15 MB. */
 export const PHOTO_BYTES_MAX = 25 * 1024 * 1024;
 /** Most pixels decoded, so that a small file can't unfold into all of the memory. */
-export const PHOTO_PIXELS_MAX = 60_000_000;
+const PHOTO_PIXELS_MAX = 60_000_000;
 const FULL_EDGE_PX = 2400;
 const THUMBNAIL_EDGE_PX = 480;
 

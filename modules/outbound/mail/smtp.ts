@@ -13,7 +13,7 @@ export interface SmtpConfig {
 }
 
 /** Most bytes of attachments in one message. Many servers refuse more than 20 MB of encoded message. */
-export const ATTACHMENT_BYTES_MAX = 10 * 1024 * 1024;
+const ATTACHMENT_BYTES_MAX = 10 * 1024 * 1024;
 
 const MESSAGE_ID = /^<[A-Za-z0-9!#$%&'*+/=?^_`{|}~.-]{1,128}@[A-Za-z0-9.-]{1,120}>$/;
 

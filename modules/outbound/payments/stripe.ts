@@ -14,7 +14,7 @@ export interface StripeConfig {
 }
 
 /** The version the library was written for, so that an account's own setting can't change the answers' shape. */
-export const API_VERSION = "2026-10-28.endive";
+const API_VERSION = "2026-10-28.endive";
 
 /** Most objects read of one list; far above what a shop makes in the spans we ask for. */
 const LIST_MAX = 10_000;
@@ -22,7 +22,7 @@ const LIST_MAX = 10_000;
 const unixSeconds = (instant: Date): number => Math.floor(instant.getTime() / 1000);
 
 /** Any error of the library, as ours. */
-export function paymentFailure(error: unknown): PaymentFailure {
+function paymentFailure(error: unknown): PaymentFailure {
   if (error instanceof PaymentFailure) return error;
   const more = { cause: error };
   if (!(error instanceof Stripe.errors.StripeError)) {

@@ -8,7 +8,7 @@ const INLINE = /^data:image\/(?:png|jpeg);base64,[A-Za-z0-9+/=]+$/;
  * behind this; it exists because vector files have been a way around such policies before.
  * @throws Error that names the place
  */
-export function checkDefinition(node: unknown, images: ReadonlySet<string>, at = "document"): void {
+function checkDefinition(node: unknown, images: ReadonlySet<string>, at = "document"): void {
   if (Array.isArray(node)) {
     node.forEach((child, i) => checkDefinition(child, images, `${at}.${i}`));
     return;

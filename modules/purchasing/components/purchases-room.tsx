@@ -19,7 +19,7 @@ import type { OrderRow } from "../queries/orders";
 interface Page { rows: OrderRow[]; next: string | null; counts: Record<OrderView, number> }
 const VIEWS: readonly [OrderView, string][] = [["open", "Open"], ["drafts", "Not sent"], ["in", "Taken in"], ["all", "All"]];
 
-export function OrderState({ order, today, locale }: { order: OrderRow; today: string; locale: string }) {
+function OrderState({ order, today, locale }: { order: OrderRow; today: string; locale: string }) {
   switch (order.state) {
     case "draft": return <Status dial="draft">Not sent</Status>;
     case "cancelled": return <Status dial="out" dim>Cancelled</Status>;

@@ -9,8 +9,7 @@ export interface LotOnHand {
   readonly isRecalled?: boolean;
 }
 
-export const LOT_BLOCKS = ["expired", "too few days left", "recalled"] as const;
-export type LotBlock = (typeof LOT_BLOCKS)[number];
+export type LotBlock = "expired" | "too few days left" | "recalled";
 
 export interface LotPicks {
   readonly picks: readonly { readonly lot: string; readonly qtyMilli: Milli }[];

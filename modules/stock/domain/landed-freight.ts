@@ -2,8 +2,7 @@ import { allocate, minor, type Minor } from "@/modules/kernel/money";
 import { type Milli } from "@/modules/kernel/quantity";
 
 /** How inbound freight is spread over the lines of a receipt. By value unless the shop says otherwise. */
-export const FREIGHT_BASES = ["value", "weight", "quantity"] as const;
-export type FreightBasis = (typeof FREIGHT_BASES)[number];
+export type FreightBasis = "value" | "weight" | "quantity";
 
 export interface ReceiptLine {
   readonly valueMinor: Minor;

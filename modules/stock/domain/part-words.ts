@@ -20,10 +20,7 @@ export const HAZARDS = ["", "contains beryllium copper", "titanium", "epoxy resi
 
 export const POSITIONS = ["", "intake", "exhaust"] as const;
 
-export const MOVEMENT_KINDS = [
-  "opening", "receipt", "receipt reversal", "issue", "return from job", "return to supplier", "count difference", "scrap", "reversal",
-] as const;
-export type MovementKind = (typeof MOVEMENT_KINDS)[number];
+export type MovementKind = "opening" | "receipt" | "receipt reversal" | "issue" | "return from job" | "return to supplier" | "count difference" | "scrap" | "reversal";
 
 const WORDS = {
   opening: "Opening stock", receipt: "Taken in", "receipt reversal": "Take-in reversed", issue: "Issued", "return from job": "Back from the job",

@@ -4,9 +4,9 @@ import { ok, refuse, type Result } from "@/modules/kernel/result";
 import { ceilingOfSum, rootOf } from "./exact-root";
 
 /** z of a normal distribution for a 95 % service level, as printed in the textbooks. */
-export const Z_95 = "1.65";
+const Z_95 = "1.65";
 /** Below this many issues a year a formula says nothing; levels are then set by hand (shop rule). */
-export const ISSUES_PER_YEAR_MIN = 8;
+const ISSUES_PER_YEAR_MIN = 8;
 
 const one = fraction("1");
 const positive = (text: string): Fraction | null => {

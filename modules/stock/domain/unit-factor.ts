@@ -11,7 +11,7 @@ export interface UnitFactor {
 }
 
 /** Refuses `FACTOR_MISSING`: a part without a factor above 0 cannot be purchased. */
-export function checkFactor(factor: UnitFactor | null): Result<UnitFactor> {
+function checkFactor(factor: UnitFactor | null): Result<UnitFactor> {
   return factor && Number.isSafeInteger(factor.num) && Number.isSafeInteger(factor.den) && factor.num > 0 && factor.den > 0
     ? ok(factor)
     : refuse("FACTOR_MISSING", "Say how many stock units are in one purchase unit: a whole number or fraction above 0.", { field: "factor" });

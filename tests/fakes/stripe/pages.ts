@@ -7,7 +7,7 @@ const frame = (title: string, main: string) =>
   layout({ title, name: "Local test payment provider", what: "A stand-in on this machine. No money moves; never type a real card.", main });
 
 /** `1910.33 USD`. Currencies without or with three decimals follow ISO 4217. */
-export function amountText(minor: number, currency: string): string {
+function amountText(minor: number, currency: string): string {
   const code = currency.toUpperCase();
   const decimals = /^(BIF|CLP|DJF|GNF|JPY|KMF|KRW|MGA|PYG|RWF|VND|VUV|XAF|XOF|XPF)$/.test(code) ? 0 : /^(BHD|JOD|KWD|OMR|TND)$/.test(code) ? 3 : 2;
   const sign = minor < 0 ? "-" : "";

@@ -30,7 +30,7 @@ export interface PaymentsStandIn {
 }
 
 /** The version that the SDK of this project speaks. */
-export const API_VERSION = "2026-10-28.endive";
+const API_VERSION = "2026-10-28.endive";
 
 const DEFAULT_FEE: Fee = { basisPoints: 270, fixedMinor: 25 };
 
