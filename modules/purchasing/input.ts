@@ -1,6 +1,6 @@
 import { emailText, phoneText } from "@/modules/customers/input";
 import { TERMS } from "@/modules/customers/domain/terms";
-import { amountText, dateText, lotText, optionalAmountText, qtyText } from "@/modules/stock/input";
+import { dateText, lotText, optionalAmountText, qtyText } from "@/modules/stock/input";
 import { parseMilli } from "@/modules/kernel/quantity";
 import { z } from "@/modules/kernel/zod";
 
@@ -17,15 +17,14 @@ export const supplierEditInput = supplierInput.extend({ id: z.uuid(), version: z
 const orderLine = z.strictObject({
   /** Empty for a line that is new. */
   id: z.union([z.uuid(), z.literal("")]).default(""),
-  partId: z.uuid("Choose a part."), supplierNumber: line(60).default(""), qty: qtyText, price: amountText,
+  partId: z.uuid("Choose a part."), supplierNumber: line(60).default(""), qty: qtyText,
+  /** Empty: the price that stands on the line, for a new line the last one paid. */
+  price: optionalAmountText.default(""),
   /** Bought for this work order; empty for the shelf. */
   workOrderId: z.union([z.uuid(), z.literal("")]).default(""),
 });
 const orderFields = { neededBy: dateText.default(""), notes: words(1000).default(""), lines: z.array(orderLine).max(100, "At most 100 lines an order.") };
-export const draftInput = z.strictObject({
-  supplierId: z.uuid("Choose a supplier."), ...orderFields,
-  lines: z.array(orderLine.extend({ price: optionalAmountText.default("") })).max(100, "At most 100 lines an order.").default([]),
-});
+export const draftInput = z.strictObject({ supplierId: z.uuid("Choose a supplier."), ...orderFields, lines: orderFields.lines.default([]) });
 export const changeOrderInput = z.strictObject({ id: z.uuid(), version: z.number().int(), ...orderFields });
 export const sendInput = z.strictObject({ id: z.uuid(), version: z.number().int(), by: z.enum(["mail", "hand"]).default("mail"), expectedOn: dateText.default("") });
 export const expectInput = z.strictObject({ id: z.uuid(), version: z.number().int(), expectedOn: dateText.refine((s) => s !== "", "Type the date the supplier gave.") });

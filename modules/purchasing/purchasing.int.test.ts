@@ -62,11 +62,11 @@ describe("the purchase order of the hero job", () => {
     const paper = { purchaseOrderId: poId, revision: 1, mail: true };
     await makeOrderPaper(a.system(), paper);
     await makeOrderPaper(a.system(), paper);
-    const order = await getOrder(a.as("counter"), number);
+    const order = await getOrder(a.as("book"), number);
     expect(order).toMatchObject({ state: "sent", expectedOn: "2026-03-03", revision: 1, partsMinor: 21_000 });
     expect(order.mail.map((m) => [m.to, m.state])).toEqual([["orders@greywater.example", "queued"]]);
     expect(await behindTheCurtain(`select cardinality(attachment_file_ids) from mail_messages where subject_id = '${poId}'`)).toEqual(["1"]);
-    expect(Buffer.from((await orderPdf(a.as("counter"), poId)).bytes.slice(0, 5)).toString()).toBe("%PDF-");
+    expect(Buffer.from((await orderPdf(a.as("book"), poId)).bytes.slice(0, 5)).toString()).toBe("%PDF-");
   });
 
   it("goes out again as revision 2 when it changes, and not from a stale page", async () => {
@@ -79,6 +79,14 @@ describe("the purchase order of the hero job", () => {
     await makeOrderPaper(a.system(), { purchaseOrderId: poId, revision: 2, mail: true });
     expect((await getOrder(a.as("counter"), number)).mail).toHaveLength(2);
     must(await expectPurchaseOrder(a.as("counter"), { id: poId, version: changed.version, expectedOn: "2026-03-03" }));
+  });
+
+  it("keeps the prices that stand when somebody who does not see them changes the lines", async () => {
+    const order = await getOrder(a.as("counter"), number);
+    const lines = order.lines.map((l) => ({ id: l.id, partId: l.partId, supplierNumber: l.supplierNumber, qty: String(l.qtyMilli / 1000), price: "", workOrderId: l.workOrderId ?? "" }));
+    expect(await changePurchaseOrder(a.as("book"), { id: poId, version: order.version, lines })).toMatchObject({ ok: false, refusal: { code: "PRICE_MISSING", field: "lines.0.price" } });
+    must(await changePurchaseOrder(a.as("counter"), { id: poId, version: order.version, notes: order.notes, lines }));
+    expect((await getOrder(a.as("book"), number)).lines.map((l) => l.unitPriceMinor)).toEqual([2200, 780]);
   });
 
   it("comes in with its freight shared by value: 9.43 and 5.57, valves 141.43, guides 128.57 for sixteen", async () => {
@@ -100,10 +108,19 @@ describe("the purchase order of the hero job", () => {
     expect((await partsOf(a.as("tech", at), later.workOrderId))[0]).toMatchObject({ reservedMilli: 4000, shortMilli: 2000, state: "partly" });
   });
 
-  it("hides its prices from receiving, and itself from the technician and the other shop", async () => {
+  it("hides its prices from who may not see cost, and itself from the technician and the other shop", async () => {
+    const figures = async (who: string) => {
+      const o = await getOrder(a.as(who), number);
+      const [row] = (await findOrders(a.as(who), asks(number))).rows;
+      return [o.partsMinor, o.freightMinor, o.lines[0]?.unitPriceMinor, o.lines[0]?.valueMinor, o.receipts[0]?.freightMinor, o.receipts[0]?.lines[0]?.landedMinor, o.pdfFileId, row?.totalMinor];
+    };
+    for (const who of ["rcv", "counter", "lead"]) {
+      expect(await figures(who)).toEqual([null, null, null, null, null, null, null, null]);
+      await expect(orderPdf(a.as(who), poId)).rejects.toThrow(NotFound);
+      expect((await suggestionsFor(a.as(who))).flatMap((g) => g.rows).every((r) => r.lastPriceMinor === null)).toBe(true);
+    }
+    for (const who of ["book", "mgr", "owner"]) expect((await figures(who)).every((f) => f !== null)).toBe(true);
     const seen = await getOrder(a.as("rcv"), number);
-    expect([seen.partsMinor, seen.freightMinor, seen.lines[0]?.unitPriceMinor, seen.receipts[0]?.lines[0]?.landedMinor, seen.pdfFileId]).toEqual([null, null, null, null, null]);
-    await expect(orderPdf(a.as("rcv"), poId)).rejects.toThrow(NotFound);
     await expect(getOrder(a.as("tech"), number)).rejects.toThrow(NotFound);
     await expect(getOrder(b.as("owner"), number)).rejects.toThrow(NotFound);
     await expect(getOrder(b.as("owner"), poId)).rejects.toThrow(NotFound);

@@ -3,7 +3,7 @@ import { randomUUID } from "node:crypto";
 import { and, asc, eq, inArray, isNull, sql } from "drizzle-orm";
 import { parts, purchaseOrderLines, purchaseOrders, suppliers, workOrders } from "@/db/schema";
 import { changedMeanwhile, defineCommand } from "@/modules/access/command";
-import { personIdOf, type TxContext } from "@/modules/access/context";
+import { ableTo, personIdOf, type TxContext } from "@/modules/access/context";
 import { leaveJob } from "@/modules/access/jobs";
 import { takeYearNumber } from "@/modules/access/numbers";
 import { queueMail } from "@/modules/documents/mail";
@@ -15,10 +15,11 @@ import { amountIn } from "@/modules/stock/input";
 import { cancelInput, changeOrderInput, draftInput, sendInput, expectInput } from "../input";
 
 interface TypedLine { id: string; partId: string; supplierNumber: string; qty: number; price: string; workOrderId: string }
+type Standing = typeof purchaseOrderLines.$inferSelect;
 interface GoodLine { id: string; partId: string; supplierNumber: string; qtyMilli: number; unitPriceMinor: number; workOrderId: string | null }
 
-/** Each line against the shop's own parts and open work orders; an empty price is the last one paid. */
-async function goodLines(ctx: TxContext, lines: readonly TypedLine[], notes: string): Promise<Result<GoodLine[]>> {
+/** Each line against the shop's own parts and open work orders; an empty price is the one that stands, for a new line or another part the last one paid. */
+async function goodLines(ctx: TxContext, lines: readonly TypedLine[], notes: string, standing: readonly Standing[] = []): Promise<Result<GoodLine[]>> {
   const { tx, shop } = ctx;
   const partIds = [...new Set(lines.map((l) => l.partId))];
   const orderIds = [...new Set(lines.map((l) => l.workOrderId).filter(Boolean))];
@@ -31,7 +32,7 @@ async function goodLines(ctx: TxContext, lines: readonly TypedLine[], notes: str
     if (p.isKit) return refuse("KIT_HAS_NO_SHELF", `${p.sku} is a kit: order its parts.`, { field: `lines.${i}.partId` });
     if (isCountedInPieces(p.stockUnit) && l.qty % 1000 !== 0) return refuse("NOT_WHOLE_PIECES", `${milliText(l.qty)} is not a whole number. ${p.sku} is counted in pieces.`, { field: `lines.${i}.qty` });
     if (l.workOrderId && !open.has(l.workOrderId)) return refuse("ORDER_UNKNOWN", "That work order is not open. Choose another, or leave it for the shelf.", { field: `lines.${i}.workOrderId` });
-    const price = l.price === "" ? (p.lastPriceMinor ?? 0) : amountIn(l.price, shop.currency);
+    const price = l.price === "" ? (standing.find((s) => s.id === l.id && s.partId === p.id)?.unitPriceMinor ?? p.lastPriceMinor ?? 0) : amountIn(l.price, shop.currency);
     if (price === null) return refuse("AMOUNT_DECIMALS", "More decimals than the currency has. Type a price such as 22.00.", { field: `lines.${i}.price` });
     if (l.price !== "" && price === 0 && notes === "") return refuse("FREE_NEEDS_WORDS", "A price of 0 needs a word in the notes: a sample, a replacement.", { field: `lines.${i}.price` });
     good.push({ id: l.id, partId: l.partId, supplierNumber: l.supplierNumber || p.supplierNumber, qtyMilli: l.qty, unitPriceMinor: price, workOrderId: l.workOrderId || null });
@@ -83,10 +84,12 @@ export const changePurchaseOrder = defineCommand({
     if (!locked.ok) return locked;
     const order = locked.value;
     if (order.state === "cancelled") return refuse("ORDER_CANCELLED", "This purchase order is cancelled. Write a new one.");
-    const lines = await goodLines(ctx, input.lines, input.notes);
+    const blank = ableTo(ctx, "cost.see") ? input.lines.findIndex((l) => l.price === "") : -1;
+    if (blank >= 0) return refuse("PRICE_MISSING", "Type a price of 0 or more, such as 23.75.", { field: `lines.${blank}.price` });
+    const standing = await linesOf(ctx, order.id);
+    const lines = await goodLines(ctx, input.lines, input.notes, standing);
     if (!lines.ok) return lines;
     if (order.state === "sent" && lines.value.length === 0) return refuse("ORDER_EMPTY", "A sent order keeps at least one line. Cancel the order instead.", { field: "lines" });
-    const standing = await linesOf(ctx, order.id);
     const byId = new Map(standing.map((s) => [s.id, s]));
     let lineNo = Math.max(0, ...standing.map((s) => s.lineNo));
     for (const [i, l] of lines.value.entries()) {

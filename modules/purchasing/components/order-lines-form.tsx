@@ -45,6 +45,7 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
   const lines = useFieldArray({ control: form.rhf.control, name: "lines", keyName: "key" });
   const typed = useWatch({ control: form.rhf.control, name: "lines" });
   const total = (typed ?? []).reduce((sum, l) => sum + extend(parseMinor(String(l?.price ?? ""), decimals) ?? 0, parseMilli(String(l?.qty ?? "")) ?? 0), 0);
+  const seesPrices = order.partsMinor !== null;
   const known = new Map(order.lines.map((l) => [l.id, l]));
   const orders = useOpenOrders(slug);
   const tied = order.lines.flatMap((l) => (l.workOrderId && l.workOrderNumber ? [{ value: l.workOrderId, label: l.workOrderNumber }] : []));
@@ -59,7 +60,7 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
               <PartPicker name={`lines.${i}.partId`} label={`Line ${i + 1}, part`} kits={false} initial={l ? { id: l.partId, sku: l.sku, description: l.description } : null} {...(l ? { hint: l.description } : {})} />
               <TextInput name={`lines.${i}.supplierNumber`} label="Their number" optional />
               <NumberInput name={`lines.${i}.qty`} label="Quantity" alignEnd />
-              <MoneyInput name={`lines.${i}.price`} label="Each" currency={currency} />
+              <MoneyInput name={`lines.${i}.price`} label="Each" currency={currency} {...(seesPrices ? {} : { hint: l ? "Empty keeps what stands" : "Empty is the last price" })} />
               <SelectInput name={`lines.${i}.workOrderId`} label="For" options={[{ value: "", label: "Stock" }, ...choices]} />
               <Button variant="lo" className="self-end" onClick={() => lines.remove(i)} aria-label={`Take line ${i + 1} off`}>Take off</Button>
             </div>
@@ -68,7 +69,7 @@ export function OrderLinesForm({ order, onDone }: { order: OrderDetail; onDone?:
       </div>
       <div style={{ display: "flex", justifyContent: "space-between", gap: 12, margin: "14px 0", flexWrap: "wrap" }}>
         <Button variant="lo" icon="plus" onClick={() => lines.append({ id: "", partId: "", supplierNumber: "", qty: "1", price: "", workOrderId: "" })}>Add a part</Button>
-        <b>{`Parts ${money(total, { locale, currency })}`}</b>
+        {seesPrices ? <b>{`Parts ${money(total, { locale, currency })}`}</b> : null}
       </div>
       <div className="fields">
         <DateInput name="neededBy" label="Needed by" optional />

@@ -9,8 +9,8 @@ import { extend } from "@/modules/kernel/money";
 import { howFar, type HowFar } from "../domain/came-in";
 import type { findOrdersInput, OrderView } from "../input";
 
-/** Who writes purchase orders sees what they write; averages and margins stay with those who see cost. */
-export const seesPrices = (ctx: ShopContext): boolean => ableTo(ctx, "cost.see") || ableTo(ctx, "purchase.write");
+/** What parts are bought for is for those who see cost. The counter and the lead write orders without: a price they leave empty is the one that stands. */
+export const seesPrices = (ctx: ShopContext): boolean => ableTo(ctx, "cost.see");
 
 export interface OrderRow {
   id: string; number: string | null; supplierName: string; state: HowFar; createdAt: string; orderedAt: string | null; expectedOn: string | null; neededBy: string | null;
