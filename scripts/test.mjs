@@ -91,6 +91,9 @@ async function vitest() {
   step("Vitest", ok, since(start));
 }
 
+/** Errors that the built server wrote to its log: it marks each with a cross. */
+const unseenFaults = (log) => (fs.existsSync(log) ? fs.readFileSync(log, "utf8").split("\n").filter((line) => line.includes("⨯")) : []);
+
 function testPorts() {
   return Object.fromEntries(Object.entries(PORTS.test).map(([name, [variable, fallback]]) => [name, portFrom(variable, fallback)]));
 }
@@ -124,10 +127,17 @@ async function journeys(chromium) {
   total.passed += (stats?.expected ?? 0) + (stats?.flaky ?? 0);
   total.failed += stats?.unexpected ?? 0;
   if (!ok && !stats?.unexpected) total.failed += 1;
-  if (!ok) console.log(`Logs of the product under test: ${path.relative(PROJECT, path.join(product.folder, "logs"))}`);
+  const logs = path.join(product.folder, "logs");
   await product.close();
   product = null;
-  step("Journeys", ok, since(start));
+  // A page that broke on the server and was mended by the browser looks well to a journey.
+  const broke = unseenFaults(path.join(logs, "web.log"));
+  if (broke.length > 0) {
+    total.failed += 1;
+    console.log(`The server broke ${broke.length} times while the journeys ran:\n${[...new Set(broke)].join("\n")}`);
+  }
+  if (!ok || broke.length > 0) console.log(`Logs of the product under test: ${path.relative(PROJECT, logs)}`);
+  step("Journeys", ok && broke.length === 0, since(start));
 }
 
 /** One run at a time in this folder: two would pull the ground from under each other. */

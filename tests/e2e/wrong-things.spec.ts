@@ -47,6 +47,25 @@ test("sign-in with a wrong password keeps both fields and says so", async () => 
   await expect(page.getByLabel("Password", { exact: true })).toHaveValue("not the password");
 });
 
+test("what is typed before the page's script runs stays, and the key waits for it", async () => {
+  const page = await crew.as("Tobias");
+  let letThrough: () => void = () => undefined;
+  const held = new Promise<void>((go) => { letThrough = go; });
+  await page.route("**/_next/static/**", async (route) => {
+    if (route.request().resourceType() === "script") await held;
+    await route.continue();
+  });
+  await page.goto(crew.at("/orders/new"), { waitUntil: "commit" });
+  await page.getByLabel("What they want").fill("Typed early.");
+  await page.getByRole("radio", { name: "Other" }).check();
+  await expect(page.getByRole("button", { name: "Open order" })).toBeDisabled();
+  letThrough();
+  await expect(page.getByRole("button", { name: "Open order" })).toBeEnabled();
+  await page.unroute("**/_next/static/**");
+  await expect(page.getByLabel("What they want")).toHaveValue("Typed early.");
+  await expect(page.getByRole("radio", { name: "Other" })).toBeChecked();
+});
+
 test("an order with gaps says each beside its field and loses nothing", async () => {
   const page = await crew.as("Tobias");
   await page.goto(crew.at("/orders/new"));

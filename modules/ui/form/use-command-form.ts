@@ -38,7 +38,8 @@ export interface CommandForm<Input extends FieldValues, Output> {
 
 /** Read while React takes the server's page over, before the fields are set to their defaults. */
 function readEarly(formId: string): readonly EarlyInput[] {
-  const form = typeof document === "undefined" ? null : document.getElementById(formId);
+  if (typeof document === "undefined") return [];
+  const form = document.getElementById(formId);
   return form instanceof HTMLFormElement ? earlyInput(form.elements as unknown as Iterable<HTMLInputElement>) : [];
 }
 
