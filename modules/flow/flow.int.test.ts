@@ -6,7 +6,7 @@ import { behindTheCurtain } from "@/tests/support/database";
 import { HERO_FLOWS } from "@/tests/support/hero-flow";
 import { must, requestId, testShop, type TestShop } from "@/tests/support/shop";
 import { markCautionsSeen } from "./commands/job-cautions";
-import { addLift, changeSheetConditions, changeTestConditions } from "./commands/change-test";
+import { addLift, changeSheetConditions, changeTestConditions, removeLift } from "./commands/change-test";
 import { completeTest, correctTest, voidTest } from "./commands/finish-test";
 import { addBench, addFamily, addFixture, recordBenchCheck } from "./commands/gear";
 import { headForPiece } from "./commands/head";
@@ -80,6 +80,9 @@ describe("the hero head", () => {
     expect(port.intake.rows.map((r) => r.gainCfm)).toEqual([0.4, 2.7, 5.7, 8.9, 11.7, 13.9, 15.7, 16.6]);
     expect(port.intake.peak).toEqual({ liftUm: 10_160, gainCfm: 16.6 });
     expect(port.intake.losses).toEqual([]);
+    // One reading a lift: no verdict, and the bench states nothing.
+    expect(port.intake.noise?.rows.map((r) => r.verdict)).toEqual(LIFTS.map(() => "not_assessed"));
+    expect(port.intake.noise?.notStated).toEqual(["pressure held", "reading", "lift"]);
     expect(port.intake.conditions).toContain("28 in H₂O");
     expect(port.intake.notes.map((n) => n.code)).toContain("SEAT_DIFFERS");
     expect(port.intake.before).toMatchObject({ operator: "insp", seat: "baseline on the cleaned original seats" });
@@ -261,6 +264,37 @@ describe("a test", () => {
     expect(await change(2, { leak: "1", leakPressure: "10" })).toMatchObject({ ok: false, refusal: { code: "LEAK_PRESSURE_MISMATCH", field: "leakPressure" } });
     expect(must(await addLift(a.as("tech"), { testId, version: 2, lift: "0.450" })).version).toBe(3);
     expect((await flowSheetFor(a.as("tech"), headId, 1)).tests[0]).toMatchObject({ valveMm: 31.5, lifts: { length: 9 } });
+  });
+
+  it("adds a lift to both drafts of a sheet or to neither, and takes one off that was not read", async () => {
+    const { headId } = await newHead();
+    const [intake = "", exhaust = ""] = must(await startSheet(a.as("tech"), { headId, purpose: "baseline", benchId: bench, fixtureId: fixture, nominal: "28", step: "0.050", camLiftForLadder: "0.340", intake: {}, exhaust: {} })).testIds;
+    const lifts = async () => (await flowSheetFor(a.as("tech"), headId, 1)).tests.map((t) => [t.version, t.lifts.length, t.lifts.some((l) => l.liftUm === 6985)]);
+    const add = (lift: string, v: [number, number]) => addLift(a.as("tech"), { testId: intake, version: v[0], lift, also: { testId: exhaust, version: v[1] } });
+    const [start] = await lifts();
+    const planned = Number(start?.[1]);
+    expect(await add("0.275", [1, 9])).toMatchObject({ ok: false, refusal: { code: "CHANGED_MEANWHILE" } });
+    expect(await lifts()).toEqual([[1, planned, false], [1, planned, false]]);
+    expect(await add("long", [1, 1])).toMatchObject({ ok: false, refusal: { field: "lift" } });
+    expect(await add("0.050", [1, 1])).toMatchObject({ ok: false, refusal: { code: "LIFT_THERE", field: "lift" } });
+    must(await addLift(a.as("tech"), { testId: exhaust, version: 1, lift: "0.275" }));
+    // One side has it already: the other still gets it.
+    expect(must(await add("0.275", [1, 2])).added).toEqual([{ testId: intake, version: 2 }]);
+    expect(await lifts()).toEqual([[2, planned + 1, true], [2, planned + 1, true]]);
+
+    const off = (versions: [number, number]) => removeLift(a.as("tech"), { testId: intake, version: versions[0], liftUm: 6985, also: { testId: exhaust, version: versions[1] } });
+    must(await recordReading(a.as("tech"), { testId: exhaust, lift: "0.275", value: "86.8" }));
+    expect(await off([2, 2])).toMatchObject({ ok: false, refusal: { code: "LIFT_READ" } });
+    expect(await lifts()).toEqual([[2, planned + 1, true], [2, planned + 1, true]]);
+    must(await recordReading(a.as("tech"), { testId: exhaust, lift: "0.275", value: "", revisionSeen: 1 }));
+    expect(await off([2, 1])).toMatchObject({ ok: false, refusal: { code: "CHANGED_MEANWHILE" } });
+    expect(await removeLift(b.as("owner"), { testId: intake, version: 2, liftUm: 6985 })).toMatchObject({ ok: false, refusal: { code: "NOT_FOUND" } });
+    await expect(removeLift(a.as("counter"), { testId: intake, version: 2, liftUm: 6985 })).rejects.toThrow(NotFound);
+    must(await off([2, 2]));
+    expect(await lifts()).toEqual([[3, planned, false], [3, planned, false]]);
+    expect(await off([3, 3])).toMatchObject({ ok: false, refusal: { code: "NOT_FOUND" } });
+    const one = must(await startTest(a.as("tech"), { ...session((await newHead()).headId), side: "intake", purpose: "baseline", lifts: ["0.100"] })).testId;
+    expect(await removeLift(a.as("tech"), { testId: one, version: 1, liftUm: 2540 })).toMatchObject({ ok: false, refusal: { code: "LAST_LIFT" } });
   });
 
   it("changes both drafts of a sheet or neither", async () => {

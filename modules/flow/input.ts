@@ -102,10 +102,13 @@ const changedSide = z.strictObject({ testId: z.uuid(), version: z.number().int()
 /** Both drafts of a sheet at once: they share the session. */
 export const changeSheetInput = z.strictObject({ ...sessionFields, intake: changedSide, exhaust: changedSide })
   .refine((s) => s.intake !== undefined || s.exhaust !== undefined, { error: "There is no draft to change.", path: ["intake"] });
+const testSeen = z.strictObject({ testId: z.uuid(), version: z.number().int() });
 /** `also`: the other side's draft of the same sheet gets the lift too, or neither does. */
 export const addLiftInput = z.strictObject({
-  testId: z.uuid(), version: z.number().int(), lift: line(20).min(1, "Give the lift."), reason: words(200).default(""), also: z.strictObject({ testId: z.uuid(), version: z.number().int() }).optional(),
+  testId: z.uuid(), version: z.number().int(), lift: line(20).min(1, "Give the lift."), reason: words(200).default(""), also: testSeen.optional(),
 });
+/** Takes a lift that was not read off one draft, or off both of the sheet. */
+export const removeLiftInput = z.strictObject({ testId: z.uuid(), version: z.number().int(), liftUm: z.number().int().min(0), also: testSeen.optional() });
 
 const typedCell = {
   lift: line(20), liftUnit: liftUnit.default("in"), repeatNo: z.number().int().min(1).max(9).default(1),

@@ -156,6 +156,7 @@ describe("two tests over each other", () => {
     const over = await overlayOf(a.as("tech"), { a: before, b: after });
     expect(over).toMatchObject({ comparable: true, samePort: false });
     expect(over.rows.at(-1)).toMatchObject({ liftUm: 10160, a: 127, b: 143.6, difference: 16.6 });
+    expect(over.noise?.rows.at(-1)).toMatchObject({ liftUm: 10160, verdict: "not_assessed", before: 1, after: 1 });
     const late = await heroTest(one, "intake", "after", "2026-06-20T15:00:00Z");
     const apart = await overlayOf(a.as("tech"), { a: late, b: after });
     expect(apart.notes.map((n) => n.words)).toContain("The two were read 159 days apart.");
@@ -167,6 +168,7 @@ describe("two tests over each other", () => {
     const withheld = await overlayOf(a.as("tech"), { a: before, b: exhaust });
     expect(withheld.comparable).toBe(false);
     expect(withheld.meanDifferenceCfm).toBeNull();
+    expect(withheld.noise).toBeNull();
     expect(withheld.rows.every((r) => r.difference === null)).toBe(true);
     expect(withheld.reasons.map((r) => r.code)).toContain("SIDE_DIFFERS");
     expect(withheld.reasons.map((r) => r.words).join(" ")).not.toMatch(/\b(before|after|gain)\b/i);

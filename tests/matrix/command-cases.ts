@@ -107,7 +107,7 @@ export const COMMAND_CASES: Record<string, Case> = {
     also: [(at) => ({ ...named(at, "bank_lines", "lineId"), kind: "payment", ids: [at("payments").id] }), (at) => ({ ...named(at, "bank_lines", "lineId"), kind: "payout", ids: [at("payouts").id] })] },
   "bank.unlock": { input: (at) => named(at, "bank_lines", "lineId") },
 
-  "flow.cautions-seen": { input: (at) => ({ workOrderId: at("work_orders").id, hazards: ["noise"], step: "CLN" }) },
+  "flow.cautions-seen": { input: (at) => ({ workOrderId: at("work_orders").id, hazards: ["noise"], step: "CLN" }), also: [(at) => ({ headId: at("heads").id, hazards: ["noise"], step: "CLN" })] },
   "flow.change-camshaft": { input: (at) => ({ ...edit(at, "camshafts"), label: "Cam", side: "intake", maxLift: "9.0", duration: "240" }) },
   "flow.change-family": { input: (at) => ({ ...edit(at, "engine_families"), name: "Taken" }) },
   "flow.change-head-work": { input: (at) => edit(at, "heads") },
@@ -122,7 +122,8 @@ export const COMMAND_CASES: Record<string, Case> = {
   "flow.post-test": { input: (at) => ({ headId: at("heads").id, benchId: at("benches").id, fixtureId: at("fixtures").id, operatorId: at("people").id, side: "intake", purpose: "baseline", nominal: "28", readings: [{ lift: "0.1", value: "20" }] }) },
   "flow.change-conditions": { input: (at) => ({ ...named(at, "flow_tests", "testId"), fixtureId: at("fixtures").id, nominal: "28" }) },
   "flow.change-sheet": { input: (at) => ({ fixtureId: at("fixtures").id, nominal: "28", intake: named(at, "flow_tests", "testId"), exhaust: named(at, "flow_tests", "testId") }) },
-  "flow.add-lift": { input: (at) => ({ ...named(at, "flow_tests", "testId"), lift: "0.2" }) },
+  "flow.add-lift": { input: (at) => ({ ...named(at, "flow_tests", "testId"), lift: "0.2", also: named(at, "flow_tests", "testId") }) },
+  "flow.remove-lift": { input: (at) => ({ ...named(at, "flow_tests", "testId"), liftUm: 1270, also: named(at, "flow_tests", "testId") }) },
   "flow.record-reading": { input: (at) => ({ testId: at("flow_tests").id, lift: "0.1", value: "20" }) },
   "flow.complete-test": { input: (at) => named(at, "flow_tests", "testId") },
   "flow.void-test": { input: (at) => ({ ...named(at, "flow_tests", "testId"), reason: "because" }) },

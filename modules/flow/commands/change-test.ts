@@ -6,7 +6,8 @@ import type { TxContext } from "@/modules/access/context";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
 import type { z } from "@/modules/kernel/zod";
 import type { LiftUnit } from "../domain/lift-ladder";
-import { addLiftInput, changeSheetInput, changeTestInput } from "../input";
+import { addLiftInput, changeSheetInput, changeTestInput, removeLiftInput } from "../input";
+import { cellsOf } from "../queries/tests-of-head";
 import { conditionColumns, fixtureHere, plannedLifts } from "./start-test";
 
 export type TestRow = typeof flowTests.$inferSelect;
@@ -58,9 +59,9 @@ export const changeSheetConditions = defineCommand({
   subject: (input) => ({ kind: "flow-test", id: input.intake?.testId ?? input.exhaust?.testId ?? "" }),
 });
 
-type LiftAdded = { testId: string; version: number };
+type Changed = { testId: string; version: number };
 
-async function addOneLift(ctx: TxContext, { testId, version }: LiftAdded, lift: string, reason: string): Promise<Result<LiftAdded>> {
+async function addOneLift(ctx: TxContext, { testId, version }: Changed, lift: string, reason: string): Promise<Result<Changed>> {
   const test = await draftTest(ctx, testId, version);
   if (!test.ok) return test;
   const added = plannedLifts([lift], test.value.liftUnit as LiftUnit, reason);
@@ -79,7 +80,7 @@ export const addLift = defineCommand({
   act: "flow.record",
   input: addLiftInput,
   async run(ctx, { testId, version, lift, reason, also }) {
-    const added: LiftAdded[] = [];
+    const added: Changed[] = [];
     const sheet = [{ testId, version }, ...(also ? [also] : [])];
     for (const test of sheet) {
       const one = await addOneLift(ctx, test, lift, reason);
@@ -88,6 +89,29 @@ export const addLift = defineCommand({
       else if (one.refusal.code !== "LIFT_THERE" || (test === sheet.at(-1) && added.length === 0)) return one;
     }
     return ok({ testId, version: added.find((a) => a.testId === testId)?.version ?? version, added });
+  },
+  subject: (input) => ({ kind: "flow-test", id: input.testId }),
+});
+
+/** Takes a lift off the ladder of a draft: only one that holds no reading, and never the last. The ledger of readings is not touched. */
+export const removeLift = defineCommand({
+  name: "flow.remove-lift",
+  act: "flow.record",
+  input: removeLiftInput,
+  async run(ctx, { testId, version, liftUm, also }) {
+    const changed: Changed[] = [];
+    for (const seen of [{ testId, version }, ...(also ? [also] : [])]) {
+      const test = await draftTest(ctx, seen.testId, seen.version);
+      if (!test.ok) return test;
+      const lifts = test.value.lifts.filter((l) => l.liftUm !== liftUm);
+      if (lifts.length === test.value.lifts.length) return refuse("NOT_FOUND", "This lift is not on the ladder.");
+      if (lifts.length === 0) return refuse("LAST_LIFT", "This is the only lift of the test. Add another first, or void the test.");
+      const cells = (await cellsOf(ctx, [seen.testId])).get(seen.testId) ?? [];
+      if (cells.some((c) => c.liftUm === liftUm && c.valueText !== "")) return refuse("LIFT_READ", "This lift was read. Clear its readings first, or leave it on the sheet.");
+      await ctx.tx.update(flowTests).set({ lifts, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, seen.testId)));
+      changed.push({ testId: seen.testId, version: seen.version + 1 });
+    }
+    return ok({ changed });
   },
   subject: (input) => ({ kind: "flow-test", id: input.testId }),
 });

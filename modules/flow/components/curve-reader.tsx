@@ -34,8 +34,10 @@ export function CurveReader(props: GainCurveProps & { label: string }) {
   const point = (event: PointerEvent<HTMLDivElement>) => {
     const g = geometryOf({ ...rest, lines, locale, unit });
     if (!g || lifts.length === 0) return;
-    const box = event.currentTarget.getBoundingClientRect();
-    const x = ((event.clientX - box.left) / box.width) * g.widthPx;
+    // The drawing may be smaller than its box where the height is short.
+    const drawn = event.currentTarget.querySelector("svg")?.getScreenCTM();
+    if (!drawn) return;
+    const x = (event.clientX - drawn.e) / drawn.a;
     const near = g.points.reduce<{ liftUm: number; d: number } | null>((best, p) => { const d = Math.abs(p.x - x); return best && best.d <= d ? best : { liftUm: p.liftUm, d }; }, null);
     setAt(near && near.d < 40 ? near.liftUm : null);
   };

@@ -57,7 +57,7 @@ function Room({ first }: { first: RoomPage }) {
     <>
       <div className="bar">
         <SearchWell label="Find a head by tag, family, order" placeholder="Tag, family, order" value={typed} onChange={(e) => setTyped(e.target.value)} onKeyDown={(e) => { if (e.key === "Enter" && rows.length === 1 && rows[0]) router.push(href(rows[0])); }} />
-        {ORDER.map((s) => <ToggleChip key={s} on={state === s} onChange={() => setState(state === s ? "" : s)}>{`${STATES[s].words} ${counts[s]}`}</ToggleChip>)}
+        {ORDER.map((s) => <ToggleChip key={s} on={state === s} onChange={() => setState(state === s ? "" : s)}>{`${STATES[s].words} ${counts?.[s] ?? 0}`}</ToggleChip>)}
       </div>
       <DataTable
         caption="Heads of the flow room" columns={columns} rows={rows} rowKey={(r) => r.headId} hrefOf={href}

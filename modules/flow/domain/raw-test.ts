@@ -88,5 +88,3 @@ export interface RawTest {
   readonly voidReason: string | null;
   readonly cells: readonly RawCell[];
 }
-
-export const cellKey = (liftUm: number, repeatNo: number): string => `${liftUm}/${repeatNo}`;

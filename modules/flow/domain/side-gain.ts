@@ -98,6 +98,3 @@ export interface GainOfPiece {
   readonly family: string;
   readonly ports: readonly PortGain[];
 }
-
-/** True when some side of some port may be called a gain. */
-export const hasGain = (gain: GainOfPiece): boolean => gain.ports.some((p) => p.intake.comparable || p.exhaust.comparable);

@@ -14,11 +14,11 @@ import { CommandDialog } from "./command-dialog";
 import type { PieceName } from "./order-dialogs";
 
 /** What the dialog begins with: the proposal where there is one. */
-const findingValues = (pieces: readonly PieceName[], proposed: ProposedFinding | null) => ({
+export const findingValues = (pieces: readonly PieceName[], proposed: ProposedFinding | null) => ({
   pieceId: proposed?.pieceId ?? pieces[0]?.id ?? "", words: proposed?.words ?? "", position: proposed?.position ?? "", goOnMeanwhile: true,
 });
 /** Name of the copy kept in this tab: one for each proposal, so that what was changed in one never stands in another. */
-const findingDraft = (pieces: readonly PieceName[], proposed: ProposedFinding | null): string => `finding-${pieces[0]?.id ?? ""}-${proposed ? `${proposed.pieceId}-${proposed.words}` : ""}`;
+export const findingDraft = (pieces: readonly PieceName[], proposed: ProposedFinding | null): string => `finding-${pieces[0]?.id ?? ""}-${proposed ? `${proposed.pieceId}-${proposed.words}` : ""}`;
 
 /** Opens by its key, or by itself when another page proposed what to write. A proposal is only a beginning: what is changed in it stays. */
 export function FindingDialog({ pieces, onRecorded }: { pieces: readonly PieceName[]; onRecorded?: (id: string) => void }) {

@@ -7,7 +7,7 @@ import { SubmitButton } from "@/modules/ui/form/submit-button";
 import { TextInput } from "@/modules/ui/form/text-input";
 import { useCommandForm } from "@/modules/ui/form/use-command-form";
 import { usePlace } from "@/modules/ui/place";
-import { addLiftAction } from "../../actions";
+import { addLiftAction, removeLiftAction } from "../../actions";
 import type { RawTest } from "../../domain/raw-test";
 import { addLiftInput } from "../../input";
 
@@ -64,8 +64,39 @@ function AddForm({ drafts, settle, onAdded }: Adding) {
 export function AddLiftDialog({ drafts, settle, onAdded }: Adding) {
   const [open, setOpen] = useState(false);
   return (
-    <TaskDialog open={open} onOpenChange={setOpen} trigger={<Button size="sm" variant="lo" icon="plus">Add a lift</Button>} title="Add a lift">
+    <TaskDialog open={open} onOpenChange={setOpen} trigger={<button type="button" className="lk">Add a lift</button>} title="Add a lift">
       <AddForm drafts={drafts} settle={settle} onAdded={() => { setOpen(false); onAdded(); }} />
     </TaskDialog>
+  );
+}
+
+/** Drafts that have this lift on the ladder and nothing read at it: what may be taken off. Null when some draft was read there. */
+export function unreadAt(drafts: readonly RawTest[], liftUm: number) {
+  const planned = drafts.filter((t) => t.lifts.some((l) => l.liftUm === liftUm));
+  const isRead = planned.some((t) => t.lifts.length < 2 || t.cells.some((c) => c.liftUm === liftUm && c.valueText !== ""));
+  return isRead ? null : liftTargets(planned, "both");
+}
+
+/** Takes the lift in hand off the ladder again, while nothing is read at it. */
+export function RemoveLift({ drafts, liftUm, name, settle, onRemoved }: { drafts: readonly RawTest[]; liftUm: number; name: string; settle: () => Promise<string | null>; onRemoved: () => void }) {
+  const { slug } = usePlace();
+  const [pending, setPending] = useState(false);
+  const [trouble, setTrouble] = useState("");
+  const [requestId] = useState(() => crypto.randomUUID());
+  const target = unreadAt(drafts, liftUm);
+  if (!target) return null;
+  const remove = async () => {
+    setPending(true);
+    await settle();
+    const reply = await removeLiftAction(slug, { requestId, input: { ...target, liftUm } }).catch(() => null);
+    setPending(false);
+    if (reply?.status === "ok") onRemoved();
+    else setTrouble(reply?.status === "refused" || reply?.status === "conflict" ? reply.message : "It could not be taken off. Try again in a moment.");
+  };
+  return (
+    <p className="flex flex-wrap items-center gap-3 px-3.5 pb-3">
+      <Button size="sm" variant="lo" pending={pending} pendingText="Taking it off…" onClick={() => void remove()}>{`Take ${name} off the ladder`}</Button>
+      {trouble === "" ? null : <span role="alert" className="sm neg">{trouble}</span>}
+    </p>
   );
 }

@@ -25,10 +25,13 @@ function ReasonField({ onKeep, onForget }: { onKeep: (reason: string) => void; o
   );
 }
 
+/** What the panel needs of the sheet's state. */
+export type PanelSheet = Pick<Sheet, "textAt" | "stuckAt" | "keptAt" | "range" | "setRange" | "held" | "setHeld" | "mark" | "type" | "commit" | "keepWithReason" | "discard" | "insist" | "takeFromBench">;
+
 const NUMBER_WIDTH = { width: 92 } as const;
 
 /** What belongs to the cell in hand: range, pressure held, repeats, doubts and how to settle them. */
-export function CellPanel({ sheet, pos, col, locale }: { sheet: Sheet; pos: Pos; col: SheetColumn; locale: string }) {
+export function CellPanel({ sheet, pos, col, locale }: { sheet: PanelSheet; pos: Pos; col: SheetColumn; locale: string }) {
   const heldId = useId();
   const { test } = col;
   const stuck = sheet.stuckAt(pos);

@@ -12,7 +12,7 @@ import { CautionNote } from "../caution-note";
 import { CurveReader } from "../curve-reader";
 import { liftWords } from "../flow-words";
 import { NoiseLines } from "../noise-verdicts";
-import { AddLiftDialog } from "./add-lift-dialog";
+import { AddLiftDialog, RemoveLift } from "./add-lift-dialog";
 import { BenchKeypad } from "./bench-keypad";
 import { CellPanel } from "./cell-panel";
 import { ConditionStrip } from "./condition-strip";
@@ -107,20 +107,24 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const live = drafts.some((c) => c.when === "before") && !drafts.some((c) => c.when === "after") ? "typing-before" : "typing-after";
   const draftOf = (i: 0 | 1) => { const s = figures.sides[i]; return [s?.after, s?.before].find((c) => c?.test.state === "draft")?.test ?? null; };
   const change = drafts.length > 0 && given.canRecord ? <ConditionsDialog gear={gear} drafts={{ intake: draftOf(0), exhaust: draftOf(1) }} onChanged={() => router.refresh()} /> : undefined;
+  // At the bench it stands over the grid, so that the keypad keeps its place.
+  const caution = drafts.length > 0 ? <CautionNote hazards={given.cautions} workOrderId={given.head.workOrderId} headId={given.head.id} step="bench session" /> : null;
   const canAddLift = drafts.length > 0 && given.canRecord && !isBench;
   const passed = sidesWithPasses(sheet.tests);
   const curve = { lines: figures.lines, unit, atInH2O: nominal, camLiftUm: cam, locale, label: "Read the curve point by point" } as const;
 
   return (
     <div className={`flow-sheet ${live}${isBench ? " bench" : ""}`}>
-      {drafts.length > 0 ? <div className="mb-5 empty:hidden"><CautionNote hazards={given.cautions} workOrderId={given.head.workOrderId} headId={given.head.id} step="bench session" /></div> : null}
+      {isBench || caution === null ? null : <div className="mb-5 empty:hidden">{caution}</div>}
       <ConditionStrip figures={figures} locale={locale} change={change} />
       <div className="fl">
         <div className="fl-l">
+          {isBench && caution !== null ? <div className="empty:hidden">{caution}</div> : null}
           {columns.length === 0 ? <Bay label="Readings, CFM"><p className="mid">No test of this port yet. The before test is read before any work is done.</p></Bay> : (
             <Bay label={readingsLabel(columns.map((c) => c.test.bench.scale))} flush className="fg" aside={canAddLift ? <AddLiftDialog drafts={drafts.map((c) => c.test)} settle={sheet.settle} onAdded={() => router.refresh()} /> : undefined}>
               <ReadingGrid sheet={sheet} unit={unit} locale={locale} port={given.cylinder} canRecord={given.canRecord} isBench={isBench} active={active} onActive={setActive} onKey={onKey} />
               {active && activeColumn?.test.state === "draft" ? <CellPanel key={`${active.testId}${active.liftUm}`} sheet={sheet} pos={active} col={activeColumn} locale={locale} /> : null}
+              {active && canAddLift ? <RemoveLift key={active.liftUm} drafts={drafts.map((c) => c.test)} liftUm={active.liftUm} name={liftWords(active.liftUm, unit, locale)} settle={sheet.settle} onRemoved={() => router.refresh()} /> : null}
               {isBench ? null : <NoiseLines gains={figures.sides.map((s) => s.gain)} locale={locale} />}
             </Bay>
           )}
@@ -139,7 +143,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
             ) : null}
             {everyPass && passed.length > 0 && !isBench ? <PassCurves tests={sheet.tests} place={place} sides={passed} /> : (
               <>
-                <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 236 : 366} /></div>
+                <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 214 : 366} /></div>
                 <div className="only-narrow"><CurveReader {...curve} width={350} height={290} mini /></div>
               </>
             )}

@@ -15,8 +15,11 @@ import type { Pos, Sheet } from "./use-sheet";
 export const cellId = (side: PortSide, when: When, liftUm: number): string => `c-${side}-${when}-${liftUm}`;
 export const posOf = (col: SheetColumn, liftUm: number, repeatNo = 1): Pos => ({ side: col.side, when: col.when, testId: col.test.id, liftUm, repeatNo });
 
+/** What the grid needs of the sheet's state. */
+export type GridSheet = Pick<Sheet, "figures" | "textAt" | "stuckAt" | "type" | "commit">;
+
 interface GridProps {
-  sheet: Sheet;
+  sheet: GridSheet;
   unit: LiftUnit;
   locale: string;
   port: number;

@@ -25,7 +25,7 @@ export default async function FlowSheetPage({ params, searchParams }: { params: 
   const isOpen = sheet.tests.some((t) => t.state === "draft");
   const page = (
     <main id="main" className="page">
-      <PageHead title={<>Flow sheet&ensp;<Tag running={isOpen} runningWord="on the bench">{sheet.head.mark}</Tag></>} sub={sheetSubtitle(sheet)}>
+      <PageHead title={<>Flow sheet&ensp;<Tag running={isOpen} runningWord="on the bench">{sheet.head.mark}</Tag></>} sub={sheetSubtitle(sheet)} close={isBench}>
         <PortNav ports={sheet.ports} current={sheet.cylinder} href={(n) => `${at}?port=${n}${isBench ? "&bench=1" : ""}`} />
       </PageHead>
       {isBench ? null : (
