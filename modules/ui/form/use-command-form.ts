@@ -1,7 +1,7 @@
 "use client";
 
 import { zodResolver } from "@hookform/resolvers/zod";
-import { useCallback, useEffect, useId, useRef, useState } from "react";
+import { useCallback, useEffect, useId, useInsertionEffect, useRef, useState } from "react";
 import { useForm, type DefaultValues, type FieldValues, type Path, type PathValue, type UseFormReturn } from "react-hook-form";
 import type { z } from "@/modules/kernel/zod";
 import { earlyInput, type EarlyInput } from "./early-input";
@@ -36,9 +36,8 @@ export interface CommandForm<Input extends FieldValues, Output> {
   failed: number;
 }
 
-/** Read while React takes the server's page over, before the fields are set to their defaults. */
+/** What stands in the server's form that the server did not put there. */
 function readEarly(formId: string): readonly EarlyInput[] {
-  if (typeof document === "undefined") return [];
   const form = document.getElementById(formId);
   return form instanceof HTMLFormElement ? earlyInput(form.elements as unknown as Iterable<HTMLInputElement>) : [];
 }
@@ -54,7 +53,11 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
 }: CommandFormOptions<Input, Output, Value>): CommandForm<Input, Output> {
   const formId = useId();
   const [requestId] = useState(() => new RequestId(() => crypto.randomUUID()));
-  const [early] = useState(() => readEarly(formId));
+  const early = useRef<readonly EarlyInput[]>([]);
+  // The one moment after all typing into the bare page and before the fields are bound and set to their defaults.
+  useInsertionEffect(() => {
+    early.current = readEarly(formId);
+  }, [formId]);
   const [trouble, setTrouble] = useState<Trouble | null>(null);
   const [pending, setPending] = useState(false);
   const [failed, setFailed] = useState(0);
@@ -76,12 +79,12 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
   }, [draft, reset, subscribe, getValues]);
 
   useEffect(() => {
-    for (const { name, value } of early) {
+    for (const { name, value } of early.current) {
       const path = name as Path<Input>;
       const kept = typeof value === "string" ? value : Array.isArray(getValues(path)) ? value.all : value.ticked;
       setValue(path, kept as PathValue<Input, Path<Input>>, { shouldDirty: true });
     }
-  }, [early, getValues, setValue]);
+  }, [getValues, setValue]);
 
   useEffect(() => {
     if (!guard || !dirty) return;
