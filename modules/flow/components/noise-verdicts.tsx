@@ -2,7 +2,7 @@ import { decimal } from "@/modules/kernel/format";
 import type { LiftUnit } from "../domain/lift-ladder";
 import { NOISE_WORDS } from "../domain/noise";
 import type { NoiseRow } from "../domain/noise-rows";
-import { isAssessed, noiseSummary, notStatedWords } from "../domain/noise-summary";
+import { isAssessed, listed, noiseSummary, notStatedWords } from "../domain/noise-summary";
 import type { SideGain } from "../domain/side-gain";
 import { differenceText, liftWords } from "./flow-words";
 import { Lane } from "@/modules/ui/lane";
@@ -24,7 +24,7 @@ export function NoiseVerdicts({ port, locale }: { port: NoisePort; locale: strin
           <tr key={r.liftUm}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{liftWords(r.liftUm, port.liftUnit, locale)}</th><td className="r q"><b>{differenceText(r.differenceCfm, locale)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${decimal(r.expandedCfm, 1, locale)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{NOISE_MARK[r.verdict]}</span> {r.words}</td></tr>
         ))}</tbody>
       </table></Lane>
-      {port.notStated.length > 0 ? <p className="hint p-3">Uncertainty of {port.notStated.join(" and ")} is not stated for this bench and counts as nothing here.</p> : null}
+      {port.notStated.length > 0 ? <p className="hint p-3">Uncertainty of {listed(port.notStated)} is not stated for this bench and counts as nothing here.</p> : null}
     </>
   );
 }

@@ -15,6 +15,9 @@ function liftsWords(rows: readonly NoiseRow[], verdict: NoiseRow["verdict"], lif
   }).join(", ");
 }
 
+/** `pressure held, reading and lift`. */
+export const listed = (names: readonly string[]): string => (names.length < 2 ? names.join("") : `${names.slice(0, -1).join(", ")} and ${names.at(-1) ?? ""}`);
+
 /** True when some lift was read twice on both sides, so that there is a verdict to show. */
 export const isAssessed = (noise: GainNoise | undefined): noise is GainNoise => noise?.rows.some((r) => r.verdict !== "not_assessed") === true;
 
@@ -36,4 +39,4 @@ export function noiseSummary(noise: GainNoise, lift: (um: number) => string): st
 
 /** What the verdict could not take into account; null when the bench states everything or nothing was judged. */
 export const notStatedWords = (noise: GainNoise | undefined): string | null =>
-  isAssessed(noise) && noise.notStated.length > 0 ? `Uncertainty of ${noise.notStated.join(" and ")} is not stated for this bench and counts as nothing in the verdict.` : null;
+  isAssessed(noise) && noise.notStated.length > 0 ? `Uncertainty of ${listed(noise.notStated)} is not stated for this bench and counts as nothing in the verdict.` : null;

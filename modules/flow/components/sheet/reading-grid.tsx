@@ -9,6 +9,7 @@ import { differenceText, flowText, liftWords } from "../flow-words";
 import { NoiseMark } from "../noise-verdicts";
 import { cellDoubts } from "./cell-words";
 import { ReadingCell } from "./reading-cell";
+import { SCALE_SIGN } from "./scale-words";
 import { cellAt, flowAt, type SheetColumn, type SheetSide, type When } from "./sheet-figures";
 import type { Pos, Sheet } from "./use-sheet";
 
@@ -30,6 +31,9 @@ interface GridProps {
   onKey: (pos: Pos, event: KeyboardEvent<HTMLInputElement>) => void;
 }
 const SIDE_WORDS = { intake: "Intake", exhaust: "Exhaust" } as const;
+
+/** What is typed in a column that is not typed in CFM. */
+const unitOf = (col: SheetColumn | null) => (col === null || col.test.bench.scale === "direct" ? null : <span className="unit"> {SCALE_SIGN[col.test.bench.scale]}</span>);
 
 function GainCell({ side, liftUm, locale, top }: { side: SheetSide; liftUm: number; locale: string; top: number }) {
   const row = side.gain?.comparable ? side.gain.rows.find((r) => r.liftUm === liftUm) : undefined;
@@ -113,8 +117,8 @@ export function ReadingGrid({ sheet, unit, locale, port, canRecord, isBench, act
           <th scope="col">Lift<span className="sr-only">, {unit}</span></th>
           {sides.map((s) => (
             <Fragment key={s.side}>
-              <th scope="col" id={`h-${s.side}-before`} className="r bf">Before</th>
-              <th scope="col" id={`h-${s.side}-after`} className="r af">{s.after?.head ?? "After"}</th>
+              <th scope="col" id={`h-${s.side}-before`} className="r bf">Before{unitOf(s.before)}</th>
+              <th scope="col" id={`h-${s.side}-after`} className="r af">{s.after?.head ?? "After"}{unitOf(s.after)}</th>
               <th scope="col" className="r gh">{s.gain && !s.gain.comparable && s.gain.state === "withheld" ? "Withheld" : "Gain"}</th>
             </Fragment>
           ))}

@@ -87,6 +87,7 @@ describe("a bench read by range", () => {
   });
   it("says low on the scale, and gives no flow beyond its end", () => {
     expect(words(cellText(read("percent_linear", "12", "100")))).toContain("low on scale");
+    expect(words(grid(sheetOf([read("percent_linear", "12", "100")])))).toContain("Before %");
     expect(cellText(read("percent_linear", "112", "100"))).not.toContain('class="cor"');
   });
   it("offers its ranges beside the cell and writes the reading out", () => {
