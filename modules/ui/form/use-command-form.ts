@@ -8,6 +8,7 @@ import { earlyInput, type EarlyInput } from "./early-input";
 import { keepDraft, readDraft, dropDraft } from "./draft";
 import { noLink, readReply, type Reading, type Trouble } from "./form-trouble";
 import type { Reply } from "./reply";
+import { overlay } from "./overlay";
 import { RequestId, within } from "./request-id";
 
 export interface CommandFormOptions<Input extends FieldValues, Output, Value> {
@@ -53,6 +54,7 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
 }: CommandFormOptions<Input, Output, Value>): CommandForm<Input, Output> {
   const formId = useId();
   const [requestId] = useState(() => new RequestId(() => crypto.randomUUID()));
+  const untouched = useRef(defaultValues);
   const early = useRef<readonly EarlyInput[]>([]);
   // The one moment after all typing into the bare page and before the fields are bound and set to their defaults.
   useInsertionEffect(() => {
@@ -72,19 +74,16 @@ export function useCommandForm<Input extends FieldValues, Output, Value>({
   const dirty = formState.isDirty;
 
   useEffect(() => {
-    if (draft === undefined) return;
-    const kept = readDraft(draft);
-    if (kept !== null) reset({ ...getValues(), ...kept }, { keepDefaultValues: true });
-    return subscribe({ formState: { values: true }, callback: ({ values }) => keepDraft(draft, values) });
-  }, [draft, reset, subscribe, getValues]);
-
-  useEffect(() => {
     for (const { name, value } of early.current) {
       const path = name as Path<Input>;
-      const kept = typeof value === "string" ? value : Array.isArray(getValues(path)) ? value.all : value.ticked;
-      setValue(path, kept as PathValue<Input, Path<Input>>, { shouldDirty: true });
+      const typed = typeof value === "string" ? value : Array.isArray(getValues(path)) ? value.all : value.ticked;
+      setValue(path, typed as PathValue<Input, Path<Input>>, { shouldDirty: true });
     }
-  }, [getValues, setValue]);
+    if (draft === undefined) return;
+    const kept = readDraft(draft);
+    if (kept !== null) reset(overlay(kept, untouched.current, getValues()) as Input, { keepDefaultValues: true });
+    return subscribe({ formState: { values: true }, callback: ({ values }) => keepDraft(draft, values) });
+  }, [draft, reset, setValue, subscribe, getValues]);
 
   useEffect(() => {
     if (!guard || !dirty) return;
