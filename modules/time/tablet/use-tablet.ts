@@ -63,9 +63,13 @@ export function useTablet() {
   useEffect(() => {
     let timer: ReturnType<typeof setTimeout> | undefined;
     let over = false;
+    let rounds = 0;
     const round = async () => {
+      // A round that was overtaken by a newer one must not set a second timer.
+      rounds += 1;
+      const mine = rounds;
       await sync();
-      if (!over) timer = setTimeout(() => void round(), LINKED_MS);
+      if (!over && mine === rounds) timer = setTimeout(() => void round(), LINKED_MS);
     };
     const wake = () => { clearTimeout(timer); void round(); };
     void (async () => {

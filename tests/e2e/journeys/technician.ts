@@ -38,9 +38,10 @@ export async function enrolTablet(crew: Crew, name: string, local: string): Prom
 async function wake(tablet: Page, local: string): Promise<void> {
   itIs(local);
   await tablet.clock.setSystemTime(instantIn(local));
-  const board = tablet.waitForResponse((r) => r.url().endsWith("/api/v1/clock/board"));
+  // One that began after both clocks were set: an earlier one would measure the jump.
+  const board = tablet.waitForRequest((r) => r.url().endsWith("/api/v1/clock/board"));
   await tablet.evaluate(() => dispatchEvent(new Event("online")));
-  await board;
+  await (await (await board).response())?.finished();
 }
 
 async function unlock(tablet: Page, shortName: string, by: "badge" | "pin"): Promise<void> {
