@@ -1,5 +1,6 @@
 import type { ClockBoard, OwnScreen } from "../board";
 import { LIVE_SECONDS_MAX } from "../domain/punch-time";
+import { clockOffset } from "./clock-offset";
 import { dropItem, keptItems, markRefused, writeOffset, type KeptItem } from "./store";
 
 export type Said = { readonly kind: "ok"; readonly value: unknown } | { readonly kind: "refused"; readonly code: string; readonly message: string; readonly data: Record<string, unknown> } | { readonly kind: "no link" } | { readonly kind: "not enrolled" };
@@ -24,11 +25,12 @@ const post = (path: string, body: unknown, requestId: string) =>
 
 /** The board, and by the way how far the tablet's clock is off. */
 export async function fetchBoard(): Promise<Said & { board?: ClockBoard; offsetMs?: number }> {
-  const sent = Date.now();
+  const [sentAt, begun] = [Date.now(), performance.now()];
   const said = await ask("/api/v1/clock/board", { method: "GET" });
   if (said.kind !== "ok") return said;
   const board = said.value as ClockBoard;
-  const offsetMs = Math.round(new Date(board.at).getTime() - (sent + Date.now()) / 2);
+  const offsetMs = clockOffset({ sentAt, receivedAt: Date.now(), elapsedMs: performance.now() - begun, serverAt: new Date(board.at).getTime() });
+  if (offsetMs === null) return { ...said, board };
   await writeOffset(offsetMs);
   return { ...said, board, offsetMs };
 }

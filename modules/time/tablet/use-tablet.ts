@@ -35,6 +35,7 @@ export function useTablet() {
   const [kept, setKept] = useState<readonly KeptItem[]>([]);
   const offset = useRef(0);
   const boardRef = useRef<ClockBoard | null>(null);
+  const looks = useRef({ begun: 0, shown: 0 });
 
   const show = useCallback((next: ClockBoard) => {
     boardRef.current = next;
@@ -48,10 +49,15 @@ export function useTablet() {
   const sync = useCallback(async (): Promise<Map<string, Said>> => {
     const said = await sendKept().catch(() => new Map<string, Said>());
     await refreshKept();
+    looks.current.begun += 1;
+    const mine = looks.current.begun;
     const got = await fetchBoard();
+    // An answer that a later question has overtaken is old news.
+    if (mine < looks.current.shown) return said;
+    looks.current.shown = mine;
     link(got.kind !== "no link");
     if (got.kind === "ok" && got.board) {
-      offset.current = got.offsetMs ?? 0;
+      offset.current = got.offsetMs ?? offset.current;
       // While something still waits, the tablet knows more than the server.
       if ((await keptItems().catch(() => [])).every((i) => i.refused !== undefined)) show(got.board);
       setState("ready");
