@@ -10,7 +10,8 @@ export function OrderNextKey({ order, slug, invoice }: { order: OrderPage; slug:
   if (order.closedAt || order.cancelledAt) return null;
   const draft = order.versions.find((v) => v.state === "draft");
   const sent = order.versions.find((v) => v.state === "sent");
-  const agreed = order.versions.find((v) => v.state === "approved");
+  // Versions carry prices and are not sent to everybody; the routing comes with the customer's yes.
+  const agreed = order.versions.some((v) => v.state === "approved") || order.operations.length > 0;
   const waitsIn = order.pieces.find((p) => !p.bookedInAt);
   const ready = order.pieces.filter((p) => p.releasedAt && !p.handedOverAt);
   const answer = sent && may.approve ? <AnswerDialog estimateId={sent.id} version={sent.estimateNo} totalMinor={sent.totalMinor ?? 0} customer={order.customer.name} phone={order.customer.phone} variant={agreed ? "plain" : "go"} /> : null;
