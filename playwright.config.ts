@@ -4,7 +4,7 @@ import { defineConfig } from "@playwright/test";
  * The browser journeys. `npm test` (or `npm test -- --only journeys`) starts the product that they walk through and
  * names it here; alone they have nothing to walk through.
  */
-const { E2E_BASE_URL, E2E_CHROMIUM, E2E_REPORT } = process.env;
+const { E2E_BASE_URL, E2E_CHROMIUM, E2E_REPORT, E2E_TRACE } = process.env;
 const asRoot = process.getuid?.() === 0;
 
 export default defineConfig({
@@ -24,7 +24,8 @@ export default defineConfig({
     viewport: { width: 1440, height: 900 },
     locale: "en-US",
     timezoneId: "America/Denver",
-    trace: "retain-on-failure",
+    // A trace keeps a copy of the page at every step and takes as long again as the journeys themselves.
+    trace: E2E_TRACE ? "retain-on-failure" : "off",
     screenshot: "only-on-failure",
     actionTimeout: 15_000,
     launchOptions: {

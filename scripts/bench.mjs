@@ -4,13 +4,13 @@
  *
  *   npm run bench                        8 clients, 4 rounds of 2 s each
  *   npm run bench -- --rounds 8 --ms 4000 --clients 8
- *   npm run bench -- --no-load           without the flow library of ten thousand tests
+ *   npm run bench -- --no-load           without the flow libraries of a hundred and of ten thousand tests
  *   npm run bench -- --from-sources      served by the development server: only to see that it runs, its figures mean nothing
  */
 import fs from "node:fs";
 import path from "node:path";
 import { PROJECT } from "./environment.mjs";
-import { ensurePackages } from "./prepare.mjs";
+import { ensureChromium, ensurePackages } from "./prepare.mjs";
 import { openProduct, TEST_FOLDER } from "./product.mjs";
 import { portFrom } from "./ports.mjs";
 import { heading, Problem, run, say } from "./say.mjs";
@@ -38,6 +38,7 @@ function targetsOf(facts, app, cookie) {
   const api = `/api/v1/s/${facts.slug}`;
   const list = [
     ["floor", s], ["orders", `${s}/orders`], ["order", facts.order && `${s}/orders/${facts.order}`], ["parts", `${s}/parts`], ["flow room", `${s}/flow`], ["flow sheet", facts.headId && `${s}/flow/${facts.headId}`],
+    [`flow family, ${facts.tests} tests`, facts.family && `${s}/flow/library/family?family=${encodeURIComponent(facts.family)}`], [`flow overlay, ${facts.tests} tests`, facts.pair.length === 2 && `${s}/flow/library/overlay?a=${facts.pair[0]}&b=${facts.pair[1]}`],
     [`flow library, ${facts.tests} tests`, `${s}/flow/library`], ["books", `${s}/books`], ["journal", `${s}/books/journal`], ["time", `${s}/time`],
     ["API orders", `${api}/orders`], ["API parts", `${api}/parts`], ["API find", `${api}/find?q=a`], [`API flow library, ${facts.tests} tests`, `${api}/flow/library`], ["API invoices", `${api}/invoices`],
   ];
@@ -59,6 +60,7 @@ await run(async () => {
   const argv = process.argv.slice(2);
   await ensurePackages();
   const { measure } = await import("./bench/measure.mjs");
+  const { beginTest, measureTyping } = await import("./bench/typing.mjs");
   const { signIn } = await import("./drill/sign-in.mjs");
   const { runTypescript } = await import("./database.mjs");
   const { default: pg } = await import("pg");
@@ -81,11 +83,17 @@ await run(async () => {
     const facts = await factsNow();
     heading(`${shape.clients} clients, ${shape.rounds} rounds of ${shape.ms} ms each, over the demo`);
     table(await measure([...floor, ...targetsOf(facts, app, cookie)], shape, (i) => say(`round ${i}`)));
-    if (!argv.includes("--no-load") && fs.existsSync(path.join(PROJECT, "seed/factories/flow-load.ts"))) {
-      heading("The same with a flow library of ten thousand tests");
-      await runTypescript("scripts/bench/load.ts", product.ownerEnv, "The flow library could not be filled:", ["react-server"]);
-      const large = await factsNow();
-      table(await measure([...floor, ...targetsOf(large, app, cookie).filter((t) => /flow/.test(t.name))], shape, (i) => say(`round ${i}`)));
+    if (facts.gear && facts.headId) {
+      heading("From a key to the picture that follows it");
+      await beginTest({ app, cookie, slug: facts.slug, headId: facts.headId, gear: facts.gear });
+      const { floor: bare, sheet } = await measureTyping({ app, cookie, sheet: `/s/${facts.slug}/flow/${facts.headId}`, executablePath: ensureChromium() });
+      for (const [name, r] of [["bare field", bare], ["flow sheet", sheet]]) console.log(`  ${name.padEnd(14)}${r.keys} keys, p50 ${r.p50} ms, p95 ${r.p95} ms, worst ${r.worst} ms`);
+      console.log(`  Worst key of the sheet: ${(sheet.worst / bare.worst).toFixed(2)} x the bare field's; ${sheet.worst <= 100 ? "within" : "NOT within"} 100 ms.`);
+    }
+    for (const tests of argv.includes("--no-load") ? [] : [100, 10_000]) {
+      heading(`The flow room and library with ${tests} more tests of 24 lifts`);
+      await runTypescript("scripts/bench/load.ts", { ...product.ownerEnv, BENCH_TESTS: String(tests) }, "The flow library could not be filled:", ["react-server"]);
+      table(await measure([...floor, ...targetsOf(await factsNow(), app, cookie).filter((t) => /flow/.test(t.name))], shape, (i) => say(`round ${i}`)));
     }
     console.log("\n  Ratios compare within this run only. Floor page: sign-in, rendered anew for each request. Floor query: through the same driver.");
   } finally {

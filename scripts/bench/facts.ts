@@ -13,7 +13,14 @@ const facts = await withShop(shop.id, async (tx) => {
   const [link] = await tx.select({ id: links.id }).from(links).where(and(eq(links.shopId, shop.id), eq(links.purpose, "estimate"), isNull(links.revokedAt), sql`${links.expiresAt} > now()`)).orderBy(desc(links.createdAt)).limit(1);
   const [invoice] = await tx.select({ id: invoices.id }).from(invoices).where(and(eq(invoices.shopId, shop.id), eq(invoices.state, "issued"))).limit(1);
   const { rows: [tests] } = await tx.execute<{ n: number }>(sql`select count(*)::int as n from flow_tests where shop_id = ${shop.id} and state = 'complete'`);
-  return { order: order?.number ?? null, headId: head?.id ?? null, link: link ? new URL(linkAddress(link.id)).pathname : null, invoiceId: invoice?.id ?? null, tests: tests?.n ?? 0 };
+  // The largest family, and two finished tests of one side in it: what the family picture and the overlay are asked for.
+  const { rows: [family] } = await tx.execute<{ name: string }>(sql`select family as name from heads where shop_id = ${shop.id} group by family order by count(*) desc, family limit 1`);
+  const { rows: pair } = await tx.execute<{ id: string }>(sql`
+    select t.id from flow_tests t join heads h on h.shop_id = t.shop_id and h.id = t.head_id
+    where t.shop_id = ${shop.id} and t.state = 'complete' and h.family = ${family?.name ?? ""} and t.side = 'intake' order by t.id limit 2`);
+  const { rows: [gear] } = await tx.execute<{ bench: string; fixture: string }>(sql`
+    select bench_id as bench, fixture_id as fixture from flow_tests where shop_id = ${shop.id} and fixture_id is not null order by started_at desc limit 1`);
+  return { gear: gear ?? null, family: family?.name ?? null, pair: pair.map((r) => r.id), order: order?.number ?? null, headId: head?.id ?? null, link: link ? new URL(linkAddress(link.id)).pathname : null, invoiceId: invoice?.id ?? null, tests: tests?.n ?? 0 };
 });
 await closeDatabase();
 console.log(JSON.stringify({ slug: shop.slug, shopId: shop.id, ...facts }));

@@ -27,11 +27,11 @@ export function SelectInput({
   onBlur,
   ...native
 }: FieldProps & Native & { options: readonly SelectOption[]; placeholder?: string; hideLabel?: boolean }) {
-  const { id, error, form, aria } = useField({ name, label, hint });
+  const { id, error, form, initial, aria } = useField({ name, label, hint });
   return (
     <Field id={id} label={label} hint={hint} error={error} optional={optional} hideLabel={hideLabel} className={className}>
       <span className="in">
-        <select {...native} {...form.register(name, { onChange, onBlur })} {...aria}>
+        <select {...native} defaultValue={initial} {...form.register(name, { onChange, onBlur })} {...aria}>
           {placeholder === undefined ? null : <option value="">{placeholder}</option>}
           {options.map((o) => (
             <option key={o.value} value={o.value} disabled={o.disabled}>

@@ -20,7 +20,7 @@ export interface TextInputProps extends FieldProps, Native {
 
 /** One line of text. */
 export function TextInput({ name, label, hint, optional, className, unit, lead, inside, alignEnd, hideLabel, onChange, onBlur, ...native }: TextInputProps) {
-  const { id, error, form, aria } = useField({ name, label, hint });
+  const { id, error, form, initial, aria } = useField({ name, label, hint });
   return (
     <Field id={id} label={label} hint={hint} error={error} optional={optional} hideLabel={hideLabel} className={className}>
       <span className="in">
@@ -28,6 +28,7 @@ export function TextInput({ name, label, hint, optional, className, unit, lead, 
         <input
           type="text"
           {...native}
+          defaultValue={initial}
           {...form.register(name, { onChange, onBlur })}
           {...aria}
           className={clsx(alignEnd && "at-r")}

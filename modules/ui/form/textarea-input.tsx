@@ -8,11 +8,11 @@ type Native = Omit<TextareaHTMLAttributes<HTMLTextAreaElement>, "name" | "id" | 
 
 /** Several lines of text. */
 export function TextareaInput({ name, label, hint, optional, className, rows = 3, hideLabel, onChange, onBlur, ...native }: FieldProps & Native & { hideLabel?: boolean }) {
-  const { id, error, form, aria } = useField({ name, label, hint });
+  const { id, error, form, initial, aria } = useField({ name, label, hint });
   return (
     <Field id={id} label={label} hint={hint} error={error} optional={optional} hideLabel={hideLabel} className={className}>
       <span className="in">
-        <textarea rows={rows} {...native} {...form.register(name, { onChange, onBlur })} {...aria} />
+        <textarea rows={rows} {...native} defaultValue={initial} {...form.register(name, { onChange, onBlur })} {...aria} />
       </span>
     </Field>
   );

@@ -1,6 +1,6 @@
 "use client";
 
-import { useEffect } from "react";
+import { useEffect, useState } from "react";
 import { useFormContext, useFormState } from "react-hook-form";
 import { errorAt } from "./field-errors";
 import { fieldId, useFormInfo } from "./form-context";
@@ -22,6 +22,8 @@ export function useField({ name, label, hint }: Pick<FieldProps, "name" | "label
   const { errors } = useFormState({ name });
   const id = fieldId(formId, name);
   const error = errorAt(errors, name);
+  // In the server's page too, so that a field that has a value never stands empty until the script runs.
+  const [initial] = useState(() => form.getValues(name) as unknown);
   useEffect(() => tellLabel(name, label), [tellLabel, name, label]);
   const described = [error === undefined ? null : `${id}-err`, hint === undefined ? null : `${id}-hint`].filter((x) => x !== null).join(" ");
   return {
@@ -29,6 +31,7 @@ export function useField({ name, label, hint }: Pick<FieldProps, "name" | "label
     error,
     pending,
     form,
+    initial: typeof initial === "string" ? initial : undefined,
     aria: { id, "aria-invalid": error === undefined ? undefined : true, "aria-describedby": described === "" ? undefined : described },
   } as const;
 }

@@ -61,7 +61,9 @@ export async function takeInBankFile(crew: Crew, name: string, rows: readonly st
 /** Locks the bank line of an amount to what is proposed. */
 export async function lockLine(page: Page, amount: string): Promise<void> {
   await page.getByRole("button").filter({ hasText: amount }).first().click();
-  await page.getByRole("button", { name: "Lock this match" }).click();
+  const key = page.getByRole("button", { name: "Lock this match" });
+  await key.click();
+  await expect(key).toBeHidden();
   await expect(page.getByText("Locked", { exact: true }).first()).toBeVisible();
 }
 

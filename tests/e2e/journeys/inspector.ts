@@ -6,6 +6,7 @@ export async function inspect(crew: Crew, who: string, order: string): Promise<P
   const page = await crew.as(who);
   await page.goto(crew.at(`/orders/${order}/pieces/1/inspect`));
   const form = page.getByRole("form", { name: "Final inspection" });
+  await form.getByRole("checkbox").first().waitFor();
   for (const box of await form.getByRole("checkbox").all()) await box.check();
   for (const back of await form.getByLabel(/, go back$/).all()) await back.fill("4");
   await form.getByRole("button", { name: /^Release / }).click();
