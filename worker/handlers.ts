@@ -6,6 +6,7 @@ import { makeInvoicePaper } from "@/modules/invoices/paper";
 import { sendRefund } from "@/modules/payments/commands";
 import { openPaymentPage } from "@/modules/payments/payment-page";
 import { takePayout, type PayoutFact } from "@/modules/payments/payouts";
+import { reconcile } from "@/modules/payments/reconcile";
 import { settleEvent } from "@/modules/payments/settle-event";
 import type { Task } from "@/modules/access/jobs";
 import type { Handler } from "./queue";
@@ -30,6 +31,7 @@ export const handlers: Partial<Record<Task, Handler>> = {
   "invoices.paper": (ctx, payload) => makeInvoicePaper(ctx, text(payload, "invoiceId"), payload.send === true),
   "payments.openPage": async (ctx, payload) => void (await openPaymentPage(ctx, text(payload, "requestId"))),
   "payments.settleEvent": (ctx, payload) => settleEvent(ctx, text(payload, "eventId")),
+  "payments.reconcile": async () => void (await reconcile()),
   "payments.refund": (ctx, payload) => sendRefund(ctx, text(payload, "refundId")),
   "payments.payout": (ctx, payload) => takePayout(ctx, payload.payout as PayoutFact, typeof payload.eventId === "string" ? payload.eventId : null),
 };

@@ -4,7 +4,7 @@ import { jobs } from "@/db/schema";
 import type { TxContext } from "./context";
 
 /** Tasks a worker knows. Each is safe to run twice. */
-export type Task = "mail.send" | "payments.openPage" | "payments.settleEvent" | "payments.payout" | "payments.refund" | "invoices.paper" | "estimates.paper" | "purchasing.paper";
+export type Task = "mail.send" | "payments.openPage" | "payments.settleEvent" | "payments.payout" | "payments.refund" | "payments.reconcile" | "invoices.paper" | "estimates.paper" | "purchasing.paper";
 
 /** Leaves work for later in the transaction of the fact that causes it. A dedupe key makes a repeat one job. */
 export async function leaveJob(ctx: TxContext, task: Task, payload: Record<string, unknown>, options: { dedupeKey?: string; runAt?: Date } = {}): Promise<void> {

@@ -213,6 +213,8 @@ export const explainPayoutItem = defineCommand({
     const booked = await bookPayment(ctx, { for: { invoiceId: input.invoiceId }, method: "card", amountMinor: item.grossMinor, receivedAt: ctx.now, providerPaymentId: item.sourceId || item.providerTransactionId, note: "Card terminal" });
     if (!booked.ok) return booked;
     await ctx.tx.update(payoutItems).set({ paymentId: booked.value.id }).where(at);
+    // What was told about this charge before it was known here, such as a refund, is looked at again.
+    await leaveJob(ctx, "payments.reconcile", {}, { dedupeKey: `explained:${item.id}` });
     const payout = await bookPayout(ctx, item.payoutId);
     return payout.ok ? ok({ paymentId: booked.value.id, receiptNumber: booked.value.receiptNumber, booked: payout.value.booked }) : payout;
   },

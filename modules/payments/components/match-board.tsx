@@ -63,7 +63,7 @@ export function MatchBoard({ board }: { board: Board }) {
           const isCurrent = l.id === at;
           return [
             <button key={`b${l.id}`} id={`bank-${l.id}`} type="button" className={`jb-c bk${l.state === "locked" ? " on" : ""}${isCurrent ? " cur" : ""}`} aria-pressed={isCurrent} onClick={() => setAt(l.id)} onFocus={() => setAt(l.id)} onKeyDown={onKey}>
-              <span className="mid q">{shortDate(l.date, place.locale).split(" ").slice(1).join(" ")}</span><span>{l.text || "No text"}</span><b className="num amt">{a(l.amountMinor)}</b>
+              <span className="mid q">{shortDate(l.date, place.locale).split(" ").slice(1).join(" ")}</span><span>{l.text || "No text"}</span><b className="num amt">{a(l.amountMinor)}</b>{l.state === "locked" ? <span className="sr-only">locked</span> : null}
             </button>,
             <div key={`m${l.id}`} className={`jb-m${l.state === "locked" ? "" : targets.length ? " pro" : " none"}`}>
               {l.state === "locked" || targets.length ? <Joint state={l.state === "locked" ? "locked" : "proposed"} /> : <span />}

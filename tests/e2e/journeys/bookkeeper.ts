@@ -60,11 +60,10 @@ export async function takeInBankFile(crew: Crew, name: string, rows: readonly st
 
 /** Locks the bank line of an amount to what is proposed. */
 export async function lockLine(page: Page, amount: string): Promise<void> {
-  await page.getByRole("button").filter({ hasText: amount }).first().click();
-  const key = page.getByRole("button", { name: "Lock this match" });
-  await key.click();
-  await expect(key).toBeHidden();
-  await expect(page.getByText("Locked", { exact: true }).first()).toBeVisible();
+  const line = page.getByRole("button").filter({ hasText: amount }).first();
+  await line.click();
+  await page.getByRole("button", { name: "Lock this match" }).click();
+  await expect(line).toHaveClass(/\bon\b/);
 }
 
 /** Sum row and rows of the trial balance, as on the screen: account to balance. */
@@ -88,6 +87,13 @@ export async function explainSale(page: Page, amount: string, invoice: string): 
   await which.selectOption(option ?? "");
   await part.getByRole("button", { name: "Book it" }).click();
   await expect(which).toBeHidden();
+  // Its refund, told before the charge was known, follows by itself.
+  await expect(async () => {
+    await page.reload();
+    await page.getByRole("button").filter({ hasText: "2,174.61" }).first().click();
+    await expect(part).toBeVisible({ timeout: 2000 });
+    await expect(page.getByText("waits for its payment")).toBeHidden({ timeout: 500 });
+  }).toPass({ timeout: 30_000 });
 }
 
 /** How many lines are locked. */
