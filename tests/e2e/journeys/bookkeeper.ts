@@ -71,8 +71,10 @@ export async function trialBalance(crew: Crew): Promise<Record<string, string>> 
   const page = await crew.as("Priya");
   await page.goto(crew.at("/books/balance"));
   const rows: Record<string, string> = {};
-  for (const row of await page.getByRole("table", { name: "Trial balance" }).getByRole("row").all()) {
-    const cells = (await row.innerText()).split("\t").map((c) => c.trim());
+  const table = page.getByRole("table", { name: "Trial balance" });
+  await table.waitFor();
+  for (const row of await table.getByRole("row").all()) {
+    const cells = (await row.locator("th, td").allTextContents()).map((c) => c.trim());
     rows[cells[0] ?? ""] = cells.at(-1) ?? "";
   }
   return rows;

@@ -12,6 +12,7 @@ export async function profit(crew: Crew, order: string): Promise<string> {
   const page = await crew.as("Marit");
   await page.goto(crew.at(`/orders/${order}`));
   const bay = page.getByRole("region", { name: "Profit of this job" });
+  await bay.locator("summary").first().waitFor();
   for (const part of await bay.locator("summary").all()) await part.click();
   return (await bay.innerText()).replace(/\s+/g, " ");
 }
