@@ -54,7 +54,7 @@ export function SignInForm({ next }: { next: string }) {
           <button type="button" className="lk text-small" aria-pressed={shown} aria-controls="password" onClick={() => setShown(!shown)}>{shown ? "Hide" : "Show"}</button>
         </span>
       </div>
-      <button className="btn go" disabled={pending || !ready}>{pending ? "Signing in" : "Sign in"}</button>
+      <button className="btn go" disabled={pending || !ready} data-waking={ready ? undefined : ""}>{pending ? "Signing in" : "Sign in"}</button>
       <p className="sm mid border-t border-line pt-4">On the shop floor? <Link className="lk" href="/clock">Use badge or PIN</Link></p>
     </form>
   );
