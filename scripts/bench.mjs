@@ -83,10 +83,10 @@ await run(async () => {
     const facts = await factsNow();
     heading(`${shape.clients} clients, ${shape.rounds} rounds of ${shape.ms} ms each, over the demo`);
     table(await measure([...floor, ...targetsOf(facts, app, cookie)], shape, (i) => say(`round ${i}`)));
-    if (facts.gear && facts.headId) {
+    if (facts.gear && facts.waitingHeadId) {
       heading("From a key to the picture that follows it");
-      await beginTest({ app, cookie, slug: facts.slug, headId: facts.headId, gear: facts.gear });
-      const { floor: bare, sheet } = await measureTyping({ app, cookie, sheet: `/s/${facts.slug}/flow/${facts.headId}`, executablePath: ensureChromium() });
+      await beginTest({ app, cookie, slug: facts.slug, headId: facts.waitingHeadId, gear: facts.gear });
+      const { floor: bare, sheet } = await measureTyping({ app, cookie, sheet: `/s/${facts.slug}/flow/${facts.waitingHeadId}`, executablePath: ensureChromium() });
       for (const [name, r] of [["bare field", bare], ["flow sheet", sheet]]) console.log(`  ${name.padEnd(14)}${r.keys} keys, p50 ${r.p50} ms, p95 ${r.p95} ms, worst ${r.worst} ms`);
       console.log(`  Worst key of the sheet: ${(sheet.worst / bare.worst).toFixed(2)} x the bare field's; ${sheet.worst <= 100 ? "within" : "NOT within"} 100 ms.`);
     }

@@ -20,7 +20,11 @@ const facts = await withShop(shop.id, async (tx) => {
     where t.shop_id = ${shop.id} and t.state = 'complete' and h.family = ${family?.name ?? ""} and t.side = 'intake' order by t.id limit 2`);
   const { rows: [gear] } = await tx.execute<{ bench: string; fixture: string }>(sql`
     select bench_id as bench, fixture_id as fixture from flow_tests where shop_id = ${shop.id} and fixture_id is not null order by started_at desc limit 1`);
-  return { gear: gear ?? null, family: family?.name ?? null, pair: pair.map((r) => r.id), order: order?.number ?? null, headId: head?.id ?? null, link: link ? new URL(linkAddress(link.id)).pathname : null, invoiceId: invoice?.id ?? null, tests: tests?.n ?? 0 };
+  // A head that was measured before and waits for its after test: the one to type into.
+  const { rows: [waits] } = await tx.execute<{ id: string }>(sql`
+    select t.head_id as id from flow_tests t where t.shop_id = ${shop.id} and t.purpose = 'baseline' and t.state = 'complete'
+      and not exists (select 1 from flow_tests o where o.shop_id = t.shop_id and o.head_id = t.head_id and o.purpose <> 'baseline') order by t.started_at desc limit 1`);
+  return { gear: gear ?? null, waitingHeadId: waits?.id ?? null, family: family?.name ?? null, pair: pair.map((r) => r.id), order: order?.number ?? null, headId: head?.id ?? null, link: link ? new URL(linkAddress(link.id)).pathname : null, invoiceId: invoice?.id ?? null, tests: tests?.n ?? 0 };
 });
 await closeDatabase();
 console.log(JSON.stringify({ slug: shop.slug, shopId: shop.id, ...facts }));

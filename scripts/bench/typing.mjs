@@ -34,7 +34,7 @@ export async function beginTest({ app, cookie, slug, headId, gear }) {
   const readings = ["0.050", "0.100", "0.150", "0.200", "0.250", "0.300", "0.350", "0.400"].map((lift, i) => ({ lift, value: String(20 + i * 12) }));
   const answer = await fetch(`${app}/api/v1/s/${slug}/flow/tests`, {
     method: "POST", headers: { cookie, origin: app, "content-type": "application/json", "idempotency-key": randomUUID() },
-    body: JSON.stringify({ headId, side: "intake", purpose: "check", benchId: gear.bench, fixtureId: gear.fixture, nominal: "28", liftUnit: "in", camLift: "0.340", valve: "31", readings, complete: false }),
+    body: JSON.stringify({ headId, side: "intake", purpose: "after", benchId: gear.bench, fixtureId: gear.fixture, nominal: "28", liftUnit: "in", camLift: "0.340", valve: "31", readings, complete: false }),
   });
   if (!answer.ok) throw new Error(`The test could not be begun: ${answer.status} ${await answer.text()}`);
 }
