@@ -5,6 +5,9 @@ import { differenceText, liftWords } from "./flow-words";
 
 const [ROW, TOP] = [34, 34];
 
+/** Dots of 4 px radius in one outline: ten ports at 24 lifts would be a lot of circles. */
+const dotsAt = (xs: readonly number[], y: number) => xs.map((x) => `M${(x - 4).toFixed(1)} ${y}a4 4 0 1 0 8 0a4 4 0 1 0 -8 0`).join("");
+
 /** One strip a lift: a dot for each port's gain, the middle as a bar, losses left of zero as open dots with their number in words. */
 export function LibraryGainStrips({ gains, unit, locale, names, width = 620 }: { gains: readonly LiftGains[]; unit: LiftUnit; locale: string; names: string; width?: number }) {
   if (gains.length === 0) return <p className="mid">No port of these heads could be compared before and after, so there is no gain to show.</p>;
@@ -34,7 +37,8 @@ export function LibraryGainStrips({ gains, unit, locale, names, width = 620 }: {
             <text className="lab" x={left - 10} y={y + 4} textAnchor="end">{liftWords(g.liftUm, unit, locale)}</text>
             <path className="gr" d={`M${left} ${y + ROW / 2}H${width}`} />
             {g.isThin ? null : <rect x={Math.min(x(0), x(g.medianCfm))} y={y - 7} width={Math.max(1, Math.abs(x(g.medianCfm) - x(0)))} height={14} className={g.medianCfm > 0 ? "gain" : undefined} fill={g.medianCfm > 0 ? undefined : "none"} stroke="var(--ink)" strokeWidth={1} />}
-            {g.dots.map((d) => <circle key={d.port} className={d.gainCfm < 0 ? "pw" : "pt"} cx={x(d.gainCfm)} cy={y} r={4} />)}
+            <path className="pt" d={dotsAt(g.dots.filter((d) => d.gainCfm >= 0).map((d) => x(d.gainCfm)), y)} />
+            {g.losses === 0 ? null : <path className="pw" d={dotsAt(g.dots.filter((d) => d.gainCfm < 0).map((d) => x(d.gainCfm)), y)} />}
             <text className="lab" x={width - 52} y={y + 4} textAnchor="end">{differenceText(g.medianCfm, locale)}</text>
             <text x={width - 4} y={y + 4} textAnchor="end">{g.losses > 0 ? `${g.n}, ▼${g.losses}` : g.n}</text>
           </g>

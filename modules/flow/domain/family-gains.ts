@@ -1,4 +1,8 @@
-import type { SideGain } from "./side-gain";
+import { ok, type Result } from "@/modules/kernel/result";
+import type { RawTest } from "./raw-test";
+import type { LiftReading } from "./repeats";
+import { compareSets, type ShopComparison } from "./shop-comparison";
+import { readingSetOf } from "./test-figures";
 
 export interface GainDot {
   readonly liftUm: number;
@@ -27,12 +31,34 @@ export function median(values: readonly number[]): number {
   return low === undefined || high === undefined ? Number.NaN : (low + high) / 2;
 }
 
+/** What is kept of a finished test, so that it need not be computed from its cells again. */
+export interface KeptFigures {
+  readonly readings: readonly LiftReading[];
+  readonly isConverted: boolean;
+}
+
+/**
+ * One port before against after, from the figures kept of both tests; null without a before test. No verdict against the noise:
+ * that needs the single readings. @param benchCheckHoursMax the shop's limit, hours. Errors: as `compareSets`.
+ */
+export function portChange(input: { before: { test: RawTest; figures: KeptFigures } | null; after: { test: RawTest; figures: KeptFigures }; benchCheckHoursMax: number }): Result<ShopComparison | null> {
+  const { before, after, benchCheckHoursMax } = input;
+  if (!before) return ok(null);
+  return compareSets({
+    before: readingSetOf(before.test, before.figures), after: readingSetOf(after.test, after.figures), camLiftUm: after.test.camLiftUm ?? before.test.camLiftUm, benchCheckHoursMax,
+  });
+}
+
 /** Gains of several ports, lift by lift. Only comparable ports speak; the others have no figure to give. */
-export function gainsByLift(gains: readonly SideGain[]): LiftGains[] {
+export function gainsByLift(changes: readonly (ShopComparison | null)[]): LiftGains[] {
   const byLift = new Map<number, GainDot[]>();
-  gains.forEach((gain, port) => {
-    if (gain.state !== "comparable") return;
-    for (const row of gain.rows) byLift.set(row.liftUm, [...(byLift.get(row.liftUm) ?? []), { liftUm: row.liftUm, gainCfm: row.gainCfm, port }]);
+  changes.forEach((change, port) => {
+    if (!change?.comparable) return;
+    for (const { liftUm, gainCfm } of change.rows) {
+      const dots = byLift.get(liftUm) ?? [];
+      dots.push({ liftUm, gainCfm, port });
+      byLift.set(liftUm, dots);
+    }
   });
   return [...byLift].sort(([a], [b]) => a - b).map(([liftUm, dots]) => ({
     liftUm, dots: [...dots].sort((a, b) => b.gainCfm - a.gainCfm), n: dots.length, medianCfm: median(dots.map((d) => d.gainCfm)),

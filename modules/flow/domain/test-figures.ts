@@ -73,12 +73,15 @@ export function figuresOfTest(test: RawTest): TestFigures {
   return { side: test.side, cells, readings, doubts, isConverted: cells.some((c) => c.flags.includes("CONVERTED_PRESSURE")) };
 }
 
+/** Every reading that counts, repeats apart: those with a flow that were not excluded. */
+export const countingFlows = (figures: Pick<TestFigures, "cells">): LiftReading[] => figures.cells.flatMap(({ liftUm, flowCfm, excludedReason }) => (flowCfm === null || excludedReason !== null ? [] : [{ liftUm, flowCfm }]));
+
 const valvesOf = (text: string): string[] => text.split(",").map((v) => v.trim()).filter(Boolean);
 export const valveWords = (test: Pick<RawTest, "valveMm">): string => (test.valveMm === null ? "not recorded" : `${test.valveMm} mm`);
 export const seatWords = (test: Pick<RawTest, "seatNote">): string => test.seatNote.trim() || "not recorded";
 
 /** A test as one side of a comparison: its conditions and one figure a lift. */
-export function readingSetOf(test: RawTest, figures: TestFigures = figuresOfTest(test)): ReadingSet {
+export function readingSetOf(test: RawTest, figures: { readonly readings: readonly LiftReading[]; readonly isConverted: boolean } = figuresOfTest(test)): ReadingSet {
   return {
     conditions: {
       side: test.side, benchId: test.bench.id, benchName: test.bench.name,

@@ -1,22 +1,26 @@
 import "server-only";
 import { and, eq, inArray, sql } from "drizzle-orm";
-import { engineFamilies, flowTests, heads } from "@/db/schema";
-import { inShop, mustBeAble, NotFound, settingsOf, type ShopContext } from "@/modules/access/context";
+import { engineFamilies, flowTests, flowTestSummaries, heads } from "@/db/schema";
+import { inShop, mustBeAble, NotFound, settingsOf, type ShopContext, type TxContext } from "@/modules/access/context";
+import { historyOfPair } from "../domain/bench-history";
 import type { Reason, PortSide } from "../domain/comparison-reasons";
-import { gainsByLift, type LiftGains } from "../domain/family-gains";
+import { gainsByLift, portChange, type KeptFigures, type LiftGains } from "../domain/family-gains";
 import type { LiftUnit } from "../domain/lift-ladder";
 import { noiseOfTests, type GainNoise } from "../domain/noise-rows";
+import type { RawTest } from "../domain/raw-test";
 import type { LiftReading } from "../domain/repeats";
-import { compareSets } from "../domain/shop-comparison";
-import { conditionWords, sideGain, type SideGain } from "../domain/side-gain";
+import { compareSets, type ShopComparison } from "../domain/shop-comparison";
+import { conditionWords } from "../domain/side-gain";
 import { standingTests } from "../domain/standing-tests";
 import { figuresOfTest, readingSetOf } from "../domain/test-figures";
+import { FLOW_CONSTANTS_VERSION } from "../domain/test-summary";
 import { valveListWords, type ValveOfFamily } from "../domain/valve-list";
 import { standsInLibrary } from "../library-sql";
+import { withRepeatHistory } from "./repeat-history";
 import { rawTests } from "./tests-of-head";
 
 /** A family's middle curve is taken over so many of its newest tests, so that the answer takes as long in year ten as in year one. */
-export const MEDIAN_OF_NEWEST = 100;
+export const MEDIAN_OF_NEWEST = 50;
 
 export interface MedianPoint extends LiftReading { n: number }
 export interface PortOfFamily { headId: string; cylinder: number; mark: string; ownerKind: string; workDone: string[]; flowedAt: string; gain: "comparable" | "withheld" | "absent"; reasons: string[]; meanGainCfm: number | null; meanPercent: number | null; notes: string[] }
@@ -35,10 +39,21 @@ export interface FamilyPicture {
 interface Medians extends Record<string, unknown> { purpose: string; lift_um: number; flow: number; n: number }
 interface Best extends Record<string, unknown> { test_id: string; head_id: string; mark: string; cylinder: number; started_at: string; mean: number; lifts_um: number[]; flows_cfm: number[] }
 
-function portLine(gain: SideGain, head: { id: string; mark: string; ownerKind: string; workDone: string[] }, cylinder: number, flowedAt: string): PortOfFamily {
-  const base = { headId: head.id, cylinder, mark: head.mark, ownerKind: head.ownerKind, workDone: head.workDone, flowedAt, gain: gain.state, meanGainCfm: null, meanPercent: null, reasons: [], notes: [] };
-  if (gain.state === "comparable") return { ...base, meanGainCfm: gain.meanGainCfm, meanPercent: gain.meanPercent, notes: gain.notes.map((n) => n.words) };
-  return gain.state === "withheld" ? { ...base, reasons: gain.reasons.map((r) => r.words), notes: gain.notes.map((n) => n.words) } : base;
+function portLine(change: ShopComparison | null, head: { id: string; mark: string; ownerKind: string; workDone: string[] }, cylinder: number, flowedAt: string): PortOfFamily {
+  const base = { headId: head.id, cylinder, mark: head.mark, ownerKind: head.ownerKind, workDone: head.workDone, flowedAt, meanGainCfm: null, meanPercent: null, reasons: [], notes: [] };
+  if (change === null) return { ...base, gain: "absent" };
+  const notes = change.notes.map((n) => n.words);
+  return change.comparable ? { ...base, gain: "comparable", meanGainCfm: change.meanGainCfm, meanPercent: change.meanPercent, notes } : { ...base, gain: "withheld", reasons: change.reasons.map((r) => r.words), notes };
+}
+
+/** Figures of finished tests, by id: the kept ones, and from the cells where they are missing or were made by older rules. */
+async function figuresOf(ctx: TxContext, testIds: readonly string[]): Promise<Map<string, KeptFigures>> {
+  const kept = testIds.length === 0 ? [] : await ctx.tx.select({ testId: flowTestSummaries.testId, liftsUm: flowTestSummaries.liftsUm, flowsCfm: flowTestSummaries.flowsCfm, isConverted: flowTestSummaries.isConverted }).from(flowTestSummaries)
+    .where(and(eq(flowTestSummaries.shopId, ctx.shop.id), inArray(flowTestSummaries.testId, [...testIds]), eq(flowTestSummaries.constantsVersion, FLOW_CONSTANTS_VERSION)));
+  const figures = new Map<string, KeptFigures>(kept.map((k) => [k.testId, { readings: k.liftsUm.map((liftUm, i) => ({ liftUm, flowCfm: k.flowsCfm[i] ?? Number.NaN })), isConverted: k.isConverted }]));
+  const missing = await rawTests(ctx, { testIds: testIds.filter((id) => !figures.has(id)) });
+  for (const test of missing) figures.set(test.id, figuresOfTest(test));
+  return figures;
 }
 
 /** What a family did: middle curves, the best one, and the gains of the last heads at each lift. @throws NotFound */
@@ -81,17 +96,23 @@ export async function familyPicture(ctx: ShopContext, ask: { family: string; sid
     const headRows = headIds.length === 0 ? [] : await tx.select({ id: heads.id, mark: heads.mark, ownerKind: heads.ownerKind, workDone: heads.workDone }).from(heads).where(and(eq(heads.shopId, s), inArray(heads.id, headIds)));
     const sideTests = headIds.length === 0 ? [] : await tx.select({ id: flowTests.id }).from(flowTests)
       .where(and(eq(flowTests.shopId, s), inArray(flowTests.headId, headIds), eq(flowTests.side, ask.side), eq(flowTests.state, "complete"), inArray(flowTests.purpose, ["baseline", "after"])));
-    const tests = await rawTests(inner, { testIds: sideTests.map((t) => t.id) });
-    const found: { line: PortOfFamily; gain: SideGain }[] = [];
-    for (const headId of headIds) {
+    const tests = await rawTests(inner, { testIds: sideTests.map((t) => t.id), cells: false });
+    const standing = headIds.flatMap((headId) => {
+      const ofHead = tests.filter((t) => t.headId === headId);
+      return [...new Set(ofHead.map((t) => t.cylinder))].sort((x, y) => x - y).map((cylinder) => ({ headId, cylinder, ...standingTests(ofHead.filter((t) => t.cylinder === cylinder), ask.side, "complete") }));
+    });
+    const figures = await figuresOf(inner, standing.flatMap(({ before, after }) => [before, after].flatMap((t) => (t ? [t.id] : []))));
+    const withFigures = (test: RawTest | null) => {
+      const known = test && figures.get(test.id);
+      return test && known ? { test, figures: known } : null;
+    };
+    const found = standing.flatMap(({ headId, cylinder, before, after: newest }) => {
       const head = headRows.find((h) => h.id === headId);
-      const cylinders = [...new Set(tests.filter((t) => t.headId === headId && t.state === "complete").map((t) => t.cylinder))].sort((a, b) => a - b);
-      for (const cylinder of cylinders) {
-        const standing = standingTests(tests.filter((t) => t.headId === headId && t.cylinder === cylinder), ask.side, "complete");
-        const gain = sideGain(standing, ask.side, settings.benchCheckHours);
-        if (head && gain.ok && standing.after) found.push({ line: portLine(gain.value, head, cylinder, standing.after.startedAt), gain: gain.value });
-      }
-    }
+      const after = withFigures(newest);
+      if (!head || !after) return [];
+      const change = portChange({ before: withFigures(before), after, benchCheckHoursMax: settings.benchCheckHours });
+      return change.ok ? [{ line: portLine(change.value, head, cylinder, after.test.startedAt), change: change.value }] : [];
+    });
     const camLiftUm = (ask.side === "intake" ? family?.camLiftIntakeUm : family?.camLiftExhaustUm) ?? tests.at(-1)?.camLiftUm ?? null;
     return {
       family: ask.family, side: ask.side, liftUnit: tests.at(-1)?.liftUnit ?? "in", atInH2O, camLiftUm, valves: valveListWords((family?.valves ?? []) as ValveOfFamily[], ask.side),
@@ -101,7 +122,7 @@ export async function familyPicture(ctx: ShopContext, ask: { family: string; sid
         testId: best.test_id, headId: best.head_id, mark: best.mark, cylinder: best.cylinder, startedAt: new Date(best.started_at).toISOString(), meanToCamCfm: best.mean,
         readings: best.lifts_um.map((liftUm, i) => ({ liftUm, flowCfm: best.flows_cfm[i] ?? Number.NaN })),
       } : null,
-      ports: found.map((f) => f.line), gains: gainsByLift(found.map((f) => f.gain)),
+      ports: found.map((f) => f.line), gains: gainsByLift(found.map((f) => f.change)),
     };
   });
 }
@@ -138,7 +159,7 @@ export async function overlayOf(ctx: ShopContext, ask: { a: string; b: string })
   mustBeAble(ctx, "flow.see");
   return inShop(ctx, async (tx) => {
     const inner = { ...ctx, tx };
-    const found = await rawTests(inner, { testIds: [ask.a, ask.b] });
+    const found = await withRepeatHistory(inner, await rawTests(inner, { testIds: [ask.a, ask.b] }));
     const [a, b] = [found.find((t) => t.id === ask.a), found.find((t) => t.id === ask.b)];
     if (!a || !b || a.state !== "complete" || b.state !== "complete") throw new NotFound("test");
     const { benchCheckHours } = await settingsOf(inner);
@@ -160,6 +181,6 @@ export async function overlayOf(ctx: ShopContext, ask: { a: string; b: string })
       return { ...base, comparable: false, reasons: asFirstAndSecond(value.reasons, base.samePort, daysApart), notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null })), meanDifferenceCfm: null, noise: null };
     }
     const rows = [...value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: r.gainCfm })), ...value.unpairedRows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null }))];
-    return { ...base, comparable: true, reasons: [], notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: rows.sort((x, y) => x.liftUm - y.liftUm), meanDifferenceCfm: value.meanGainCfm, noise: noiseOfTests(figuresOfTest(a), figuresOfTest(b), b) };
+    return { ...base, comparable: true, reasons: [], notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: rows.sort((x, y) => x.liftUm - y.liftUm), meanDifferenceCfm: value.meanGainCfm, noise: noiseOfTests(figuresOfTest(a), figuresOfTest(b), b, historyOfPair(a, b)) };
   });
 }

@@ -16,13 +16,18 @@ export async function cellsOf(ctx: ShopContext, testIds: readonly string[]): Pro
       liftUm: r.liftUm, repeatNo: r.repeatNo, revision: r.revision, valueText: r.clearedAt ? "" : r.valueText, valueUnit: r.valueUnit as RawCell["valueUnit"], rangeLabel: r.rangeLabel,
       pressureText: r.pressureText, pressureUnit: r.pressureUnit as RawCell["pressureUnit"], acceptedReason: r.acceptedReason, excludedReason: r.excludedReason, takenAt: r.takenAt.toISOString(),
     };
-    byTest.set(r.testId, [...(byTest.get(r.testId) ?? []), cell]);
+    const cells = byTest.get(r.testId) ?? [];
+    cells.push(cell);
+    byTest.set(r.testId, cells);
   }
   return byTest;
 }
 
-/** Tests by head (one or many), or by their own ids, with cells as typed. Oldest first. No rights are asked here: callers do. */
-export async function rawTests(ctx: ShopContext, which: { headIds: readonly string[] } | { testIds: readonly string[] }): Promise<(RawTest & { headId: string; cylinder: number })[]> {
+/**
+ * Tests by head (one or many), or by their own ids, with cells as typed. Oldest first. No rights are asked here: callers do.
+ * `cells: false` leaves the cells out, for who has the figures already.
+ */
+export async function rawTests(ctx: ShopContext, which: ({ headIds: readonly string[] } | { testIds: readonly string[] }) & { cells?: boolean }): Promise<(RawTest & { headId: string; cylinder: number })[]> {
   const ids = "headIds" in which ? which.headIds : which.testIds;
   if (ids.length === 0) return [];
   const rows = await inShop(ctx, (tx) => tx.select({ t: flowTests, bench: benches, fixture: fixtures, operator: { id: people.id, name: people.shortName }, liftMm: liftDevices.uncertaintyMm, liftStepMm: liftDevices.resolutionMm }).from(flowTests)
@@ -32,7 +37,7 @@ export async function rawTests(ctx: ShopContext, which: { headIds: readonly stri
     .leftJoin(liftDevices, and(eq(liftDevices.shopId, flowTests.shopId), eq(liftDevices.id, flowTests.liftDeviceId)))
     .where(and(eq(flowTests.shopId, ctx.shop.id), inArray("headIds" in which ? flowTests.headId : flowTests.id, [...ids])))
     .orderBy(asc(flowTests.startedAt), desc(flowTests.side), asc(flowTests.runNo), asc(flowTests.id)));
-  const cells = await cellsOf(ctx, rows.map((r) => r.t.id));
+  const cells = await cellsOf(ctx, which.cells === false ? [] : rows.map((r) => r.t.id));
   return rows.map(({ t, bench, fixture, operator, liftMm, liftStepMm }) => ({
     headId: t.headId, cylinder: t.cylinder,
     id: t.id, side: t.side as RawTest["side"], purpose: t.purpose as RawTest["purpose"], runNo: t.runNo, state: t.state as RawTest["state"], version: t.version,
