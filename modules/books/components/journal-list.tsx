@@ -25,8 +25,8 @@ export function JournalList({ rows, slug, place }: { rows: readonly EntryView[];
               <tr key={`${e.id}${i}`}>
                 <td className="q">{i === 0 ? e.number : ""}</td>
                 <td className="nw">{i === 0 ? date(e.date, place.locale) : ""}</td>
-                <td>{i === 0 ? (href ? <TextLink href={href}>{e.text}</TextLink> : <b>{e.text}</b>) : i === 1 ? <span className="mid sm">{[e.customer, e.orderNumber, e.by].filter(Boolean).join(", ")}</span> : ""}</td>
-                <td><TextLink href={`/s/${slug}/books/journal?account=${l.account}`}>{l.account}</TextLink> {l.name}</td>
+                <td className="min-w-48">{i === 0 ? (href ? <TextLink href={href}>{e.text}</TextLink> : <b>{e.text}</b>) : i === 1 ? <span className="mid sm">{[e.customer, e.orderNumber, e.by].filter(Boolean).join(", ")}</span> : ""}</td>
+                <td className="min-w-36"><TextLink href={`/s/${slug}/books/journal?account=${l.account}`}>{l.account}</TextLink> {l.name}</td>
                 <td className="r q">{l.amountMinor > 0 ? amount(l.amountMinor, place) : ""}</td>
                 <td className="r q">{l.amountMinor < 0 ? amount(-l.amountMinor, place) : ""}</td>
               </tr>

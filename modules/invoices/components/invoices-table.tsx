@@ -61,7 +61,7 @@ export function InvoicesTable({ view, first }: { view: InvoiceView; first: Invoi
         error={<ErrorState title="The invoices could not be fetched" action={<Button onClick={() => void refetch()}>Try again</Button>}>Nothing was changed.</ErrorState>}
         empty={<EmptyState title={words ? "Nothing of that name or sum" : `No ${WORDS[view].toLowerCase()} invoices`}>{view === "open" ? "Issued invoices stand here until they are paid." : "Nothing to see in this view."}</EmptyState>}
         compact={(r) => (
-          <span className="row2"><b className="ord">{r.number ?? "Draft"}</b><b>{r.customer}</b><span className="q at-r">{amount(r.openMinor > 0 ? r.openMinor : r.totalMinor, place)}</span><span className="l2">{stateOf(r)}</span><span className="at-r sm mid">{r.dueOn ? date(r.dueOn, place.locale) : ""}</span></span>
+          <span className="row2 wide"><b>{r.customer}</b><span className="q at-r">{amount(r.openMinor > 0 ? r.openMinor : r.totalMinor, place)}</span><span className="l2"><span className="ord nw">{r.number ?? "Draft"}</span> {stateOf(r)}</span><span className="at-r sm mid">{r.dueOn ? date(r.dueOn, place.locale) : ""}</span></span>
         )}
       />
       {hasNextPage ? <div className="bar"><Button variant="lo" pending={isFetchingNextPage} pendingText="Fetching…" onClick={() => void fetchNextPage()}>Show more</Button></div> : null}
