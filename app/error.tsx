@@ -1,6 +1,6 @@
 "use client";
 import { BrokenPage } from "@/modules/ui/broken-page";
 
-export default function RootError({ error, reset }: { error: Error & { digest?: string }; reset: () => void }) {
-  return <BrokenPage error={error} retry={reset} />;
+export default function RootError({ error, retry }: { error: Error & { digest?: string }; retry: () => void }) {
+  return <BrokenPage error={error} retry={retry} />;
 }

@@ -12,18 +12,6 @@ function databaseFault(error: unknown): { state: string; constraint: string } | 
 /** The same transaction may well pass if tried again: serialisation failure, deadlock. */
 export const isRetryable = (error: unknown): boolean => ["40001", "40P01"].includes(databaseFault(error)?.state ?? "");
 
-/** The database is away, full, out of connections, or too busy to finish within its limits (statement, lock): nothing was written; try again later. */
-export function isOutage(error: unknown): boolean {
-  const state = databaseFault(error)?.state ?? "";
-  if (/^(08|57P|53)|^(57014|55P03|25P03)$/.test(state)) return true;
-  let e: unknown = error;
-  for (let depth = 0; depth < 4 && e instanceof Error; depth++) {
-    if (/ECONNREFUSED|ECONNRESET|EPIPE|timeout exceeded when trying to connect|Connection terminated/.test(`${(e as { code?: string }).code ?? ""} ${e.message}`)) return true;
-    e = e.cause;
-  }
-  return false;
-}
-
 /** Constraints that are rules of the shop, with the refusal a person can act on. */
 const RULES: Record<string, { code: string; message: string; field?: string }> = {
   stock_not_below_zero: { code: "INSUFFICIENT_STOCK", message: "There is not that much on the shelf. Count it or take in more first." },

@@ -1,6 +1,7 @@
 import "server-only";
 import { sql } from "drizzle-orm";
-import { database, type Tx } from "./client";
+import { connections, type Tx } from "./client";
+import { transact } from "./transaction";
 
 export type { Tx } from "./client";
 
@@ -9,7 +10,7 @@ const UUID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/;
 /** Opens the room of one shop: a transaction in which row security shows that shop and no other. */
 export function withShop<T>(shopId: string, fn: (tx: Tx) => Promise<T>): Promise<T> {
   if (!UUID.test(shopId)) throw new TypeError("not a shop id");
-  return database().transaction(async (tx) => {
+  return transact(connections(), async (tx) => {
     await tx.execute(sql`select set_config('app.shop_id', ${shopId}, true)`);
     return fn(tx);
   });
@@ -17,7 +18,7 @@ export function withShop<T>(shopId: string, fn: (tx: Tx) => Promise<T>): Promise
 
 /** Memberships of one signed-in user, over the shops. */
 export function withUser<T>(userId: string, fn: (tx: Tx) => Promise<T>): Promise<T> {
-  return database().transaction(async (tx) => {
+  return transact(connections(), async (tx) => {
     await tx.execute(sql`select set_config('app.user_id', ${userId}, true)`);
     return fn(tx);
   });
@@ -32,7 +33,7 @@ export function withSecret<T>(
     "linkHash" in secret ? ["app.link_hash", secret.linkHash]
     : "deviceHash" in secret ? ["app.device_hash", secret.deviceHash]
     : ["app.provider_session", secret.providerSession];
-  return database().transaction(async (tx) => {
+  return transact(connections(), async (tx) => {
     await tx.execute(sql`select set_config(${name}, ${value}, true)`);
     return fn(tx);
   });
@@ -41,5 +42,5 @@ export function withSecret<T>(
 /** Tables that belong to no shop (users, sessions, tries, raw provider events). `reason` says why, for the reader. */
 export function withSystem<T>(reason: string, fn: (tx: Tx) => Promise<T>): Promise<T> {
   if (!reason) throw new TypeError("withSystem needs a reason");
-  return database().transaction(fn);
+  return transact(connections(), fn);
 }

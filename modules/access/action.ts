@@ -1,5 +1,6 @@
 import "server-only";
-import { isOutage } from "@/db/errors";
+import { awayOf } from "@/db/outage";
+import { AWAY_WORDS, TRY_AGAIN } from "@/modules/kernel/away";
 import type { Result } from "@/modules/kernel/result";
 import type { z } from "@/modules/kernel/zod";
 import type { Reply } from "@/modules/ui/form/reply";
@@ -57,10 +58,8 @@ async function guarded<T>(where: string, work: () => Promise<Reply<T>>): Promise
     return await work();
   } catch (error) {
     if (error instanceof NotFound) return { status: "refused", code: "NOT_FOUND", message: "Not found. It may be gone, or your role does not reach it." };
-    if (isOutage(error)) {
-      logFault(where, error);
-      return { status: "refused", code: "TRY_AGAIN", message: "The shop's records cannot be reached just now. Nothing was lost; try again in a moment." };
-    }
-    return { status: "error", reference: logFault(where, error) };
+    const reference = logFault(where, error);
+    const away = awayOf(error);
+    return away ? { status: "refused", code: TRY_AGAIN, message: AWAY_WORDS[away] } : { status: "error", reference };
   }
 }

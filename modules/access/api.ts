@@ -1,12 +1,11 @@
 import "server-only";
-import { isOutage } from "@/db/errors";
 import type { Result } from "@/modules/kernel/result";
 import type { z } from "@/modules/kernel/zod";
 import type { Command } from "./command";
-import { NotFound, type ShopContext } from "./context";
-import { logFault } from "./fault";
+import type { ShopContext } from "./context";
 import { isOwnOrigin } from "./origin";
 import { deviceContext, deviceCookie } from "./device";
+import { problem, problemOf } from "./problem";
 import { shopContextOrNull } from "./session";
 
 /** One address of the HTTP API. The same schema checks it, types it and documents it. */
@@ -38,8 +37,6 @@ export function commandEndpoint<S extends z.ZodType, T>(
 }
 
 const REQUEST_ID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/;
-const problem = (status: number, title: string, more: object = {}, headers: HeadersInit = {}) =>
-  Response.json({ type: "about:blank", title, status, ...more }, { status, headers: { "content-type": "application/problem+json", "cache-control": "no-store", ...headers } });
 
 /** The route handler of an endpoint: who, origin, schema, then the data layer; problems as RFC 9457 documents. */
 export function handle<S extends z.ZodType, T>(endpoint: Endpoint<S, T>) {
@@ -67,7 +64,9 @@ export function handle<S extends z.ZodType, T>(endpoint: Endpoint<S, T>) {
       else {
         requestId = request.headers.get("idempotency-key");
         if (!requestId || !REQUEST_ID.test(requestId)) return problem(400, "Send an Idempotency-Key header: a UUID made once for this act.");
-        const text = await request.text();
+        // A line that breaks while the body is on its way leaves nobody to answer, and is no fault of ours.
+        const text = await request.text().catch(() => null);
+        if (text === null) return problem(400, "The body did not come whole.");
         if (text.length > 1_000_000) return problem(413, "The body is too long; at most 1 MB.");
         try { raw = { ...(JSON.parse(text) as object), ...rest }; } catch { return problem(400, "The body is not JSON."); }
       }
@@ -81,9 +80,7 @@ export function handle<S extends z.ZodType, T>(endpoint: Endpoint<S, T>) {
       const status = code === "CHANGED_MEANWHILE" ? 409 : 422;
       return problem(status, message, { code, field, fields, data });
     } catch (error) {
-      if (error instanceof NotFound) return problem(404, "Not found.");
-      if (isOutage(error)) { logFault(endpoint.path, error); return problem(503, "The shop's records cannot be reached just now. Try again.", {}, { "retry-after": "2" }); }
-      return problem(500, "Something broke on our side.", { reference: logFault(endpoint.path, error) });
+      return problemOf(endpoint.path, error);
     }
   };
 }

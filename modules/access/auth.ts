@@ -4,8 +4,11 @@ import { eq } from "drizzle-orm";
 import type { NextAuthOptions } from "next-auth";
 import Credentials from "next-auth/providers/credentials";
 import { sessions, users } from "@/db/schema";
+import { awayOf } from "@/db/outage";
 import { withSystem } from "@/db/scope";
+import { TRY_AGAIN } from "@/modules/kernel/away";
 import { env } from "./env";
+import { logFault } from "./fault";
 import { hashSecret, verifySecret } from "./password";
 import { allowed } from "./rate-limit";
 
@@ -13,13 +16,18 @@ const SESSION_SECONDS = 30 * 24 * 3600;
 // Compared against when the address is unknown, so that both answers take as long.
 const nobody = hashSecret(randomUUID());
 
+/** The name of why a sign-in did not work, for the form; next-auth writes it into an address, so it says nothing else. */
+class SignInRefused extends Error {
+  constructor(reason: "TOO_MANY_TRIES" | typeof TRY_AGAIN | "BROKEN") { super(reason); }
+}
+
 /** Signs in with address and password. Grows a delay after ten wrong tries; the right password works again after it. */
 async function userFor(email: string, password: string, ip: string): Promise<{ id: string; name: string; email: string } | null> {
-  if (!(await allowed(`sign-in:${ip}`, 60, 60)) || !(await allowed(`sign-in:${email}`, 20, 60))) throw new Error("TOO_MANY_TRIES");
+  if (!(await allowed(`sign-in:${ip}`, 60, 60)) || !(await allowed(`sign-in:${email}`, 20, 60))) throw new SignInRefused("TOO_MANY_TRIES");
   const [user] = await withSystem("sign-in looks a user up by address", (tx) => tx.select().from(users).where(eq(users.email, email)));
   const right = await verifySecret(user?.passwordHash ?? (await nobody), password);
   if (!user || user.disabledAt) return null;
-  if (user.lockedUntil && user.lockedUntil > new Date()) throw new Error("TOO_MANY_TRIES");
+  if (user.lockedUntil && user.lockedUntil > new Date()) throw new SignInRefused("TOO_MANY_TRIES");
   if (!right) {
     const tries = user.failedTries + 1;
     const wait = tries < 10 ? 0 : Math.min(900, 2 ** (tries - 8));
@@ -43,7 +51,13 @@ export function authOptions(): NextAuthOptions {
         credentials: { email: { type: "email" }, password: { type: "password" } },
         async authorize(given, request) {
           const headers = (request.headers ?? {}) as Record<string, string | undefined>;
-          return userFor((given?.email ?? "").trim().toLowerCase().slice(0, 320), (given?.password ?? "").slice(0, 1024), headers["x-forwarded-for"] ?? "local");
+          try {
+            return await userFor((given?.email ?? "").trim().toLowerCase().slice(0, 320), (given?.password ?? "").slice(0, 1024), headers["x-forwarded-for"] ?? "local");
+          } catch (error) {
+            if (error instanceof SignInRefused) throw error;
+            logFault("sign-in", error);
+            throw new SignInRefused(awayOf(error) ? TRY_AGAIN : "BROKEN");
+          }
         },
       }),
     ],

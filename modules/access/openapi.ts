@@ -33,7 +33,11 @@ function operationOf(endpoint: AnyEndpoint) {
       401: { description: "Sign in first", content: PROBLEM }, 404: { description: "Not found, or not for this role", content: PROBLEM },
       422: { description: "Refused, with the field and the reason", content: PROBLEM },
       ...(endpoint.method === "POST" ? { 409: { description: "The record moved on meanwhile", content: PROBLEM } } : {}),
-      503: { description: "Try again", content: PROBLEM },
+      503: {
+        description: "The shop's data cannot be reached just now. Try again after the seconds in Retry-After, under the same Idempotency-Key: the same request is not carried out twice.",
+        headers: { "Retry-After": { required: true, description: "Seconds to wait before the next try", schema: { type: "integer", minimum: 1 } } },
+        content: PROBLEM,
+      },
     },
   };
 }

@@ -2,7 +2,7 @@
 
 import { useState } from "react";
 import { useRouter } from "next/navigation";
-import type { Reply } from "./form/reply";
+import { settles, type Reply } from "./form/reply";
 
 /** The words of an answer that is not yes. */
 export function wordsOf(reply: Exclude<Reply<unknown>, { status: "ok" }>): string {
@@ -37,7 +37,7 @@ export function useAct<T>(action: (sent: { requestId: string; input: unknown }) 
         router.refresh();
         return true;
       }
-      if (reply.status !== "signed-out" && reply.status !== "error") setId(null);
+      if (settles(reply)) setId(null);
       setTrouble({ text: wordsOf(reply), code: reply.status === "refused" ? reply.code : null });
     } catch {
       setTrouble({ text: "No answer came. Check the link and press again: it will not be done twice.", code: null });

@@ -1,7 +1,7 @@
 import "server-only";
 import type { TDocumentDefinitions } from "pdfmake/interfaces";
-import { NotFound, type ShopContext } from "@/modules/access/context";
-import { logFault } from "@/modules/access/fault";
+import type { ShopContext } from "@/modules/access/context";
+import { plainProblemOf } from "@/modules/access/problem";
 import { shopContextOrNull } from "@/modules/access/session";
 import { fileResponse } from "@/modules/documents/files";
 import { renderPdf } from "@/modules/outbound/pdf/render";
@@ -17,7 +17,6 @@ export async function paperResponse(shop: string, make: (ctx: ShopContext) => Pr
     if (made instanceof Response) return made;
     return fileResponse({ name: made.name, mime: "application/pdf", bytes: await renderPdf(made.definition, { creationDate: made.madeAt }) });
   } catch (error) {
-    if (error instanceof NotFound) return new Response("Not found.", { status: 404 });
-    return new Response(`The paper could not be made. Reference ${logFault("paper", error)}.`, { status: 500 });
+    return plainProblemOf("paper", error, "The paper could not be made.");
   }
 }

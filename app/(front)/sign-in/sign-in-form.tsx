@@ -3,11 +3,13 @@ import { signIn } from "next-auth/react";
 import Link from "next/link";
 import { useRouter } from "next/navigation";
 import { useState, type FormEvent } from "react";
+import { AWAY_WORDS } from "@/modules/kernel/away";
 import { Note } from "@/modules/ui/note";
 import { useReady } from "@/modules/ui/use-ready";
 
 const WORDS: Record<string, string> = {
   CredentialsSignin: "That e-mail address and password do not go together. Check both, or ask the shop's owner for a new password.",
+  TRY_AGAIN: AWAY_WORDS.nothing,
   TOO_MANY_TRIES: "Too many tries. Wait a minute, then try again; the right password still works.",
 };
 

@@ -1,6 +1,6 @@
 "use client";
 import { BrokenPage } from "@/modules/ui/broken-page";
 
-export default function ShopError({ error, reset }: { error: Error & { digest?: string }; reset: () => void }) {
-  return <BrokenPage error={error} retry={reset} />;
+export default function ShopError({ error, retry }: { error: Error & { digest?: string }; retry: () => void }) {
+  return <BrokenPage error={error} retry={retry} />;
 }

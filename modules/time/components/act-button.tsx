@@ -3,7 +3,7 @@
 import { useRouter } from "next/navigation";
 import { useRef, useState, type ReactNode } from "react";
 import { Button, type ButtonSize, type ButtonVariant } from "@/modules/ui/button";
-import type { Reply } from "@/modules/ui/form/reply";
+import { settles, type Reply } from "@/modules/ui/form/reply";
 import { Icon } from "@/modules/ui/icon";
 import { usePlace } from "@/modules/ui/place";
 
@@ -22,7 +22,7 @@ export function ActButton({ action, input, pendingText = "Writing…", variant, 
     id.current ??= crypto.randomUUID();
     try {
       const reply = await action(slug, { requestId: id.current, input });
-      id.current = null;
+      if (settles(reply)) id.current = null;
       if (reply.status === "ok") router.refresh();
       else setSaid(reply.status === "refused" || reply.status === "conflict" ? reply.message : reply.status === "invalid" ? (reply.fields[0]?.message ?? "This was not taken.") : reply.status === "signed-out" ? "You are signed out. Sign in again." : `Something broke on our side. Quote ${reply.reference}.`);
     } catch {

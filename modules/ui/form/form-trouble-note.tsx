@@ -47,6 +47,12 @@ export function FormTrouble({
           {words?.(trouble.code, trouble.data) ?? trouble.message}
         </Note>
       );
+    case "away":
+      return (
+        <Note live tone="stop" icon="unplug" title="Not saved yet." action={again}>
+          {trouble.message}
+        </Note>
+      );
     case "conflict":
       return (
         <Note live tone="stop" title="Not saved: someone else changed this meanwhile.">

@@ -1,5 +1,9 @@
+import { createElement } from "react";
+import { renderToStaticMarkup } from "react-dom/server";
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
+import { AWAY_WORDS, TRY_AGAIN } from "@/modules/kernel/away";
 import { noLink, readReply } from "./form-trouble";
+import { FormTrouble } from "./form-trouble-note";
 import { NoAnswer, RequestId, within } from "./request-id";
 
 describe("request id", () => {
@@ -17,6 +21,14 @@ describe("request id", () => {
     expect(noLink.keepId).toBe(true);
     expect(readReply({ status: "error", reference: "A7" }).keepId).toBe(true);
     expect(readReply({ status: "signed-out" }).keepId).toBe(true);
+  });
+  it("is kept while the shop's data is away, and the form says so with its one way on", () => {
+    const away = readReply({ status: "refused", code: TRY_AGAIN, message: AWAY_WORDS.unknown });
+    expect(away).toEqual({ trouble: { kind: "away", message: AWAY_WORDS.unknown }, fields: [], keepId: true });
+    const shown = renderToStaticMarkup(createElement(FormTrouble, { trouble: away.trouble, onRetry: () => undefined, pending: false, signInHref: "/sign-in" }));
+    expect(shown).toContain("the same request is not carried out twice");
+    expect(shown).toContain("What you typed is kept");
+    expect(shown).toContain("<span>Try again</span>");
   });
   it("is new after an answer that settles it", () => {
     expect(readReply({ status: "refused", code: "x", message: "No." }).keepId).toBe(false);

@@ -53,7 +53,7 @@ export function EstimateBuilder({ editor, menu, maySend }: { editor: EstimateEdi
       const line = first?.path[0] === "lines" ? `Line ${Number(first.path[1]) + 1}: ` : "";
       return `${line}${first?.message ?? "Something is not right."}`;
     }, []),
-    send: useCallback((values: ReturnType<typeof sentOf>) => saveEstimateAction(place.slug, { requestId: crypto.randomUUID(), input: values }), [place.slug]),
+    send: useCallback((values: ReturnType<typeof sentOf>, requestId: string) => saveEstimateAction(place.slug, { requestId, input: values }), [place.slug]),
     settled: useCallback((value: { version: number }) => setValue("version", value.version), [setValue]),
     wrong: useCallback((path: string, message: string) => setError(path as never, { type: "server", message }), [setError]),
   });

@@ -6,6 +6,7 @@ import { qtyText } from "@/modules/stock/domain/qty-text";
 import { Bay } from "@/modules/ui/bay";
 import { Button } from "@/modules/ui/button";
 import { Flag } from "@/modules/ui/flag";
+import { settles } from "@/modules/ui/form/reply";
 import { Icon } from "@/modules/ui/icon";
 import { Note } from "@/modules/ui/note";
 import { usePlace } from "@/modules/ui/place";
@@ -35,7 +36,7 @@ export function OrderParts({ workOrderId, rows, canIssue, pieces = [] }: {
     setProblem(null);
     try {
       const reply = await issueAllReadyAction(slug, { requestId, input: { workOrderId } });
-      setRequestId(crypto.randomUUID());
+      if (settles(reply)) setRequestId(crypto.randomUUID());
       if (reply.status === "ok") {
         toast({ text: `Issued ${reply.value.issued.length} ${reply.value.issued.length === 1 ? "part" : "parts"}${reply.value.short.length ? `, ${reply.value.short.join(", ")} short` : ""}` });
         router.refresh();

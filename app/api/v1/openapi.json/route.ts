@@ -1,10 +1,15 @@
-import { signedIn } from "@/modules/access/session";
-import { openApiDocument } from "@/modules/access/openapi";
 import { env } from "@/modules/access/env";
+import { openApiDocument } from "@/modules/access/openapi";
+import { problem, problemOf } from "@/modules/access/problem";
+import { signedIn } from "@/modules/access/session";
 import { ENDPOINTS } from "./endpoints";
 
 /** The API's document, for people of a shop. */
 export async function GET(): Promise<Response> {
-  if (!(await signedIn())) return Response.json({ title: "Sign in first.", status: 401 }, { status: 401 });
-  return Response.json(openApiDocument(ENDPOINTS, env().VK_APP_URL));
+  try {
+    if (!(await signedIn())) return problem(401, "Sign in first.");
+    return Response.json(openApiDocument(ENDPOINTS, env().VK_APP_URL));
+  } catch (error) {
+    return problemOf("openapi", error);
+  }
 }

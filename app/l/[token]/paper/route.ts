@@ -1,6 +1,5 @@
-import { NotFound } from "@/modules/access/context";
-import { logFault } from "@/modules/access/fault";
 import { openLink } from "@/modules/access/link";
+import { plainProblemOf } from "@/modules/access/problem";
 import { fileResponse, filesOf, readFile } from "@/modules/documents/files";
 import { invoiceForCustomer } from "@/modules/invoices/queries";
 import { customerFile, customerPaperId } from "@/modules/work-orders/queries/customer-view";
@@ -17,8 +16,6 @@ export async function GET(_: Request, { params }: { params: Promise<{ token: str
     const paper = (await filesOf(link.ctx, "invoice", [invoice.id])).at(-1);
     return paper ? fileResponse(await readFile(link.ctx, paper.id)) : nothing();
   } catch (error) {
-    if (error instanceof NotFound) return nothing();
-    logFault("link paper", error);
-    return new Response("This paper cannot be read just now.", { status: 500 });
+    return plainProblemOf("link paper", error, "This paper cannot be read just now.");
   }
 }

@@ -1,6 +1,6 @@
 import { DEVICE_COOKIE } from "@/modules/access/device";
-import { logFault } from "@/modules/access/fault";
 import { isOwnOrigin } from "@/modules/access/origin";
+import { problemOf } from "@/modules/access/problem";
 import { requestFacts } from "@/modules/access/session";
 import { enrolTablet } from "@/modules/time/identity/enrol";
 
@@ -19,6 +19,6 @@ export async function POST(request: Request): Promise<Response> {
     const { token, name } = done.value;
     return answer(200, { name }, { "set-cookie": `${DEVICE_COOKIE}=${token}; Path=/; Max-Age=${TWO_YEARS}; HttpOnly; Secure; SameSite=Strict` });
   } catch (error) {
-    return answer(500, { title: "The tablet could not be enrolled. Try again.", reference: logFault("clock.enrol", error) });
+    return problemOf("clock.enrol", error, "The tablet could not be enrolled. Try again.");
   }
 }

@@ -1,6 +1,5 @@
-import { NotFound } from "@/modules/access/context";
-import { logFault } from "@/modules/access/fault";
 import { openLink } from "@/modules/access/link";
+import { plainProblemOf } from "@/modules/access/problem";
 import { fileResponse } from "@/modules/documents/files";
 import { customerFile } from "@/modules/work-orders/queries/customer-view";
 
@@ -13,8 +12,6 @@ export async function GET(request: Request, { params }: { params: Promise<{ toke
     if (!link || !/^[0-9a-f-]{36}$/.test(id)) return nothing();
     return fileResponse(await customerFile(link.ctx, id, new URL(request.url).searchParams.has("thumb")));
   } catch (error) {
-    if (error instanceof NotFound) return nothing();
-    logFault("link file", error);
-    return new Response("This file cannot be read just now.", { status: 500 });
+    return plainProblemOf("link file", error, "This file cannot be read just now.");
   }
 }

@@ -1,12 +1,9 @@
-import { NotFound } from "@/modules/access/context";
-import { logFault } from "@/modules/access/fault";
 import { isOwnOrigin } from "@/modules/access/origin";
+import { problem, problemOf } from "@/modules/access/problem";
 import { can } from "@/modules/access/roles";
 import { shopContextOrNull } from "@/modules/access/session";
 import { uploadInput, uploadPhoto } from "@/modules/work-orders/upload-photo";
 
-const problem = (status: number, title: string, more: object = {}) =>
-  Response.json({ type: "about:blank", title, status, ...more }, { status, headers: { "content-type": "application/problem+json", "cache-control": "no-store" } });
 
 /** Takes one photo as the raw body of the request, so that a phone can show how far it is. */
 export async function POST(request: Request, { params }: { params: Promise<{ shop: string }> }): Promise<Response> {
@@ -20,7 +17,6 @@ export async function POST(request: Request, { params }: { params: Promise<{ sho
     const result = await uploadPhoto(ctx, parsed.data, request.body);
     return result.ok ? Response.json(result.value, { headers: { "cache-control": "no-store" } }) : problem(422, result.refusal.message, { code: result.refusal.code });
   } catch (error) {
-    if (error instanceof NotFound) return problem(404, "Not found.");
-    return problem(500, "Something broke on our side. The photo is still on your device; send it again.", { reference: logFault("files upload", error) });
+    return problemOf("files upload", error, "Something broke on our side. The photo is still on your device; send it again.");
   }
 }

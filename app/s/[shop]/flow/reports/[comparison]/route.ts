@@ -1,4 +1,4 @@
-import { NotFound } from "@/modules/access/context";
+import { plainProblemOf } from "@/modules/access/problem";
 import { shopContextOrNull } from "@/modules/access/session";
 import { fileResponse } from "@/modules/documents/files";
 import { flowReportPdf } from "@/modules/flow/queries/report";
@@ -9,10 +9,9 @@ export async function GET(_: Request, { params }: { params: Promise<{ shop: stri
   const { shop, comparison } = await params;
   try {
     const ctx = await shopContextOrNull(shop);
-    if (!ctx || !isUuid(comparison)) return new Response("Not found", { status: 404 });
+    if (!ctx || !isUuid(comparison)) return new Response("Not found.", { status: 404 });
     return fileResponse(await flowReportPdf(ctx, comparison));
   } catch (error) {
-    if (error instanceof NotFound) return new Response("Not found", { status: 404 });
-    throw error;
+    return plainProblemOf("flow report", error, "The report could not be made.");
   }
 }

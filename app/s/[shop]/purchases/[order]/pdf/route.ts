@@ -1,5 +1,5 @@
 import { shopContextOrNull } from "@/modules/access/session";
-import { NotFound } from "@/modules/access/context";
+import { plainProblemOf } from "@/modules/access/problem";
 import { fileResponse } from "@/modules/documents/files";
 import { orderPdf } from "@/modules/purchasing/paper-job";
 import { getOrder } from "@/modules/purchasing/queries/orders";
@@ -12,7 +12,6 @@ export async function GET(_: Request, { params }: { params: Promise<{ shop: stri
     if (!ctx) return new Response("Sign in first.", { status: 401 });
     return fileResponse(await orderPdf(ctx, (await getOrder(ctx, order)).id));
   } catch (error) {
-    if (error instanceof NotFound) return new Response("Not found.", { status: 404 });
-    throw error;
+    return plainProblemOf("purchase order paper", error, "The paper could not be made.");
   }
 }

@@ -1,5 +1,4 @@
-import { NotFound } from "@/modules/access/context";
-import { logFault } from "@/modules/access/fault";
+import { plainProblemOf } from "@/modules/access/problem";
 import { can, type Act } from "@/modules/access/roles";
 import { shopContextOrNull } from "@/modules/access/session";
 import { fileResponse, readFile } from "@/modules/documents/files";
@@ -18,8 +17,6 @@ export async function GET(request: Request, { params }: { params: Promise<{ shop
     const act = ACT_OF[file.kind];
     return act && can(ctx.actor, act) ? fileResponse(file) : nothing();
   } catch (error) {
-    if (error instanceof NotFound) return nothing();
-    logFault("files read", error);
-    return new Response("This file cannot be read just now.", { status: 500 });
+    return plainProblemOf("files read", error, "This file cannot be read just now.");
   }
 }

@@ -1,12 +1,9 @@
-import { NotFound } from "@/modules/access/context";
-import { logFault } from "@/modules/access/fault";
 import { isOwnOrigin } from "@/modules/access/origin";
+import { problem, problemOf } from "@/modules/access/problem";
 import { can } from "@/modules/access/roles";
 import { shopContextOrNull } from "@/modules/access/session";
 import { uploadReadings, uploadSheetPhoto } from "@/modules/flow/upload-file";
 
-const problem = (status: number, title: string, more: object = {}) =>
-  Response.json({ type: "about:blank", title, status, ...more }, { status, headers: { "content-type": "application/problem+json", "cache-control": "no-store" } });
 const MOST_BYTES = 26 * 1024 * 1024;
 
 /** Takes a file of readings (`file` and `ask`) or a photograph of a paper sheet (`photo` and `head`) as form data. */
@@ -29,7 +26,6 @@ export async function POST(request: Request, { params }: { params: Promise<{ sho
     const { code, message, field, fields, data } = result.refusal;
     return problem(422, message, { code, field, fields, data });
   } catch (error) {
-    if (error instanceof NotFound) return problem(404, "Not found.");
-    return problem(500, "Something broke on our side. The file is still on your machine; send it again.", { reference: logFault("flow upload", error) });
+    return problemOf("flow upload", error, "Something broke on our side. The file is still on your machine; send it again.");
   }
 }

@@ -1,4 +1,4 @@
-import { NotFound } from "@/modules/access/context";
+import { plainProblemOf } from "@/modules/access/problem";
 import { shopContextOrNull } from "@/modules/access/session";
 import { fileResponse } from "@/modules/documents/files";
 import { invoicePdf } from "@/modules/invoices/queries";
@@ -10,7 +10,6 @@ export async function GET(_: Request, { params }: { params: Promise<{ shop: stri
     const ctx = await shopContextOrNull(shop);
     return ctx && /^[0-9a-f-]{36}$/.test(id) ? fileResponse(await invoicePdf(ctx, id)) : new Response("Not found.", { status: 404 });
   } catch (error) {
-    if (error instanceof NotFound) return new Response("Not found.", { status: 404 });
-    throw error;
+    return plainProblemOf("invoice paper", error, "The paper could not be read.");
   }
 }
