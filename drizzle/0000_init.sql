@@ -933,6 +933,7 @@ CREATE TABLE "flow_test_summaries" (
 	"shop_id" uuid NOT NULL,
 	"test_id" uuid NOT NULL,
 	"head_id" uuid NOT NULL,
+	"bench_id" uuid NOT NULL,
 	"family" text NOT NULL,
 	"side" text NOT NULL,
 	"purpose" text NOT NULL,
@@ -945,6 +946,8 @@ CREATE TABLE "flow_test_summaries" (
 	"mean_to_cam_cfm" double precision,
 	"doubts" integer DEFAULT 0 NOT NULL,
 	"is_converted" boolean DEFAULT false NOT NULL,
+	"repeat_squares_cfm2" double precision DEFAULT 0 NOT NULL,
+	"repeat_dof" integer DEFAULT 0 NOT NULL,
 	"constants_version" integer NOT NULL,
 	"made_at" timestamp with time zone NOT NULL,
 	CONSTRAINT "flow_test_summaries_shop_id_test_id_pk" PRIMARY KEY("shop_id","test_id")
@@ -1342,6 +1345,7 @@ ALTER TABLE "fixtures" ADD CONSTRAINT "fixtures_shop_id_shops_id_fk" FOREIGN KEY
 ALTER TABLE "flow_comparisons" ADD CONSTRAINT "flow_comparisons_shop_id_head_id_heads_shop_id_id_fk" FOREIGN KEY ("shop_id","head_id") REFERENCES "public"."heads"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_readings" ADD CONSTRAINT "flow_readings_shop_id_test_id_flow_tests_shop_id_id_fk" FOREIGN KEY ("shop_id","test_id") REFERENCES "public"."flow_tests"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_test_summaries" ADD CONSTRAINT "flow_test_summaries_shop_id_test_id_flow_tests_shop_id_id_fk" FOREIGN KEY ("shop_id","test_id") REFERENCES "public"."flow_tests"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
+ALTER TABLE "flow_test_summaries" ADD CONSTRAINT "flow_test_summaries_shop_id_bench_id_benches_shop_id_id_fk" FOREIGN KEY ("shop_id","bench_id") REFERENCES "public"."benches"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_tests" ADD CONSTRAINT "flow_tests_shop_id_head_id_heads_shop_id_id_fk" FOREIGN KEY ("shop_id","head_id") REFERENCES "public"."heads"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_tests" ADD CONSTRAINT "flow_tests_shop_id_bench_id_benches_shop_id_id_fk" FOREIGN KEY ("shop_id","bench_id") REFERENCES "public"."benches"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "flow_tests" ADD CONSTRAINT "flow_tests_shop_id_fixture_id_fixtures_shop_id_id_fk" FOREIGN KEY ("shop_id","fixture_id") REFERENCES "public"."fixtures"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
@@ -1394,6 +1398,7 @@ CREATE UNIQUE INDEX "time_one_open" ON "time_entries" USING btree ("shop_id","pe
 CREATE INDEX "time_entries_operation" ON "time_entries" USING btree ("shop_id","operation_id");--> statement-breakpoint
 CREATE INDEX "time_entries_started" ON "time_entries" USING btree ("shop_id","started_at");--> statement-breakpoint
 CREATE INDEX "bench_checks_at" ON "bench_checks" USING btree ("shop_id","bench_id","at");--> statement-breakpoint
+CREATE INDEX "flow_test_summaries_repeats" ON "flow_test_summaries" USING btree ("shop_id","bench_id","started_at") WHERE repeat_dof > 0;--> statement-breakpoint
 CREATE INDEX "flow_test_summaries_family" ON "flow_test_summaries" USING btree ("shop_id","family","side","started_at");--> statement-breakpoint
 CREATE INDEX "flow_test_summaries_best" ON "flow_test_summaries" USING btree ("shop_id","family","side","mean_to_cam_cfm");--> statement-breakpoint
 CREATE INDEX "flow_test_summaries_head" ON "flow_test_summaries" USING btree ("shop_id","head_id");--> statement-breakpoint

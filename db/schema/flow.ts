@@ -203,6 +203,7 @@ export const flowTestSummaries = pgTable("flow_test_summaries", {
   shopId: shopId(),
   testId: uuid("test_id").notNull(),
   headId: uuid("head_id").notNull(),
+  benchId: uuid("bench_id").notNull(),
   /** Of the head when this was made; a head that changes family is summarised again. */
   family: text("family").notNull(),
   side: text("side").notNull(),
@@ -218,11 +219,16 @@ export const flowTestSummaries = pgTable("flow_test_summaries", {
   meanToCamCfm: doublePrecision("mean_to_cam_cfm"),
   doubts: integer("doubts").notNull().default(0),
   isConverted: boolean("is_converted").notNull().default(false),
+  /** Spread of the repeats within each lift, cfm2, and its degrees of freedom: what the test adds to the history of its bench. */
+  repeatSquaresCfm2: doublePrecision("repeat_squares_cfm2").notNull().default(0),
+  repeatDof: integer("repeat_dof").notNull().default(0),
   constantsVersion: integer("constants_version").notNull(),
   madeAt: instant("made_at").notNull(),
 }, (t) => [
   primaryKey({ columns: [t.shopId, t.testId] }),
   foreignKey({ columns: [t.shopId, t.testId], foreignColumns: [flowTests.shopId, flowTests.id] }),
+  foreignKey({ columns: [t.shopId, t.benchId], foreignColumns: [benches.shopId, benches.id] }),
+  index("flow_test_summaries_repeats").on(t.shopId, t.benchId, t.startedAt).where(sql`repeat_dof > 0`),
   index("flow_test_summaries_family").on(t.shopId, t.family, t.side, t.startedAt),
   index("flow_test_summaries_best").on(t.shopId, t.family, t.side, t.meanToCamCfm),
   index("flow_test_summaries_head").on(t.shopId, t.headId),

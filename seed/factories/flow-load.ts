@@ -64,8 +64,8 @@ export async function loadFlow(shopId: string, options: { operatorId: string; te
           for (const c of cells) batch.readings.push({ id: randomUUID(), test_id: id, lift_um: c.liftUm, lift_text: c.text, value_text: c.valueText, taken_at: startedAt.toISOString() });
           const s = summaryOfTest(rawOf(id, side, purpose, cells, camLiftUm, startedAt, { benchId, fixtureId, operatorId, ladder }));
           batch.summaries.push({
-            shopId, testId: id, headId, family, side, purpose, startedAt, atInH2O: 28, liftsUm: [...s.liftsUm], flowsCfm: [...s.flowsCfm], peakCfm: s.peakCfm, peakLiftUm: s.peakLiftUm,
-            meanToCamCfm: s.meanToCamCfm, doubts: s.doubts, isConverted: s.isConverted, constantsVersion: FLOW_CONSTANTS_VERSION, madeAt: startedAt,
+            shopId, testId: id, headId, benchId, family, side, purpose, startedAt, atInH2O: 28, liftsUm: [...s.liftsUm], flowsCfm: [...s.flowsCfm], peakCfm: s.peakCfm, peakLiftUm: s.peakLiftUm,
+            meanToCamCfm: s.meanToCamCfm, doubts: s.doubts, isConverted: s.isConverted, repeatSquaresCfm2: s.repeats.squaresCfm2, repeatDof: s.repeats.dof, constantsVersion: FLOW_CONSTANTS_VERSION, madeAt: startedAt,
           });
           made.push({ id, family, side, purpose });
         }

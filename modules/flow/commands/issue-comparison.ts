@@ -7,11 +7,15 @@ import { personIdOf, settingsOf } from "@/modules/access/context";
 import { decimal } from "@/modules/kernel/format";
 import { ok, refuse } from "@/modules/kernel/result";
 import { scaleLiftText } from "../domain/curve-scale";
-import { notTestedWords, reportTest, type ReportSnapshot } from "../domain/report-snapshot";
+import { notTestedWords, reportTest, type ReportSide, type ReportSnapshot } from "../domain/report-snapshot";
 import { sideGain } from "../domain/side-gain";
 import { standingTests } from "../domain/standing-tests";
 import { issueInput } from "../input";
+import { withRepeatHistory } from "../queries/repeat-history";
 import { rawTests } from "../queries/tests-of-head";
+
+/** Every verdict of a report, to tell whether another one would say something else. */
+const verdictsOf = (sides: readonly Pick<ReportSide, "gain">[]): string => sides.map(({ gain }) => (gain.comparable ? (gain.noise?.rows ?? []).map((r) => r.words).join() : "")).join(";");
 
 /**
  * Freezes what is known of one port pair, with its conditions, as the next version of the head's flow report. Two sets that
@@ -32,7 +36,7 @@ export const issueComparison = defineCommand({
       .where(and(eq(heads.shopId, shop.id), eq(heads.id, headId))).for("update", { of: heads });
     if (!row || cylinder > row.h.cylinders) return refuse("NOT_FOUND", "This head is not here.");
     const settings = await settingsOf(ctx);
-    const tests = (await rawTests(ctx, { headIds: [headId] })).filter((t) => t.cylinder === cylinder);
+    const tests = await withRepeatHistory(ctx, (await rawTests(ctx, { headIds: [headId] })).filter((t) => t.cylinder === cylinder));
     const sides: { side: "intake" | "exhaust"; standing: ReturnType<typeof standingTests>; gain: ReportSnapshot["sides"][number]["gain"] }[] = [];
     for (const side of ["intake", "exhaust"] as const) {
       const standing = standingTests(tests, side, "complete");
@@ -46,14 +50,14 @@ export const issueComparison = defineCommand({
     if (beforeTestIds.length + afterTestIds.length === 0) return refuse("NOTHING_FINISHED", "No test of this port is finished yet. Finish one first.");
     const [last] = await tx.select().from(flowComparisons).where(and(eq(flowComparisons.shopId, shop.id), eq(flowComparisons.headId, headId), eq(flowComparisons.cylinder, cylinder)))
       .orderBy(desc(flowComparisons.comparisonNo)).limit(1);
-    if (last && last.customerWords === customerWords && String(last.beforeTestIds) === String(beforeTestIds) && String(last.afterTestIds) === String(afterTestIds)) {
+    if (last && last.customerWords === customerWords && String(last.beforeTestIds) === String(beforeTestIds) && String(last.afterTestIds) === String(afterTestIds) && verdictsOf((last.snapshot as ReportSnapshot).sides) === verdictsOf(sides)) {
       return refuse("NOTHING_CHANGED", `Report ${last.comparisonNo} already says exactly this.`);
     }
     const comparisonNo = (last?.comparisonNo ?? 0) + 1;
     const unit = tests.at(-1)?.liftUnit ?? "in";
     const liftWords = (um: number) => scaleLiftText(um, unit, (v, d) => decimal(v, d, shop.locale));
     const snapshot: ReportSnapshot = {
-      kind: 2, shop: { name: shop.name, address: settings.address, phone: settings.phone, email: settings.email }, locale: shop.locale, zone: shop.zone,
+      kind: 3, shop: { name: shop.name, address: settings.address, phone: settings.phone, email: settings.email }, locale: shop.locale, zone: shop.zone,
       head: { mark: row.h.mark, family: row.h.family, castingNumber: row.h.castingNumber, orderNumber: row.orderNumber, customerName: row.customerName },
       cylinder, cylinders: row.h.cylinders, comparisonNo,
       sides: sides.map(({ side, standing, gain }) => ({ side, gain, before: standing.before && reportTest(standing.before), after: standing.after && reportTest(standing.after) })),

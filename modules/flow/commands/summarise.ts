@@ -13,8 +13,9 @@ export async function summariseTest(ctx: TxContext, testId: string): Promise<boo
   if (!head) return false;
   const s = summaryOfTest(test);
   const row = {
-    headId: test.headId, family: head.family, side: test.side, purpose: test.purpose, startedAt: new Date(test.startedAt), atInH2O: test.nominalInH2O,
+    headId: test.headId, benchId: test.bench.id, family: head.family, side: test.side, purpose: test.purpose, startedAt: new Date(test.startedAt), atInH2O: test.nominalInH2O,
     liftsUm: [...s.liftsUm], flowsCfm: [...s.flowsCfm], peakCfm: s.peakCfm, peakLiftUm: s.peakLiftUm, meanToCamCfm: s.meanToCamCfm, doubts: s.doubts, isConverted: s.isConverted,
+    repeatSquaresCfm2: s.repeats.squaresCfm2, repeatDof: s.repeats.dof,
     constantsVersion: FLOW_CONSTANTS_VERSION, madeAt: ctx.now,
   };
   await ctx.tx.insert(flowTestSummaries).values({ shopId: ctx.shop.id, testId, ...row })

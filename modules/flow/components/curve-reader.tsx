@@ -14,8 +14,8 @@ function wordsAt(lines: readonly CurveLine[], liftUm: number, locale: string): s
     if (!before && !after) return [];
     const parts = [before && `${flowText(before.flowCfm, locale)} before`, after && `${flowText(after.flowCfm, locale)} after`].filter(Boolean).join(", ");
     const gain = before && after && line.gain === "shown" ? gainAt(before.flowCfm, after.flowCfm) : null;
-    const margin = line.margins?.find((m) => m.liftUm === liftUm)?.marginCfm;
-    return [`${SIDE_WORDS[line.side]} ${parts}${gain === null ? "" : `, ${gain < 0 ? "loss" : "gain"} ${differenceText(gain, locale)}${margin === undefined ? "" : `, noise ±${flowText(margin, locale)}`}`}`];
+    const margin = line.margins?.find((m) => m.liftUm === liftUm);
+    return [`${SIDE_WORDS[line.side]} ${parts}${gain === null ? "" : `, ${gain < 0 ? "loss" : "gain"} ${differenceText(gain, locale)}${margin === undefined ? "" : `, noise ±${flowText(margin.marginCfm, locale)}${margin.byHistory ? " by bench history" : ""}`}`}`];
   }).join(". ");
 }
 

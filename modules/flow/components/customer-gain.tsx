@@ -2,7 +2,7 @@ import { Fragment } from "react";
 import { date, decimal } from "@/modules/kernel/format";
 import { localDate } from "@/modules/kernel/instant";
 import { Bay } from "@/modules/ui/bay";
-import { isAssessed } from "../domain/noise-summary";
+import { historyUsed, isAssessed } from "../domain/noise-summary";
 import { AIRFLOW_WORDS } from "../domain/report-snapshot";
 import type { ComparableGain, GainOfPiece, PortGain, SideGain, WithheldGain } from "../domain/side-gain";
 import { differenceText, flowText, liftWords } from "./flow-words";
@@ -106,7 +106,7 @@ export function CustomerGain({ gain, locale, zone }: { gain: GainOfPiece } & At)
             {compared.length === 0 ? null : <div className="bigg">{compared.map((g, i) => <Figure key={g.side} gain={g} locale={locale} isFirst={i === 0} />)}</div>}
             <Bay label={`Before and after${portWords}`} className="mt-7">
               <MiniCurve port={port} locale={locale} width={360} height={300} />
-              <p className="hint">Thick lines: after. Thin lines: before. Solid: intake. Dashed: exhaust.{compared.length > 0 ? " The filled part is your gain." : ""}{compared.some((g) => isAssessed(g.noise)) ? " The dotted band about before is the noise of the measurement: inside it no change can be told." : ""}</p>
+              <p className="hint">Thick lines: after. Thin lines: before. Solid: intake. Dashed: exhaust.{compared.length > 0 ? " The filled part is your gain." : ""}{compared.some((g) => isAssessed(g.noise)) ? " The dotted band about before is the noise of the measurement: inside it no change can be told." : ""}{compared.some((g) => historyUsed(g.noise) !== null) ? " Where a lift was read once, that noise is what this bench's repeats showed in 12 months." : ""}</p>
             </Bay>
             <section className="mt-7">
               <PortTable port={port} locale={locale} />

@@ -2,6 +2,7 @@ import type { PortSide } from "./comparison-reasons";
 import { scaleLiftText, type DecimalText } from "./curve-scale";
 import { gainAt } from "./gain";
 import type { LiftUnit } from "./lift-ladder";
+import type { LiftMargin } from "./noise-band";
 import type { LiftReading } from "./repeats";
 
 interface DescribedLine {
@@ -9,7 +10,7 @@ interface DescribedLine {
   readonly before: readonly LiftReading[];
   readonly after: readonly LiftReading[];
   readonly gain: "shown" | "withheld";
-  readonly margins?: readonly { readonly liftUm: number; readonly marginCfm: number }[];
+  readonly margins?: readonly LiftMargin[];
 }
 const SIDE_WORDS: Readonly<Record<PortSide, string>> = { intake: "Intake", exhaust: "Exhaust" };
 
@@ -35,7 +36,7 @@ export function curveDescription(lines: readonly DescribedLine[], unit: LiftUnit
       const gain = a ? gainAt(b.flowCfm, a.flowCfm) : 0;
       return gain < 0 ? [`${words} lost ${decimalText(-gain, 1)} at ${lift(b.liftUm)}.`] : [];
     });
-    const band = (line.margins ?? []).map((m) => `±${decimalText(m.marginCfm, 1)} at ${lift(m.liftUm)}`);
+    const band = (line.margins ?? []).map((m) => `±${decimalText(m.marginCfm, 1)} at ${lift(m.liftUm)}${m.byHistory ? " by bench history" : ""}`);
     return [...parts, ...losses, ...(band.length === 0 ? [] : [`Band of the measurement noise about ${words.toLowerCase()} before: ${band.join(", ")}.`])];
   });
   const cam = camLiftUm === null ? [] : [`Cam lift ${lift(camLiftUm)}.`];

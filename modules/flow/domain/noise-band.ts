@@ -8,6 +8,8 @@ import type { Segment } from "./path-segments";
 export interface LiftMargin {
   readonly liftUm: number;
   readonly marginCfm: number;
+  /** Rests on the bench's repeat history. */
+  readonly byHistory?: boolean;
 }
 /** The margin at one tested lift as a bar through the before reading. */
 export interface MarginBar {
@@ -65,5 +67,5 @@ export function noiseBand(before: DrawnCurve, margins: readonly LiftMargin[], sc
 }
 
 /** Margins of the judged lifts, for a curve. */
-export const marginsOf = (rows: readonly { readonly liftUm: number; readonly marginCfm: number | null }[]): LiftMargin[] =>
-  rows.flatMap((r) => (r.marginCfm === null ? [] : [{ liftUm: r.liftUm, marginCfm: r.marginCfm }]));
+export const marginsOf = (rows: readonly { readonly liftUm: number; readonly marginCfm: number | null; readonly byHistory?: boolean }[]): LiftMargin[] =>
+  rows.flatMap((r) => (r.marginCfm === null ? [] : [{ liftUm: r.liftUm, marginCfm: r.marginCfm, ...(r.byHistory ? { byHistory: true } : {}) }]));

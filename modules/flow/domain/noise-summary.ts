@@ -1,12 +1,13 @@
-import { NOISE_WORDS } from "./noise";
+import { HISTORY_PAIRS_MIN, historyWords, isHistoryUsable, NOISE_WORDS, type BenchHistory } from "./noise";
 import type { GainNoise, NoiseRow } from "./noise-rows";
 
-/** Lifts of a verdict as words; neighbours in the table close up: `.050 to .200, .300`. */
-function liftsWords(rows: readonly NoiseRow[], verdict: NoiseRow["verdict"], lift: (um: number) => string): string {
+/** Lifts of the rows that are meant, as words; neighbours in the table close up: `.050 to .200, .300`. */
+function liftsWords(rows: readonly NoiseRow[], isMeant: (row: NoiseRow) => boolean, lift: (um: number) => string): string {
   const runs: number[][] = [];
   rows.forEach((row, i) => {
-    if (row.verdict !== verdict) return;
-    if (rows[i - 1]?.verdict === verdict) runs.at(-1)?.push(row.liftUm);
+    if (!isMeant(row)) return;
+    const last = rows[i - 1];
+    if (last && isMeant(last)) runs.at(-1)?.push(row.liftUm);
     else runs.push([row.liftUm]);
   });
   return runs.map((run) => {
@@ -18,22 +19,39 @@ function liftsWords(rows: readonly NoiseRow[], verdict: NoiseRow["verdict"], lif
 /** `pressure held, reading and lift`. */
 export const listed = (names: readonly string[]): string => (names.length < 2 ? names.join("") : `${names.slice(0, -1).join(", ")} and ${names.at(-1) ?? ""}`);
 
-/** True when some lift was read twice on both sides, so that there is a verdict to show. */
+/** True when some lift was judged, so that there is a verdict to show. */
 export const isAssessed = (noise: GainNoise | undefined): noise is GainNoise => noise?.rows.some((r) => r.verdict !== "not_assessed") === true;
+
+/** The history some verdict rests on; null where every judged lift has repeats of its own. */
+export const historyUsed = (noise: GainNoise | undefined): BenchHistory | null => (noise?.rows.some((r) => r.byHistory) ? (noise.history ?? null) : null);
+
+/** Why the bench's history does not stand in, to go on a sentence; empty where it does or was not asked for. */
+export function noHistoryWords(history: BenchHistory | undefined): string {
+  if (history === undefined || isHistoryUsable(history)) return "";
+  if (history.pairs >= HISTORY_PAIRS_MIN) return ", and the repeats of this bench in 12 months never differed, so its history says nothing of the noise";
+  return `, and this bench has ${history.pairs} of the ${HISTORY_PAIRS_MIN} repeat pairs in 12 months that could stand in`;
+}
 
 /**
  * Is the change larger than the noise? In words, for a line under the table of one side. Null without a common lift.
+ * Lifts judged by the bench's history are named apart from those with repeats of their own.
  * @param lift lift in micrometres as words.
  */
 export function noiseSummary(noise: GainNoise, lift: (um: number) => string): string | null {
-  const { rows } = noise;
+  const { rows, history } = noise;
   if (rows.length === 0) return null;
-  if (!isAssessed(noise)) return `Against the measurement noise: ${NOISE_WORDS.not_assessed}, no lift was read twice both before and after.`;
-  const parts = (["larger_than_noise", "within_noise", "not_assessed"] as const).flatMap((verdict) => {
-    const count = rows.filter((r) => r.verdict === verdict).length;
+  if (!isAssessed(noise)) return `Against the measurement noise: ${NOISE_WORDS.not_assessed}, no lift was read twice both before and after${noHistoryWords(history)}.`;
+  const used = historyUsed(noise);
+  // The count of pairs stands where the history is first named.
+  let byHistoryWords = used ? historyWords(used) : "by bench history";
+  const parts = (["larger_than_noise", "within_noise", "not_assessed"] as const).flatMap((verdict) => [false, true].flatMap((byHistory) => {
+    const isMeant = (r: NoiseRow) => r.verdict === verdict && (r.byHistory ?? false) === byHistory;
+    const count = rows.filter(isMeant).length;
     if (count === 0) return [];
-    return [`${NOISE_WORDS[verdict]} at ${count === rows.length ? (count === 1 ? "the one lift" : `all ${count} lifts`) : liftsWords(rows, verdict, lift)}`];
-  });
+    const basis = byHistory ? `, ${byHistoryWords},` : "";
+    if (byHistory) byHistoryWords = "by bench history";
+    return [`${NOISE_WORDS[verdict]}${basis} at ${count === rows.length ? (count === 1 ? "the one lift" : `all ${count} lifts`) : liftsWords(rows, isMeant, lift)}`];
+  }));
   return `Change ${parts.join("; ")}.`;
 }
 

@@ -7,11 +7,19 @@ import { CONVERSION_ALLOWANCE_SHARE } from "./test-pressure";
 /** Repeat pairs a bench needs before its history may stand in for repeats. */
 export const HISTORY_PAIRS_MIN = 10;
 
+/** Repeats of one bench over twelve months. */
 export interface BenchHistory {
-  /** Pooled standard deviation of repeats on this bench over twelve months, cfm, >= 0. */
+  /** Pooled standard deviation, cfm, >= 0. */
   readonly pooledCfm: number;
+  /** Repeat pairs: degrees of freedom behind it, >= 0. */
   readonly pairs: number;
 }
+
+/**
+ * May the history stand in for repeats? Enough pairs, and some spread: repeats that never differ show an indicator coarser than
+ * the noise, not that there is none.
+ */
+export const isHistoryUsable = (history: BenchHistory): boolean => history.pairs >= HISTORY_PAIRS_MIN && history.pooledCfm > 0;
 
 export type NoiseVerdict =
   | {
@@ -43,6 +51,9 @@ export const NOISE_WORDS: Readonly<Record<NoiseVerdict["verdict"], string>> = {
   not_assessed: "not assessed",
 };
 
+/** Where a verdict rests on the bench's history: `by bench history (24 repeat pairs in 12 months)`. */
+export const historyWords = ({ pairs }: BenchHistory): string => `by bench history (${pairs} repeat pairs in 12 months)`;
+
 const mean = (list: readonly number[]): number => list.reduce((a, b) => a + b, 0) / list.length;
 
 /** Variance of the mean, `s^2/n`, of at least two readings. */
@@ -55,6 +66,7 @@ function varianceOfMean(list: readonly number[]): number {
  * Is the change larger than the noise? `U = t(nu) u_c`, `u_c^2 = uA_before^2 + uA_after^2 + 2 u_other^2`.
  * Bench factor and range are common to both tests on one bench and cancel; leave them out of `uOtherCfm`.
  * Across a pressure conversion (`isConverted`) the change must exceed U plus 3 % of the before reading.
+ * A side read once takes the bench's pooled repeats, flag BENCH_HISTORY, where there are enough (GUM 4.2.4); a side with repeats keeps its own.
  * @param uOtherCfm Type B standard uncertainty of one test, >= 0. @param confidence default 0.95.
  * Source: JCGM 100:2008 (GUM) 4.2, 5.1.2, G.4.1 (Welch-Satterthwaite). Errors: TOO_FEW_POINTS, READING_OUT_OF_RANGE.
  */
@@ -77,7 +89,7 @@ export function compareWithNoise(input: {
   const differenceCfm = meanAfterCfm - meanBeforeCfm;
   const means = { meanBeforeCfm, meanAfterCfm, differenceCfm };
   const single = [beforeCfm, afterCfm].filter((list) => list.length < 2);
-  const usable = history && history.pairs >= HISTORY_PAIRS_MIN && history.pooledCfm >= 0 ? history : null;
+  const usable = history && isHistoryUsable(history) ? history : null;
   if (single.length > 0 && !usable) return ok({ ...means, verdict: "not_assessed", flags: ["NO_REPEATS"] });
 
   const parts = [beforeCfm, afterCfm]

@@ -1,5 +1,6 @@
 import type { EntryKind, PortSide } from "./comparison-reasons";
 import type { LiftUnit } from "./lift-ladder";
+import type { BenchHistory } from "./noise";
 
 export type BenchScale = "direct" | "percent_linear" | "orifice_head";
 export type WaterUnit = "conventional" | "39.2F" | "60F";
@@ -62,6 +63,8 @@ export interface RawTest {
   readonly benchCheckedAt: string | null;
   /** Left out: nothing is stated. */
   readonly known?: KnownUncertainty;
+  /** Repeats of its bench in the twelve months up to this test, at its pressure. Left out: not asked for. */
+  readonly history?: BenchHistory;
   readonly fixture: { readonly id: string; readonly name: string; readonly boreMm: number };
   readonly nominalInH2O: number;
   readonly lifts: readonly { readonly liftUm: number; readonly text: string }[];

@@ -1,4 +1,5 @@
 import type { PortSide } from "./comparison-reasons";
+import { historyUsed } from "./noise-summary";
 import type { RawTest } from "./raw-test";
 import type { LiftReading } from "./repeats";
 import type { SideGain } from "./side-gain";
@@ -36,8 +37,8 @@ export interface ReportSide {
 }
 /** A comparison as issued: everything its paper needs, so that it can be made again unchanged. */
 export interface ReportSnapshot {
-  /** 1: issued before the noise and the hatched loss were drawn; such a paper stays as it was. */
-  readonly kind: 1 | 2;
+  /** 1: issued before the noise and the hatched loss were drawn. 2: before plates of losses kept off the curves on paper. Such papers stay as they were. */
+  readonly kind: 1 | 2 | 3;
   readonly shop: { readonly name: string; readonly address: string; readonly phone: string; readonly email: string };
   readonly locale: string;
   readonly zone: string;
@@ -86,6 +87,8 @@ export function notTestedWords(sides: readonly { side: PortSide; standing: Stand
   });
   const tests = sides.flatMap(({ standing }) => [standing.before, standing.after]).filter((x): x is RawTest => x !== null);
   const single = tests.filter((x) => figuresOfTest(x).readings.every((r) => r.count < 2));
-  const repeats = single.length === 0 ? [] : [`${single.length === tests.length ? "No" : "Some tests have no"} repeat readings, so a difference was not judged against the bench's noise.`];
+  const byHistory = sides.some(({ gain }) => gain.comparable && historyUsed(gain.noise) !== null);
+  const judged = byHistory ? "; where a lift was read once, a difference was judged by the bench's repeat history." : ", so a difference was not judged against the bench's noise.";
+  const repeats = single.length === 0 ? [] : [`${single.length === tests.length ? "No" : "Some tests have no"} repeat readings${judged}`];
   return [...words, ...repeats, ...(cylinders > 1 ? [`This page is port ${cylinder} of ${cylinders}.`] : []), "Swirl, tumble, wet flow and power were not measured."];
 }

@@ -1,4 +1,5 @@
 import { ok, type Result } from "@/modules/kernel/result";
+import { historyOfPair } from "./bench-history";
 import type { NoteCode, PortSide, Reason, WithheldCode } from "./comparison-reasons";
 import type { LiftUnit } from "./lift-ladder";
 import { noiseOfTests, type GainNoise } from "./noise-rows";
@@ -81,7 +82,7 @@ export function sideGain(standing: Standing, side: PortSide, benchCheckHoursMax:
     side, liftUnit: after.liftUnit, atInH2O: after.nominalInH2O, camLiftUm, before: setFacts(before), after: setFacts(after), conditions: shared, notes: compared.value.notes,
   };
   if (!compared.value.comparable) return ok({ ...both, state: "withheld", comparable: false, reasons: compared.value.reasons, rows: compared.value.rows });
-  return ok({ ...compared.value, ...both, state: "comparable", noise: noiseOfTests(figuresBefore, figuresAfter, after) });
+  return ok({ ...compared.value, ...both, state: "comparable", noise: noiseOfTests(figuresBefore, figuresAfter, after, historyOfPair(before, after)) });
 }
 
 /** One port pair of a head. */

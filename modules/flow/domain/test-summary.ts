@@ -1,6 +1,7 @@
+import { repeatSums, type RepeatSums } from "./bench-history";
 import { meanFlowOverLift } from "./mean-flow";
 import type { RawTest } from "./raw-test";
-import { figuresOfTest, type TestFigures } from "./test-figures";
+import { countingFlows, figuresOfTest, type TestFigures } from "./test-figures";
 
 /** Counts changes of the factors and rules that turn a reading into a flow. A summary made under an older one is made again. */
 export const FLOW_CONSTANTS_VERSION = 1;
@@ -16,6 +17,8 @@ export interface TestSummary {
   readonly meanToCamCfm: number | null;
   readonly doubts: number;
   readonly isConverted: boolean;
+  /** What the test adds to the repeat history of its bench. */
+  readonly repeats: RepeatSums;
 }
 
 function meanToCam(liftsUm: readonly number[], flowsCfm: readonly number[], camLiftUm: number | null): number | null {
@@ -33,5 +36,6 @@ export function summaryOfTest(test: RawTest, figures: TestFigures = figuresOfTes
   return {
     liftsUm, flowsCfm, peakCfm: peak?.flowCfm ?? null, peakLiftUm: peak?.liftUm ?? null, meanToCamCfm: meanToCam(liftsUm, flowsCfm, test.camLiftUm),
     doubts: figures.doubts.length + figures.cells.filter((c) => c.flags.some((f) => f !== "SELF_CANCELLING")).length, isConverted: figures.isConverted,
+    repeats: repeatSums(countingFlows(figures)),
   };
 }

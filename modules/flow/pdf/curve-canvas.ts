@@ -2,75 +2,52 @@ import type { CanvasElement, Content } from "pdfmake/interfaces";
 import { FACE, PAPER_INK } from "@/modules/documents/paper";
 import type { CurveGeometry } from "../domain/curve-geometry";
 import { hatchLines } from "../domain/hatch-lines";
-import type { Segment } from "../domain/path-segments";
-
-/** Points on each cubic: at print size the chords are shorter than the line is thick. */
-const STEPS = 14;
-
-/** A drawing as points, one list for each sub-path. Cubics are sampled. */
-export function pointsOf(segments: readonly Segment[]): { x: number; y: number }[][] {
-  const paths: { x: number; y: number }[][] = [];
-  for (const s of segments) {
-    if (s.kind === "close") continue;
-    if (s.kind === "move") {
-      paths.push([{ x: s.x, y: s.y }]);
-      continue;
-    }
-    const path = paths.at(-1);
-    const from = path?.at(-1);
-    if (!path || !from) continue;
-    if (s.kind === "line") path.push({ x: s.x, y: s.y });
-    else {
-      for (let i = 1; i <= STEPS; i++) {
-        const t = i / STEPS;
-        const u = 1 - t;
-        const mix = (a: number, b: number, c: number, d: number) => u * u * u * a + 3 * u * u * t * b + 3 * u * t * t * c + t * t * t * d;
-        path.push({ x: mix(from.x, s.x1, s.x2, s.x), y: mix(from.y, s.y1, s.y2, s.y) });
-      }
-    }
-  }
-  return paths;
-}
+import { paperPlates, type PaperPlate } from "../domain/paper-plates";
+import { sampledPath } from "../domain/sampled-path";
 
 const AREA: Record<string, string> = { "intake-gain": PAPER_INK.fluid, "exhaust-gain": "#EEF68C" };
 
 const HATCH_PT = 3.4;
 
-/** The plate of a loss at the size of the paper's type, kept at the end of its leader. */
-function paperPlate({ x, y, plate }: CurveGeometry["losses"][number]): { x: number; y: number; width: number; height: number } | null {
+/** 1: before losses and noise were drawn. 2: plates at the ends of the screen's leaders. 3: plates placed for the paper. */
+export type DrawingKind = 1 | 2 | 3;
+
+/** As on a paper of the second kind: the screen's plate at the size of the paper's type, kept at the end of its leader. */
+function plateOfSecondKind({ x, y, plate, leader }: CurveGeometry["losses"][number]): PaperPlate | null {
   if (plate === null) return null;
   const [width, height] = [plate.width * 0.54, 12];
-  return { x: plate.x > x ? plate.x : plate.x + plate.width - width, y: plate.y > y ? plate.y : plate.y + plate.height - height, width, height };
+  return { x: plate.x > x ? plate.x : plate.x + plate.width - width, y: plate.y > y ? plate.y : plate.y + plate.height - height, width, height, leader };
 }
 
 /**
  * A flow curve as vectors and words for a paper, one pixel of the geometry to the point. Gains are filled; a loss is hatched
  * and plated as on the screen; the dotted band about before is the noise. Everything is placed from the drawing's top left.
- * @param isFirstKind a paper issued before losses and noise were drawn: made again as it was.
+ * @param kind of an issued paper, which is made again as it was.
  */
-export function curveContent(drawing: CurveGeometry, isFirstKind = false): Content[] {
-  const g: CurveGeometry = isFirstKind ? { ...drawing, areas: drawing.areas.filter((a) => a.kind === "gain"), bands: [], bars: [], losses: [] } : drawing;
+export function curveContent(drawing: CurveGeometry, kind: DrawingKind = 3): Content[] {
+  const g: CurveGeometry = kind === 1 ? { ...drawing, areas: drawing.areas.filter((a) => a.kind === "gain"), bands: [], bars: [], losses: [] } : drawing;
+  const plates = kind === 2 ? g.losses.map(plateOfSecondKind) : paperPlates(g);
   const drawn: CanvasElement[] = [];
   const line = (x1: number, y1: number, x2: number, y2: number, lineWidth: number, lineColor: string): CanvasElement => ({ type: "line", x1, y1, x2, y2, lineWidth, lineColor });
   for (const area of g.areas) {
     if (area.kind !== "gain") continue;
-    for (const points of pointsOf(area.segments)) drawn.push({ type: "polyline", points, closePath: true, color: AREA[`${area.side}-gain`] ?? PAPER_INK.fluid, lineWidth: 0 });
+    for (const points of sampledPath(area.segments)) drawn.push({ type: "polyline", points, closePath: true, color: AREA[`${area.side}-gain`] ?? PAPER_INK.fluid, lineWidth: 0 });
   }
   // The paper's renderer moves the points it is given, so every shape gets points of its own.
   for (const area of g.areas) {
     if (area.kind !== "loss") continue;
-    for (const points of pointsOf(area.segments)) {
+    for (const points of sampledPath(area.segments)) {
       drawn.push(...hatchLines(points, HATCH_PT).map((h) => line(h.x1, h.y1, h.x2, h.y2, 0.75, PAPER_INK.ink)), { type: "polyline", points, closePath: true, lineWidth: 0.5, lineColor: PAPER_INK.ink });
     }
   }
   for (const band of g.bands) {
-    for (const points of pointsOf(band.segments)) drawn.push({ type: "polyline", points, closePath: true, color: PAPER_INK.ink, fillOpacity: 0.1, lineWidth: 0.01, lineColor: PAPER_INK.line });
-    for (const points of pointsOf(band.segments)) drawn.push({ type: "polyline", points, closePath: true, lineWidth: 0.6, lineColor: PAPER_INK.ink, dash: { length: 1, space: 1.8 } });
+    for (const points of sampledPath(band.segments)) drawn.push({ type: "polyline", points, closePath: true, color: PAPER_INK.ink, fillOpacity: 0.1, lineWidth: 0.01, lineColor: PAPER_INK.line });
+    for (const points of sampledPath(band.segments)) drawn.push({ type: "polyline", points, closePath: true, lineWidth: 0.6, lineColor: PAPER_INK.ink, dash: { length: 1, space: 1.8 } });
   }
   for (const b of g.bars) drawn.push(line(b.x, b.top, b.x, b.bottom, 0.7, PAPER_INK.ink), line(b.x - 2, b.top, b.x + 2, b.top, 0.7, PAPER_INK.ink), line(b.x - 2, b.bottom, b.x + 2, b.bottom, 0.7, PAPER_INK.ink));
   for (const t of g.flowTicks) if (t.flowCfm > 0) drawn.push(line(g.plot.left, t.y, g.plot.right, t.y, 0.5, PAPER_INK.line));
   for (const l of g.lines) {
-    for (const points of pointsOf(l.segments)) {
+    for (const points of sampledPath(l.segments)) {
       drawn.push({ type: "polyline", points, lineWidth: l.when === "after" ? 1.7 : 0.9, lineColor: l.when === "after" ? PAPER_INK.ink : PAPER_INK.edge, lineJoin: "round", ...(l.isDashed ? { dash: { length: l.when === "after" ? 4 : 3, space: 2.4 } } : {}) });
     }
   }
@@ -83,10 +60,10 @@ export function curveContent(drawing: CurveGeometry, isFirstKind = false): Conte
   for (const t of g.liftTicks) drawn.push(line(t.x, g.plot.bottom, t.x, g.plot.bottom + (t.isLong ? 5.5 : 3), 0.7, PAPER_INK.ink));
 
   // The mark of a loss stands at its reading even where no plate finds room.
-  for (const m of g.losses) {
+  for (const [i, m] of g.losses.entries()) {
     drawn.push({ type: "polyline", points: [{ x: m.x - 3.2, y: m.y + 3.6 }, { x: m.x + 3.2, y: m.y + 3.6 }, { x: m.x, y: m.y + 8.6 }], closePath: true, color: PAPER_INK.ink, lineWidth: 0 });
-    if (m.leader) drawn.push(line(m.leader.x1, m.leader.y1, m.leader.x2, m.leader.y2, 0.7, PAPER_INK.ink));
-    const plate = paperPlate(m);
+    const plate = plates[i];
+    if (plate?.leader) drawn.push(line(plate.leader.x1, plate.leader.y1, plate.leader.x2, plate.leader.y2, 0.7, PAPER_INK.ink));
     if (plate) drawn.push({ type: "rect", x: plate.x, y: plate.y, w: plate.width, h: plate.height, color: PAPER_INK.ink, lineWidth: 0 });
   }
 
@@ -100,8 +77,8 @@ export function curveContent(drawing: CurveGeometry, isFirstKind = false): Conte
     ...(g.cam ? [boxed(g.cam.text, Math.min(g.cam.x - 40, g.widthPx - 80), g.cam.top - 10, 80, "center")] : []),
     { canvas: [...drawn, { type: "rect", x: 0, y: 0, w: g.widthPx, h: g.heightPx, lineWidth: 0, lineColor: "#FFFFFF", fillOpacity: 0 }] },
     // Words on plates come after the drawing, so they are counted from its foot.
-    ...g.losses.flatMap((m): Content[] => {
-      const plate = paperPlate(m);
+    ...g.losses.flatMap((m, i): Content[] => {
+      const plate = plates[i] ?? null;
       return plate === null ? [] : [{
         columns: [{ text: m.text, width: plate.width, alignment: "center", fontSize: 7, font: FACE.table, bold: true, color: "#FFFFFF" }], relativePosition: { x: plate.x, y: plate.y + 1.6 - g.heightPx },
       }];

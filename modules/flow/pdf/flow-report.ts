@@ -4,7 +4,7 @@ import { dateTimeZone, decimal } from "@/modules/kernel/format";
 import { linesOfPort } from "../components/curve-lines";
 import { differenceText, flowText, liftWords } from "../components/flow-words";
 import { withheldWords } from "../components/gain-words";
-import { isAssessed, noiseSummary, notStatedWords } from "../domain/noise-summary";
+import { historyUsed, isAssessed, noiseSummary, notStatedWords } from "../domain/noise-summary";
 import { curveGeometry } from "../domain/curve-geometry";
 import { AIRFLOW_WORDS, type ReportSide, type ReportSnapshot, type ReportTest } from "../domain/report-snapshot";
 import { curveContent } from "./curve-canvas";
@@ -103,7 +103,7 @@ function whoWords(s: ReportSnapshot, shared: readonly string[]): string[] {
 /** What the dotted band is, and what it leaves out; nothing on a paper without a verdict. */
 const bandWords = (s: ReportSnapshot): string[] => {
   const judged = s.sides.flatMap(({ gain }) => (gain.comparable && isAssessed(gain.noise) ? [gain.noise] : []));
-  return judged.length === 0 ? [] : ["The dotted band on the curve is the measurement noise about the before test (95 %).", ...new Set(judged.flatMap((n) => notStatedWords(n) ?? []))];
+  return judged.length === 0 ? [] : [`The dotted band on the curve is the measurement noise about the before test (95 %)${judged.some((n) => historyUsed(n) !== null) ? ", by the bench's repeat history where a lift was read once" : ""}.`, ...new Set(judged.flatMap((n) => notStatedWords(n) ?? []))];
 };
 
 const small = (text: string): Content => ({ text, fontSize: 8.2, lineHeight: 1.12, color: PAPER_INK.soft, margin: [0, 0, 0, 2.5] });
@@ -127,7 +127,7 @@ export function flowReport(s: ReportSnapshot): TDocumentDefinitions {
     widthPx: isLong ? 216 : width, heightPx: isLong ? 210 : hasVerdict ? 170 : 190, unit, atInH2O: stated?.atInH2O ?? 28, camLiftUm: stated?.camLiftUm ?? null, lines, mini: isLong,
     decimalText: (v, d) => decimal(v, d, s.locale),
   });
-  const curve = geometry.ok ? curveContent(geometry.value, s.kind === 1) : [];
+  const curve = geometry.ok ? curveContent(geometry.value, s.kind) : [];
   const content: Content[] = [
     ...masthead({ ...s.shop, locale: s.locale }, `Flow report ${s.comparisonNo}`, s.head.mark),
     factRow([

@@ -7,6 +7,7 @@ import type { PortSide } from "../domain/comparison-reasons";
 import type { RawTest } from "../domain/raw-test";
 import { sideGain, type GainOfPiece, type PortGain, type SideGain } from "../domain/side-gain";
 import { standingTests } from "../domain/standing-tests";
+import { withRepeatHistory } from "./repeat-history";
 import { rawTests } from "./tests-of-head";
 
 /** One side from finished tests. Figures that cannot be computed are withheld as absent, and the fault is logged. */
@@ -40,7 +41,7 @@ export async function gainForPiece(ctx: ShopContext, pieceId: string): Promise<G
       .leftJoin(heads, and(eq(heads.shopId, workPieces.shopId), eq(heads.pieceId, workPieces.id)))
       .where(and(eq(workPieces.shopId, ctx.shop.id), eq(workPieces.id, pieceId)));
     if (!piece || (isOwner && piece.customerId !== ctx.actor.id)) throw new NotFound("piece");
-    return { piece, hoursMax: (await settingsOf(inner)).benchCheckHours, tests: piece.headId ? await rawTests(inner, { headIds: [piece.headId] }) : [] };
+    return { piece, hoursMax: (await settingsOf(inner)).benchCheckHours, tests: piece.headId ? await withRepeatHistory(inner, (await rawTests(inner, { headIds: [piece.headId] })).filter((t) => t.state === "complete")) : [] };
   });
   return { pieceId, headId: piece.headId, mark: piece.mark ?? piece.tag ?? "", family: piece.family, ports: portGains(tests, hoursMax) };
 }

@@ -7,6 +7,7 @@ import { coefficientTable, type CoefficientTable } from "../domain/coefficient-r
 import type { PortSide } from "../domain/comparison-reasons";
 import type { EstimateCam } from "../domain/engine-estimate";
 import type { LiftUnit } from "../domain/lift-ladder";
+import type { BenchHistory } from "../domain/noise";
 import type { NoiseRow } from "../domain/noise-rows";
 import type { RawTest } from "../domain/raw-test";
 import type { LiftReading } from "../domain/repeats";
@@ -14,6 +15,7 @@ import { sideGain } from "../domain/side-gain";
 import { standingTests } from "../domain/standing-tests";
 import { figuresOfTest } from "../domain/test-figures";
 import { headDiametersMm, type ValveOfFamily } from "../domain/valve-list";
+import { withRepeatHistory } from "./repeat-history";
 import { rawTests } from "./tests-of-head";
 
 export interface PortFigures {
@@ -26,6 +28,8 @@ export interface PortFigures {
   withheld: string[];
   /** Uncertainties nobody stated; they count as nothing in the verdict. */
   notStated: readonly string[];
+  /** Repeats of the bench up to the newer test. */
+  history?: BenchHistory | undefined;
 }
 export interface EstimateFacts { cylinders: number; boreMm: number | null; strokeMm: number | null; cams: (EstimateCam & { id: string; label: string })[]; ports: { cylinder: number; when: "before" | "after"; atInH2O: number; readings: LiftReading[] }[] }
 export interface HeadFigures {
@@ -57,7 +61,7 @@ function portFigures(cylinder: number, side: PortSide, tests: readonly Test[], v
     before: table(standing.before), after: table(standing.after),
     noise: noise?.rows ?? null,
     withheld: gain.ok && gain.value.state === "withheld" ? gain.value.reasons.map((r) => r.words) : gain.ok && gain.value.state === "absent" ? ["One of the two tests is missing."] : [],
-    notStated: noise?.notStated ?? [],
+    notStated: noise?.notStated ?? [], history: noise?.history,
   };
 }
 
@@ -72,7 +76,7 @@ export async function headFigures(ctx: ShopContext, headId: string): Promise<Hea
     const settings = await settingsOf(inner);
     const [family] = await tx.select().from(engineFamilies).where(and(eq(engineFamilies.shopId, s), eq(engineFamilies.name, head.family)));
     const valves = (family?.valves ?? []) as ValveOfFamily[];
-    const tests = (await rawTests(inner, { headIds: [headId] })).filter((t) => t.state === "complete");
+    const tests = await withRepeatHistory(inner, (await rawTests(inner, { headIds: [headId] })).filter((t) => t.state === "complete"));
     const ports = Array.from({ length: head.cylinders }, (_, i) => i + 1).flatMap((cylinder) => (["intake", "exhaust"] as const).flatMap((side) => portFigures(cylinder, side, tests, valves, settings.benchCheckHours) ?? []));
     let estimates: EstimateFacts | null = null;
     if (settings.showFlowEstimates) {

@@ -4,6 +4,7 @@ import { benches, benchChecks, customers, fixtures, flowComparisons, heads, peop
 import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
 import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
 import { rawTests } from "./tests-of-head";
+import { withRepeatHistory } from "./repeat-history";
 import { seesCustomers } from "./gain";
 import { cautionsOfOwnHead, cautionsToShow } from "./job-cautions";
 
@@ -82,6 +83,7 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
     if (!row || cylinder < 1 || cylinder > row.h.cylinders) throw new NotFound("head");
     const { h } = row;
     const all = await rawTests(inner, { headIds: [headId] });
+    const tests = await withRepeatHistory(inner, all.filter((t) => t.cylinder === cylinder).map(({ headId: _, cylinder: __, ...t }) => t));
     const { benchCheckHours, nominalPressureInH2O } = await settingsOf(inner);
     const personId = personIdOf(ctx);
     const canRecord = ableTo(ctx, "flow.record");
@@ -96,7 +98,7 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
         seatMaterial: h.seatMaterial, cylinders: h.cylinders, camLiftIntakeUm: h.camLiftIntakeUm, camLiftExhaustUm: h.camLiftExhaustUm,
         version: h.version, workDone: h.workDone, notes: h.notes,
       },
-      cylinder, ports: portMarks(h.cylinders, all), tests: all.filter((t) => t.cylinder === cylinder).map(({ headId: _, cylinder: __, ...t }) => t),
+      cylinder, ports: portMarks(h.cylinders, all), tests,
       benchCheckHours, nominalInH2O: nominalPressureInH2O, canRecord, canIssue: ableTo(ctx, "flow.issue"), viewer: { id: ctx.actor.id, name: ctx.actor.name },
       cautions,
       comparisons: issued.map((c) => ({ ...c, issuedAt: c.issuedAt.toISOString() })),

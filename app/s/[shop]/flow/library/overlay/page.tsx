@@ -3,8 +3,9 @@ import { notFound } from "next/navigation";
 import { orNotFound, shopPage } from "@/modules/access/page";
 import { differenceText, flowText, liftWords } from "@/modules/flow/components/flow-words";
 import { LibraryCurves } from "@/modules/flow/components/library-curves";
-import { NoiseVerdicts } from "@/modules/flow/components/noise-verdicts";
+import { bandHint, NoiseVerdicts } from "@/modules/flow/components/noise-verdicts";
 import { portWords, PURPOSE_WORDS } from "@/modules/flow/components/library-words";
+import { marginsOf } from "@/modules/flow/domain/noise-band";
 import type { Purpose } from "@/modules/flow/domain/raw-test";
 import { overlayInput } from "@/modules/flow/library-input";
 import { overlayOf, type OverlaySide } from "@/modules/flow/queries/library-family";
@@ -28,6 +29,8 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
   const { slug, locale } = ctx.shop;
   const unit = over.b.liftUnit;
   const day = (iso: string) => date(localDate(new Date(iso), ctx.shop.zone), locale);
+  const margins = over.comparable ? marginsOf(over.noise?.rows ?? []) : [];
+  const hint = over.comparable ? bandHint(over.noise, "the first", "the second") : null;
   const word = over.samePort ? "Gain" : "Difference";
   return (
     <main id="main" className="page">
@@ -37,8 +40,9 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
         : <Note className="mb-6" title="Not comparable, so no difference is shown.">{over.reasons.map((r) => r.words).join(" ")} {over.notes.map((n) => n.words).join(" ")}</Note>}
       <div className="split" style={{ "--side": "460px" } as React.CSSProperties}>
         <Bay label="Over each other">
-          <div className="hide-s"><LibraryCurves curves={[{ name: nameOf(over.a), look: "thin", readings: over.a.readings }, { name: nameOf(over.b), look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" width={820} height={420} /></div>
-          <div className="only-phone"><LibraryCurves curves={[{ name: "First", look: "thin", readings: over.a.readings }, { name: "Second", look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" width={340} height={280} /></div>
+          <div className="hide-s"><LibraryCurves curves={[{ name: nameOf(over.a), look: "thin", readings: over.a.readings }, { name: nameOf(over.b), look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" margins={margins} width={820} height={420} /></div>
+          <div className="only-phone"><LibraryCurves curves={[{ name: "First", look: "thin", readings: over.a.readings }, { name: "Second", look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" margins={margins} width={340} height={280} /></div>
+          {hint === null ? null : <p className="hint">{hint}</p>}
           {over.a.atInH2O === over.b.atInH2O ? null : <p className="hint">The first is stated at {over.a.atInH2O} in H₂O, the second at {over.b.atInH2O}: the two lines do not stand on one scale of pressure.</p>}
         </Bay>
         <Bay label="Readings, CFM" flush>
@@ -48,7 +52,7 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
             <tbody>{over.rows.map((r) => <tr key={r.liftUm}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(r.liftUm, unit, locale)}</th><td className="r q">{r.a === null ? "—" : flowText(r.a, locale)}</td><td className="r q">{r.b === null ? "—" : flowText(r.b, locale)}</td>{over.comparable ? <td className="r q"><b>{r.difference === null ? "—" : differenceText(r.difference, locale)}</b></td> : null}</tr>)}</tbody>
             {over.meanDifferenceCfm === null ? null : <tfoot><tr><td colSpan={3}>Mean over the common lifts</td><td className="r q">{differenceText(over.meanDifferenceCfm, locale)}</td></tr></tfoot>}
           </table>
-          {over.noise === null ? null : <NoiseVerdicts port={{ noise: over.noise.rows, withheld: [], notStated: over.noise.notStated, liftUnit: unit }} locale={locale} />}
+          {over.noise === null ? null : <NoiseVerdicts port={{ noise: over.noise.rows, withheld: [], history: over.noise.history, notStated: over.noise.notStated, liftUnit: unit }} locale={locale} />}
           <div className="p-4">
             {[over.a, over.b].map((s, i) => <p key={s.testId} className="sm mid mb-2"><b>{i === 0 ? "First" : "Second"}: <Link className="lk" href={`/s/${slug}/flow/${s.headId}`}>{s.mark}</Link></b>, {day(s.startedAt)}, {s.operator}. {s.conditions.join(", ")}.</p>)}
           </div>
