@@ -110,6 +110,9 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   // At the bench it stands over the grid, so that the keypad keeps its place.
   const caution = drafts.length > 0 ? <CautionNote hazards={given.cautions} workOrderId={given.head.workOrderId} headId={given.head.id} step="bench session" /> : null;
   const canAddLift = drafts.length > 0 && given.canRecord && !isBench;
+  // At the bench with nothing to type, the next step takes the keypad's place.
+  const keysWork = !isBench || drafts.length > 0;
+  const next = <NextStep sheet={given} gear={gear} figures={figures} settle={sheet.settle} onChanged={() => router.refresh()} />;
   const passed = sidesWithPasses(sheet.tests);
   const curve = { lines: figures.lines, unit, atInH2O: nominal, camLiftUm: cam, locale, label: "Read the curve point by point" } as const;
 
@@ -131,7 +134,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
           {isBench ? (notes.length === 0 ? null : (
             <details className="chk2"><summary><b>{notes.length} {notes.length === 1 ? "check" : "checks"}.</b> {notes.map((n) => n.title).join(" ")}</summary><SheetNotes notes={notes} /></details>
           )) : <SheetNotes notes={notes} />}
-          <NextStep sheet={given} gear={gear} figures={figures} settle={sheet.settle} onChanged={() => router.refresh()} />
+          {keysWork ? next : null}
         </div>
         <div className="fl-r">
           <Bay label="Live curve" aside={isBench && means !== "" ? means : undefined}>
@@ -149,7 +152,8 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
             )}
             {isBench ? null : <SheetSummary figures={figures} locale={locale} />}
           </Bay>
-          {isBench ? (
+          {keysWork ? null : next}
+          {isBench && keysWork ? (
             <BenchKeypad
               name={name} onDigit={digit} onBack={() => { if (active) sheet.type(active, sheet.textAt(active).slice(0, -1)); }} onBench={fromBench}
               onBackLift={() => { if (active) step(active, -1); else if (firstDraft) focus(firstDraft.side, firstDraft.when, figures.liftsUm[0] ?? 0); }}

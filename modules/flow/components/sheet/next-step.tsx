@@ -23,9 +23,11 @@ const troubleOf = (reply: Reply<unknown> | null): string => {
 function ReasonDialog({ label, question, action, onAction }: { label: string; question: string; action: string; onAction: (reason: string) => void }) {
   const [reason, setReason] = useState("");
   const [open, setOpen] = useState(false);
+  const [isAsked, setAsked] = useState(false);
+  const lacks = reason.trim().length < 3;
   return (
-    <ConfirmDialog open={open} onOpenChange={setOpen} trigger={<Button size="sm" variant="lo">{label}</Button>} question={question} safe="Leave it" action={action} onAction={() => { if (reason.trim().length >= 3) { setOpen(false); onAction(reason.trim()); } }}>
-      <label className="field"><span className="label">Reason</span><span className="in"><input value={reason} onChange={(e) => setReason(e.target.value)} maxLength={300} /></span></label>
+    <ConfirmDialog open={open} onOpenChange={(to) => { setOpen(to); setAsked(false); }} trigger={<Button size="sm" variant="lo">{label}</Button>} question={question} safe="Leave it" action={action} onAction={() => { setAsked(true); if (!lacks) { setOpen(false); onAction(reason.trim()); } }}>
+      <label className="field"><span className="label">Reason</span><span className="in"><input value={reason} onChange={(e) => setReason(e.target.value)} maxLength={300} aria-invalid={isAsked && lacks} aria-describedby="reason-says" /></span><span id="reason-says" className="err" role="alert">{isAsked && lacks ? "Say why in a few words." : ""}</span></label>
     </ConfirmDialog>
   );
 }
