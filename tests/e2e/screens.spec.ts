@@ -20,7 +20,7 @@ const UUID = "[0-9a-f-]{36}";
 /** Where a page of this file stands in the demo. A page without an entry here fails. `out` pages are seen by nobody signed in. */
 const PAGES: Record<string, { where: string | ((p: Places) => Promise<string>); out?: true; /** Answers of this status are meant. */ meant?: number }> = {
   "": { where: "/", out: true },
-  "(front)/sign-in": { where: "/sign-in", out: true },
+  "sign-in": { where: "/sign-in", out: true },
   // The board asks whose tablet this is, and is told that it is nobody's.
   clock: { where: "/clock", out: true, meant: 401 },
   "join/[token]": { where: "/join/not-a-good-invitation", out: true },
@@ -76,7 +76,8 @@ const PAGES: Record<string, { where: string | ((p: Places) => Promise<string>); 
 };
 
 const APP = path.resolve(import.meta.dirname, "../../app");
-const pagesOfApp = fs.readdirSync(APP, { recursive: true }).map(String).filter((f) => path.basename(f) === "page.tsx").map((f) => path.dirname(f)).map((f) => (f === "." ? "" : f)).sort();
+const pagesOfApp = fs.readdirSync(APP, { recursive: true }).map(String).filter((f) => path.basename(f) === "page.tsx")
+  .map((f) => path.dirname(f).split("/").filter((part) => part !== "." && !/^\(.*\)$/.test(part)).join("/")).sort();
 
 test.describe.configure({ mode: "default" });
 let signedIn: Page;

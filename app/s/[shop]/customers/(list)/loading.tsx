@@ -1,5 +1,5 @@
 import { SkeletonPage } from "@/modules/ui/skeleton";
 
 export default function Loading() {
-  return <SkeletonPage label="Fetching the library." />;
+  return <SkeletonPage label="Fetching customers." />;
 }

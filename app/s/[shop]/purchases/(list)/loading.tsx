@@ -1,5 +1,5 @@
 import { SkeletonPage } from "@/modules/ui/skeleton";
 
 export default function Loading() {
-  return <main id="main" className="page"><SkeletonPage label="Fetching parts." /></main>;
+  return <SkeletonPage label="Fetching purchase orders." />;
 }

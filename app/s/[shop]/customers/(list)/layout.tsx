@@ -1,0 +1,3 @@
+import { guardedBy } from "@/modules/access/page";
+
+export default guardedBy("customers.see");
