@@ -19,7 +19,7 @@ console.log("Tamarack Bench & Valve");
 await tellTamarack(VK_OWNER_URL, pepper, now);
 
 if (VK_SIGN_INS_FILE) {
-  const rows = [NINEBARK, TAMARACK].flatMap((shop) => shop.people.filter((p) => p.email).map((p) => ({ shop: shop.name, role: p.roles[0], email: p.email, password: DEMO_PASSWORD, badge: p.badge, pin: p.pin })));
+  const rows = [NINEBARK, TAMARACK].flatMap((shop) => shop.people.filter((p) => p.email).map((p) => ({ shop: shop.name, role: p.roles.join(", "), email: p.email, password: DEMO_PASSWORD, badge: p.badge, pin: p.pin })));
   await mkdir(path.dirname(VK_SIGN_INS_FILE), { recursive: true });
   await writeFile(VK_SIGN_INS_FILE, `${JSON.stringify(rows, null, 2)}\n`, { mode: 0o600 });
 }

@@ -48,7 +48,7 @@ export function Rail({ shopName, homeHref, rooms, current, find, create, person,
       <b aria-hidden="true">{person.initials}</b>
       <span>
         {person.name}
-        <span>{person.role}</span>
+        <span title={person.role}>{person.role}</span>
       </span>
     </>
   );

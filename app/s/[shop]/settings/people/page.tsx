@@ -1,7 +1,7 @@
 import { ableTo } from "@/modules/access/context";
 import { shopPage } from "@/modules/access/page";
 import { AddPersonForm } from "@/modules/time/components/person-forms";
-import { roleWord } from "@/modules/time/role-words";
+import { roleWords } from "@/modules/time/role-words";
 import { peopleList } from "@/modules/time/queries/settings-lists";
 import { Bay } from "@/modules/ui/bay";
 import { Flag } from "@/modules/ui/flag";
@@ -22,7 +22,7 @@ export default async function PeoplePage({ params }: { params: Promise<{ shop: s
           {people.map((p) => (
             <tr key={p.id}>
               <td className="b"><TextLink href={`/s/${ctx.shop.slug}/settings/people/${p.id}`}>{p.name}</TextLink>{p.leftAt ? <span className="mid"> · has left</span> : null}</td>
-              <td className="w2 mid">{p.roles.map(roleWord).join(", ")}</td>
+              <td className="w2 mid">{roleWords(p.roles)}</td>
               <td>{p.leftAt ? "" : p.pin === "dead" ? <Flag>PIN dead</Flag> : [p.hasBadge ? "badge" : "", p.pin === "set" ? "PIN" : ""].filter(Boolean).join(", ") || <span className="mid">none</span>}</td>
               <td className="w2">{p.hasSignIn ? "Signs in" : <span className="mid">no</span>}</td>
             </tr>

@@ -6,7 +6,7 @@ import { notFound } from "next/navigation";
 import { InvitationBay } from "@/modules/time/components/invitation-bay";
 import { LeaveButton } from "@/modules/time/components/leave-button";
 import { ChangePersonForm, ClockKeys, RatesBay } from "@/modules/time/components/person-forms";
-import { roleWord } from "@/modules/time/role-words";
+import { roleWords } from "@/modules/time/role-words";
 import { invitationFor } from "@/modules/time/identity/invitation";
 import { getPerson } from "@/modules/time/queries/settings-lists";
 import { Bay, Bays } from "@/modules/ui/bay";
@@ -23,7 +23,7 @@ export default async function PersonPage({ params }: { params: Promise<{ shop: s
   const isSelf = ctx.actor.kind === "person" && ctx.actor.id === id;
   return (
     <main id="main" className="page">
-      <PageHead title={person.name} sub={person.leftAt ? "Has left" : person.roles.map(roleWord).join(", ")} actions={mayWrite && !isSelf && !person.leftAt ? <LeaveButton id={id} name={person.shortName} /> : undefined} />
+      <PageHead title={person.name} sub={person.leftAt ? "Has left" : roleWords(person.roles)} actions={mayWrite && !isSelf && !person.leftAt ? <LeaveButton id={id} name={person.shortName} /> : undefined} />
       <div className="split">
         <Bays>
           {mayWrite && !person.leftAt ? <Bay label="Person"><ChangePersonForm key={person.version} person={person} /></Bay> : null}
