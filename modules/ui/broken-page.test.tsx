@@ -1,6 +1,6 @@
 import { renderToStaticMarkup } from "react-dom/server";
 import { describe, expect, it } from "vitest";
-import { RecordsAway } from "@/db/outage";
+import { RECORDS_AWAY } from "@/modules/kernel/away";
 import { BrokenPage } from "./broken-page";
 
 /** As the browser gets an error of the server's page: no words, and the digest alone. */
@@ -9,7 +9,7 @@ const shown = (error: Error & { digest?: string }): string => renderToStaticMark
 
 describe("a page that broke", () => {
   it("says that the shop's data is away when that is all", () => {
-    const html = shown(asSent(new RecordsAway("nothing", new Error("connect ECONNREFUSED")).digest));
+    const html = shown(asSent(RECORDS_AWAY));
     expect(html).toContain("The shop’s data cannot be reached just now");
     expect(html).toContain("What you typed is kept. Try again.");
     expect(html).not.toContain("Reference");

@@ -11,7 +11,7 @@ import { defineCommand } from "@/modules/access/command";
 import type { TxContext } from "@/modules/access/context";
 import { isHealthy } from "@/modules/access/health";
 import { addCustomer } from "@/modules/customers/commands";
-import { AWAY_WORDS } from "@/modules/kernel/away";
+import { AWAY_WORDS, RECORDS_AWAY } from "@/modules/kernel/away";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
 import { z } from "@/modules/kernel/zod";
 import { behindTheCurtain, currentDatabase } from "@/tests/support/database";
@@ -115,7 +115,7 @@ describe("a connection terminated in the middle of a command", () => {
   it("carries the digest that a page reads, and the first cause", async () => {
     const error: unknown = await withShop(a.shop.id, dropOwnConnection).catch((e: unknown) => e);
     expect(error).toBeInstanceOf(RecordsAway);
-    expect(error).toMatchObject({ digest: "RECORDS_AWAY", outcome: "nothing" });
+    expect(error).toMatchObject({ digest: RECORDS_AWAY, outcome: "nothing" });
     expect(JSON.stringify((error as Error).cause, ["code", "cause"])).toContain("57P01");
   });
   it("does not turn a refusal into a fault", async () => {
