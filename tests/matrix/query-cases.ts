@@ -100,6 +100,10 @@ export const QUERY_CASES: Record<string, QueryCase> = {
   "flow/queries/upload flowFilesOf": byId("flow.see", "heads"),
   "flow/queries/tests-of-head cellsOf": byIds(null, "flow_tests"),
   "flow/queries/tests-of-head rawTests": { act: null, call: (fn, ctx, at) => fn(ctx, { headIds: [at("heads").id] }) },
+  "flow/queries/repeat-history withRepeatHistory": {
+    act: null,
+    call: (fn, ctx, at) => fn(ctx, [2098, 2099].map((year) => ({ id: String(year), side: "intake", state: "complete", nominalInH2O: 28, startedAt: `${year}-01-01T00:00:00.000Z`, bench: { id: at("benches").id } }))),
+  },
   "work-orders/queries/families familiesOf": plain("orders.see"),
 
   "work-orders/queries/bench-list clockBoard": plain("clock.use"),

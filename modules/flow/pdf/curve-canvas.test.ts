@@ -30,7 +30,7 @@ const DRAWINGS = Object.entries(CURVES).flatMap(([name, lines]) => SIZES.map(([w
 })));
 
 interface Box { x: number; y: number; w: number; h: number }
-const canvasOf = (content: readonly Content[]): CanvasElement[] => content.flatMap((c) => (typeof c === "object" && "canvas" in c ? c.canvas.filter((e) => e !== undefined) : []));
+const canvasOf = (content: readonly Content[]): CanvasElement[] => content.flatMap((c) => (typeof c === "object" && "canvas" in c ? (c.canvas ?? []).filter((e) => e !== undefined) : []));
 /** The plates as they come out on the paper: filled boxes of ink. */
 const platesOf = (g: CurveGeometry, kind: DrawingKind): Box[] => canvasOf(curveContent(g, kind)).flatMap((e) => (e.type === "rect" && e.color === PAPER_INK.ink ? [{ x: e.x, y: e.y, w: e.w, h: e.h }] : []));
 
