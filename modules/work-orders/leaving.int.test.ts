@@ -2,6 +2,7 @@ import { randomUUID } from "node:crypto";
 import { beforeAll, describe, expect, it } from "vitest";
 import { sha256 } from "@/modules/access/audit";
 import { NotFound } from "@/modules/access/context";
+import { addFamily } from "@/modules/flow/commands/gear";
 import { asCustomer, HERO_LABOR, HERO_SHELF, hashOf, heroLines, heroMenu, heroParts, openHero, pieceVersion, sendVersion, type HeroOrder } from "@/tests/support/hero-order";
 import { behindTheCurtain } from "@/tests/support/database";
 import { must, requestId, testShop, type TestShop } from "@/tests/support/shop";
@@ -57,6 +58,12 @@ describe("booking in", () => {
     expect(await one(`select mark || ' ' || family || ' ' || casting_number from heads where piece_id = '${hero.pieceId}'`)).toBe("260224-01 S250-4V K7-2201");
     expect(await one(`select body_text like '%nick on the deck edge%' from mail_messages where kind = 'head-arrived'`)).toBe("t");
     expect(await receivePiece(a.as("rcv", late), await input())).toMatchObject({ ok: false, refusal: { code: "ALREADY_BOOKED_IN" } });
+  });
+  it("gives the head the cylinders, bore and cam lifts of the shop's family, so that every port of it can be flowed", async () => {
+    must(await addFamily(a.as("mgr", AT), { name: "S250-4V", cylinders: 2, boreMm: 77, strokeMm: 53.6, camLiftIntake: "0.340", camLiftExhaust: "0.330" }));
+    const twin = await agreedOrder("twin");
+    must(await receivePiece(a.as("rcv", AT), { pieceId: twin.pieceId, version: await pieceVersion(a, twin.pieceId), parcelCondition: "sound", fewPhotosOk: true }));
+    expect(await one(`select concat_ws(' ', cylinders, bore_mm, stroke_mm, cam_lift_intake_um, cam_lift_exhaust_um) from heads where piece_id = '${twin.pieceId}'`)).toBe("2 77 53.6 8636 8382");
   });
   it("takes the same picture once, however often it is sent", async () => {
     const same = photo(hero.pieceId);

@@ -1,12 +1,13 @@
 import "server-only";
 import { randomUUID } from "node:crypto";
 import { and, desc, eq, isNull, sql } from "drizzle-orm";
-import { customers, estimates, files, heads, links, receivingChecks, workOrders, workPieces } from "@/db/schema";
+import { customers, estimates, files, links, receivingChecks, workOrders, workPieces } from "@/db/schema";
 import { changedMeanwhile, defineCommand } from "@/modules/access/command";
 import { personIdOf, type TxContext } from "@/modules/access/context";
 import { linkAddress } from "@/modules/access/link";
 import { takeNumber } from "@/modules/access/numbers";
 import { queueMail } from "@/modules/documents/mail";
+import { headForPiece } from "@/modules/flow/commands/head";
 import { dateTime } from "@/modules/kernel/format";
 import { localDate } from "@/modules/kernel/instant";
 import { ok, refuse } from "@/modules/kernel/result";
@@ -58,9 +59,9 @@ export const receivePiece = defineCommand({
       shopId: shop.id, id: randomUUID(), pieceId: p.id, at: ctx.now, personId: personIdOf(ctx), parcelCondition: input.parcelCondition, counts: input.counts,
       missing: input.missing, damage: input.damage, notes: input.notes,
     });
-    await tx.insert(heads).values({
-      shopId: shop.id, id: randomUUID(), pieceId: p.id, ownerKind: p.ownerKind, mark: tag, family: p.family, castingNumber: marks.castingNumber, seatMaterial: p.seatMaterial,
-    });
+    // With the cylinders, bore and cam lifts of the shop's family, so that every port of it can be flowed.
+    const head = await headForPiece(ctx, p.id);
+    if (!head.ok) return head;
     if (c.email) {
       const url = await standingPage(ctx, o.id);
       await queueMail(ctx, {
