@@ -4,6 +4,7 @@ import { benches, fixtures, flowTests, flowTestSummaries, heads } from "@/db/sch
 import { withShop, type Tx } from "@/db/scope";
 import { FLOW_CONSTANTS_VERSION, summaryOfTest } from "@/modules/flow/domain/test-summary";
 import type { RawTest } from "@/modules/flow/domain/raw-test";
+import { steadyNumbers } from "./steady-numbers";
 
 export interface FlowLoad { tests: number; heads: number; readings: number; families: readonly string[]; aTest: string; sameFamilyTests: readonly [string, string] }
 
@@ -11,12 +12,6 @@ const SIDES = ["intake", "exhaust"] as const;
 const PURPOSES = ["baseline", "after"] as const;
 const WORK = ["epoxy", "weld", "valve size", "seat", "port shape"] as const;
 const HEADS_AT_ONCE = 100;
-
-/** The same numbers on every machine: a small linear congruence, not chance. */
-function counter(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => (state = (Math.imul(state, 1_664_525) + 1_013_904_223) >>> 0) / 2 ** 32;
-}
 
 /** Flow of an invented port: rises with lift and levels off. */
 const flowAt = (liftMm: number, top: number): number => Math.round(top * (1 - Math.exp(-liftMm / 4.2)) * 10) / 10;
@@ -28,7 +23,7 @@ const flowAt = (liftMm: number, top: number): number => Math.round(top * (1 - Ma
 export async function loadFlow(shopId: string, options: { operatorId: string; tests: number; lifts?: number; now: Date; mark?: string; families?: number }): Promise<FlowLoad> {
   const { operatorId, tests, lifts = 24, now, mark = "L", families = 8 } = options;
   const names = Array.from({ length: families }, (_, i) => `Load family ${mark}${i + 1}`);
-  const next = counter(tests * 31 + lifts);
+  const next = steadyNumbers(tests * 31 + lifts);
   const [benchId, fixtureId] = [randomUUID(), randomUUID()];
   await withShop(shopId, async (tx) => {
     await tx.insert(benches).values({ shopId, id: benchId, name: `Load bench ${mark}` });
