@@ -23,7 +23,7 @@ async function send(appUrl, act, who, cutAfterMs) {
       // Half an answer is none.
       return { status: 0, why: "answer cut", ms: Date.now() - started };
     }
-    return { status: answer.status, reply, ms: Date.now() - started };
+    return { status: answer.status, reply, ms: Date.now() - started, retryAfter: answer.headers.get("retry-after") };
   } catch (error) {
     return { status: 0, why: error.cause?.code ?? error.name, ms: Date.now() - started };
   } finally {

@@ -12,18 +12,18 @@ import { heading, Problem, say } from "../say.mjs";
 const PLANTS = {
   "answer-before-commit": {
     says: "the answer goes out while the transaction is still open",
-    edits: [["db/scope.ts", `  return database().transaction(async (tx) => {
+    edits: [["db/scope.ts", `  return transact(connections(), async (tx) => {
     await tx.execute(sql\`select set_config('app.shop_id', \${shopId}, true)\`);
     return fn(tx);
   });`, `  const isDriven = !(process.argv[1] ?? "").endsWith("prepare.ts");
   if (!isDriven) {
-    return database().transaction(async (tx) => {
+    return transact(connections(), async (tx) => {
       await tx.execute(sql\`select set_config('app.shop_id', \${shopId}, true)\`);
       return fn(tx);
     });
   }
   return new Promise<T>((resolve, reject) => {
-    database().transaction(async (tx) => {
+    transact(connections(), async (tx) => {
       await tx.execute(sql\`select set_config('app.shop_id', \${shopId}, true)\`);
       const value = await fn(tx);
       resolve(value);
@@ -83,6 +83,10 @@ function runDrill(folder, args) {
     child.once("close", (code) => resolve({ code, text }));
   });
 }
+
+/** Plants whose place is no longer in the sources exactly once, as `name: file`. */
+export const misplaced = () => Object.entries(PLANTS).flatMap(([name, { edits }]) => edits
+  .filter(([file, from]) => fs.readFileSync(path.join(PROJECT, file), "utf8").split(from).length !== 2).map(([file]) => `${name}: ${file}`));
 
 /** Runs the drill on a planted mistake. @returns whether the drill found it */
 export async function planted({ plant, commands, kills, seed, fromSources }) {
