@@ -35,3 +35,5 @@ export const HERO_FLOW = {
   exhaust: { baseline: ["21.8", "43.0", "60.7", "74.1", "83.6", "89.7", "93.1", "94.8"], after: ["22.3", "44.9", "64.8", "80.2", "91.5", "98.8", "103.2", "105.1"] },
 } as const;
 export const HERO_CAM_LIFT_IN = "0.340";
+/** Valve heads of the casting, mm; the new valves are of the same size. */
+export const HERO_VALVE_MM = { intake: "31", exhaust: "26.5" } as const;

@@ -1,5 +1,5 @@
 import { and, eq } from "drizzle-orm";
-import { heads, purchaseOrderLines, workOrderParts } from "@/db/schema";
+import { purchaseOrderLines, workOrderParts } from "@/db/schema";
 import { withShop } from "@/db/scope";
 import { issueComparison } from "@/modules/flow/commands/issue-comparison";
 import { postWholeTest } from "@/modules/flow/commands/post-test";
@@ -12,9 +12,10 @@ import { openOrder } from "@/modules/work-orders/commands/open-order";
 import { issueAllReady } from "@/modules/work-orders/commands/parts";
 import { releasePiece } from "@/modules/work-orders/commands/release-piece";
 import { must, type Cast } from "../cast";
-import { HERO_BENCH, HERO_CAM_LIFT_IN, HERO_FLOW, HERO_FOUND_LABOR, HERO_FOUND_SHELF, HERO_LABOR, HERO_LIFTS, HERO_SHELF } from "../facts/hero";
+import { HERO_BENCH, HERO_CAM_LIFT_IN, HERO_FLOW, HERO_FOUND_LABOR, HERO_FOUND_SHELF, HERO_LABOR, HERO_LIFTS, HERO_SHELF, HERO_VALVE_MM } from "../facts/hero";
 import { HERO_EPOXY, HERO_KIT, HERO_PARTS, NINEBARK_MENU } from "../facts/ninebark";
 import { arrive, goHome, operationsOf, stretch } from "./bench-day";
+import { headOfPiece } from "./flowed";
 import { answer, bill, bookIn, offer, paidByCard, versionOf, type Line } from "./orders";
 
 export interface HeroScene {
@@ -41,7 +42,7 @@ export function offerLines(parts: Readonly<Record<string, string>>, labor: reado
 async function bothSides(cast: Cast, s: HeroScene, at: string, tag: string, purpose: "baseline" | "after", seatNote: string): Promise<void> {
   for (const side of ["intake", "exhaust"] as const) {
     must(await postWholeTest(cast.as("June", at), {
-      tag, side, purpose, benchId: s.benchId, fixtureId: s.fixtureId, nominal: "28", camLift: HERO_CAM_LIFT_IN, seatNote, complete: true,
+      tag, side, purpose, benchId: s.benchId, fixtureId: s.fixtureId, nominal: "28", camLift: HERO_CAM_LIFT_IN, valve: HERO_VALVE_MM[side], seatNote, complete: true,
       roomTemperature: "68 F", roomPressure: "24.9 inHg", liftUnit: "in", readings: HERO_LIFTS.map((lift, i) => ({ lift, value: HERO_FLOW[side][purpose][i] ?? "" })),
     }), `flow ${side} ${purpose}`);
   }
@@ -140,8 +141,8 @@ export async function heroJob(cast: Cast, s: HeroScene): Promise<HeroOutcome> {
 
   must(await issueAllReady(cast.as("Emeka", "2026-03-13T07:50"), { workOrderId }), "parts issued");
   await day(13, 16);
-  const sheet = await headOf(cast, pieceId);
-  must(await issueComparison(cast.as("June", "2026-03-13T10:20"), { headId: sheet, cylinder: 1 }), "gain issued");
+  const head = await headOfPiece(cast, pieceId);
+  must(await issueComparison(cast.as("June", "2026-03-13T10:20"), { headId: head.id, cylinder: 1 }), "gain issued");
   must(await releasePiece(cast.as("June", "2026-03-13T10:27"), {
     pieceId, version: await versionOf(cast, pieceId), checked: ["identity", "readings", "torque", "clean", "tray", "photos"],
     tray: [{ kind: "valves", fitted: 0, returned: 4, scrapped: 0 }, { kind: "springs", fitted: 0, returned: 4, scrapped: 0 }, { kind: "shims", fitted: 0, returned: 4, scrapped: 0 }],
@@ -153,12 +154,6 @@ export async function heroJob(cast: Cast, s: HeroScene): Promise<HeroOutcome> {
   const balance = await paidByCard(cast, "2026-03-14T19:22", { invoiceId: issued.invoiceId }, issued.openMinor);
   must(await shipPieces(cast.as("Emeka", "2026-03-16T15:40"), { workOrderId, pieceIds: [pieceId], carrier: "Pell Parcel", service: "ground, insured", tracking: "PP-558120", insured: "3,200.00", cost: "36.40" }), "shipping");
   return { workOrderId, number: opened.number, pieceId, tag, invoiceId: issued.invoiceId, invoiceNumber: issued.number, deposit: deposit.paymentIntent, balance: balance.paymentIntent };
-}
-
-/** The bench's record of a piece. */
-async function headOf(cast: Cast, pieceId: string): Promise<string> {
-  const [row] = await withShop(cast.shop.id, (tx) => tx.select({ id: heads.id }).from(heads).where(and(eq(heads.shopId, cast.shop.id), eq(heads.pieceId, pieceId))));
-  return row?.id ?? "";
 }
 
 /** Parts issued to an order, in value. */

@@ -1,15 +1,14 @@
-import { recordBenchCheck } from "@/modules/flow/commands/gear";
-import { postWholeTest } from "@/modules/flow/commands/post-test";
 import { addDays } from "@/modules/kernel/instant";
-
 import { startOperation } from "@/modules/work-orders/commands/bench-clock";
 import { handOver } from "@/modules/work-orders/commands/hand-over";
 import { issueAllReady } from "@/modules/work-orders/commands/parts";
 import { openOrder } from "@/modules/work-orders/commands/open-order";
 import { releasePiece } from "@/modules/work-orders/commands/release-piece";
 import { must, type Cast } from "../cast";
-import { bench } from "./bench-curves";
+import { BENCH_STORIES, ORDINARY, type BenchStory } from "../facts/bench-stories";
 import { goHome, operationsOf, stretch } from "./bench-day";
+import { flowHead, noteWork, type Pass } from "./flowed";
+import type { BenchRoom } from "./gear";
 import { offerLines } from "./hero";
 import { answer, bill, bookIn, offer, paidByCard, versionOf } from "./orders";
 
@@ -26,6 +25,7 @@ export interface JobPlan {
   customerId: string;
   mail: string;
   customer: string;
+  /** Of the head; a bench story of this job names its own. */
   family: string;
   opened: string;
   promised?: string;
@@ -37,7 +37,7 @@ export interface JobPlan {
   done?: number;
   wants?: string;
 }
-export interface Gear { parts: Readonly<Record<string, string>>; benchId: string; fixtureId: string; hands?: Readonly<Record<string, string>>; counter: string; receiver: string; books: string; inspector: string }
+export interface Gear { parts: Readonly<Record<string, string>>; room: BenchRoom; hands?: Readonly<Record<string, string>>; counter: string; receiver: string; books: string; inspector: string }
 
 /** Tells one job as far as it has come. Days follow the opening; figures follow from the plan, not from chance. */
 export async function tellJob(cast: Cast, gear: Gear, plan: JobPlan, salt: number): Promise<{ number: string; workOrderId: string; pieceIds: string[] }> {
@@ -61,6 +61,7 @@ export async function tellJob(cast: Cast, gear: Gear, plan: JobPlan, salt: numbe
   for (const id of out.pieceIds) tags.push(await bookIn(cast, gear.receiver, day(1, "09:30"), id, { counts: {} }));
   if (!reached("in work")) return out;
 
+  const story = BENCH_STORIES[salt] ?? { ...ORDINARY, family: plan.family };
   for (const [i, pieceId] of out.pieceIds.entries()) {
     const ops = await operationsOf(cast, pieceId);
     const codes = plan.labor.map(([c]) => c);
@@ -74,7 +75,10 @@ export async function tellJob(cast: Cast, gear: Gear, plan: JobPlan, salt: numbe
       if (minute + takes > 16 * 60) { n += 1; minute = 8 * 60 + 5; }
       const clock = (m: number) => `${String(Math.floor(m / 60)).padStart(2, "0")}:${String(m % 60).padStart(2, "0")}`;
       await stretch(cast, who, ops[code] ?? "", day(n, clock(minute)), day(n, clock(minute + takes)), true);
-      if (code === "FLB" || code === "FLF") await flowed(cast, gear, day(n, clock(minute + takes - 2)), tags[i] ?? "", code === "FLB" ? "baseline" : "after", salt);
+      const pass = passAfter(code, story);
+      if (pass) await flowHead(cast, gear.room, gear.inspector, day(n, clock(minute + takes - 2)), { tag: tags[i] ?? "" }, pass, story, salt + i * 100);
+      const done = code === "FLF" ? story : code === "SEA" && !codes.includes("FLF") ? SEATS_ONLY : null;
+      if (done) await noteWork(cast, gear.inspector, day(n, clock(minute + takes - 1)), pieceId, done);
       home.set(who, day(n, clock(minute + takes + 1)));
       await goHome(cast, who, day(n, clock(minute + takes + 1)));
       minute += takes + 5;
@@ -100,13 +104,12 @@ export async function runsSince(cast: Cast, who: string, pieceId: string, code: 
   must(await startOperation(cast.as(who, at), { operationId: ops[code] ?? "", doorIn: true, outOfOrderReason: "order of the day" }), `${who} on ${code}`);
 }
 
-async function flowed(cast: Cast, gear: Gear, at: string, tag: string, purpose: "baseline" | "after", salt: number): Promise<void> {
-  must(await recordBenchCheck(cast.as(gear.inspector, at), { benchId: gear.benchId, isFine: true }), "bench check");
-  for (const side of ["intake", "exhaust"] as const) {
-    must(await postWholeTest(cast.as(gear.inspector, at), {
-      tag, side, purpose, benchId: gear.benchId, fixtureId: gear.fixtureId, nominal: "28", camLift: "0.340", complete: true, liftUnit: "in", seatNote: purpose === "baseline" ? "on the cleaned original seats" : "on fresh seats",
-      readings: bench(side, purpose, salt),
-    }), `flow ${purpose}`);
-  }
-}
+const SEATS_ONLY: Pick<BenchStory, "work" | "words"> = { work: ["seat"], words: "Seats cut and lapped, ports untouched." };
 
+/** The pass that is flowed when an operation is done; null = the bench is not asked. */
+function passAfter(code: string, story: BenchStory): Pass | null {
+  if (code === "FLB") return { purpose: "baseline", share: 0 };
+  if (code === "FLF") return { purpose: "after", share: 1 };
+  const share = story.passes[code];
+  return share === undefined ? null : { purpose: "interim", share };
+}

@@ -1,13 +1,18 @@
-import { recordBenchCheck, addBench, addFamily, addFixture } from "@/modules/flow/commands/gear";
+import { recordBenchCheck } from "@/modules/flow/commands/gear";
 import { setHold } from "@/modules/work-orders/commands/holds";
 import { recordFinding } from "@/modules/work-orders/commands/findings";
 import { addSupplier } from "@/modules/purchasing/commands/suppliers";
 import { addDays, localDate, localMinute } from "@/modules/kernel/instant";
 import { castOf, must, type Cast } from "../cast";
+import { BENCH_STORIES } from "../facts/bench-stories";
 import { FAMILIES, NINEBARK, NINEBARK_SUPPLIERS } from "../facts/ninebark";
 import { demoCustomers } from "../facts/people";
+import { noteWork } from "./flowed";
+import { benchRoom, engineFamilies } from "./gear";
 import { heroJob } from "./hero";
 import { runsSince, tellJob, type Gear, type JobPlan } from "./job";
+import { limitsOfTheManual, measured } from "./measured";
+import { ownHeads } from "./own-heads";
 import { customersOf, heroShelf, menuOnTheWall } from "./set-up";
 import { restOfTheShelf } from "./shelf";
 
@@ -26,21 +31,17 @@ export async function tellNinebark(ownerUrl: string, pinPepper: string, now: Dat
   for (const s of NINEBARK_SUPPLIERS) suppliers[s.name] = must(await addSupplier(cast.as("Ilse", first), { name: s.name, email: s.email, leadDays: String(s.leadDays) })).id;
   const parts = await heroShelf(cast, "Ilse", first, suppliers);
   await restOfTheShelf(cast, "Ilse", first, suppliers);
-  const bench = must(await addBench(cast.as("June", first), { name: "Bench 1" }));
-  const fixture = must(await addFixture(cast.as("June", first), { name: "Bore 77", boreMm: "77" }));
-  must(await addFixture(cast.as("June", first), { name: "Bore 76", boreMm: "76" }));
-  for (const name of FAMILIES) {
-    must(await addFamily(cast.as("June", first), name === "S250-4V"
-      ? { name, boreMm: 77, strokeMm: 53.6, camLiftIntake: "0.340", camLiftExhaust: "0.340", valves: [{ side: "intake", position: "left", headMm: 31, stemMm: 5.5, seatAngleDeg: 45 }, { side: "intake", position: "right", headMm: 31, stemMm: 5.5, seatAngleDeg: 45 }, { side: "exhaust", position: "left", headMm: 26.5, stemMm: 5.5, seatAngleDeg: 45 }, { side: "exhaust", position: "right", headMm: 26.5, stemMm: 5.5, seatAngleDeg: 45 }] }
-      : { name, cylinders: name.startsWith("V") || name.startsWith("T") ? 2 : 1 }));
-  }
+  const today = localDate(now, cast.shop.zone);
+  const room = await benchRoom(cast, "June", first, today);
+  await engineFamilies(cast, "June", first, FAMILIES);
+  await limitsOfTheManual(cast, "June", first);
   const customers = demoCustomers();
   const ids = await customersOf(cast, "Tobias", first, customers.map((c) => ({ ...c, laborDiscountPercent: c.name === "Odalys Brennan" ? "5" : "0" })));
-  const gear: Gear = { parts, benchId: bench.id, fixtureId: fixture.id, counter: "Tobias", receiver: "Emeka", books: "Priya", inspector: "June" };
+  const gear: Gear = { parts, room, counter: "Tobias", receiver: "Emeka", books: "Priya", inspector: "June" };
   const whose = (i: number) => customers[(i * 7 + 3) % customers.length] ?? customers[0];
   const plan = (i: number, more: Partial<JobPlan> & Pick<JobPlan, "opened" | "to">): JobPlan => {
     const c = whose(i);
-    return { customerId: ids[c?.name ?? ""] ?? "", mail: c?.email ?? "", customer: c?.name ?? "", family: FAMILIES[i % 5] ?? "S250-4V", labor: [FULL, SEATS, PORTS][i % 3] ?? FULL, shelf: [], ...more };
+    return { customerId: ids[c?.name ?? ""] ?? "", mail: c?.email ?? "", customer: c?.name ?? "", family: BENCH_STORIES[i]?.family ?? FAMILIES[i % 5] ?? "S250-4V", labor: [FULL, SEATS, PORTS][i % 3] ?? FULL, shelf: [], ...more };
   };
 
   say("  past jobs");
@@ -50,15 +51,17 @@ export async function tellNinebark(ownerUrl: string, pinPepper: string, now: Dat
     const opened = addDays("2025-05-05", i * 20);
     if (opened >= "2026-02-01" && !hero) {
       hero = true;
-      for (const day of ["2026-02-26T09:25", "2026-03-12T10:10"]) must(await recordBenchCheck(cast.as("June", day), { benchId: bench.id, isFine: true }));
-      await heroJob(cast, { parts, suppliers, customerId: ids["Odalys Brennan"] ?? "", benchId: bench.id, fixtureId: fixture.id });
+      for (const day of ["2026-02-26T09:25", "2026-03-12T10:10"]) must(await recordBenchCheck(cast.as("June", day), { benchId: room.benchId, isFine: true }));
+      const { pieceId } = await heroJob(cast, { parts, suppliers, customerId: ids["Odalys Brennan"] ?? "", benchId: room.benchId, fixtureId: room.fixtures.get(77) ?? "" });
+      await noteWork(cast, "June", "2026-03-12T15:20", pieceId, { work: ["epoxy", "port shape", "seat"], words: "Intake floor filled and recut; exhaust guides and valves new." });
     }
     if (opened >= "2026-02-01" && opened < "2026-03-20") continue;
     await tellJob(cast, gear, plan(i, { opened, promised: addDays(opened, 14), to: "gone", shelf: i % 4 === 0 ? SMALL : [] }), i);
   }
 
+  await ownHeads(cast, room, "Anselm");
+
   say("  the floor today");
-  const today = localDate(now, cast.shop.zone);
   const ago = (days: number) => addDays(today, -days);
   const minutesAgo = (m: number) => localMinute(new Date(now.getTime() - m * 60_000), cast.shop.zone);
   const live = (i: number, more: Partial<JobPlan> & Pick<JobPlan, "opened" | "to">) => tellJob(cast, gear, plan(40 + i, more), 40 + i);
@@ -67,7 +70,7 @@ export async function tellNinebark(ownerUrl: string, pinPepper: string, now: Dat
   await live(14, { opened: ago(36), promised: ago(24), to: "gone", labor: PORTS });
   await live(15, { opened: ago(34), promised: ago(1), to: "paid", labor: SEATS });
   await live(1, { opened: ago(30), promised: today, to: "invoiced", labor: PORTS });
-  await live(2, { opened: ago(26), promised: today, to: "in work", labor: FULL, done: 10 });
+  const neighbour = await live(2, { opened: ago(26), promised: today, to: "in work", labor: FULL, done: 10 });
   await live(3, { opened: ago(22), promised: today, to: "in work", labor: FULL, done: 9 });
   const seats = await live(4, { opened: ago(18), promised: addDays(today, 2), to: "in work", labor: FULL, done: 6 });
   const intake = await live(5, { opened: ago(15), promised: addDays(today, 4), to: "in work", labor: FULL, done: 4, pieces: 2, wants: "Keep the bowl under 90 % of the seat. Short side wide." });
@@ -75,6 +78,7 @@ export async function tellNinebark(ownerUrl: string, pinPepper: string, now: Dat
   const flowing = await live(7, { opened: ago(9), promised: addDays(today, 7), to: "in work", labor: FULL, done: 3 });
   const down = await live(8, { opened: ago(6), promised: addDays(today, 9), to: "in work", labor: FULL, done: 1 });
   const short = await live(9, { opened: ago(5), promised: addDays(today, 9), to: "booked in", labor: [...SEATS, ["GDE", "4"]], shelf: [["GDE-S250-BRZ", "14"], ["VEX-S250-265", "6"]], family: "S250-4V" });
+  await measured(cast, "Hollis", neighbour.pieceIds[0] ?? "", { before: `${ago(24)}T10:20`, after: `${ago(22)}T15:30` });
   await live(10, { opened: ago(2), promised: addDays(today, 12), to: "booked in", labor: SEATS });
   await live(11, { opened: ago(1), promised: addDays(today, 14), to: "agreed", labor: PORTS });
   await live(12, { opened: ago(1), promised: addDays(today, 12), to: "sent", labor: FULL, pieces: 2 });
