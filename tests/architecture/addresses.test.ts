@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { ENDPOINTS } from "@/app/api/v1/openapi.json/endpoints";
+import { openApiDocument } from "@/modules/access/openapi";
 import { allEndpoints } from "@/tests/matrix/enumerate";
 import { sources, textOf } from "./sources";
 
@@ -20,6 +21,12 @@ describe("addresses of the API", () => {
     const keys = ENDPOINTS.map((e) => `${e.method} ${e.path}`);
     expect([...new Set(keys)].sort()).toEqual([...keys].sort());
     expect(keys.sort()).toEqual(found.map((f) => `${f.value.method} ${f.value.path}`).sort());
+  });
+  it("tell in the document that any of them may answer 503, and when to come again", () => {
+    const { paths } = openApiDocument(ENDPOINTS, "http://localhost");
+    const operations = Object.values(paths).flatMap((p) => Object.values(p));
+    expect(operations).toHaveLength(ENDPOINTS.length);
+    for (const operation of operations) expect(operation).toMatchObject({ responses: { 503: { headers: { "Retry-After": { required: true, schema: { type: "integer" } } } } } });
   });
   it.each(found.map((f) => [`${f.value.method} ${f.value.path}`, f] as const))("%s has its route", (_, { name, value }) => {
     const file = routeOf(value.path);
