@@ -1,9 +1,10 @@
 import "server-only";
 import { and, asc, desc, eq, isNull } from "drizzle-orm";
-import { benches, benchChecks, customers, fixtures, flowComparisons, heads, people, workOrders, workPieces } from "@/db/schema";
+import { benches, benchChecks, customers, engineFamilies, fixtures, flowComparisons, heads, people, workOrders, workPieces } from "@/db/schema";
 import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
 import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
 import { rawTests } from "./tests-of-head";
+import type { ValveOfFamily } from "../domain/valve-list";
 import { withRepeatHistory } from "./repeat-history";
 import { seesCustomers } from "./gain";
 import { cautionsOfOwnHead, cautionsToShow } from "./job-cautions";
@@ -14,7 +15,9 @@ const BENCH_HAZARDS = ["noise", "suction", "springs"] as const;
 
 export interface SheetHead {
   id: string; mark: string; family: string; pieceId: string | null; workOrderId: string | null; orderNumber: string | null; customerName: string | null; castingNumber: string; seatMaterial: string;
-  cylinders: number; camLiftIntakeUm: number | null; camLiftExhaustUm: number | null;
+  cylinders: number; boreMm: number | null; camLiftIntakeUm: number | null; camLiftExhaustUm: number | null;
+  /** Of its family; empty when the shop has not listed them. */
+  valves: ValveOfFamily[];
   version: number; workDone: string[]; notes: string;
 }
 export interface PortMark { cylinder: number; state: "empty" | "part" | "done" }
@@ -75,7 +78,8 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
   return inShop(ctx, async (tx) => {
     const inner = { ...ctx, tx };
     const s = ctx.shop.id;
-    const [row] = await tx.select({ h: heads, orderId: workOrders.id, orderNumber: workOrders.number, customerName: customers.name }).from(heads)
+    const [row] = await tx.select({ h: heads, familyBoreMm: engineFamilies.boreMm, valves: engineFamilies.valves, orderId: workOrders.id, orderNumber: workOrders.number, customerName: customers.name }).from(heads)
+      .leftJoin(engineFamilies, and(eq(engineFamilies.shopId, heads.shopId), eq(engineFamilies.name, heads.family)))
       .leftJoin(workPieces, and(eq(workPieces.shopId, heads.shopId), eq(workPieces.id, heads.pieceId)))
       .leftJoin(workOrders, and(eq(workOrders.shopId, workPieces.shopId), eq(workOrders.id, workPieces.workOrderId)))
       .leftJoin(customers, and(eq(customers.shopId, workOrders.shopId), eq(customers.id, workOrders.customerId)))
@@ -95,8 +99,8 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
     return {
       head: {
         id: h.id, mark: h.mark, family: h.family, pieceId: h.pieceId, workOrderId: row.orderId, orderNumber: row.orderNumber, customerName: seesCustomers(ctx) ? row.customerName : null, castingNumber: h.castingNumber,
-        seatMaterial: h.seatMaterial, cylinders: h.cylinders, camLiftIntakeUm: h.camLiftIntakeUm, camLiftExhaustUm: h.camLiftExhaustUm,
-        version: h.version, workDone: h.workDone, notes: h.notes,
+        seatMaterial: h.seatMaterial, cylinders: h.cylinders, boreMm: h.boreMm ?? row.familyBoreMm, camLiftIntakeUm: h.camLiftIntakeUm, camLiftExhaustUm: h.camLiftExhaustUm,
+        valves: (row.valves ?? []) as ValveOfFamily[], version: h.version, workDone: h.workDone, notes: h.notes,
       },
       cylinder, ports: portMarks(h.cylinders, all), tests,
       benchCheckHours, nominalInH2O: nominalPressureInH2O, canRecord, canIssue: ableTo(ctx, "flow.issue"), viewer: { id: ctx.actor.id, name: ctx.actor.name },

@@ -1,13 +1,14 @@
 import type { ReactNode } from "react";
 import { decimal } from "@/modules/kernel/format";
 import type { RawTest } from "../../domain/raw-test";
+import { headDiametersMm, type ValveOfFamily } from "../../domain/valve-list";
 import { liftWords } from "../flow-words";
 import type { SheetFigures } from "./sheet-figures";
 
 const newest = (f: SheetFigures, i: 0 | 1): RawTest | null => (f.sides[i]?.after ?? f.sides[i]?.before)?.test ?? null;
 
-/** Depression, bore, air, valves and cam of the tests in hand. */
-export function ConditionStrip({ figures, locale, change }: { figures: SheetFigures; locale: string; change?: ReactNode }) {
+/** Depression, bore, air, valves and cam of the tests in hand; valves as the family lists them where the test states none. */
+export function ConditionStrip({ figures, valves, locale, change }: { figures: SheetFigures; valves: readonly ValveOfFamily[]; locale: string; change?: ReactNode }) {
   const intake = newest(figures, 0);
   const exhaust = newest(figures, 1);
   const test = intake ?? exhaust;
@@ -18,7 +19,7 @@ export function ConditionStrip({ figures, locale, change }: { figures: SheetFigu
     ["Depression", `${decimal(test.nominalInH2O, 1, locale)} in H₂O`],
     ["Bore adapter", test.fixture.name.includes(String(test.fixture.boreMm)) ? `${test.fixture.name} mm` : `${test.fixture.name}, ${mm(test.fixture.boreMm)} mm`],
     ["Air", [test.roomTemperatureText, test.roomPressureText].filter(Boolean).join(", ") || "not noted"],
-    ["Valves, mm", both((t) => (t.valveMm === null ? null : mm(t.valveMm)))],
+    ["Valves, mm", both((t) => (t.valveMm === null ? headDiametersMm(valves, t.side).map(mm).join("+") || null : mm(t.valveMm)))],
     ["Cam lift at valve", intake?.camLiftUm === null && exhaust?.camLiftUm === null ? "not noted" : both((t) => (t.camLiftUm === null ? null : `${liftWords(t.camLiftUm, t.liftUnit, locale)} ${t.side === "intake" ? "in" : "ex"}`))],
   ];
   return (

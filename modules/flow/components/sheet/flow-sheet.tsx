@@ -119,7 +119,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   return (
     <div className={`flow-sheet ${live}${isBench ? " bench" : ""}`}>
       {isBench || caution === null ? null : <div className="mb-5 empty:hidden">{caution}</div>}
-      <ConditionStrip figures={figures} locale={locale} change={change} />
+      <ConditionStrip figures={figures} valves={given.head.valves} locale={locale} change={change} />
       <div className="fl">
         <div className="fl-l">
           {isBench && caution !== null ? <div className="empty:hidden">{caution}</div> : null}

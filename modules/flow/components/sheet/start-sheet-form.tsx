@@ -11,7 +11,10 @@ import { TextareaInput } from "@/modules/ui/form/textarea-input";
 import { useCommandForm } from "@/modules/ui/form/use-command-form";
 import { usePlace } from "@/modules/ui/place";
 import { startSheetAction } from "../../actions";
+import { BORE_WITHIN_MM } from "../../domain/comparability";
+import type { PortSide } from "../../domain/comparison-reasons";
 import type { Purpose, RawTest } from "../../domain/raw-test";
+import { headDiametersMm, type ValveOfFamily } from "../../domain/valve-list";
 import { startSheetInput } from "../../input";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
 import { SCALE_READ, SCALE_WORDS } from "./scale-words";
@@ -58,6 +61,21 @@ export function SessionFields({ gear }: { gear: BenchGear }) {
   );
 }
 
+/** The bore adapter of the last test, else the only one near enough to the head's bore, else the only one there is. */
+function adapterFor(gear: BenchGear, boreMm: number | null, like: RawTest | null): string {
+  if (like) return like.fixture.id;
+  const near = boreMm === null ? [] : gear.fixtures.filter((f) => Math.abs(f.boreMm - boreMm) <= BORE_WITHIN_MM);
+  const [only, other] = near.length > 0 ? near : gear.fixtures;
+  return only && !other ? only.id : "";
+}
+
+/** Valve size of the last test of that side, else the one its family lists for it; nothing when the family's sizes differ. */
+function valveFor(name: PortSide, valves: readonly ValveOfFamily[], like: RawTest | null): string {
+  if (like) return like.valveMm === null ? "" : String(like.valveMm);
+  const sizes = [...new Set(headDiametersMm(valves, name))];
+  return sizes.length === 1 ? String(sizes[0]) : "";
+}
+
 function StartForm({ sheet, gear, purpose, basis, onStarted }: { sheet: FlowSheet; gear: BenchGear; purpose: Purpose; basis: { intake: RawTest | null; exhaust: RawTest | null }; onStarted: () => void }) {
   const { slug, locale } = usePlace();
   const [sides, setSides] = useState({ intake: true, exhaust: true });
@@ -66,13 +84,13 @@ function StartForm({ sheet, gear, purpose, basis, onStarted }: { sheet: FlowShee
   const step = like?.lifts[0]?.text ?? (unit === "in" ? "0.050" : "1");
   const cam = liftTyped(like?.camLiftUm ?? sheet.head.camLiftIntakeUm ?? sheet.head.camLiftExhaustUm, unit);
   const side = (name: "intake" | "exhaust") => ({
-    valve: basis[name]?.valveMm === null || basis[name] === null ? "" : String(basis[name].valveMm), entry: basis[name]?.entry ?? (name === "intake" ? ("radius" as const) : ("none" as const)), valvesOpen: basis[name]?.valvesOpen ?? "all",
+    valve: valveFor(name, sheet.head.valves, basis[name]), entry: basis[name]?.entry ?? (name === "intake" ? ("radius" as const) : ("none" as const)), valvesOpen: basis[name]?.valvesOpen ?? "all",
     camLift: liftTyped(basis[name]?.camLiftUm ?? (name === "intake" ? sheet.head.camLiftIntakeUm : sheet.head.camLiftExhaustUm), unit), seatNote: purpose === "baseline" ? "baseline on the cleaned original seats" : "",
   });
   const form = useCommandForm({
     schema: startSheetInput,
     defaultValues: {
-      headId: sheet.head.id, cylinder: sheet.cylinder, purpose, benchId: like?.bench.id ?? gear.benches[0]?.id ?? "", fixtureId: like?.fixture.id ?? (gear.fixtures.length === 1 ? (gear.fixtures[0]?.id ?? "") : ""),
+      headId: sheet.head.id, cylinder: sheet.cylinder, purpose, benchId: like?.bench.id ?? gear.benches[0]?.id ?? "", fixtureId: adapterFor(gear, sheet.head.boreMm, like),
       nominal: String(like?.nominalInH2O ?? sheet.nominalInH2O), plugClosed: true, testSprings: true, roomTemperature: "", roomPressure: "", roomHumidity: "", leak: "", leakPressure: "", leakScalingAgreed: false, notes: "",
       step, camLiftForLadder: cam, liftUnit: unit, intake: side("intake"), exhaust: side("exhaust"), operatorId: gear.operators.some((o) => o.id === sheet.viewer.id) ? sheet.viewer.id : undefined,
     },
