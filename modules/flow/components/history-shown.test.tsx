@@ -9,6 +9,7 @@ import { notTestedWords, reportTest, type ReportSnapshot } from "../domain/repor
 import { sideGain, type ComparableGain, type PortGain } from "../domain/side-gain";
 import { standingTests } from "../domain/standing-tests";
 import { figuresOfTest } from "../domain/test-figures";
+import { renderPdf } from "@/modules/outbound/pdf/render";
 import { flowReport } from "../pdf/flow-report";
 import { linesOfPort } from "./curve-lines";
 import { CustomerGain } from "./customer-gain";
@@ -54,11 +55,11 @@ const PLACES: Record<string, (t: readonly RawTest[]) => string> = {
 describe("a verdict by bench history", () => {
   it.each(Object.entries(PLACES))("says so in words on %s", (_, told) => {
     const text = told(single());
-    expect(text.toLowerCase()).toContain(`larger than the measurement noise (95 %), ${BASIS}, at .100 to .400; not distinguishable from zero, by bench history, at .050.`);
+    expect(text.toLowerCase()).toContain(`change, ${BASIS}: larger than the measurement noise (95 %) at .100 to .400; not distinguishable from zero at .050.`);
     expect(text).not.toMatch(/significant|not assessed, no lift/i);
   });
   it.each(Object.entries(PLACES))("is told apart from repeats of its own on %s", (_, told) => {
-    expect(told(mixed()).toLowerCase()).toContain(`larger than the measurement noise (95 %) at .100; larger than the measurement noise (95 %), ${BASIS}, at .150 to .400; not distinguishable from zero at .050.`);
+    expect(told(mixed()).toLowerCase()).toContain(`larger than the measurement noise (95 %) at .100; not distinguishable from zero at .050; ${BASIS}: larger than the measurement noise (95 %) at .150 to .400.`);
   });
   it("has shapes of its own in the grid, with the words for the ear, and a legend", () => {
     const figures = sheetFigures(single(), 8);
@@ -81,8 +82,8 @@ describe("a verdict by bench history", () => {
     const g = geometryOf({ lines: linesOfPort(portOf(single())), unit: "in", atInH2O: 28, camLiftUm: HERO_CAM_UM, width: 620, height: 420, locale: "en-US" });
     expect([g?.bands.length, g?.bars.length]).toEqual([1, 8]);
     expect(g?.description).toContain("±0.6 at .050 by bench history");
-    expect(paper(single())).toContain("measurement noise about the before test (95 %), by the bench's repeat history where a lift was read once.");
-    expect(paper(single())).toContain("No repeat readings; where a lift was read once, a difference was judged by the bench's repeat history.");
+    expect(paper(single())).toContain("measurement noise about the before test (95 %), by bench history where a lift was read once.");
+    expect(paper(single())).toContain("No repeat readings; bench history stood in.");
     expect(paper(single(null))).toContain("No repeat readings, so a difference was not judged against the bench's noise.");
     expect(PLACES["the customer's page"]?.(single())).toContain("that noise is what this bench's repeats showed in 12 months");
   });
@@ -92,6 +93,26 @@ describe("a verdict by bench history", () => {
       expect(PLACES[place]?.(single({ pooledCfm: 0, pairs: 40 })).toLowerCase()).toContain("the repeats of this bench in 12 months never differed");
     }
     expect(paper(single({ pooledCfm: 0.2, pairs: 9 }))).not.toMatch(/history/);
+  });
+  it("keeps the report on one page, with losses and two bases of verdicts, over 8 lifts and over 24", async () => {
+    for (const count of [8, 24]) {
+      const ladder = Array.from({ length: count }, (_, i) => Math.round((10_160 * (i + 1)) / count));
+      const both = (["intake", "exhaust"] as const).flatMap((side) => (["before", "after"] as const).map((when): RawTest => {
+        const test = heroTest(side, when, { history: HISTORY, lifts: ladder.map((liftUm) => ({ liftUm, text: String(liftUm) })) });
+        const flow = (i: number) => 20 + (80 * i) / count + (when === "before" ? 0 : i < 2 ? -0.6 : 1 + (i % 3));
+        const once = { ...test, cells: ladder.map((liftUm, i) => ({ ...(test.cells[0] as RawTest["cells"][number]), liftUm, valueText: flow(i).toFixed(1) })) };
+        return readAgain(once, [0.3], ladder.slice(count / 2));
+      }));
+      const sides = (["intake", "exhaust"] as const).map((side) => {
+        const standing = standingTests(both, side, "complete");
+        const gain = sideGain(standing, side, 8);
+        if (!gain.ok) throw new Error("no gain");
+        return { side, standing, gain: gain.value };
+      });
+      const s: ReportSnapshot = { ...snapshot(single()), notTested: notTestedWords(sides, 1, 1, String), sides: sides.map(({ side, standing, gain }) => ({ side, gain, before: standing.before && reportTest(standing.before), after: standing.after && reportTest(standing.after) })) };
+      const bytes = await renderPdf(flowReport(s), { creationDate: new Date(s.issuedAt) });
+      expect(bytes.toString("latin1").match(/\/Type \/Page\b(?!s)/g)).toHaveLength(1);
+    }
   });
   it("leaves a paper of the second kind as it was: the same words, and plates where they stood", () => {
     const repeats = (["before", "after"] as const).map((when) => readAgain(heroTest("intake", when), [-0.2, 0.2]));

@@ -34,25 +34,22 @@ export function noHistoryWords(history: BenchHistory | undefined): string {
 
 /**
  * Is the change larger than the noise? In words, for a line under the table of one side. Null without a common lift.
- * Lifts judged by the bench's history are named apart from those with repeats of their own.
+ * Lifts judged by the bench's history come last, named as such, apart from those with repeats of their own.
  * @param lift lift in micrometres as words.
  */
 export function noiseSummary(noise: GainNoise, lift: (um: number) => string): string | null {
   const { rows, history } = noise;
   if (rows.length === 0) return null;
   if (!isAssessed(noise)) return `Against the measurement noise: ${NOISE_WORDS.not_assessed}, no lift was read twice both before and after${noHistoryWords(history)}.`;
-  const used = historyUsed(noise);
-  // The count of pairs stands where the history is first named.
-  let byHistoryWords = used ? historyWords(used) : "by bench history";
-  const parts = (["larger_than_noise", "within_noise", "not_assessed"] as const).flatMap((verdict) => [false, true].flatMap((byHistory) => {
+  const told = (byHistory: boolean) => (["larger_than_noise", "within_noise", "not_assessed"] as const).flatMap((verdict) => {
     const isMeant = (r: NoiseRow) => r.verdict === verdict && (r.byHistory ?? false) === byHistory;
     const count = rows.filter(isMeant).length;
     if (count === 0) return [];
-    const basis = byHistory ? `, ${byHistoryWords},` : "";
-    if (byHistory) byHistoryWords = "by bench history";
-    return [`${NOISE_WORDS[verdict]}${basis} at ${count === rows.length ? (count === 1 ? "the one lift" : `all ${count} lifts`) : liftsWords(rows, isMeant, lift)}`];
-  }));
-  return `Change ${parts.join("; ")}.`;
+    return [`${NOISE_WORDS[verdict]} at ${count === rows.length ? (count === 1 ? "the one lift" : `all ${count} lifts`) : liftsWords(rows, isMeant, lift)}`];
+  }).join("; ");
+  const [own, used] = [told(false), historyUsed(noise)];
+  const lent = used ? `${historyWords(used)}: ${told(true)}` : "";
+  return own === "" ? `Change, ${lent}.` : `Change ${[own, lent].filter(Boolean).join("; ")}.`;
 }
 
 /** What the verdict could not take into account; null when the bench states everything or nothing was judged. */

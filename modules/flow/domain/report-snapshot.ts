@@ -88,7 +88,7 @@ export function notTestedWords(sides: readonly { side: PortSide; standing: Stand
   const tests = sides.flatMap(({ standing }) => [standing.before, standing.after]).filter((x): x is RawTest => x !== null);
   const single = tests.filter((x) => figuresOfTest(x).readings.every((r) => r.count < 2));
   const byHistory = sides.some(({ gain }) => gain.comparable && historyUsed(gain.noise) !== null);
-  const judged = byHistory ? "; where a lift was read once, a difference was judged by the bench's repeat history." : ", so a difference was not judged against the bench's noise.";
+  const judged = byHistory ? "; bench history stood in." : ", so a difference was not judged against the bench's noise.";
   const repeats = single.length === 0 ? [] : [`${single.length === tests.length ? "No" : "Some tests have no"} repeat readings${judged}`];
   return [...words, ...repeats, ...(cylinders > 1 ? [`This page is port ${cylinder} of ${cylinders}.`] : []), "Swirl, tumble, wet flow and power were not measured."];
 }

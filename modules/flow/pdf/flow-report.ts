@@ -16,6 +16,13 @@ const ROW_MAX = 14.5;
 /** More lifts than this stand beside the curve. */
 const LIFTS_UNDER = 10;
 
+/** A curve beside its table, points: it gives way to what is said below it, so that both columns end together. Sizes as they come out on the paper. */
+function curveBeside(told: readonly string[], lifts: number): number {
+  const [line, perLine, heads, row, headRow] = [12.3, 46, 45, 14, 17];
+  const lines = told.reduce((n, words) => n + Math.ceil(words.length / perLine), 0);
+  return Math.min(210, Math.max(136, headRow + row * lifts - heads - line * lines));
+}
+
 const number = (text: string, more: object = {}): TableCell => ({ text, font: FACE.table, fontSize: 9, alignment: "right", fontFeatures: ["tnum"], ...more });
 
 const unitOf = (sides: readonly ReportSide[]): "in" | "mm" => sides.map((x) => x.gain).find((g) => g.state !== "absent")?.liftUnit ?? "in";
@@ -103,7 +110,7 @@ function whoWords(s: ReportSnapshot, shared: readonly string[]): string[] {
 /** What the dotted band is, and what it leaves out; nothing on a paper without a verdict. */
 const bandWords = (s: ReportSnapshot): string[] => {
   const judged = s.sides.flatMap(({ gain }) => (gain.comparable && isAssessed(gain.noise) ? [gain.noise] : []));
-  return judged.length === 0 ? [] : [`The dotted band on the curve is the measurement noise about the before test (95 %)${judged.some((n) => historyUsed(n) !== null) ? ", by the bench's repeat history where a lift was read once" : ""}.`, ...new Set(judged.flatMap((n) => notStatedWords(n) ?? []))];
+  return judged.length === 0 ? [] : [`The dotted band on the curve is the measurement noise about the before test (95 %)${judged.some((n) => historyUsed(n) !== null) ? ", by bench history where a lift was read once" : ""}.`, ...new Set(judged.flatMap((n) => notStatedWords(n) ?? []))];
 };
 
 const small = (text: string): Content => ({ text, fontSize: 8.2, lineHeight: 1.12, color: PAPER_INK.soft, margin: [0, 0, 0, 2.5] });
@@ -118,13 +125,15 @@ export function flowReport(s: ReportSnapshot): TDocumentDefinitions {
   // A long ladder stands beside its curve, both sides in one table; a short one under it, a table a side.
   const isLong = lifts > LIFTS_UNDER;
   const hasVerdict = s.sides.some((side) => isJudged(side.gain));
+  // What is said of the bench's history takes a line or two more; the curve gives them. Older papers keep their sizes.
+  const hasHistory = s.sides.some(({ gain }) => gain.comparable && historyUsed(gain.noise) !== null);
   const rowHeight = hasVerdict ? Math.min(ROW_MAX - 2.3, (TABLE_HEIGHT - 40) / (lifts + 1)) : Math.min(ROW_MAX, TABLE_HEIGHT / (lifts + 1));
   const shared = tests.reduce<readonly string[]>((common, t, i) => (i === 0 ? t.conditions : common.filter((c) => t.conditions.includes(c))), []);
   // Sides without a comparison are drawn from their tests, so that a single test has its curve too.
   const lines = linesOfPort(port).map((line, i) => (line.before.length + line.after.length > 0 ? line : { ...line, before: s.sides[i]?.before?.readings ?? [], after: s.sides[i]?.after?.readings ?? [] }));
   const unit = unitOf(s.sides);
   const geometry = curveGeometry({
-    widthPx: isLong ? 216 : width, heightPx: isLong ? 210 : hasVerdict ? 170 : 190, unit, atInH2O: stated?.atInH2O ?? 28, camLiftUm: stated?.camLiftUm ?? null, lines, mini: isLong,
+    widthPx: isLong ? 216 : width, heightPx: isLong ? (s.kind === 3 ? curveBeside(s.sides.map((side) => toldWords(side, s)), lifts) : 210) : hasHistory ? 146 : hasVerdict ? 170 : 190, unit, atInH2O: stated?.atInH2O ?? 28, camLiftUm: stated?.camLiftUm ?? null, lines, mini: isLong,
     decimalText: (v, d) => decimal(v, d, s.locale),
   });
   const curve = geometry.ok ? curveContent(geometry.value, s.kind) : [];
