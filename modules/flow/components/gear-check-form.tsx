@@ -1,8 +1,11 @@
 "use client";
 
+import { useState } from "react";
 import { useRouter } from "next/navigation";
 import { Button } from "@/modules/ui/button";
 import { CommandForm } from "@/modules/ui/form/command-form";
+import { settles } from "@/modules/ui/form/reply";
+import { RequestIds } from "@/modules/ui/form/request-id";
 import { SubmitButton } from "@/modules/ui/form/submit-button";
 import { TextInput } from "@/modules/ui/form/text-input";
 import { useCommandForm } from "@/modules/ui/form/use-command-form";
@@ -29,9 +32,12 @@ export function GearCheckForm({ benchId, plates }: { benchId: string; plates: re
       router.refresh();
     },
   });
+  const [ids] = useState(() => new RequestIds());
   const stands = async () => {
-    const reply = await recordBenchCheckAction(slug, { requestId: crypto.randomUUID(), input: { benchId, plates: [], isFine: true, note: form.rhf.getValues("note") ?? "" } });
-    if (reply.status === "ok") { toast({ text: "Looked over: the bench keeps its factor" }); router.refresh(); } else toast({ text: "The check was not written down. Try again.", tone: "failed" });
+    const note = form.rhf.getValues("note") ?? "";
+    const reply = await recordBenchCheckAction(slug, { requestId: ids.take(note), input: { benchId, plates: [], isFine: true, note } }).catch(() => null);
+    if (reply && settles(reply)) ids.settle(note);
+    if (reply?.status === "ok") { toast({ text: "Looked over: the bench keeps its factor" }); router.refresh(); } else toast({ text: "The check was not written down. Try again.", tone: "failed" });
   };
   return (
     <CommandForm form={form} toFix="before this check is kept" label="Bench check">

@@ -1,6 +1,8 @@
 "use client";
 
 import { useCallback, useMemo, useRef, useState } from "react";
+import { settles } from "@/modules/ui/form/reply";
+import { RequestIds } from "@/modules/ui/form/request-id";
 import { usePlace } from "@/modules/ui/place";
 import { measureKind } from "../domain/measure-kinds";
 import { measuredValue } from "../domain/measure-value";
@@ -17,6 +19,7 @@ const EMPTY: Entry = { text: "", revision: 0, state: "kept", message: "", asks: 
 /** Lines of the sheet as they stand: kept ones from the server, and what is being typed. Nothing typed is dropped by a no or a lost link. */
 export function useMeasureEntries(sheet: MeasurementSheet, instrument: string) {
   const { slug } = usePlace();
+  const [ids] = useState(() => new RequestIds());
   const [entries, setEntries] = useState<ReadonlyMap<string, Entry>>(() => new Map(sheet.cells.map((c) => [
     lineKey(c.stage, { cylinder: c.cylinder, side: c.side, position: c.position as LinePlace["position"] }, c.kind),
     { ...EMPTY, text: c.valueText === "" ? "" : `${c.valueText} ${c.unit}`, revision: c.revision, unit: c.unit },
@@ -40,8 +43,11 @@ export function useMeasureEntries(sheet: MeasurementSheet, instrument: string) {
     for (const n of nothing) put(n.key, { state: "kept" });
     const real = rows.filter((r) => !nothing.includes(r));
     if (real.length === 0) return;
+    const input = { headId: sheet.head.id, stage: first.stage, instrument, rows: real.map((r) => r.row) };
+    const what = JSON.stringify(input);
     try {
-      const reply = await saveMeasurementsAction(slug, { requestId: crypto.randomUUID(), input: { headId: sheet.head.id, stage: first.stage, instrument, rows: real.map((r) => r.row) } });
+      const reply = await saveMeasurementsAction(slug, { requestId: ids.take(what), input });
+      if (settles(reply)) ids.settle(what);
       if (reply.status !== "ok") {
         const words = reply.status === "refused" || reply.status === "conflict" ? reply.message : reply.status === "invalid" ? (reply.fields[0]?.message ?? "Look at this again.") : "Not kept. Sign in again or try once more.";
         for (const r of real) put(r.key, { state: "offline", message: words });
@@ -52,7 +58,7 @@ export function useMeasureEntries(sheet: MeasurementSheet, instrument: string) {
     } catch {
       for (const r of real) put(r.key, { state: "offline", message: "No link. It is still here." });
     }
-  }, [instrument, put, sheet.head.id, slug]);
+  }, [ids, instrument, put, sheet.head.id, slug]);
 
   /** Values by kind of one place, from what stands there or is being typed. */
   const measured = useCallback((stage: Stage, place: LinePlace, unitOf: (kind: string) => string): Map<string, number> => {

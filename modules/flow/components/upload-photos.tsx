@@ -2,6 +2,7 @@
 
 import { useRouter } from "next/navigation";
 import { useId, useState } from "react";
+import { RequestIds } from "@/modules/ui/form/request-id";
 import { usePlace } from "@/modules/ui/place";
 import type { FileView } from "@/modules/documents/files";
 
@@ -11,6 +12,7 @@ export function UploadPhotos({ headId, photos, files, mayAdd }: { headId: string
   const router = useRouter();
   const id = useId();
   const [said, setSaid] = useState("");
+  const [ids] = useState(() => new RequestIds());
   const send = async (list: FileList | null) => {
     let kept = 0;
     for (const photo of list ?? []) {
@@ -18,8 +20,10 @@ export function UploadPhotos({ headId, photos, files, mayAdd }: { headId: string
       form.set("photo", photo);
       form.set("head", headId);
       setSaid(`Sending ${photo.name}…`);
+      const what = `${photo.name} ${photo.size} ${photo.lastModified}`;
       try {
-        const response = await fetch(`/api/v1/s/${slug}/flow/upload`, { method: "POST", body: form, headers: { "idempotency-key": crypto.randomUUID() } });
+        const response = await fetch(`/api/v1/s/${slug}/flow/upload`, { method: "POST", body: form, headers: { "idempotency-key": ids.take(what) } });
+        if (response.status < 500) ids.settle(what);
         if (!response.ok) { const body = (await response.json()) as { title?: string }; setSaid(`${photo.name} was not kept. ${body.title ?? ""}`); return; }
         kept += 1;
       } catch { setSaid(`${photo.name} was not sent: no link. It is still on your device.`); return; }

@@ -17,6 +17,23 @@ export class RequestId {
   }
 }
 
+/** Request ids of several things a screen can do, each by its own name, kept until an answer settled that one. */
+export class RequestIds {
+  private readonly current = new Map<string, string>();
+
+  constructor(private readonly make: () => string = () => crypto.randomUUID()) {}
+
+  take(what: string): string {
+    const id = this.current.get(what) ?? this.make();
+    this.current.set(what, id);
+    return id;
+  }
+
+  settle(what: string): void {
+    this.current.delete(what);
+  }
+}
+
 export class NoAnswer extends Error {}
 
 /**

@@ -4,7 +4,7 @@ import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 import { AWAY_WORDS, TRY_AGAIN } from "@/modules/kernel/away";
 import { noLink, readReply } from "./form-trouble";
 import { FormTrouble } from "./form-trouble-note";
-import { NoAnswer, RequestId, within } from "./request-id";
+import { NoAnswer, RequestId, RequestIds, within } from "./request-id";
 
 describe("request id", () => {
   const counter = () => {
@@ -16,6 +16,13 @@ describe("request id", () => {
     expect([r.take(), r.take()]).toEqual(["id-1", "id-1"]);
     r.settle();
     expect(r.take()).toBe("id-2");
+  });
+  it("stays for each thing a screen can do, and settles one without the others", () => {
+    let n = 0;
+    const ids = new RequestIds(() => `id-${++n}`);
+    expect([ids.take("issue"), ids.take("finish"), ids.take("issue")]).toEqual(["id-1", "id-2", "id-1"]);
+    ids.settle("issue");
+    expect([ids.take("issue"), ids.take("finish")]).toEqual(["id-3", "id-2"]);
   });
   it("is kept whenever the shop may or may not have done it", () => {
     expect(noLink.keepId).toBe(true);

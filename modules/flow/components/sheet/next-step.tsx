@@ -4,7 +4,8 @@ import { Button, LinkButton } from "@/modules/ui/button";
 import { ConfirmDialog } from "@/modules/ui/dialog";
 import { Note } from "@/modules/ui/note";
 import { usePlace } from "@/modules/ui/place";
-import type { Reply } from "@/modules/ui/form/reply";
+import { settles, type Reply } from "@/modules/ui/form/reply";
+import { RequestIds } from "@/modules/ui/form/request-id";
 import { completeTestAction, correctTestAction, issueComparisonAction, voidTestAction } from "../../actions";
 import type { RawTest } from "../../domain/raw-test";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
@@ -46,11 +47,14 @@ export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: F
   const hasBefore = before.intake !== null || before.exhaust !== null;
   const hasAfter = figures.sides.some((s) => s.after?.test.purpose === "after");
 
-  const run = async (acts: (() => Promise<Reply<unknown>>)[]) => {
+  // Pressed again after no answer, an act carries its first id: nothing is finished, voided or issued twice.
+  const [ids] = useState(() => new RequestIds());
+  const run = async (acts: { what: string; act: (requestId: string) => Promise<Reply<unknown>> }[]) => {
     setPending(true);
     setTrouble(null);
-    for (const act of acts) {
-      const reply = await act().catch(() => null);
+    for (const { what, act } of acts) {
+      const reply = await act(ids.take(what)).catch(() => null);
+      if (reply && settles(reply)) ids.settle(what);
       if (reply?.status !== "ok") {
         setTrouble(troubleOf(reply));
         setPending(false);
@@ -61,7 +65,6 @@ export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: F
     setPending(false);
     onChanged();
   };
-  const sent = (input: object) => ({ requestId: crypto.randomUUID(), input });
   const finish = async () => {
     setPending(true);
     const inTheWay = await settle();
@@ -69,8 +72,8 @@ export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: F
     if (inTheWay) setTrouble(inTheWay);
     else await finishAll();
   };
-  const finishAll = () => run(drafts.map((t) => () => completeTestAction(slug, sent({ testId: t.id, version: t.version }))));
-  const issue = () => void run([() => issueComparisonAction(slug, sent({ headId: sheet.head.id, cylinder: sheet.cylinder, customerWords: "" }))]);
+  const finishAll = () => run(drafts.map((t) => ({ what: `finish ${t.id}`, act: (requestId) => completeTestAction(slug, { requestId, input: { testId: t.id, version: t.version } }) })));
+  const issue = () => void run([{ what: "issue", act: (requestId) => issueComparisonAction(slug, { requestId, input: { headId: sheet.head.id, cylinder: sheet.cylinder, customerWords: "" } }) }]);
   const [latest] = sheet.comparisons;
   if (!sheet.canRecord) return latest ? <LinkButton href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">Report {latest.comparisonNo}</LinkButton> : null;
   return (
@@ -82,8 +85,8 @@ export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: F
           <span className="mid">{drafts[0] ? `run ${drafts[0].runNo}, ${drafts[0].operator.name}` : ""}</span>
         </span>
         <span className="ml-auto flex flex-wrap items-center gap-2">
-          {drafts.length > 0 ? <ReasonDialog label="Void" question={`Void ${drafts.length > 1 ? "these tests" : "this test"}?`} action="Void it" onAction={(reason) => void run(drafts.map((t) => () => voidTestAction(slug, sent({ testId: t.id, version: t.version, reason }))))} /> : null}
-          {drafts.length === 0 ? newest.map((t) => <ReasonDialog key={t.id} label={`Correct ${t.side}`} question={`Correct the finished ${t.side} ${PURPOSE_WORDS[t.purpose]}?`} action="Correct it" onAction={(reason) => void run([() => correctTestAction(slug, sent({ testId: t.id, reason }))])} />) : null}
+          {drafts.length > 0 ? <ReasonDialog label="Void" question={`Void ${drafts.length > 1 ? "these tests" : "this test"}?`} action="Void it" onAction={(reason) => void run(drafts.map((t) => ({ what: `void ${t.id} ${reason}`, act: (requestId) => voidTestAction(slug, { requestId, input: { testId: t.id, version: t.version, reason } }) })))} /> : null}
+          {drafts.length === 0 ? newest.map((t) => <ReasonDialog key={t.id} label={`Correct ${t.side}`} question={`Correct the finished ${t.side} ${PURPOSE_WORDS[t.purpose]}?`} action="Correct it" onAction={(reason) => void run([{ what: `correct ${t.id} ${reason}`, act: (requestId) => correctTestAction(slug, { requestId, input: { testId: t.id, reason } }) }])} />) : null}
           {latest ? <LinkButton size="sm" href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">{`Report ${latest.comparisonNo}`}</LinkButton> : null}
           {drafts.length > 0 ? <Button variant="go" pending={pending} pendingText="Finishing…" onClick={() => void finish()}>{drafts.length > 1 ? "Finish both tests" : "Finish test"}</Button> : null}
           {drafts.length === 0 && !hasBefore ? <StartSheetDialog sheet={sheet} gear={gear} purpose="baseline" basis={{ intake: null, exhaust: null }} isMain onStarted={onChanged} /> : null}
