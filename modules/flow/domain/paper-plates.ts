@@ -13,10 +13,10 @@ export interface PaperPlate extends Rect {
 /** The paper's type is smaller than the screen's: 7 pt on plates, 7.6 pt at the line ends. */
 const PLATE_SHARE = 0.54;
 const LABEL_SHARE = 0.6;
-export const PLATE_HEIGHT_PT = 12;
+const PLATE_HEIGHT_PT = 12;
 /** Air about a line and about a reading's dot, its own half thickness within, points. */
-export const LINE_AIR_PT = 2.2;
-export const DOT_AIR_PT = 3.6;
+const LINE_AIR_PT = 2.2;
+const DOT_AIR_PT = 3.6;
 /** Nearer than this needs no leader. */
 const CLOSE_PT = 7;
 const STEP_PT = 3;
