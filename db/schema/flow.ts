@@ -189,6 +189,8 @@ export const flowTests = pgTable("flow_tests", {
   foreignKey({ columns: [t.shopId, t.headId], foreignColumns: [heads.shopId, heads.id] }),
   foreignKey({ columns: [t.shopId, t.benchId], foreignColumns: [benches.shopId, benches.id] }),
   foreignKey({ columns: [t.shopId, t.fixtureId], foreignColumns: [fixtures.shopId, fixtures.id] }),
+  foreignKey({ columns: [t.shopId, t.liftDeviceId], foreignColumns: [liftDevices.shopId, liftDevices.id] }),
+  foreignKey({ columns: [t.shopId, t.camshaftId], foreignColumns: [camshafts.shopId, camshafts.id] }),
   foreignKey({ columns: [t.shopId, t.operatorId], foreignColumns: [people.shopId, people.id] }),
   index("flow_tests_head").on(t.shopId, t.headId, t.side),
   index("flow_tests_started").on(t.shopId, t.startedAt, t.id),

@@ -2,6 +2,8 @@ import { z } from "@/modules/kernel/zod";
 import { typedNumber } from "./domain/typed-number";
 
 const line = (max: number) => z.string().trim().max(max, `At most ${max} characters.`).refine((s) => !/\p{Cc}/u.test(s), "Line breaks and control characters do not belong here.");
+/** Something of the shop's gear; empty: none chosen. */
+const chosen = z.union([z.literal(""), z.uuid()]).default("");
 const words = (max: number) => z.string().trim().max(max, `At most ${max} characters.`);
 const NUMBER_WORDS = "A number such as 28 or 27,9.";
 /** A number as typed, kept as text; empty allowed. */
@@ -61,7 +63,9 @@ const liftUnit = z.enum(["in", "mm"]);
 
 /** What holds for one side of the port. */
 const sideFields = {
+  /** Empty: that of the camshaft, else of the head. */
   camLift: line(20).default(""),
+  camshaftId: chosen,
   entry: z.enum(["radius", "clay", "manifold", "none"]).default("radius"),
   valvesOpen: line(60).default("all"),
   valve: typedText.default(""),
@@ -70,6 +74,7 @@ const sideFields = {
 /** What holds for the whole session. */
 const sessionFields = {
   fixtureId: z.uuid({ error: "Choose the fixture." }),
+  liftDeviceId: chosen,
   nominal: numberFrom(typedPositive),
   plugClosed: z.boolean().default(true), testSprings: z.boolean().default(true),
   warmUpMinutes: z.number().int().min(0).max(600).optional(),

@@ -1,6 +1,6 @@
 import "server-only";
 import { and, eq, sql } from "drizzle-orm";
-import { flowTests } from "@/db/schema";
+import { benches, flowTests } from "@/db/schema";
 import { changedMeanwhile, defineCommand } from "@/modules/access/command";
 import type { TxContext } from "@/modules/access/context";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
@@ -8,7 +8,7 @@ import type { z } from "@/modules/kernel/zod";
 import type { LiftUnit } from "../domain/lift-ladder";
 import { addLiftInput, changeSheetInput, changeTestInput, removeLiftInput } from "../input";
 import { cellsOf } from "../queries/tests-of-head";
-import { conditionColumns, fixtureHere, plannedLifts } from "./start-test";
+import { conditionColumns, gearHere, ofSide, plannedLifts } from "./start-test";
 
 export type TestRow = typeof flowTests.$inferSelect;
 
@@ -25,10 +25,12 @@ export async function draftTest(ctx: TxContext, testId: string, version?: number
 async function changeOne(ctx: TxContext, { testId, version, ...input }: z.output<typeof changeTestInput>): Promise<Result<{ testId: string; version: number }>> {
   const test = await draftTest(ctx, testId, version);
   if (!test.ok) return test;
-  if (!(await fixtureHere(ctx, input.fixtureId))) return refuse("NOT_FOUND", "This fixture is not here.", { field: "fixtureId" });
+  const [bench] = await ctx.tx.select({ kind: benches.kind }).from(benches).where(and(eq(benches.shopId, ctx.shop.id), eq(benches.id, test.value.benchId)));
+  const gear = await gearHere(ctx, input, test.value.side, bench?.kind ?? "");
+  if (!gear.ok) return gear;
   const columns = conditionColumns(input, test.value.liftUnit as LiftUnit);
   if (!columns.ok) return columns;
-  await ctx.tx.update(flowTests).set({ ...columns.value, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId)));
+  await ctx.tx.update(flowTests).set({ ...columns.value, camLiftUm: columns.value.camLiftUm ?? gear.value.camLiftUm, version: sql`${flowTests.version} + 1` }).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.id, testId)));
   return ok({ testId, version: version + 1 });
 }
 
@@ -51,7 +53,7 @@ export const changeSheetConditions = defineCommand({
     for (const [name, side] of [["intake", intake], ["exhaust", exhaust]] as const) {
       if (!side) continue;
       const changed = await changeOne(ctx, { ...session, ...side });
-      if (!changed.ok) return changed.refusal.field === "camLift" ? refuse(changed.refusal.code, changed.refusal.message, { field: `${name}.camLift` }) : changed;
+      if (!changed.ok) return ofSide(name, changed);
       versions.push(changed.value);
     }
     return ok({ versions });

@@ -20,7 +20,7 @@ export type TypedCell = Omit<z.output<typeof readingInput>, "testId">;
 export interface SavedReading { testId: string; liftUm: number; repeatNo: number; revision: number; valueText: string; flowCfm: number | null; flags: string[]; takenAt: string }
 
 /** Mistakes no reason can mend: the scale cannot show it, or it is no number. */
-const NEVER = new Set(["NUMBER_NOT_FINITE", "PRESSURE_NOT_POSITIVE", "LIFT_NOT_READABLE"]);
+const NEVER = new Set(["NUMBER_NOT_FINITE", "PRESSURE_NOT_POSITIVE", "LIFT_NOT_READABLE", "TEMPERATURE_PAIR", "UNIT_KIND_MISMATCH", "DENSITY_REQUIRED"]);
 /** A reading may have been typed without a link; so old it may be. */
 const KEPT_DAYS = 14;
 
@@ -77,6 +77,7 @@ export async function writeReading(ctx: TxContext, testId: string, input: TypedC
   const cell: RawCell = {
     liftUm: lift.value, repeatNo: input.repeatNo, revision: revision + 1, valueText: input.value, valueUnit: input.valueUnit ?? SCALE_UNIT[test.bench.scale],
     rangeLabel: input.range ?? null, pressureText: input.pressure || String(test.nominalInH2O), pressureUnit: input.pressure ? input.pressureUnit : "inH2O",
+    ...(input.portTemperature ? { portTemperatureText: input.portTemperature } : {}), ...(input.orificeTemperature ? { orificeTemperatureText: input.orificeTemperature } : {}),
     acceptedReason: input.acceptedReason || null, excludedReason: input.excludedReason || null, takenAt: whenTaken(ctx, input.takenAt).toISOString(),
   };
   const value = cleared ? null : typedNumber(input.value);
@@ -88,7 +89,7 @@ export async function writeReading(ctx: TxContext, testId: string, input: TypedC
   await ctx.tx.insert(flowReadings).values({
     shopId: ctx.shop.id, id: randomUUID(), testId, liftUm: cell.liftUm, liftText: input.lift, liftUnit: input.liftUnit, repeatNo: cell.repeatNo, revision: cell.revision,
     valueText: cell.valueText, valueUnit: cell.valueUnit, rangeLabel: cell.rangeLabel, pressureText: cell.pressureText, pressureUnit: cell.pressureUnit,
-    portTemperatureText: input.portTemperature ?? null, orificeTemperatureText: input.orificeTemperature ?? null, acceptedReason: cell.acceptedReason, excludedReason: cell.excludedReason,
+    portTemperatureText: cell.portTemperatureText ?? null, orificeTemperatureText: cell.orificeTemperatureText ?? null, acceptedReason: cell.acceptedReason, excludedReason: cell.excludedReason,
     clearedAt: cleared ? ctx.now : null, takenAt: new Date(cell.takenAt), personId: personIdOf(ctx), source,
   });
   return ok({

@@ -1,9 +1,11 @@
 import { ok, refuse, type Result } from "@/modules/kernel/result";
+import { correctToReferenceDensity } from "./density-reference";
 import type { FlowFlag } from "./flow-flags";
 import { refuseFlow } from "./flow-refusal";
 import { subtractLeak } from "./leak";
 import type { BenchRange, BenchScale, HeldUnit, ValueUnit, WaterUnit } from "./raw-test";
 import { flowFromDirect, flowFromOrificeHead, flowFromRangePercent, type FlaggedFlow } from "./reading-to-flow";
+import { typedKelvin } from "./room-air";
 import { sanityFlagsOfReading } from "./sanity-flags";
 import { correctToPressure } from "./test-pressure";
 import { typedNumber } from "./typed-number";
@@ -16,6 +18,8 @@ export interface ReadingRules {
   readonly waterUnit: WaterUnit;
   readonly benchFactor: number;
   readonly nominalInH2O: number;
+  /** Density of the room's air, kg/m3, on a bench that counts the air as it is; null on one whose weather cancels. */
+  readonly densityKgM3: number | null;
   /** Leak of the closed head as the bench showed it, cfm, and the pressure it was read at; null = not measured. */
   readonly leak: { readonly indicatedCfm: number; readonly atInH2O: number } | null;
 }
@@ -25,6 +29,8 @@ export interface TypedReading {
   readonly rangeLabel: string | null;
   readonly pressureText: string;
   readonly pressureUnit: HeldUnit;
+  readonly portTemperatureText?: string;
+  readonly orificeTemperatureText?: string;
 }
 
 /** Unit of a bare number on each scale. */
@@ -54,8 +60,24 @@ function onScale(rules: ReadingRules, typed: TypedReading): Result<FlaggedFlow &
 }
 
 /**
- * Raw reading to the flow it stands for, cfm at the nominal pressure: scale and bench factor, then less the leak at the held
- * pressure, then to the nominal pressure. A leak read at another pressure is scaled and flagged.
+ * What the air makes of one cfm the bench shows: to reference air on a bench that counts the air as it is; for the warmth
+ * between port and orifice on the others, where both were measured. Errors: those of the parts, TEMPERATURE_PAIR.
+ */
+function airFactor(rules: ReadingRules, typed: TypedReading): Result<FlaggedFlow> {
+  if (rules.densityKgM3 !== null) return correctToReferenceDensity({ method: "absolute_meter", flowCfm: 1, densityKgM3: rules.densityKgM3 });
+  const [port = "", orifice = ""] = [typed.portTemperatureText?.trim(), typed.orificeTemperatureText?.trim()];
+  if (port === "" && orifice === "") return ok({ flowCfm: 1, flags: [] });
+  if (port === "" || orifice === "") return refuse("TEMPERATURE_PAIR", "Give the air at the port and at the orifice, or neither.", { field: port === "" ? "portTemperature" : "orificeTemperature" });
+  const portAir = typedKelvin(port, "portTemperature");
+  if (!portAir.ok) return portAir;
+  const orificeAir = typedKelvin(orifice, "orificeTemperature");
+  if (!orificeAir.ok) return orificeAir;
+  return correctToReferenceDensity({ method: "series_orifice", flowCfm: 1, portAirK: portAir.value, orificeAirK: orificeAir.value });
+}
+
+/**
+ * Raw reading to the flow it stands for, cfm at the nominal pressure: scale and bench factor, then for the air, then less the
+ * leak at the held pressure, then to the nominal pressure. A leak read at another pressure is scaled and flagged.
  * Source: each step names its own. Errors: those of the steps; the raw text stays whatever comes out.
  */
 export function computedReading(rules: ReadingRules, typed: TypedReading): Result<FlaggedFlow> {
@@ -63,11 +85,13 @@ export function computedReading(rules: ReadingRules, typed: TypedReading): Resul
   if (!held.ok) return held;
   const raw = onScale(rules, typed);
   if (!raw.ok) return raw;
-  const flags: FlowFlag[] = [...raw.value.flags];
-  let flowCfm = raw.value.flowCfm;
+  const air = airFactor(rules, typed);
+  if (!air.ok) return air;
+  const flags: FlowFlag[] = [...raw.value.flags, ...air.value.flags];
+  let flowCfm = raw.value.flowCfm * air.value.flowCfm;
   if (rules.leak && rules.leak.indicatedCfm > 0) {
     const net = subtractLeak({
-      measuredCfm: flowCfm, leakCfm: rules.leak.indicatedCfm * rules.benchFactor, measuredAtInH2O: held.value, leakAtInH2O: rules.leak.atInH2O, allowScaling: true,
+      measuredCfm: flowCfm, leakCfm: rules.leak.indicatedCfm * rules.benchFactor * (rules.densityKgM3 === null ? 1 : air.value.flowCfm), measuredAtInH2O: held.value, leakAtInH2O: rules.leak.atInH2O, allowScaling: true,
     });
     if (!net.ok) return net;
     flags.push(...net.value.flags);

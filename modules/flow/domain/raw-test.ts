@@ -3,6 +3,8 @@ import type { LiftUnit } from "./lift-ladder";
 import type { BenchHistory } from "./noise";
 
 export type BenchScale = "direct" | "percent_linear" | "orifice_head";
+/** `series_orifice`: weather cancels. `absolute_meter`: counts the air as it is, and is brought to reference air. */
+export type BenchKind = "series_orifice" | "absolute_meter";
 export type WaterUnit = "conventional" | "39.2F" | "60F";
 export type Purpose = "baseline" | "after" | "interim" | "check";
 export type TestState = "draft" | "complete" | "void";
@@ -20,6 +22,8 @@ export interface BenchRange {
 export interface BenchFacts {
   readonly id: string;
   readonly name: string;
+  /** Left out: series_orifice. */
+  readonly kind?: BenchKind;
   readonly scale: BenchScale;
   readonly ranges: readonly BenchRange[];
   readonly waterUnit: WaterUnit;
@@ -45,6 +49,9 @@ export interface RawCell {
   readonly rangeLabel: string | null;
   readonly pressureText: string;
   readonly pressureUnit: HeldUnit;
+  /** Air at the port and at the orifice, with units; both or neither. */
+  readonly portTemperatureText?: string;
+  readonly orificeTemperatureText?: string;
   readonly acceptedReason: string | null;
   readonly excludedReason: string | null;
   readonly takenAt: string;
@@ -70,6 +77,8 @@ export interface RawTest {
   readonly lifts: readonly { readonly liftUm: number; readonly text: string }[];
   readonly liftUnit: LiftUnit;
   readonly camLiftUm: number | null;
+  readonly liftDevice?: { readonly id: string; readonly name: string } | null;
+  readonly camshaft?: { readonly id: string; readonly label: string } | null;
   readonly entry: EntryKind;
   /** Names of the open valves, comma between; "all" when all of the port. */
   readonly valvesOpen: string;

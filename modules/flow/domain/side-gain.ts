@@ -61,6 +61,8 @@ export function conditionWords(test: RawTest): string[] {
     test.testSprings ? "test springs" : "own springs",
     test.plugClosed ? "plug hole closed" : "plug hole open",
     test.leakText.trim() === "" ? "leak not measured" : `leak ${test.leakText.trim()} CFM taken off`,
+    ...(test.bench.kind === "absolute_meter" ? [`brought to dry air of 20 °C and 101.325 kPa${test.roomHumidityText.trim() === "" ? ", humidity not noted and taken as none" : ""}`] : []),
+    ...(test.liftDevice ? [`lift read on "${test.liftDevice.name}"`] : []),
   ];
 }
 

@@ -7,6 +7,7 @@ import type { RawCell, RawTest } from "./raw-test";
 import { meanOfRepeats, type LiftMean, type LiftReading } from "./repeats";
 import { sanityFlagsOfTest } from "./sanity-flags";
 import type { ReadingSet } from "./shop-comparison";
+import { roomDensity } from "./room-air";
 import { typedNumber } from "./typed-number";
 
 /** One cell with what comes out of it. No number = refused, and why. */
@@ -31,9 +32,11 @@ export interface TestFigures {
   readonly isConverted: boolean;
 }
 
-/** Leak and scale of a test, read from its typed conditions. A leak that cannot be read refuses the whole computation. */
+/** Leak, scale and air of a test, read from its typed conditions. A leak, or the air of a bench that needs it, that cannot be read refuses the whole computation. */
 export function rulesOfTest(test: RawTest): Result<ReadingRules> {
-  const rules = { scale: test.bench.scale, ranges: test.bench.ranges, waterUnit: test.bench.waterUnit, benchFactor: test.benchFactor, nominalInH2O: test.nominalInH2O };
+  const air = test.bench.kind === "absolute_meter" ? roomDensity(test) : ok({ densityKgM3: null });
+  if (!air.ok) return air;
+  const rules = { densityKgM3: air.value.densityKgM3, scale: test.bench.scale, ranges: test.bench.ranges, waterUnit: test.bench.waterUnit, benchFactor: test.benchFactor, nominalInH2O: test.nominalInH2O };
   if (test.leakText.trim() === "") return ok({ ...rules, leak: null });
   const leak = typedNumber(test.leakText, "leak");
   if (!leak.ok) return leak;

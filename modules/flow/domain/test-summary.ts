@@ -4,7 +4,7 @@ import type { RawTest } from "./raw-test";
 import { countingFlows, figuresOfTest, type TestFigures } from "./test-figures";
 
 /** Counts changes of the factors and rules that turn a reading into a flow. A summary made under an older one is made again. */
-export const FLOW_CONSTANTS_VERSION = 1;
+export const FLOW_CONSTANTS_VERSION = 2;
 
 export interface TestSummary {
   /** Increasing; one flow each, same order: the mean of the repeats at the nominal pressure. */

@@ -1,7 +1,8 @@
 import "server-only";
 import { and, asc, desc, eq, isNull } from "drizzle-orm";
-import { benches, benchChecks, customers, engineFamilies, fixtures, flowComparisons, heads, people, workOrders, workPieces } from "@/db/schema";
+import { benches, benchChecks, camshafts, customers, engineFamilies, fixtures, flowComparisons, heads, liftDevices, people, workOrders, workPieces } from "@/db/schema";
 import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
+import type { PortSide } from "../domain/comparison-reasons";
 import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
 import { rawTests } from "./tests-of-head";
 import type { ValveOfFamily } from "../domain/valve-list";
@@ -40,10 +41,12 @@ export interface FlowSheet {
 export interface BenchGear {
   benches: { id: string; name: string; scale: BenchScale; ranges: BenchRange[]; nominalPressuresInH2O: number[]; checkedAt: string | null; factor: number }[];
   fixtures: { id: string; name: string; boreMm: number }[];
+  liftDevices: { id: string; name: string }[];
+  camshafts: { id: string; label: string; side: PortSide; maxLiftUm: number }[];
   operators: { id: string; name: string }[];
 }
 
-/** Benches with their newest check, fixtures and people: what a session is set up from. */
+/** Benches with their newest check, fixtures, lift devices, camshafts and people: what a session is set up from. */
 export async function gearOf(ctx: ShopContext): Promise<BenchGear> {
   mustBeAble(ctx, "flow.see");
   return inShop(ctx, async (tx) => {
@@ -53,13 +56,15 @@ export async function gearOf(ctx: ShopContext): Promise<BenchGear> {
     const checks = await tx.selectDistinctOn([benchChecks.benchId], { benchId: benchChecks.benchId, at: benchChecks.at, factor: benchChecks.factor }).from(benchChecks)
       .where(eq(benchChecks.shopId, s)).orderBy(benchChecks.benchId, desc(benchChecks.at));
     const byBench = new Map(checks.map((c) => [c.benchId, c]));
+    const devices = await tx.select({ id: liftDevices.id, name: liftDevices.name }).from(liftDevices).where(and(eq(liftDevices.shopId, s), eq(liftDevices.active, true))).orderBy(asc(liftDevices.name));
+    const cams = await tx.select({ id: camshafts.id, label: camshafts.label, side: camshafts.side, maxLiftUm: camshafts.maxLiftUm }).from(camshafts).where(and(eq(camshafts.shopId, s), eq(camshafts.active, true))).orderBy(asc(camshafts.label));
     const operators = await tx.select({ id: people.id, name: people.shortName }).from(people).where(and(eq(people.shopId, s), isNull(people.leftAt))).orderBy(asc(people.shortName));
     return {
       benches: b.map((x) => ({
         id: x.id, name: x.name, scale: x.scale as BenchScale, ranges: x.ranges as BenchRange[], nominalPressuresInH2O: x.nominalPressuresInH2O,
         checkedAt: byBench.get(x.id)?.at.toISOString() ?? null, factor: byBench.get(x.id)?.factor ?? 1,
       })),
-      fixtures: f, operators,
+      fixtures: f, liftDevices: devices, camshafts: cams.map((c) => ({ ...c, side: c.side as PortSide })), operators,
     };
   });
 }

@@ -1,8 +1,8 @@
 import "server-only";
 import { and, asc, desc, eq, inArray } from "drizzle-orm";
-import { benches, fixtures, flowReadings, flowTests, liftDevices, people } from "@/db/schema";
+import { benches, camshafts, fixtures, flowReadings, flowTests, liftDevices, people } from "@/db/schema";
 import { inShop, type ShopContext } from "@/modules/access/context";
-import type { BenchRange, RawCell, RawTest } from "../domain/raw-test";
+import type { BenchKind, BenchRange, RawCell, RawTest } from "../domain/raw-test";
 
 /** The newest revision of every cell of the given tests; cleared cells come with an empty text. */
 export async function cellsOf(ctx: ShopContext, testIds: readonly string[]): Promise<Map<string, RawCell[]>> {
@@ -14,7 +14,7 @@ export async function cellsOf(ctx: ShopContext, testIds: readonly string[]): Pro
   for (const r of rows) {
     const cell: RawCell = {
       liftUm: r.liftUm, repeatNo: r.repeatNo, revision: r.revision, valueText: r.clearedAt ? "" : r.valueText, valueUnit: r.valueUnit as RawCell["valueUnit"], rangeLabel: r.rangeLabel,
-      pressureText: r.pressureText, pressureUnit: r.pressureUnit as RawCell["pressureUnit"], acceptedReason: r.acceptedReason, excludedReason: r.excludedReason, takenAt: r.takenAt.toISOString(),
+      pressureText: r.pressureText, pressureUnit: r.pressureUnit as RawCell["pressureUnit"], ...(r.portTemperatureText ? { portTemperatureText: r.portTemperatureText } : {}), ...(r.orificeTemperatureText ? { orificeTemperatureText: r.orificeTemperatureText } : {}), acceptedReason: r.acceptedReason, excludedReason: r.excludedReason, takenAt: r.takenAt.toISOString(),
     };
     const cells = byTest.get(r.testId) ?? [];
     cells.push(cell);
@@ -30,20 +30,22 @@ export async function cellsOf(ctx: ShopContext, testIds: readonly string[]): Pro
 export async function rawTests(ctx: ShopContext, which: ({ headIds: readonly string[] } | { testIds: readonly string[] }) & { cells?: boolean }): Promise<(RawTest & { headId: string; cylinder: number })[]> {
   const ids = "headIds" in which ? which.headIds : which.testIds;
   if (ids.length === 0) return [];
-  const rows = await inShop(ctx, (tx) => tx.select({ t: flowTests, bench: benches, fixture: fixtures, operator: { id: people.id, name: people.shortName }, liftMm: liftDevices.uncertaintyMm, liftStepMm: liftDevices.resolutionMm }).from(flowTests)
+  const rows = await inShop(ctx, (tx) => tx.select({ t: flowTests, bench: benches, fixture: fixtures, operator: { id: people.id, name: people.shortName }, liftDevice: liftDevices, camshaft: { id: camshafts.id, label: camshafts.label } }).from(flowTests)
     .innerJoin(benches, and(eq(benches.shopId, flowTests.shopId), eq(benches.id, flowTests.benchId)))
     .innerJoin(fixtures, and(eq(fixtures.shopId, flowTests.shopId), eq(fixtures.id, flowTests.fixtureId)))
     .innerJoin(people, and(eq(people.shopId, flowTests.shopId), eq(people.id, flowTests.operatorId)))
     .leftJoin(liftDevices, and(eq(liftDevices.shopId, flowTests.shopId), eq(liftDevices.id, flowTests.liftDeviceId)))
+    .leftJoin(camshafts, and(eq(camshafts.shopId, flowTests.shopId), eq(camshafts.id, flowTests.camshaftId)))
     .where(and(eq(flowTests.shopId, ctx.shop.id), inArray("headIds" in which ? flowTests.headId : flowTests.id, [...ids])))
     .orderBy(asc(flowTests.startedAt), desc(flowTests.side), asc(flowTests.runNo), asc(flowTests.id)));
   const cells = await cellsOf(ctx, which.cells === false ? [] : rows.map((r) => r.t.id));
-  return rows.map(({ t, bench, fixture, operator, liftMm, liftStepMm }) => ({
+  return rows.map(({ t, bench, fixture, operator, liftDevice, camshaft }) => ({
     headId: t.headId, cylinder: t.cylinder,
     id: t.id, side: t.side as RawTest["side"], purpose: t.purpose as RawTest["purpose"], runNo: t.runNo, state: t.state as RawTest["state"], version: t.version,
-    bench: { id: bench.id, name: bench.name, scale: bench.scale as RawTest["bench"]["scale"], ranges: bench.ranges as BenchRange[], waterUnit: bench.waterUnit as RawTest["bench"]["waterUnit"] },
+    bench: { id: bench.id, name: bench.name, kind: bench.kind as BenchKind, scale: bench.scale as RawTest["bench"]["scale"], ranges: bench.ranges as BenchRange[], waterUnit: bench.waterUnit as RawTest["bench"]["waterUnit"] },
     benchFactor: t.benchFactor, benchCheckedAt: t.benchCheckedAt?.toISOString() ?? null,
-    known: { pressureInH2O: bench.pressureUncertaintyInH2O, readingCfm: bench.readingUncertaintyCfm, liftMm, liftStepMm },
+    known: { pressureInH2O: bench.pressureUncertaintyInH2O, readingCfm: bench.readingUncertaintyCfm, liftMm: liftDevice?.uncertaintyMm ?? null, liftStepMm: liftDevice?.resolutionMm ?? null },
+    liftDevice: liftDevice ? { id: liftDevice.id, name: liftDevice.name } : null, camshaft,
     fixture: { id: fixture.id, name: fixture.name, boreMm: fixture.boreMm },
     nominalInH2O: t.nominalPressureInH2O, lifts: t.lifts, liftUnit: t.liftUnit as RawTest["liftUnit"], camLiftUm: t.camLiftUm,
     entry: t.entry as RawTest["entry"], valvesOpen: t.valvesOpen, valveMm: t.valveMm, seatNote: t.seatNote, plugClosed: t.plugClosed, testSprings: t.testSprings, warmUpMinutes: t.warmUpMinutes,

@@ -25,6 +25,26 @@ function ReasonField({ onKeep, onForget }: { onKeep: (reason: string) => void; o
   );
 }
 
+/** Air at the port and at the orifice of one reading, for a bench whose blower warms the air between them. */
+function AirOfReading({ port, orifice, mayMark, onMark }: { port: string; orifice: string; mayMark: boolean; onMark: (air: { portTemperature: string; orificeTemperature: string }) => void }) {
+  const [air, setAir] = useState({ portTemperature: port, orificeTemperature: orifice });
+  const { portTemperature, orificeTemperature } = air;
+  const changed = portTemperature !== port || orificeTemperature !== orifice;
+  const isWhole = (portTemperature.trim() === "") === (orificeTemperature.trim() === "");
+  const field = (key: keyof typeof air, label: string) => (
+    <label className="flex items-center gap-2 sm"><span>{label}</span><span className="in" style={{ width: 84 }}><input value={air[key]} placeholder="71 °F" maxLength={20} autoComplete="off" onChange={(e) => setAir({ ...air, [key]: e.target.value })} /></span></label>
+  );
+  return (
+    <details className="sm" open={port !== "" || undefined}>
+      <summary className="lk">Air</summary>
+      <span className="mt-2 flex flex-wrap items-center gap-3">
+        {field("portTemperature", "at the port")}{field("orificeTemperature", "at the orifice")}
+        <Button size="sm" variant="lo" disabledReason={!mayMark ? "a reading first" : !isWhole ? "both, or neither" : changed ? undefined : "nothing changed"} onClick={() => onMark({ portTemperature: portTemperature.trim(), orificeTemperature: orificeTemperature.trim() })}>Correct for it</Button>
+      </span>
+    </details>
+  );
+}
+
 /** What the panel needs of the sheet's state. */
 export type PanelSheet = Pick<Sheet, "textAt" | "stuckAt" | "keptAt" | "range" | "setRange" | "held" | "setHeld" | "mark" | "type" | "commit" | "keepWithReason" | "discard" | "insist" | "takeFromBench">;
 
@@ -66,6 +86,7 @@ export function CellPanel({ sheet, pos, col, locale }: { sheet: PanelSheet; pos:
             <span className="unit">in H₂O</span>
           </span>
         </span>
+        {test.bench.kind === "absolute_meter" || test.state !== "draft" ? null : <AirOfReading key={computed?.revision ?? 0} port={computed?.portTemperatureText ?? ""} orifice={computed?.orificeTemperatureText ?? ""} mayMark={typedText !== ""} onMark={(air) => sheet.mark(pos, air)} />}
         {shownRepeats.slice(1).map((n) => {
           const at = posOf(col, pos.liftUm, n);
           return (

@@ -10,7 +10,7 @@ import { changeSheetConditionsAction } from "../../actions";
 import type { RawTest } from "../../domain/raw-test";
 import { changeSheetInput } from "../../input";
 import type { BenchGear } from "../../queries/sheet";
-import { SessionFields, SideFields } from "./start-sheet-form";
+import { liftTyped, SessionFields, SideFields } from "./start-sheet-form";
 
 type Drafts = { intake: RawTest | null; exhaust: RawTest | null };
 
@@ -18,7 +18,7 @@ function ChangeForm({ gear, drafts, onChanged }: { gear: BenchGear; drafts: Draf
   const { slug } = usePlace();
   const test = drafts.intake ?? drafts.exhaust;
   const side = (t: RawTest | null) => t ? {
-    testId: t.id, version: t.version, camLift: t.camLiftUm === null ? "" : t.liftUnit === "in" ? (t.camLiftUm / 25_400).toFixed(3) : String(t.camLiftUm / 1000), entry: t.entry, valvesOpen: t.valvesOpen,
+    testId: t.id, version: t.version, camshaftId: t.camshaft?.id ?? "", camLift: liftTyped(t.camLiftUm, t.liftUnit), entry: t.entry, valvesOpen: t.valvesOpen,
     valve: t.valveMm === null ? "" : String(t.valveMm), seatNote: t.seatNote,
   } : undefined;
   const intake = side(drafts.intake);
@@ -26,7 +26,7 @@ function ChangeForm({ gear, drafts, onChanged }: { gear: BenchGear; drafts: Draf
   const form = useCommandForm({
     schema: changeSheetInput,
     defaultValues: {
-      fixtureId: test?.fixture.id ?? "", nominal: String(test?.nominalInH2O ?? ""), plugClosed: test?.plugClosed ?? true, testSprings: test?.testSprings ?? true, roomTemperature: test?.roomTemperatureText ?? "",
+      fixtureId: test?.fixture.id ?? "", liftDeviceId: test?.liftDevice?.id ?? "", nominal: String(test?.nominalInH2O ?? ""), plugClosed: test?.plugClosed ?? true, testSprings: test?.testSprings ?? true, roomTemperature: test?.roomTemperatureText ?? "",
       roomPressure: test?.roomPressureText ?? "", roomHumidity: test?.roomHumidityText ?? "", leak: test?.leakText ?? "", leakPressure: test?.leakPressureText ?? "", leakScalingAgreed: false, notes: test?.notes ?? "",
       ...(intake ? { intake } : {}), ...(exhaust ? { exhaust } : {}),
     },
@@ -37,8 +37,8 @@ function ChangeForm({ gear, drafts, onChanged }: { gear: BenchGear; drafts: Draf
     <CommandForm form={form} toFix="before the conditions change">
       <div className="fields">
         <SessionFields gear={gear} />
-        {intake ? <SideFields name="intake" title="Intake" /> : null}
-        {exhaust ? <SideFields name="exhaust" title="Exhaust" /> : null}
+        {intake ? <SideFields name="intake" title="Intake" gear={gear} unit={test?.liftUnit ?? "in"} onCam={(lift) => form.rhf.setValue("intake.camLift", lift)} /> : null}
+        {exhaust ? <SideFields name="exhaust" title="Exhaust" gear={gear} unit={test?.liftUnit ?? "in"} onCam={(lift) => form.rhf.setValue("exhaust.camLift", lift)} /> : null}
         <TextareaInput name="notes" label="Notes" rows={2} optional className="full" />
       </div>
       <div className="form-act"><SubmitButton pendingText="Changing…">Change them</SubmitButton><DialogClose>Leave as they are</DialogClose></div>

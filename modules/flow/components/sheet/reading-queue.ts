@@ -5,6 +5,9 @@ export interface CellEdit {
   readonly range: string | null;
   /** Empty: the nominal pressure. */
   readonly pressure: string;
+  /** Air at the port and at the orifice with units; left out: not measured. */
+  readonly portTemperature?: string;
+  readonly orificeTemperature?: string;
   readonly acceptedReason: string | null;
   readonly excludedReason: string | null;
   readonly takenAt: string;

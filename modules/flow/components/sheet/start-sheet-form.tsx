@@ -14,6 +14,7 @@ import { startSheetAction } from "../../actions";
 import { BORE_WITHIN_MM } from "../../domain/comparability";
 import type { PortSide } from "../../domain/comparison-reasons";
 import type { Purpose, RawTest } from "../../domain/raw-test";
+import type { LiftUnit } from "../../domain/lift-ladder";
 import { headDiametersMm, type ValveOfFamily } from "../../domain/valve-list";
 import { startSheetInput } from "../../input";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
@@ -26,15 +27,21 @@ export function benchHint(bench: BenchGear["benches"][number] | undefined): stri
 }
 
 export const PURPOSE_WORDS: Record<Purpose, string> = { baseline: "before test", after: "after test", interim: "pass in between", check: "check" };
-const liftTyped = (um: number | null, unit: "in" | "mm"): string => (um === null ? "" : unit === "in" ? (um / 25_400).toFixed(3) : String(um / 1000));
+/** A lift as it would be typed in that unit. */
+export const liftTyped = (um: number | null, unit: "in" | "mm"): string => (um === null ? "" : unit === "in" ? (um / 25_400).toFixed(3) : String(um / 1000));
 
 const ENTRIES = [{ value: "radius", label: "Radius plate" }, { value: "clay", label: "Clay radius" }, { value: "manifold", label: "Manifold" }, { value: "none", label: "None" }];
 
 /** Fields of one side of the port, under `name.` */
-export function SideFields({ name, title }: { name: "intake" | "exhaust"; title: string }) {
+export function SideFields({ name, title, gear, unit, onCam }: { name: PortSide; title: string; gear: BenchGear; unit: LiftUnit; onCam: (camLift: string) => void }) {
+  const cams = gear.camshafts.filter((c) => c.side === name);
   return (
     <fieldset className="fields three full">
       <legend className="label">{title}</legend>
+      {cams.length === 0 ? null : (
+        <SelectInput name={`${name}.camshaftId`} label="Camshaft" className="full" options={[{ value: "", label: "not said" }, ...cams.map((c) => ({ value: c.id, label: `${c.label}, ${liftTyped(c.maxLiftUm, unit)} ${unit}` }))]}
+          onChange={(e) => { const cam = cams.find((c) => c.id === e.target.value); if (cam) onCam(liftTyped(cam.maxLiftUm, unit)); }} />
+      )}
       <TextInput name={`${name}.valve`} label="Valve" unit="mm" inputMode="decimal" optional />
       <TextInput name={`${name}.camLift`} label="Cam lift" inputMode="decimal" optional />
       <SelectInput name={`${name}.entry`} label="Entry piece" options={ENTRIES} />
@@ -52,6 +59,8 @@ export function SessionFields({ gear }: { gear: BenchGear }) {
       <TextInput name="nominal" label="Test pressure" unit="in H₂O" inputMode="decimal" />
       <TextInput name="roomTemperature" label="Room temperature" hint="with its unit, such as 71 °F" optional />
       <TextInput name="roomPressure" label="Barometer" hint="with its unit, such as 29.86 inHg" optional />
+      <TextInput name="roomHumidity" label="Humidity" hint="such as 45 %" optional />
+      {gear.liftDevices.length === 0 ? null : <SelectInput name="liftDeviceId" label="Lift read on" options={[{ value: "", label: "not said" }, ...gear.liftDevices.map((d) => ({ value: d.id, label: d.name }))]} />}
       <TextInput name="leak" label="Leak, valves shut" unit="CFM" inputMode="decimal" optional />
       <TextInput name="leakPressure" label="Leak read at" unit="in H₂O" inputMode="decimal" optional />
       <Checkbox name="leakScalingAgreed" label="The leak may be scaled if it was read at another pressure" className="full" />
@@ -84,14 +93,14 @@ function StartForm({ sheet, gear, purpose, basis, onStarted }: { sheet: FlowShee
   const step = like?.lifts[0]?.text ?? (unit === "in" ? "0.050" : "1");
   const cam = liftTyped(like?.camLiftUm ?? sheet.head.camLiftIntakeUm ?? sheet.head.camLiftExhaustUm, unit);
   const side = (name: "intake" | "exhaust") => ({
-    valve: valveFor(name, sheet.head.valves, basis[name]), entry: basis[name]?.entry ?? (name === "intake" ? ("radius" as const) : ("none" as const)), valvesOpen: basis[name]?.valvesOpen ?? "all",
+    camshaftId: basis[name]?.camshaft?.id ?? "", valve: valveFor(name, sheet.head.valves, basis[name]), entry: basis[name]?.entry ?? (name === "intake" ? ("radius" as const) : ("none" as const)), valvesOpen: basis[name]?.valvesOpen ?? "all",
     camLift: liftTyped(basis[name]?.camLiftUm ?? (name === "intake" ? sheet.head.camLiftIntakeUm : sheet.head.camLiftExhaustUm), unit), seatNote: purpose === "baseline" ? "baseline on the cleaned original seats" : "",
   });
   const form = useCommandForm({
     schema: startSheetInput,
     defaultValues: {
       headId: sheet.head.id, cylinder: sheet.cylinder, purpose, benchId: like?.bench.id ?? gear.benches[0]?.id ?? "", fixtureId: adapterFor(gear, sheet.head.boreMm, like),
-      nominal: String(like?.nominalInH2O ?? sheet.nominalInH2O), plugClosed: true, testSprings: true, roomTemperature: "", roomPressure: "", roomHumidity: "", leak: "", leakPressure: "", leakScalingAgreed: false, notes: "",
+      liftDeviceId: like?.liftDevice?.id ?? (gear.liftDevices.length === 1 ? (gear.liftDevices[0]?.id ?? "") : ""), nominal: String(like?.nominalInH2O ?? sheet.nominalInH2O), plugClosed: true, testSprings: true, roomTemperature: "", roomPressure: "", roomHumidity: "", leak: "", leakPressure: "", leakScalingAgreed: false, notes: "",
       step, camLiftForLadder: cam, liftUnit: unit, intake: side("intake"), exhaust: side("exhaust"), operatorId: gear.operators.some((o) => o.id === sheet.viewer.id) ? sheet.viewer.id : undefined,
     },
     action: ({ requestId, input }) => startSheetAction(slug, { requestId, input: { ...input, ...(sides.intake ? {} : { intake: undefined }), ...(sides.exhaust ? {} : { exhaust: undefined }) } }),
@@ -110,8 +119,8 @@ function StartForm({ sheet, gear, purpose, basis, onStarted }: { sheet: FlowShee
         <div className="full flex gap-5">
           {(["intake", "exhaust"] as const).map((s) => <label key={s} className="tick"><input type="checkbox" checked={sides[s]} onChange={(e) => setSides({ ...sides, [s]: e.target.checked })} /><span className="capitalize">{s}</span></label>)}
         </div>
-        {sides.intake ? <SideFields name="intake" title="Intake" /> : null}
-        {sides.exhaust ? <SideFields name="exhaust" title="Exhaust" /> : null}
+        {sides.intake ? <SideFields name="intake" title="Intake" gear={gear} unit={form.rhf.watch("liftUnit") ?? unit} onCam={(lift) => form.rhf.setValue("intake.camLift", lift)} /> : null}
+        {sides.exhaust ? <SideFields name="exhaust" title="Exhaust" gear={gear} unit={form.rhf.watch("liftUnit") ?? unit} onCam={(lift) => form.rhf.setValue("exhaust.camLift", lift)} /> : null}
         <TextareaInput name="notes" label="Notes" rows={2} optional className="full" />
       </div>
       <div className="form-act">

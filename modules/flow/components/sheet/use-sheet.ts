@@ -11,6 +11,7 @@ import { readingSender, tabletStore } from "./reading-store";
 import { sheetFigures, withTyped, type When } from "./sheet-figures";
 
 export interface Pos { readonly side: PortSide; readonly when: When; readonly testId: string; readonly liftUm: number; readonly repeatNo: number }
+type CellMore = Partial<Pick<CellEdit, "acceptedReason" | "excludedReason" | "range" | "pressure" | "portTemperature" | "orificeTemperature">>;
 interface Undo { readonly pos: Pos; readonly value: string }
 
 const lastEdit = (cell: KeptCell | undefined): CellEdit | undefined => cell?.edits.at(-1);
@@ -19,7 +20,8 @@ const lastEdit = (cell: KeptCell | undefined): CellEdit | undefined => cell?.edi
 function rawOf(cell: KeptCell, edit: CellEdit, test: RawTest): RawCell {
   return {
     liftUm: cell.liftUm, repeatNo: cell.repeatNo, revision: cell.revision + 1, valueText: edit.value, valueUnit: SCALE_UNIT[test.bench.scale], rangeLabel: edit.range,
-    pressureText: edit.pressure || String(test.nominalInH2O), pressureUnit: "inH2O", acceptedReason: edit.acceptedReason,
+    pressureText: edit.pressure || String(test.nominalInH2O), pressureUnit: "inH2O",
+    ...(edit.portTemperature ? { portTemperatureText: edit.portTemperature } : {}), ...(edit.orificeTemperature ? { orificeTemperatureText: edit.orificeTemperature } : {}), acceptedReason: edit.acceptedReason,
     // A value that waits for a person is shown where it stands, and drawn nowhere.
     excludedReason: edit.excludedReason ?? (cell.stuck && cell.stuck.kind !== "conflict" ? "held back" : null), takenAt: edit.takenAt,
   };
@@ -63,7 +65,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
   const textAt = useCallback((pos: Pos): string => lastEdit(state.cells.get(keyOf(pos)))?.value ?? savedCell(pos)?.valueText ?? "", [state, keyOf, savedCell]);
   const keptAt = useCallback((pos: Pos): KeptCell | undefined => state.cells.get(keyOf(pos)), [state, keyOf]);
 
-  const put = useCallback((pos: Pos, value: string, more: Partial<Pick<CellEdit, "acceptedReason" | "excludedReason" | "range" | "pressure">> = {}) => {
+  const put = useCallback((pos: Pos, value: string, more: CellMore = {}) => {
     const test = saved.find((t) => t.id === pos.testId);
     if (!test) return;
     const kept = queue.snapshot().cells.get(keyOf(pos));
@@ -71,7 +73,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
     const was = lastEdit(kept);
     const edit: CellEdit = {
       requestId: crypto.randomUUID(), value, range: test.bench.scale === "direct" ? null : (was?.range ?? before?.rangeLabel ?? range ?? test.bench.ranges[0]?.label ?? null),
-      pressure: was?.pressure ?? held, acceptedReason: null, excludedReason: null, takenAt: new Date().toISOString(), ...more,
+      pressure: was?.pressure ?? held, portTemperature: was?.portTemperature ?? before?.portTemperatureText ?? "", orificeTemperature: was?.orificeTemperature ?? before?.orificeTemperatureText ?? "", acceptedReason: null, excludedReason: null, takenAt: new Date().toISOString(), ...more,
     };
     void queue.write({
       key: keyOf(pos), shop: slug, testId: pos.testId, liftUm: pos.liftUm, lift: test.lifts.find((l) => l.liftUm === pos.liftUm)?.text ?? String(pos.liftUm / (test.liftUnit === "in" ? 25_400 : 1000)),
@@ -87,7 +89,8 @@ export function useSheet(sheet: FlowSheet, slug: string) {
     const edit = lastEdit(kept);
     if (!kept || !edit || kept.stuck) return;
     const before = savedCell(pos);
-    const isSame = before !== undefined && before.valueText === edit.value && before.rangeLabel === edit.range && before.acceptedReason === edit.acceptedReason && before.excludedReason === edit.excludedReason && (edit.pressure === "" || before.pressureText === edit.pressure);
+    const isSame = before !== undefined && before.valueText === edit.value && before.rangeLabel === edit.range && before.acceptedReason === edit.acceptedReason && before.excludedReason === edit.excludedReason && (edit.pressure === "" || before.pressureText === edit.pressure)
+      && (before.portTemperatureText ?? "") === (edit.portTemperature ?? "") && (before.orificeTemperatureText ?? "") === (edit.orificeTemperature ?? "");
     const neverSent = kept.edits.every((e) => !e.sent);
     if (neverSent && (isSame || (edit.value.trim() === "" && (before?.revision ?? 0) === 0))) {
       void queue.discard(key);
@@ -146,7 +149,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
     }
   }, [slug, sheet.head.id, sheet.cylinder]);
 
-  const mark = useCallback((pos: Pos, more: Partial<Pick<CellEdit, "acceptedReason" | "excludedReason" | "range" | "pressure">>) => {
+  const mark = useCallback((pos: Pos, more: CellMore) => {
     put(pos, textAt(pos), more);
     commit(pos);
   }, [put, textAt, commit]);
