@@ -11,6 +11,7 @@ export interface BenchRoom {
   readonly olderBenchId: string;
   /** Fixture by its bore, mm. */
   readonly fixtures: ReadonlyMap<number, string>;
+  readonly liftDeviceId: string;
 }
 
 /** The bench room as it is used: benches, plates with their checks by date, fixtures, lift devices, camshafts. */
@@ -23,14 +24,15 @@ export async function benchRoom(cast: Cast, who: string, at: string, today: stri
   const fixtures = new Map<number, string>();
   for (const f of FIXTURES) fixtures.set(Number(f.boreMm), must(await addFixture(ctx, f)).id);
   for (const { dueInDays, ...plate } of CHECK_PLATES) must(await addCheckPlate(ctx, { ...plate, atPressure: "28", dueOn: addDays(today, dueInDays) }), plate.serial);
-  for (const device of LIFT_DEVICES) must(await addLiftDevice(ctx, device), device.name);
+  const devices: string[] = [];
+  for (const device of LIFT_DEVICES) devices.push(must(await addLiftDevice(ctx, device), device.name).id);
   for (const cam of CAMSHAFTS) must(await addCamshaft(ctx, cam), cam.label);
   for (const [benchId, days] of [[bench.id, BENCH_1_CHECKS], [older.id, OLDER_BENCH_CHECKS]] as const) {
     for (const day of days) {
       must(await recordBenchCheck(cast.as(who, day.at), { benchId, note: day.note, plates: CHECK_PLATES.map((p, i) => ({ serial: p.serial, reference: p.referenceFlow, indicated: day.shown[i] ?? "" })) }), `plates of ${day.at}`);
     }
   }
-  return { benchId: bench.id, olderBenchId: older.id, fixtures };
+  return { benchId: bench.id, olderBenchId: older.id, fixtures, liftDeviceId: devices[0] ?? "" };
 }
 
 /** Engine families as the shop describes them: valve lists, bores and cam lifts of those it flows. */

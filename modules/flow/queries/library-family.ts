@@ -6,6 +6,7 @@ import { historyOfPair } from "../domain/bench-history";
 import type { Reason, PortSide } from "../domain/comparison-reasons";
 import { gainsByLift, portChange, type KeptFigures, type LiftGains } from "../domain/family-gains";
 import type { LiftUnit } from "../domain/lift-ladder";
+import { middleCurve, type MiddlePoint } from "../domain/family-middle";
 import { noiseOfTests, type GainNoise } from "../domain/noise-rows";
 import type { RawTest } from "../domain/raw-test";
 import type { LiftReading } from "../domain/repeats";
@@ -22,13 +23,12 @@ import { rawTests } from "./tests-of-head";
 /** A family's middle curve is taken over so many of its newest tests, so that the answer takes as long in year ten as in year one. */
 export const MEDIAN_OF_NEWEST = 50;
 
-export interface MedianPoint extends LiftReading { n: number }
 export interface PortOfFamily { headId: string; cylinder: number; mark: string; ownerKind: string; workDone: string[]; flowedAt: string; gain: "comparable" | "withheld" | "absent"; reasons: string[]; meanGainCfm: number | null; meanPercent: number | null; notes: string[] }
 export interface FamilyPicture {
   family: string; side: PortSide; liftUnit: LiftUnit; atInH2O: number; camLiftUm: number | null; valves: string; bore: number | null; stroke: number | null; cylinders: number | null;
   tests: number; heads: number; otherPressure: number;
   /** Middle flow at each lift, over the newest tests of that purpose at the shop's pressure. */
-  before: MedianPoint[]; after: MedianPoint[];
+  before: MiddlePoint[]; after: MiddlePoint[];
   /** Highest mean flow up to cam lift of all tests that reach it. */
   best: { testId: string; headId: string; mark: string; cylinder: number; startedAt: string; meanToCamCfm: number; readings: LiftReading[] } | null;
   /** Ports of the last heads flowed before and after, newest first. */
@@ -36,8 +36,10 @@ export interface FamilyPicture {
   gains: LiftGains[];
 }
 
-interface Medians extends Record<string, unknown> { purpose: string; lift_um: number; flow: number; n: number }
+interface Kept extends Record<string, unknown> { purpose: string; lifts_um: number[]; flows_cfm: number[] }
 interface Best extends Record<string, unknown> { test_id: string; head_id: string; mark: string; cylinder: number; started_at: string; mean: number; lifts_um: number[]; flows_cfm: number[] }
+
+const readingsOf = (liftsUm: readonly number[], flowsCfm: readonly number[]): LiftReading[] => liftsUm.map((liftUm, i) => ({ liftUm, flowCfm: flowsCfm[i] ?? Number.NaN }));
 
 function portLine(change: ShopComparison | null, head: { id: string; mark: string; ownerKind: string; workDone: string[] }, cylinder: number, flowedAt: string): PortOfFamily {
   const base = { headId: head.id, cylinder, mark: head.mark, ownerKind: head.ownerKind, workDone: head.workDone, flowedAt, meanGainCfm: null, meanPercent: null, reasons: [], notes: [] };
@@ -50,7 +52,7 @@ function portLine(change: ShopComparison | null, head: { id: string; mark: strin
 async function figuresOf(ctx: TxContext, testIds: readonly string[]): Promise<Map<string, KeptFigures>> {
   const kept = testIds.length === 0 ? [] : await ctx.tx.select({ testId: flowTestSummaries.testId, liftsUm: flowTestSummaries.liftsUm, flowsCfm: flowTestSummaries.flowsCfm, isConverted: flowTestSummaries.isConverted }).from(flowTestSummaries)
     .where(and(eq(flowTestSummaries.shopId, ctx.shop.id), inArray(flowTestSummaries.testId, [...testIds]), eq(flowTestSummaries.constantsVersion, FLOW_CONSTANTS_VERSION)));
-  const figures = new Map<string, KeptFigures>(kept.map((k) => [k.testId, { readings: k.liftsUm.map((liftUm, i) => ({ liftUm, flowCfm: k.flowsCfm[i] ?? Number.NaN })), isConverted: k.isConverted }]));
+  const figures = new Map<string, KeptFigures>(kept.map((k) => [k.testId, { readings: readingsOf(k.liftsUm, k.flowsCfm), isConverted: k.isConverted }]));
   const missing = await rawTests(ctx, { testIds: testIds.filter((id) => !figures.has(id)) });
   for (const test of missing) figures.set(test.id, figuresOfTest(test));
   return figures;
@@ -73,14 +75,11 @@ export async function familyPicture(ctx: ShopContext, ask: { family: string; sid
       const known = await tx.select({ id: heads.id }).from(heads).where(and(eq(heads.shopId, s), eq(heads.family, ask.family))).limit(1);
       if (known.length === 0) throw new NotFound("family");
     }
-    const newest = (purpose: string) => sql`(select s.lifts_um, s.flows_cfm, s.purpose from flow_test_summaries s join flow_tests on flow_tests.shop_id = s.shop_id and flow_tests.id = s.test_id
+    const newest = (purpose: string) => sql`(select s.lifts_um, s.flows_cfm, s.purpose, s.started_at from flow_test_summaries s join flow_tests on flow_tests.shop_id = s.shop_id and flow_tests.id = s.test_id
       where s.shop_id = ${s} and s.family = ${ask.family} and s.side = ${ask.side} and s.purpose = ${purpose} and s.at_inh2o = ${atInH2O} and ${standsInLibrary(s)}
       order by s.started_at desc limit ${MEDIAN_OF_NEWEST})`;
-    const medians = await tx.execute<Medians>(sql`
-      select x.purpose, p.lift_um, percentile_cont(0.5) within group (order by p.flow)::float8 as flow, count(*)::int as n
-      from (${newest("baseline")} union all ${newest("after")}) x cross join lateral unnest(x.lifts_um, x.flows_cfm) as p(lift_um, flow)
-      group by x.purpose, p.lift_um order by p.lift_um`);
-    const curve = (purpose: string): MedianPoint[] => medians.rows.filter((m) => m.purpose === purpose).map((m) => ({ liftUm: m.lift_um, flowCfm: m.flow, n: m.n }));
+    const kept = await tx.execute<Kept>(sql`select x.purpose, x.lifts_um, x.flows_cfm from (${newest("baseline")} union all ${newest("after")}) x order by x.started_at desc`);
+    const curve = (purpose: string): MiddlePoint[] => middleCurve(kept.rows.filter((k) => k.purpose === purpose).map((k) => readingsOf(k.lifts_um, k.flows_cfm)));
     const bests = await tx.execute<Best>(sql`
       select s.test_id, s.head_id, h.mark, flow_tests.cylinder, s.started_at, s.mean_to_cam_cfm as mean, s.lifts_um, s.flows_cfm
       from flow_test_summaries s join flow_tests on flow_tests.shop_id = s.shop_id and flow_tests.id = s.test_id join heads h on h.shop_id = s.shop_id and h.id = s.head_id
@@ -120,7 +119,7 @@ export async function familyPicture(ctx: ShopContext, ask: { family: string; sid
       before: curve("baseline"), after: curve("after"),
       best: best ? {
         testId: best.test_id, headId: best.head_id, mark: best.mark, cylinder: best.cylinder, startedAt: new Date(best.started_at).toISOString(), meanToCamCfm: best.mean,
-        readings: best.lifts_um.map((liftUm, i) => ({ liftUm, flowCfm: best.flows_cfm[i] ?? Number.NaN })),
+        readings: readingsOf(best.lifts_um, best.flows_cfm),
       } : null,
       ports: found.map((f) => f.line), gains: gainsByLift(found.map((f) => f.change)),
     };
