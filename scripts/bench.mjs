@@ -60,6 +60,7 @@ await run(async () => {
   const argv = process.argv.slice(2);
   await ensurePackages();
   const { measure } = await import("./bench/measure.mjs");
+  const { measureEntry, PACE } = await import("./bench/entry.mjs");
   const { beginTest, measureTyping } = await import("./bench/typing.mjs");
   const { signIn } = await import("./drill/sign-in.mjs");
   const { runTypescript } = await import("./database.mjs");
@@ -89,6 +90,12 @@ await run(async () => {
       const { floor: bare, sheet } = await measureTyping({ app, cookie, sheet: `/s/${facts.slug}/flow/${facts.waitingHeadId}`, executablePath: ensureChromium() });
       for (const [name, r] of [["bare field", bare], ["flow sheet", sheet]]) console.log(`  ${name.padEnd(14)}${r.keys} keys, p50 ${r.p50} ms, p95 ${r.p95} ms, worst ${r.worst} ms`);
       console.log(`  Worst key of the sheet: ${(sheet.worst / bare.worst).toFixed(2)} x the bare field's; ${sheet.worst <= 100 ? "within" : "NOT within"} 100 ms.`);
+    }
+    if (facts.freshHeadId) {
+      heading("A head before and after, intake and exhaust, by keyboard alone");
+      const r = await measureEntry({ app, cookie, sheet: `/s/${facts.slug}/flow/${facts.freshHeadId}`, executablePath: ensureChromium() });
+      console.log(`  ${r.lifts} lifts a side: ${r.keys} keys and ${r.decisions} decisions; played by the browser in ${r.browserSeconds.toFixed(0)} s.`);
+      console.log(`  At ${PACE.key} s a key and ${PACE.decide} s a decision, the browser's own time added: ${r.personSeconds.toFixed(0)} s; ${r.personSeconds <= 180 ? "within" : "NOT within"} 3 minutes. Reckoned, not timed with a person.`);
     }
     for (const tests of argv.includes("--no-load") ? [] : [100, 10_000]) {
       heading(`The flow room and library with ${tests} more tests of 24 lifts`);

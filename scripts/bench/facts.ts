@@ -24,7 +24,10 @@ const facts = await withShop(shop.id, async (tx) => {
   const { rows: [waits] } = await tx.execute<{ id: string }>(sql`
     select t.head_id as id from flow_tests t where t.shop_id = ${shop.id} and t.purpose = 'baseline' and t.state = 'complete'
       and not exists (select 1 from flow_tests o where o.shop_id = t.shop_id and o.head_id = t.head_id and o.purpose <> 'baseline') order by t.started_at desc limit 1`);
-  return { gear: gear ?? null, waitingHeadId: waits?.id ?? null, family: family?.name ?? null, pair: pair.map((r) => r.id), order: order?.number ?? null, headId: head?.id ?? null, link: link ? new URL(linkAddress(link.id)).pathname : null, invoiceId: invoice?.id ?? null, tests: tests?.n ?? 0 };
+  // A head nobody flowed yet, whose family has a bore: the one for a whole entry.
+  const { rows: [fresh] } = await tx.execute<{ id: string }>(sql`
+    select h.id from heads h where h.shop_id = ${shop.id} and h.cylinders = 1 and h.bore_mm is not null and not exists (select 1 from flow_tests t where t.shop_id = h.shop_id and t.head_id = h.id) order by h.mark limit 1`);
+  return { freshHeadId: fresh?.id ?? null, gear: gear ?? null, waitingHeadId: waits?.id ?? null, family: family?.name ?? null, pair: pair.map((r) => r.id), order: order?.number ?? null, headId: head?.id ?? null, link: link ? new URL(linkAddress(link.id)).pathname : null, invoiceId: invoice?.id ?? null, tests: tests?.n ?? 0 };
 });
 await closeDatabase();
 console.log(JSON.stringify({ slug: shop.slug, shopId: shop.id, ...facts }));
