@@ -983,6 +983,8 @@ CREATE TABLE "flow_tests" (
 	"room_humidity_text" text DEFAULT '' NOT NULL,
 	"leak_text" text DEFAULT '' NOT NULL,
 	"leak_pressure_text" text DEFAULT '' NOT NULL,
+	"leak_scaling_agreed" boolean DEFAULT false NOT NULL,
+	"zero_return_um" integer,
 	"notes" text DEFAULT '' NOT NULL,
 	"operator_id" uuid NOT NULL,
 	"started_at" timestamp with time zone NOT NULL,

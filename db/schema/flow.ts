@@ -174,6 +174,10 @@ export const flowTests = pgTable("flow_tests", {
   roomHumidityText: text("room_humidity_text").notNull().default(""),
   leakText: text("leak_text").notNull().default(""),
   leakPressureText: text("leak_pressure_text").notNull().default(""),
+  /** A leak read at another pressure than a reading may be scaled to it. */
+  leakScalingAgreed: boolean("leak_scaling_agreed").notNull().default(false),
+  /** What the indicator showed on the closed seat after the last lift, micrometres; null = not looked at. */
+  zeroReturnUm: integer("zero_return_um"),
   notes: text("notes").notNull().default(""),
   operatorId: uuid("operator_id").notNull(),
   startedAt: instant("started_at").notNull(),

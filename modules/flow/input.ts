@@ -133,8 +133,11 @@ export const readingInput = z.strictObject({
   revisionSeen: z.number().int().min(0).default(0),
 });
 
-export const finishInput = z.strictObject({ testId: z.uuid(), version: z.number().int() });
-export const voidInput = finishInput.extend({ reason: words(300).min(3, "Say why, in a few words.") });
+export const finishInput = testSeen.extend({
+  /** What the lift indicator showed on the closed seat after the last lift, in the test's unit unless it names another; empty: not looked at. */
+  zeroReturn: line(20).default(""),
+});
+export const voidInput = testSeen.extend({ reason: words(300).min(3, "Say why, in a few words.") });
 export const correctInput = z.strictObject({ testId: z.uuid(), reason: words(300).min(3, "Say what is to be corrected.") });
 
 export const wholeTestInput = startTestInput.omit({ headId: true, lifts: true }).extend({

@@ -5,6 +5,8 @@ import { flowReadings, flowTests } from "@/db/schema";
 import { changedMeanwhile, defineCommand } from "@/modules/access/command";
 import { personIdOf, type TxContext } from "@/modules/access/context";
 import { ok, refuse } from "@/modules/kernel/result";
+import type { LiftUnit } from "../domain/lift-ladder";
+import { zeroReturnUm } from "../domain/zero-return";
 import { correctInput, finishInput, voidInput } from "../input";
 import { rawTests } from "../queries/tests-of-head";
 import { draftTest } from "./change-test";
@@ -17,13 +19,15 @@ export const completeTest = defineCommand({
   name: "flow.complete-test",
   act: "flow.record",
   input: finishInput,
-  async run(ctx, { testId, version }) {
+  async run(ctx, { testId, version, zeroReturn }) {
     const draft = await draftTest(ctx, testId, version);
     if (!draft.ok) return draft;
+    const zero = zeroReturnUm(zeroReturn, draft.value.liftUnit as LiftUnit);
+    if (!zero.ok) return zero;
     const [test] = await rawTests(ctx, { testIds: [testId] });
     const read = test?.cells.filter((c) => c.valueText !== "").length ?? 0;
     if (read === 0) return refuse("NOTHING_READ", "Nothing has been read yet. Type at least one reading, or void the test.");
-    await ctx.tx.update(flowTests).set({ state: "complete", completedAt: ctx.now, version: sql`${flowTests.version} + 1` }).where(at(ctx, testId));
+    await ctx.tx.update(flowTests).set({ state: "complete", completedAt: ctx.now, ...(zero.value === null ? {} : { zeroReturnUm: zero.value }), version: sql`${flowTests.version} + 1` }).where(at(ctx, testId));
     await summariseTest(ctx, testId);
     return ok({ testId, version: version + 1, read });
   },

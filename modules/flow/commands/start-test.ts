@@ -33,7 +33,7 @@ export function conditionColumns(input: Pick<StartTest, "fixtureId" | "liftDevic
   return ok({
     fixtureId: input.fixtureId, nominalPressureInH2O: input.nominal, camLiftUm: cam?.value ?? null, entry: input.entry, valvesOpen: input.valvesOpen || "all", valveMm: number(input.valve),
     seatNote: input.seatNote, plugClosed: input.plugClosed, testSprings: input.testSprings, warmUpMinutes: input.warmUpMinutes ?? null, ...room,
-    liftDeviceId: input.liftDeviceId || null, camshaftId: input.camshaftId || null, leakText: input.leak, leakPressureText: input.leakPressure, notes: input.notes,
+    liftDeviceId: input.liftDeviceId || null, camshaftId: input.camshaftId || null, leakText: input.leak, leakPressureText: input.leakPressure, leakScalingAgreed: input.leakScalingAgreed, notes: input.notes,
   });
 }
 

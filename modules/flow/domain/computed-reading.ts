@@ -21,7 +21,7 @@ export interface ReadingRules {
   /** Density of the room's air, kg/m3, on a bench that counts the air as it is; null on one whose weather cancels. */
   readonly densityKgM3: number | null;
   /** Leak of the closed head as the bench showed it, cfm, and the pressure it was read at; null = not measured. */
-  readonly leak: { readonly indicatedCfm: number; readonly atInH2O: number } | null;
+  readonly leak: { readonly indicatedCfm: number; readonly atInH2O: number; /** It may be scaled to a reading held at another pressure. */ readonly scalingAgreed?: boolean } | null;
 }
 export interface TypedReading {
   readonly valueText: string;
@@ -77,7 +77,8 @@ function airFactor(rules: ReadingRules, typed: TypedReading): Result<FlaggedFlow
 
 /**
  * Raw reading to the flow it stands for, cfm at the nominal pressure: scale and bench factor, then for the air, then less the
- * leak at the held pressure, then to the nominal pressure. A leak read at another pressure is scaled and flagged.
+ * leak at the held pressure, then to the nominal pressure. A leak read at another pressure (more than 2 % off) is scaled
+ * and flagged where that was agreed, and refused where not.
  * Source: each step names its own. Errors: those of the steps; the raw text stays whatever comes out.
  */
 export function computedReading(rules: ReadingRules, typed: TypedReading): Result<FlaggedFlow> {
@@ -91,7 +92,7 @@ export function computedReading(rules: ReadingRules, typed: TypedReading): Resul
   let flowCfm = raw.value.flowCfm * air.value.flowCfm;
   if (rules.leak && rules.leak.indicatedCfm > 0) {
     const net = subtractLeak({
-      measuredCfm: flowCfm, leakCfm: rules.leak.indicatedCfm * rules.benchFactor * (rules.densityKgM3 === null ? 1 : air.value.flowCfm), measuredAtInH2O: held.value, leakAtInH2O: rules.leak.atInH2O, allowScaling: true,
+      measuredCfm: flowCfm, leakCfm: rules.leak.indicatedCfm * rules.benchFactor * (rules.densityKgM3 === null ? 1 : air.value.flowCfm), measuredAtInH2O: held.value, leakAtInH2O: rules.leak.atInH2O, allowScaling: rules.leak.scalingAgreed === true,
     });
     if (!net.ok) return net;
     flags.push(...net.value.flags);

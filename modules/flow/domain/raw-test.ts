@@ -92,6 +92,10 @@ export interface RawTest {
   readonly roomHumidityText: string;
   readonly leakText: string;
   readonly leakPressureText: string;
+  /** A leak read at another pressure than a reading may be scaled to it. Left out: not agreed. */
+  readonly leakScalingAgreed?: boolean;
+  /** What the indicator showed on the closed seat after the last lift, micrometres; null or left out: not looked at. */
+  readonly zeroReturnUm?: number | null;
   readonly notes: string;
   readonly operator: { readonly id: string; readonly name: string };
   readonly startedAt: string;

@@ -27,8 +27,8 @@ export interface SanityTest {
   /** Strictly increasing, one unit; the unit is that of the lift in the flag. */
   readonly lifts: readonly number[];
   readonly flowsCfm: readonly number[];
-  /** The before test at the same lifts. */
-  readonly beforeCfm?: readonly number[];
+  /** The before test at the same lifts; null where it was not read. */
+  readonly beforeCfm?: readonly (number | null)[];
   /** Expanded uncertainty, cfm; a fall must exceed it too. */
   readonly expandedUCfm?: number;
   readonly leakCfm?: number;
@@ -55,7 +55,7 @@ const at = (flag: LiftFlag, lift: number): LiftFlagAt => `${flag}@${lift}`;
  */
 export function sanityFlagsOfTest(test: SanityTest, limits: SanityLimits = SANITY_LIMITS): Result<readonly (FlowFlag | LiftFlagAt)[]> {
   const { lifts, flowsCfm, beforeCfm, expandedUCfm = 0, leakCfm = 0, camMaxLift, zeroReturnMm } = test;
-  const bad = refuseNotFinite({ lifts, flowsCfm, beforeCfm, expandedUCfm, leakCfm, camMaxLift, zeroReturnMm });
+  const bad = refuseNotFinite({ lifts, flowsCfm, beforeCfm: beforeCfm?.filter((b) => b !== null), expandedUCfm, leakCfm, camMaxLift, zeroReturnMm });
   if (bad) return bad;
   const curve = paired(lifts, flowsCfm);
   if (!curve) return refuseFlow("TOO_FEW_POINTS", "flowsCfm");
@@ -70,7 +70,7 @@ export function sanityFlagsOfTest(test: SanityTest, limits: SanityLimits = SANIT
     const both = paired(curve, beforeCfm);
     if (!both) return refuseFlow("TOO_FEW_POINTS", "beforeCfm");
     for (const [[lift, after], before] of both) {
-      if (before > 0 && after / before - 1 > limits.gainShare) flags.push(at("GAIN_UNUSUAL", lift));
+      if (before !== null && before > 0 && after / before - 1 > limits.gainShare) flags.push(at("GAIN_UNUSUAL", lift));
     }
   }
   if (zeroReturnMm !== undefined && Math.abs(zeroReturnMm) > limits.zeroDriftMm) flags.push("LIFT_ZERO_DRIFT");

@@ -1,4 +1,5 @@
 import { ok, type Refusal, type Result } from "@/modules/kernel/result";
+import { geometryFlags } from "./geometry-flags";
 import type { PortSide } from "./comparison-reasons";
 import { computedReading, heldInH2O, type ReadingRules } from "./computed-reading";
 import { readingQuestion, type EntryQuestion } from "./entry-questions";
@@ -41,11 +42,21 @@ export function rulesOfTest(test: RawTest): Result<ReadingRules> {
   const leak = typedNumber(test.leakText, "leak");
   if (!leak.ok) return leak;
   const at = test.leakPressureText.trim() === "" ? ok(test.nominalInH2O) : heldInH2O(test.leakPressureText, "inH2O", test.bench.waterUnit);
-  return at.ok ? ok({ ...rules, leak: { indicatedCfm: leak.value, atInH2O: at.value } }) : at;
+  return at.ok ? ok({ ...rules, leak: { indicatedCfm: leak.value, atInH2O: at.value, scalingAgreed: test.leakScalingAgreed === true } }) : at;
+}
+
+/** What is known beside the test itself. Each check of it runs where its facts are given; figures do not depend on them. */
+export interface FiguresBeside {
+  /** Flows of the test it is held against, stated at the same pressure. */
+  readonly before?: readonly LiftReading[];
+  /** Head diameter of every open valve of the side, mm. Left out where their number is not known. */
+  readonly valveDiametersMm?: readonly number[];
+  /** Smallest section of the port, mm2. */
+  readonly minSectionMm2?: number;
 }
 
 /** Every figure of a test, computed from its raw cells. The same code runs in the browser, on the server and for the paper. */
-export function figuresOfTest(test: RawTest): TestFigures {
+export function figuresOfTest(test: RawTest, beside: FiguresBeside = {}): TestFigures {
   const rules = rulesOfTest(test);
   const typed = test.cells.filter((c) => c.valueText.trim() !== "").sort((a, b) => a.liftUm - b.liftUm || a.repeatNo - b.repeatNo);
   const computed = typed.map((cell) => ({ cell, result: rules.ok ? computedReading(rules.value, cell) : rules }));
@@ -59,7 +70,7 @@ export function figuresOfTest(test: RawTest): TestFigures {
       ...cell,
       flowCfm: result.ok ? result.value.flowCfm : null,
       refusal: result.ok ? null : result.refusal,
-      flags: result.ok ? result.value.flags : [],
+      flags: result.ok ? [...result.value.flags, ...geometryFlags({ ...beside, liftUm: cell.liftUm, flowCfm: result.value.flowCfm, side: test.side, atInH2O: test.nominalInH2O })] : [],
       question: forQuestion === null ? null : readingQuestion({ liftUm: cell.liftUm, flowCfm: forQuestion }, readings),
     };
   });
@@ -67,6 +78,8 @@ export function figuresOfTest(test: RawTest): TestFigures {
   const sane = sanityFlagsOfTest({
     lifts, flowsCfm: readings.map((r) => r.flowCfm),
     ...(rules.ok && rules.value.leak ? { leakCfm: rules.value.leak.indicatedCfm } : {}),
+    ...(beside.before ? { beforeCfm: lifts.map((um) => beside.before?.find((b) => b.liftUm === um)?.flowCfm ?? null) } : {}),
+    ...(typeof test.zeroReturnUm === "number" ? { zeroReturnMm: test.zeroReturnUm / 1000 } : {}),
     ...(test.camLiftUm === null || test.state === "draft" ? {} : { camMaxLift: test.camLiftUm }),
   });
   const doubts = (sane.ok ? sane.value : []).map((flag): LiftDoubt => {

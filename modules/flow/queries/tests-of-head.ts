@@ -49,7 +49,7 @@ export async function rawTests(ctx: ShopContext, which: ({ headIds: readonly str
     fixture: { id: fixture.id, name: fixture.name, boreMm: fixture.boreMm },
     nominalInH2O: t.nominalPressureInH2O, lifts: t.lifts, liftUnit: t.liftUnit as RawTest["liftUnit"], camLiftUm: t.camLiftUm,
     entry: t.entry as RawTest["entry"], valvesOpen: t.valvesOpen, valveMm: t.valveMm, seatNote: t.seatNote, plugClosed: t.plugClosed, testSprings: t.testSprings, warmUpMinutes: t.warmUpMinutes,
-    roomTemperatureText: t.roomTemperatureText, roomPressureText: t.roomPressureText, roomHumidityText: t.roomHumidityText, leakText: t.leakText, leakPressureText: t.leakPressureText, notes: t.notes,
+    roomTemperatureText: t.roomTemperatureText, roomPressureText: t.roomPressureText, roomHumidityText: t.roomHumidityText, leakText: t.leakText, leakPressureText: t.leakPressureText, leakScalingAgreed: t.leakScalingAgreed, zeroReturnUm: t.zeroReturnUm, notes: t.notes,
     operator, startedAt: t.startedAt.toISOString(), completedAt: t.completedAt?.toISOString() ?? null, correctsTestId: t.correctsTestId, voidReason: t.voidReason,
     cells: cells.get(t.id) ?? [],
   }));

@@ -27,7 +27,7 @@ function ChangeForm({ gear, drafts, onChanged }: { gear: BenchGear; drafts: Draf
     schema: changeSheetInput,
     defaultValues: {
       fixtureId: test?.fixture.id ?? "", liftDeviceId: test?.liftDevice?.id ?? "", nominal: String(test?.nominalInH2O ?? ""), plugClosed: test?.plugClosed ?? true, testSprings: test?.testSprings ?? true, roomTemperature: test?.roomTemperatureText ?? "",
-      roomPressure: test?.roomPressureText ?? "", roomHumidity: test?.roomHumidityText ?? "", leak: test?.leakText ?? "", leakPressure: test?.leakPressureText ?? "", leakScalingAgreed: false, notes: test?.notes ?? "",
+      roomPressure: test?.roomPressureText ?? "", roomHumidity: test?.roomHumidityText ?? "", leak: test?.leakText ?? "", leakPressure: test?.leakPressureText ?? "", leakScalingAgreed: test?.leakScalingAgreed ?? false, notes: test?.notes ?? "",
       ...(intake ? { intake } : {}), ...(exhaust ? { exhaust } : {}),
     },
     action: ({ requestId, input }) => changeSheetConditionsAction(slug, { requestId, input }),
