@@ -111,7 +111,9 @@ export function comparisonNotes(before: ReadingSetConditions, after: ReadingSetC
   add("VALVE_DIFFERS", before.valve !== after.valve, `Valves: before ${before.valve}, after ${after.valve}.`);
   add("SEAT_DIFFERS", before.seat !== after.seat, `Seats: before ${before.seat}, after ${after.seat}.`);
   add("OPERATOR_DIFFERS", before.operator !== after.operator, `Read by ${before.operator} before and ${after.operator} after.`);
-  add("FACTOR_DIFFERS", before.benchFactor !== after.benchFactor, `Bench factor: before ${before.benchFactor}, after ${after.benchFactor}.`);
+  // Four decimals: a check plate is not known more finely.
+  const [was, is] = [before.benchFactor.toFixed(4), after.benchFactor.toFixed(4)];
+  add("FACTOR_DIFFERS", was !== is, `Bench factor: before ${was}, after ${is}.`);
   add(
     "CONVERTED_PRESSURE",
     before.isConverted === true || after.isConverted === true,

@@ -1,12 +1,13 @@
 import { ok, type Result } from "@/modules/kernel/result";
 import type { PortSide } from "./comparison-reasons";
 import { curveScale, flowTicks, liftTicks, scaleLiftText, type DecimalText, type FlowTick, type LiftTick, type PlotBox } from "./curve-scale";
+import { flowMeasure, type CurveMeasure } from "./curve-measure";
 import { curveDescription } from "./curve-description";
 import { curveSegments, drawnCurve, type DrawnCurve } from "./drawn-curve";
 import { refuseFlow, refuseNotFinite } from "./flow-refusal";
 import { areasBetween } from "./gain-area";
 import type { LiftUnit } from "./lift-ladder";
-import { endLabels, textWidthPx, type EndLabel, type LineEnd } from "./line-end-labels";
+import { endLabels, textWidthPx, type EndLabel, type LabelRoom, type LineEnd } from "./line-end-labels";
 import { lossMarkers, type LossMarker } from "./loss-markers";
 import { noiseBand, type LiftMargin, type MarginBar } from "./noise-band";
 import { pathText, type Segment } from "./path-segments";
@@ -34,6 +35,11 @@ export interface CurveGeometryInput {
   readonly camLiftUm: number | null;
   readonly lines: readonly CurveLine[];
   readonly decimalText?: DecimalText;
+  /** Default: flow as read. The figures of `lines` are then of this measure. */
+  readonly measure?: CurveMeasure;
+  /** Drawn for a paper: small type, labels close by with leaders, both axes named in the mini form too. */
+  readonly paper?: boolean;
+  readonly labels?: LabelRoom;
 }
 
 export interface DrawnLine {
@@ -103,6 +109,10 @@ export interface CurveGeometry {
 
 const WIDTH_PX: Readonly<Record<When, number>> = { before: 1.6, after: 2.6 };
 const MINI_BELOW_PX = 480;
+/** Above the plot on paper: the axis title, the words of the cam line. */
+const PAPER_TOP_PX = 27;
+/** Type of 7.6 points: lines stand closer, and every label that left its line's end says whose it is. */
+const PAPER_LABELS: LabelRoom = { gapPx: 9.6, columnPx: 17, leaderBeyondPx: 1.5 };
 const SIDE_WORDS: Readonly<Record<PortSide, string>> = { intake: "Intake", exhaust: "Exhaust" };
 
 interface ReadyLine {
@@ -159,27 +169,31 @@ export function curveGeometry(input: CurveGeometryInput): Result<CurveGeometry> 
   if (bad) return bad;
   if (all.some((r) => r.liftUm < 0 || r.flowCfm < 0) || lines.some((l) => l.margins?.some((m) => m.marginCfm < 0))) return refuseFlow("READING_OUT_OF_RANGE", "lines", { min: 0 });
   const mini = input.mini ?? widthPx < MINI_BELOW_PX;
-  const plot: PlotBox = mini
+  const paper = input.paper ?? false;
+  const measure = input.measure ?? flowMeasure("read", `${atInH2O} in H₂O`);
+  const plot: PlotBox = paper
+    ? { left: 34, right: widthPx - (mini ? 56 : 76), top: PAPER_TOP_PX, bottom: heightPx - 28 }
+    : mini
     ? { left: 34, right: widthPx - 78, top: 14, bottom: heightPx - 26 }
     : { left: 46, right: widthPx - 116, top: 36, bottom: heightPx - 46 };
   if (plot.right - plot.left < 60 || plot.bottom - plot.top < 60) return refuseFlow("GEOMETRY_INVALID", "widthPx");
 
   const ready: ReadyLine[] = [];
   for (const line of lines) {
-    const before = drawnCurve(line.before);
+    const before = drawnCurve(line.before, measure.fromZero);
     if (!before.ok) return before;
-    const after = drawnCurve(line.after);
+    const after = drawnCurve(line.after, measure.fromZero);
     if (!after.ok) return after;
     ready.push({ side: line.side, gain: line.gain, margins: line.gain === "shown" ? (line.margins ?? []) : [], before: before.value, after: after.value });
   }
   const bandTops = ready.flatMap((l) => l.before.readings.map((r) => r.flowCfm + (l.margins.find((m) => m.liftUm === r.liftUm)?.marginCfm ?? 0)));
   const scale = curveScale(plot, [...all.map((r) => r.liftUm), camLiftUm ?? 0], [...all.map((r) => r.flowCfm), ...bandTops]);
   const bands = ready.map((l) => ({ side: l.side, ...noiseBand(l.before, l.margins, scale) }));
-  const labels = endLabels(lineEnds(ready, scale.x, scale.y, mini), plot);
+  const labels = endLabels(lineEnds(ready, scale.x, scale.y, mini), plot, paper ? PAPER_LABELS : input.labels);
   const shown = ready.filter((l) => l.gain === "shown");
   const camText = camLiftUm === null ? "" : `Cam lift ${scaleLiftText(camLiftUm, unit, decimalText)}`;
   const cam = camLiftUm === null ? null : camMark(camLiftUm, scale.x(camLiftUm), plot, widthPx, mini, camText);
-  const flowTitle = `CFM at ${atInH2O} in H₂O`;
+  const flowTitle = measure.axis;
   const titleHitsPlate = cam?.plate != null && cam.plate.textX - textWidthPx(camText) / 2 - 8 < plot.left + textWidthPx(flowTitle);
 
   return ok({
@@ -189,8 +203,9 @@ export function curveGeometry(input: CurveGeometryInput): Result<CurveGeometry> 
     plot,
     liftTicks: liftTicks(scale, unit, decimalText),
     flowTicks: flowTicks(scale, mini ? 4 : 8, decimalText),
-    flowTitle: mini ? null : { text: flowTitle, x: titleHitsPlate ? widthPx - 4 : plot.left, y: plot.top - 16, anchor: titleHitsPlate ? "end" : "start" },
-    liftTitle: mini ? null : { text: `Valve lift, ${unit}`, x: plot.right, y: heightPx - 4, anchor: "end" },
+    // On paper the title stands over the words of the cam line, so neither can cover the other.
+    flowTitle: paper ? { text: flowTitle, x: 0, y: plot.top - 25, anchor: "start" } : mini ? null : { text: flowTitle, x: titleHitsPlate ? widthPx - 4 : plot.left, y: plot.top - 16, anchor: titleHitsPlate ? "end" : "start" },
+    liftTitle: paper ? { text: `Valve lift, ${unit}`, x: plot.right, y: plot.bottom + 17, anchor: "end" } : mini ? null : { text: `Valve lift, ${unit}`, x: plot.right, y: heightPx - 4, anchor: "end" },
     areas: shown.flatMap((l) =>
       areasBetween(l.before, l.after, scale).map(({ kind, segments }) => ({ side: l.side, kind, path: pathText(segments), segments })),
     ),
@@ -226,6 +241,6 @@ export function curveGeometry(input: CurveGeometryInput): Result<CurveGeometry> 
       withPlates: !mini,
       decimalText,
     }),
-    description: curveDescription(lines, unit, camLiftUm, decimalText),
+    description: curveDescription(lines, unit, camLiftUm, decimalText, measure),
   });
 }

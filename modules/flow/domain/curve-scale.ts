@@ -73,7 +73,7 @@ export function liftTicks(scale: CurveScale, unit: LiftUnit, decimalText: Decima
 export function flowTicks(scale: CurveScale, most: number, decimalText: DecimalText): FlowTick[] {
   const power = 10 ** Math.floor(Math.log10(scale.flowCfmMax / most));
   const step = [1, 2, 5, 10, 20].map((m) => m * power).find((s) => scale.flowCfmMax / s <= most) ?? scale.flowCfmMax;
-  const digits = step < 1 ? 1 : 0;
+  const digits = step < 0.1 ? 2 : step < 1 ? 1 : 0;
   return Array.from({ length: Math.floor(scale.flowCfmMax / step + 1e-9) + 1 }, (_, i) => ({
     y: scale.y(i * step),
     flowCfm: i * step,

@@ -14,14 +14,15 @@ export interface DrawnCurve {
 /**
  * The same monotone curve the figures are taken from, so the drawing never differs from the numbers. It is drawn from the
  * first reading on: what was not measured is not shown, although (0, 0) shapes the slope there.
+ * @param addZero false for what is not nothing at a shut valve.
  * Errors: LIFTS_NOT_INCREASING (a lift twice), NUMBER_NOT_FINITE.
  */
-export function drawnCurve(readings: readonly LiftReading[]): Result<DrawnCurve> {
+export function drawnCurve(readings: readonly LiftReading[], addZero = true): Result<DrawnCurve> {
   const sorted = [...readings].sort((a, b) => a.liftUm - b.liftUm);
   if (sorted.length === 0) return ok({ readings: sorted, curve: null });
   const curve = monotoneCurve(
     sorted.map((r) => ({ lift: r.liftUm, flowCfm: r.flowCfm })),
-    { addZero: true },
+    { addZero },
   );
   if (!curve.ok) return curve.refusal.code === "TOO_FEW_POINTS" ? ok({ readings: sorted, curve: null }) : curve;
   return ok({ readings: sorted, curve: sorted.length > 1 ? curve.value : null });

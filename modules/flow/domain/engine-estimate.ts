@@ -1,18 +1,13 @@
 import { moistAirDensity } from "./air-density";
-import type { CamPoint } from "./cam-table";
+import { camOpening, type CamFacts } from "./cam-opening";
 import { STATED_AIR } from "./coefficient-rows";
 import { inletMachIndex } from "./mach-index";
-import { meanFlowOverCam, syntheticCam } from "./mean-flow";
+import { meanFlowOverCam } from "./mean-flow";
 import { powerBracket, POWER_ESTIMATE_WORDS } from "./power-estimate";
 import type { LiftReading } from "./repeats";
-import { ok, refuse, type Result } from "@/modules/kernel/result";
+import { ok, type Result } from "@/modules/kernel/result";
 import { speedOfSound } from "./speed-of-sound";
 
-export interface EstimateCam {
-  readonly maxLiftUm: number;
-  readonly durationDeg: number | null;
-  readonly profile: readonly CamPoint[];
-}
 export interface EngineEstimate {
   readonly meanFlowCfm: number;
   /** Made from lift and duration only; not a measured cam. */
@@ -27,8 +22,6 @@ export interface EngineEstimate {
   readonly words: string;
 }
 
-/** Step of the stand-in cam, degrees. Our choice. */
-const STEP_DEG = 5;
 /** Any speed does: the two speeds are scaled from it. */
 const REFERENCE_RPM = 6000;
 
@@ -37,13 +30,9 @@ const REFERENCE_RPM = 6000;
  * Source: as `meanFlowOverCam`, `inletMachIndex`, `powerBracket`; air dry at 20 °C and 101.325 kPa.
  * Errors: CAM_NOT_KNOWN, and those of the steps (OUTSIDE_TESTED_LIFT when the readings do not reach cam lift).
  */
-export function engineEstimate(input: { readings: readonly LiftReading[]; atInH2O: number; cam: EstimateCam; boreMm: number; strokeMm: number; cylinders: number }): Result<EngineEstimate> {
+export function engineEstimate(input: { readings: readonly LiftReading[]; atInH2O: number; cam: CamFacts; boreMm: number; strokeMm: number; cylinders: number }): Result<EngineEstimate> {
   const { readings, atInH2O, cam, boreMm, strokeMm, cylinders } = input;
-  const isSynthetic = cam.profile.length === 0;
-  if (isSynthetic && cam.durationDeg === null) return refuse("CAM_NOT_KNOWN", "The cam's duration or table is not recorded. Add it under Bench gear, Camshafts.");
-  const table = isSynthetic
-    ? syntheticCam({ maxLift: cam.maxLiftUm, durationDeg: cam.durationDeg ?? 0, stepDeg: STEP_DEG })
-    : ok({ anglesDeg: cam.profile.map((p) => p.angleDeg), camLifts: cam.profile.map((p) => p.liftUm) });
+  const table = camOpening(cam);
   if (!table.ok) return table;
   const mean = meanFlowOverCam({ anglesDeg: table.value.anglesDeg, camLifts: table.value.camLifts, table: { lifts: readings.map((r) => r.liftUm), flowsCfm: readings.map((r) => r.flowCfm) } });
   if (!mean.ok) return mean;
@@ -58,5 +47,5 @@ export function engineEstimate(input: { readings: readonly LiftReading[]; atInH2
   const power = powerBracket({ ...common, engineAirDensityKgM3: densityKgM3, cylinders });
   if (!power.ok) return power;
   const { lowKW, midKW, highKW } = power.value;
-  return ok({ meanFlowCfm: mean.value, isSynthetic, rpmAt0_5: mach.value.rpmAt0_5, rpmAt0_6: mach.value.rpmAt0_6, lowKW, midKW, highKW, words: POWER_ESTIMATE_WORDS });
+  return ok({ meanFlowCfm: mean.value, isSynthetic: table.value.isSynthetic, rpmAt0_5: mach.value.rpmAt0_5, rpmAt0_6: mach.value.rpmAt0_6, lowKW, midKW, highKW, words: POWER_ESTIMATE_WORDS });
 }

@@ -26,17 +26,26 @@ const ASCENT_PX = 11;
 
 export const textWidthPx = (text: string): number => text.length * CHAR_PX;
 
+export interface LabelRoom {
+  /** Between the first lines of two labels. */
+  readonly gapPx?: number;
+  /** Between the plot and the column of labels. */
+  readonly columnPx?: number;
+  /** A label that stands further from its line's end than this has a leader. */
+  readonly leaderBeyondPx?: number;
+}
+
 /**
  * Labels at the ends of the lines, none over another. A line that stops early keeps its label beside its end when there
  * is room; all others stand in the column right of the plot.
  */
-export function endLabels(ends: readonly LineEnd[], plot: PlotBox): EndLabel[] {
-  const columnX = plot.right + 10;
+export function endLabels(ends: readonly LineEnd[], plot: PlotBox, { gapPx = LINE_PX, columnPx = 10, leaderBeyondPx = 8 }: LabelRoom = {}): EndLabel[] {
+  const columnX = plot.right + columnPx;
   const width = (e: LineEnd) => Math.max(0, ...e.lines.map(textWidthPx));
   const isInner = (e: LineEnd) => e.x + 13 + width(e) < plot.right - 4;
   const place = (group: readonly LineEnd[], xOf: (e: LineEnd) => number, dy: number): EndLabel[] => {
     const tallest = Math.max(1, ...group.map((e) => e.lines.length));
-    const gap = tallest * LINE_PX;
+    const gap = tallest * gapPx;
     const ys = spreadApart(
       group.map((e) => e.y + dy),
       gap,
@@ -46,7 +55,7 @@ export function endLabels(ends: readonly LineEnd[], plot: PlotBox): EndLabel[] {
     return group.map((e, i) => {
       const x = xOf(e);
       const y = ys[i] ?? e.y;
-      const moved = Math.abs(y - dy - e.y) > 8 || x - e.x > 16;
+      const moved = Math.abs(y - dy - e.y) > leaderBeyondPx || x - e.x > Math.max(16, columnPx);
       return {
         key: e.key,
         lines: e.lines,

@@ -1,15 +1,28 @@
+import type { ComparisonMeans } from "./comparison-means";
 import type { PortSide } from "./comparison-reasons";
 import { historyUsed } from "./noise-summary";
 import type { RawTest } from "./raw-test";
 import type { LiftReading } from "./repeats";
+import type { PortRatio } from "./port-ratios";
+import type { ReplacedReport } from "./report-replaces";
 import type { SideGain } from "./side-gain";
 import type { Standing } from "./standing-tests";
 import { conditionWords } from "./side-gain";
-import { figuresOfTest } from "./test-figures";
+import { figuresOfTest, type TestFigures } from "./test-figures";
 
 /** What stands on every flow paper. */
 export const AIRFLOW_WORDS = "Airflow as measured on our bench, not power. Power depends on cam, compression, fuel, ignition, intake and exhaust; measure it on a dynamometer.";
 
+/** A reading that was taken and does not count. */
+export interface LeftOut {
+  readonly liftUm: number;
+  readonly repeatNo: number;
+  /** Null where no flow came out of it. */
+  readonly flowCfm: number | null;
+  readonly reason: string;
+  /** No other reading at this lift counts. */
+  readonly isWhole: boolean;
+}
 /** One test as a paper shows it. */
 export interface ReportTest {
   readonly testId: string;
@@ -28,17 +41,22 @@ export interface ReportTest {
   /** Most readings at one lift. */
   readonly repeats: number;
   readonly isConverted: boolean;
+  /** Absent in papers issued before they were listed. */
+  readonly leftOut?: readonly LeftOut[];
 }
 export interface ReportSide {
   readonly side: PortSide;
   readonly before: ReportTest | null;
   readonly after: ReportTest | null;
   readonly gain: SideGain;
+  /** Only where the two may be compared. */
+  readonly means?: ComparisonMeans;
 }
 /** A comparison as issued: everything its paper needs, so that it can be made again unchanged. */
 export interface ReportSnapshot {
-  /** 1: issued before the noise and the hatched loss were drawn. 2: before plates of losses kept off the curves on paper. Such papers stay as they were. */
-  readonly kind: 1 | 2 | 3;
+  /** 1: issued before the noise and the hatched loss were drawn. 2: before plates of losses kept off the curves on paper. 3: before means
+   * over lift and cam, crossovers and leaders stood on it, and before it was set to one page. Such papers stay as they were. */
+  readonly kind: 1 | 2 | 3 | 4;
   readonly shop: { readonly name: string; readonly address: string; readonly phone: string; readonly email: string };
   readonly locale: string;
   readonly zone: string;
@@ -47,6 +65,9 @@ export interface ReportSnapshot {
   readonly cylinders: number;
   readonly comparisonNo: number;
   readonly sides: readonly ReportSide[];
+  readonly ratios?: readonly PortRatio[];
+  /** Absent on a first report. */
+  readonly replaces?: ReplacedReport;
   readonly notTested: readonly string[];
   readonly customerWords: string;
   readonly issuedBy: string;
@@ -55,13 +76,19 @@ export interface ReportSnapshot {
 
 const roomWords = (t: RawTest): string => [t.roomTemperatureText, t.roomPressureText, t.roomHumidityText].filter(Boolean).join(", ");
 
+/** Readings taken and left out, lifts increasing, each with the reason given. */
+export function leftOutOf(figures: TestFigures): LeftOut[] {
+  return figures.cells.flatMap(({ liftUm, repeatNo, flowCfm, excludedReason }) =>
+    (excludedReason === null ? [] : [{ liftUm, repeatNo, flowCfm, reason: excludedReason, isWhole: !figures.readings.some((r) => r.liftUm === liftUm) }]));
+}
+
 /** A test for the paper: figures by lift, conditions in words. */
 export function reportTest(test: RawTest): ReportTest {
   const figures = figuresOfTest(test);
   return {
     testId: test.id, purpose: test.purpose, runNo: test.runNo, operator: test.operator.name, takenAt: test.startedAt, bench: test.bench.name, benchFactor: test.benchFactor,
     benchCheckedAt: test.benchCheckedAt, valveMm: test.valveMm, seatNote: test.seatNote, room: roomWords(test), conditions: conditionWords(test),
-    readings: figures.readings.map(({ liftUm, flowCfm }) => ({ liftUm, flowCfm })), repeats: Math.max(0, ...figures.readings.map((r) => r.count)), isConverted: figures.isConverted,
+    readings: figures.readings.map(({ liftUm, flowCfm }) => ({ liftUm, flowCfm })), repeats: Math.max(0, ...figures.readings.map((r) => r.count)), isConverted: figures.isConverted, leftOut: leftOutOf(figures),
   };
 }
 
@@ -79,7 +106,9 @@ export function notTestedWords(sides: readonly { side: PortSide; standing: Stand
     for (const [when, test] of [["before", standing.before], ["after", standing.after]] as const) {
       if (!test) continue;
       const figures = figuresOfTest(test);
-      const unread = test.lifts.filter((l) => !figures.readings.some((r) => r.liftUm === l.liftUm));
+      const whole = leftOutOf(figures).filter((r) => r.isWhole);
+      const unread = test.lifts.filter((l) => !figures.readings.some((r) => r.liftUm === l.liftUm) && !whole.some((r) => r.liftUm === l.liftUm));
+      for (const um of new Set(whole.map((r) => r.liftUm))) out.push(`${name} ${when}: ${liftWords(um)} read and left out: ${[...new Set(whole.filter((r) => r.liftUm === um).map((r) => r.reason.trim().replace(/\.$/, "")))].join("; ")}.`);
       if (unread.length > 0) out.push(`${name} ${when}: ${unread.map((l) => liftWords(l.liftUm)).join(", ")} planned, not read.`);
     }
     if (gain.camLiftUm !== null && !(standing.after && figuresOfTest(standing.after).readings.some((r) => r.liftUm >= (gain.camLiftUm ?? 0)))) out.push(`${name}: not read up to cam lift.`);

@@ -5,7 +5,7 @@ import { ableTo, inShop, mustBeAble, NotFound, settingsOf, type ShopContext } fr
 import type { CamPoint } from "../domain/cam-table";
 import { coefficientTable, type CoefficientTable } from "../domain/coefficient-rows";
 import type { PortSide } from "../domain/comparison-reasons";
-import type { EstimateCam } from "../domain/engine-estimate";
+import type { CamFacts } from "../domain/cam-opening";
 import type { LiftUnit } from "../domain/lift-ladder";
 import type { BenchHistory } from "../domain/noise";
 import type { NoiseRow } from "../domain/noise-rows";
@@ -31,7 +31,7 @@ export interface PortFigures {
   /** Repeats of the bench up to the newer test. */
   history?: BenchHistory | undefined;
 }
-export interface EstimateFacts { cylinders: number; boreMm: number | null; strokeMm: number | null; cams: (EstimateCam & { id: string; label: string })[]; ports: { cylinder: number; when: "before" | "after"; atInH2O: number; readings: LiftReading[] }[] }
+export interface EstimateFacts { cylinders: number; boreMm: number | null; strokeMm: number | null; cams: (CamFacts & { id: string; label: string })[]; ports: { cylinder: number; when: "before" | "after"; atInH2O: number; readings: LiftReading[] }[] }
 export interface HeadFigures {
   head: { id: string; mark: string; family: string };
   ports: PortFigures[];
