@@ -2,6 +2,7 @@ import "server-only";
 import { commandEndpoint, defineEndpoint } from "@/modules/access/api";
 import { ok } from "@/modules/kernel/result";
 import { z } from "@/modules/kernel/zod";
+import { saveMeasurements } from "./commands/measurements";
 import { postWholeTest } from "./commands/post-test";
 import { recordReading } from "./commands/record-reading";
 import { roomInput, sheetInput } from "./input";
@@ -25,4 +26,7 @@ export const flowRoomEndpoint = defineEndpoint({
 export const flowGearEndpoint = defineEndpoint({
   method: "GET", path: "/api/v1/s/{shop}/flow/gear", summary: "Benches, fixtures and operators with their ids, for a bench computer", input: z.strictObject({}), by: ["person", "device"],
   run: async (ctx) => ok(await gearOf(ctx)),
+});
+export const saveMeasurementsEndpoint = commandEndpoint(saveMeasurements, {
+  path: "/api/v1/s/{shop}/flow/measurements", summary: "Lines of the measurement sheet of a head; each is kept or refused by itself, an empty value clears its line",
 });

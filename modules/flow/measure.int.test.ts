@@ -2,9 +2,10 @@ import { beforeAll, describe, expect, it } from "vitest";
 import { NotFound } from "@/modules/access/context";
 import { behindTheCurtain } from "@/tests/support/database";
 import { must, requestId, testShop, type TestShop } from "@/tests/support/shop";
-import { addOwnHead } from "./commands/families";
+import { addOwnHead, changeFamily } from "./commands/families";
 import { addFamily } from "./commands/gear";
 import { saveMeasurements, setMeasurementLimit } from "./commands/measurements";
+import { gearRoom } from "./queries/gear";
 import { measurementSheet } from "./queries/measurements";
 
 let a: TestShop;
@@ -42,6 +43,26 @@ describe("the measurement sheet", () => {
     expect(must(await save([valve("spring-solid", "", { revisionSeen: 2 })])).saved[0]).toMatchObject({ revision: 3, valueText: "" });
     expect(await behindTheCurtain(`select value_text || ' ' || unit from measurements where head_id = '${head}' and kind = 'spring-solid' order by revision`)).toEqual([".898 mm", ".898 in", " in"]);
     await expect(behindTheCurtain(`update measurements set value_text = 'x'`)).rejects.toThrow(/never changed/);
+  });
+
+  it("says what stands where somebody else wrote meanwhile, so that one of the two can be chosen", async () => {
+    must(await save([valve("spring-rate", "41", { unit: "N/mm" })]));
+    const [refused] = must(await save([valve("spring-rate", "42", { unit: "N/mm" })], "insp")).refused;
+    expect(refused).toMatchObject({ code: "CHANGED_MEANWHILE", asks: false, theirs: { revision: 1, valueText: "41", unit: "N/mm" } });
+    expect(must(await save([valve("spring-rate", "x", { unit: "N/mm", revisionSeen: 1 })])).refused[0]?.theirs).toBeNull();
+  });
+
+  it("takes the cam lift its head does not state from the family", async () => {
+    must(await addFamily(a.as("lead"), { name: "Late lift", valves: [{ side: "intake", position: "single", headMm: 31 }] }));
+    // Booked in before the shop knew the family's cam.
+    const early = must(await addOwnHead(a.as("tech"), { mark: "M-2", family: "Late lift" })).id;
+    expect((await measurementSheet(a.as("tech"), early)).head).toMatchObject({ camLiftIntakeUm: null, camLiftExhaustUm: null, boreMm: null });
+    const family = (await gearRoom(a.as("lead"))).families.find((f) => f.name === "Late lift");
+    must(await changeFamily(a.as("lead"), { id: family?.id ?? "", version: 1, name: "Late lift", bore: "77", camLiftIntake: "8.64" }));
+    expect((await measurementSheet(a.as("tech"), early)).head).toMatchObject({ camLiftIntakeUm: 8640, camLiftExhaustUm: null, boreMm: 77 });
+    // A head that states its own keeps it.
+    await behindTheCurtain(`update heads set cam_lift_intake_um = 9000 where id = '${early}'`);
+    expect((await measurementSheet(a.as("tech"), early)).head.camLiftIntakeUm).toBe(9000);
   });
 
   it("keeps before and after apart", async () => {

@@ -4,17 +4,15 @@ import { and, desc, eq, sql } from "drizzle-orm";
 import { heads, measurementLimits, measurements } from "@/db/schema";
 import { changedMeanwhile, defineCommand } from "@/modules/access/command";
 import { personIdOf, type TxContext } from "@/modules/access/context";
-import { ok, refuse, type Result } from "@/modules/kernel/result";
+import { ok, refuse, type Refusal, type Result } from "@/modules/kernel/result";
 import type { z } from "@/modules/kernel/zod";
+import type { RefusedMeasure, SavedMeasure } from "../domain/measure-answer";
 import { DERIVED_KINDS, measureKind, UNITS_OF, type MeasureKind } from "../domain/measure-kinds";
 import { measuredValue, measureQuestion, toBase } from "../domain/measure-value";
 import { typedNumber } from "../domain/typed-number";
 import { limitInput, saveMeasurementsInput, type measurementRow } from "../measure-input";
 
 type Row = z.output<typeof measurementRow>;
-export interface SavedMeasure { key: string; revision: number; valueText: string; unit: string; base: number }
-export interface RefusedMeasure { key: string; code: string; message: string; asks: boolean }
-
 export const measureKey = (r: { cylinder: number; side: string; position: string; kind: string }): string => `${r.cylinder}/${r.side}/${r.position}/${r.kind}`;
 
 /** Where a kind may stand: a valve has side and place, a cylinder or head neither. */
@@ -29,7 +27,7 @@ async function saveRow(ctx: TxContext, at: { headId: string; stage: string; inst
   );
   const [standing] = await ctx.tx.select({ revision: measurements.revision, valueText: measurements.valueText, unit: measurements.unit }).from(measurements).where(here).orderBy(desc(measurements.revision)).limit(1);
   const revision = standing?.revision ?? 0;
-  if (revision !== r.revisionSeen) return refuse("CHANGED_MEANWHILE", `Somebody else wrote here meanwhile: it says ${standing?.valueText ? `${standing.valueText} ${standing.unit}` : "nothing"}. What you typed is still here.`);
+  if (revision !== r.revisionSeen) return refuse("CHANGED_MEANWHILE", `Somebody else wrote here meanwhile: it says ${standing?.valueText ? `${standing.valueText} ${standing.unit}` : "nothing"}. What you typed is still here.`, { data: { revision, valueText: standing?.valueText ?? "", unit: standing?.unit ?? r.unit } });
   const cleared = r.value === "";
   if (cleared && revision === 0) return refuse("NOTHING_THERE", "There is nothing here to take back.");
   const value = cleared ? ok({ valueText: "", unit: standing?.unit ?? r.unit, base: 0 }) : measuredValue(r.value, kind, r.unit);
@@ -41,6 +39,11 @@ async function saveRow(ctx: TxContext, at: { headId: string; stage: string; inst
     unit: value.value.unit, valueSi: value.value.base, stage: at.stage, instrument: at.instrument, personId: personIdOf(ctx), at: ctx.now,
   });
   return ok({ key: measureKey(r), revision: revision + 1, ...value.value });
+}
+
+/** What stands where somebody else wrote meanwhile, so that the person can decide. */
+function theirsOf({ code, data }: Refusal): RefusedMeasure["theirs"] {
+  return code === "CHANGED_MEANWHILE" && data ? { revision: Number(data.revision), valueText: String(data.valueText), unit: String(data.unit) } : null;
 }
 
 /** Lines of the measurement sheet. Each is kept or refused by itself; a refused one keeps nothing of the others away. */
@@ -56,7 +59,7 @@ export const saveMeasurements = defineCommand({
     for (const row of input.rows) {
       const one = await saveRow(ctx, { headId: input.headId, stage: input.stage, instrument: input.instrument, cylinders: head.cylinders }, row);
       if (one.ok) saved.push(one.value);
-      else refused.push({ key: measureKey(row), code: one.refusal.code, message: one.refusal.message, asks: one.refusal.data?.asks === true });
+      else refused.push({ key: measureKey(row), code: one.refusal.code, message: one.refusal.message, asks: one.refusal.data?.asks === true, theirs: theirsOf(one.refusal) });
     }
     return ok({ headId: input.headId, saved, refused });
   },

@@ -1,5 +1,6 @@
 "use client";
 
+import Link from "next/link";
 import { useState, useSyncExternalStore } from "react";
 import { dateTime, decimal } from "@/modules/kernel/format";
 import { Bay, Bays } from "@/modules/ui/bay";
@@ -11,12 +12,14 @@ import { Note } from "@/modules/ui/note";
 import { usePlace } from "@/modules/ui/place";
 import { cylinderFigures, headFigures, valveFigures, type Derived } from "../domain/measure-derived";
 import { DERIVED_KINDS, GROUP_WORDS, MEASURE_KINDS, measureKind, UNITS_OF, type MeasureGroup, type MeasureKind } from "../domain/measure-kinds";
+import { lineKey, type LinePlace, type Stage } from "../domain/measure-line";
 import { againstLimit, limitWords } from "../domain/measure-value";
 import { proposeFinding } from "../domain/proposed-finding";
 import type { LimitView, MeasurementSheet } from "../queries/measurements";
 import { MeasureCell } from "./measure-cell";
 import { MeasureLimitDialog } from "./measure-limit-dialog";
-import { lineKey, useMeasureEntries, type LinePlace, type Stage } from "./measure-state";
+import { MeasureSaveState } from "./measure-save-state";
+import { useMeasureLines } from "./measure-state";
 
 const GROUPS = Object.keys(GROUP_WORDS) as MeasureGroup[];
 /** Which figures stand under which group. */
@@ -35,7 +38,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
   const [cylinder, setCylinder] = useState(1);
   const [inch, setInch] = useState(false);
   const [instrument, setInstrument] = useState("");
-  const { entries, type, send, measured, waiting } = useMeasureEntries(sheet, instrument);
+  const { entries, state, savedAt, type, leave, measured, keepAsTyped, forget, tryAgain } = useMeasureLines(sheet, instrument);
   const { head } = sheet;
   const unitOf = (key: string) => { const units = UNITS_OF[measureKind(key)?.dimension ?? "length"]; return (inch ? units[1] : units[0]) ?? units[0] ?? ""; };
   const limitFor = (key: string, side: string): LimitView | null => sheet.limits.find((l) => l.kind === key && l.side === side) ?? sheet.limits.find((l) => l.kind === key && l.side === "") ?? null;
@@ -44,7 +47,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
     ? sheet.valves.map((v) => ({ place: { cylinder, ...v }, head: `${v.side === "intake" ? "In" : "Ex"} ${v.position === "single" ? "" : v.position}`.trim(), liftMm: lift(v.side) }))
     : [{ place: { cylinder: scope === "head" ? 1 : cylinder, side: "", position: "" }, head: scope === "head" ? "Head" : `Cylinder ${cylinder}`, liftMm: null }];
   const figuresOf = (scope: MeasureKind["scope"], c: Column): Derived[] => {
-    const values = measured(stage, c.place, unitOf);
+    const values = measured(stage, c.place);
     if (scope === "valve") return valveFigures(values, c.liftMm, (key) => limitFor(key, c.place.side));
     return scope === "cylinder" ? cylinderFigures(values, head.boreMm, head.strokeMm) : headFigures(values);
   };
@@ -60,7 +63,7 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
       kind, cells: columns.map((c) => {
         const key = lineKey(stage, c.place, kind.key);
         const limit = limitFor(kind.key, c.place.side);
-        const base = measured(stage, c.place, unitOf).get(kind.key);
+        const base = measured(stage, c.place).get(kind.key);
         const judged = base === undefined || limit === null ? null : againstLimit(base, limit);
         const verdict = judged === null ? null : { out: judged === "below" || judged === "above", words: limitWords(judged, limit) };
         if (verdict?.out) out.push({ what: `${kind.label}, ${placeWords(c)}: ${entries.get(key)?.text.trim()}`, where: placeWords(c), words: verdict.words });
@@ -96,7 +99,9 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
       </>
     );
   };
-  const keysOf = (g: (typeof groups)[number]) => g.rows.flatMap((r) => r.cells.map(({ c, key }) => ({ key, stage, place: c.place, kind: r.kind.key, unit: unitOf(r.kind.key) })));
+  const asked = (c: Column, kind: string) => ({ stage, place: c.place, kind, unit: unitOf(kind) });
+  const elsewhere = [...new Set([...state.lines.values()].filter((l) => l.stuck !== null && l.headId !== head.id).map((l) => l.headId))];
+  const noLift = (["intake", "exhaust"] as const).filter((s) => lift(s) === null && sheet.valves.some((v) => v.side === s));
 
   return (
     <>
@@ -106,10 +111,13 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
         {head.cylinders > 1 ? Array.from({ length: head.cylinders }, (_, i) => <ToggleChip key={i} on={cylinder === i + 1} onChange={() => setCylinder(i + 1)}>{`Cylinder ${i + 1}`}</ToggleChip>) : null}
         <ToggleChip on={inch} onChange={setInch}>Inch units</ToggleChip>
         <label className="in sm !w-64"><span className="dim sm">Instrument</span><input value={instrument} maxLength={80} onChange={(e) => setInstrument(e.target.value)} /></label>
+        {sheet.canRecord ? <MeasureSaveState state={state} savedAt={savedAt} place={place} /> : null}
         <KeyHints hints={[{ keys: ["Enter"], does: "next line" }, { keys: ["Shift", "Enter"], does: "back" }, { keys: ["Tab"], does: "next valve" }]} />
       </div>
       {sheet.valvesGuessed ? <Note tone="info" className="mb-4" title="One valve a side.">{head.family} has no valve list yet; add it under Bench gear, Families, and its places appear here.</Note> : null}
-      {waiting > 0 ? <Note className="mb-4" live title={`${waiting} line${waiting === 1 ? " is" : "s are"} not kept yet.`} action={<Button size="sm" onClick={() => { for (const g of groups) void send(keysOf(g)); }}>Try again</Button>}>They are still here as typed.</Note> : null}
+      {state.waiting > 0 && state.link !== "up" ? <Note className="mb-4" live title={`${state.waiting} line${state.waiting === 1 ? " is" : "s are"} kept on this device.`} action={<Button size="sm" onClick={tryAgain}>Try again</Button>}>{state.link === "down" ? "No link. They are sent as soon as it is back, also after the page was closed." : "Sign in again, then they are sent."}</Note> : null}
+      {elsewhere.length > 0 ? <Note tone="info" className="mb-4" title="Lines of another head wait for you.">{elsewhere.map((id, i) => <span key={id}>{i > 0 ? ", " : ""}<Link className="lk" href={`/s/${slug}/flow/measure/${id}`}>{elsewhere.length === 1 ? "Open its sheet" : `Open sheet ${i + 1}`}</Link></span>)}</Note> : null}
+      {noLift.length > 0 ? <Note tone="info" className="mb-4" title={`No cam lift on record, ${noLift.join(" and ")}.`}>Without it neither coil-bind clearance nor retainer to seal is worked out. It stands with the family under Bench gear.</Note> : null}
       <div className="split" style={{ "--side": "320px" } as React.CSSProperties}>
         <Bays>
           {groups.map((g) => (
@@ -123,8 +131,8 @@ export function MeasureSheet({ sheet }: { sheet: MeasurementSheet }) {
                       <th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{kind.label}</th>
                       {cells.map(({ c, key, verdict }, i) => (
                         <td key={key} className="py-1 align-top"><MeasureCell
-                          id={`${g.scope}-${i}|${key}`} label={`${kind.label}, ${placeWords(c)}`} entry={entries.get(key)} unit={unitOf(kind.key)} verdict={verdict} mayWrite={sheet.canRecord && ready}
-                          onType={(text) => type(key, text)} onLeave={() => void send([{ key, stage, place: c.place, kind: kind.key, unit: unitOf(kind.key) }])} onKeep={() => void send([{ key, stage, place: c.place, kind: kind.key, unit: unitOf(kind.key) }], true)} /></td>
+                          id={`${g.scope}-${i}|${key}`} label={`${kind.label}, ${placeWords(c)}`} entry={entries.get(key)} unit={unitOf(kind.key)} verdict={verdict} mayWrite={sheet.canRecord && ready} link={state.link}
+                          onType={(text) => type(asked(c, kind.key), text)} onLeave={() => leave(asked(c, kind.key))} onKeep={() => keepAsTyped(asked(c, kind.key))} onForget={() => forget(asked(c, kind.key))} /></td>
                       ))}
                       <td>{dialog(kind.key, kind.label, kind.dimension, g.scope)}</td>
                     </tr>

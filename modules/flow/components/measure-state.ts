@@ -1,77 +1,112 @@
 "use client";
 
-import { useCallback, useMemo, useRef, useState } from "react";
-import { settles } from "@/modules/ui/form/reply";
-import { RequestIds } from "@/modules/ui/form/request-id";
+import { useCallback, useEffect, useMemo, useState, useSyncExternalStore } from "react";
 import { usePlace } from "@/modules/ui/place";
 import { measureKind } from "../domain/measure-kinds";
-import { measuredValue } from "../domain/measure-value";
-import { saveMeasurementsAction } from "../measure-actions";
+import { lineKey, type LinePlace, type Stage } from "../domain/measure-line";
+import { measuredValue, measureQuestion } from "../domain/measure-value";
 import type { MeasurementSheet } from "../queries/measurements";
+import { keptLineKey, MeasureQueue, type KeptLine, type SavedLine, type StuckLine } from "./measure-queue";
+import { deviceStore, lineSender } from "./measure-store";
 
-export type Stage = "before" | "after";
-export interface LinePlace { cylinder: number; side: "" | "intake" | "exhaust"; position: "" | "single" | "left" | "centre" | "right" }
-export interface Entry { text: string; revision: number; state: "kept" | "typed" | "sending" | "refused" | "offline"; message: string; asks: boolean; unit: string }
+/** A line as it is shown: what is typed and not yet in the records, else what stands there. */
+export interface Entry { readonly text: string; readonly unit: string; readonly isKeptHere: boolean; readonly stuck: StuckLine | null }
+/** Which line, and the unit a bare number in it is meant in. */
+export interface LineAsked { readonly stage: Stage; readonly place: LinePlace; readonly kind: string; readonly unit: string }
+interface Standing { readonly text: string; readonly revision: number; readonly unit: string }
 
-export const lineKey = (stage: Stage, p: LinePlace, kind: string): string => `${stage}/${p.cylinder}/${p.side}/${p.position}/${kind}`;
-const EMPTY: Entry = { text: "", revision: 0, state: "kept", message: "", asks: false, unit: "" };
+const withUnit = (valueText: string, unit: string): string => (valueText === "" ? "" : `${valueText} ${unit}`);
+const keyOf = (l: Pick<KeptLine, "stage" | "place" | "kind">): string => lineKey(l.stage, l.place, l.kind);
 
-/** Lines of the sheet as they stand: kept ones from the server, and what is being typed. Nothing typed is dropped by a no or a lost link. */
-export function useMeasureEntries(sheet: MeasurementSheet, instrument: string) {
+/** Lines of one sheet. Each typed value is kept on the device first and stays there until the records have it. */
+export function useMeasureLines(sheet: MeasurementSheet, instrument: string) {
   const { slug } = usePlace();
-  const [ids] = useState(() => new RequestIds());
-  const [entries, setEntries] = useState<ReadonlyMap<string, Entry>>(() => new Map(sheet.cells.map((c) => [
+  const headId = sheet.head.id;
+  const [standing, setStanding] = useState<ReadonlyMap<string, Standing>>(() => new Map(sheet.cells.map((c) => [
     lineKey(c.stage, { cylinder: c.cylinder, side: c.side, position: c.position as LinePlace["position"] }, c.kind),
-    { ...EMPTY, text: c.valueText === "" ? "" : `${c.valueText} ${c.unit}`, revision: c.revision, unit: c.unit },
+    { text: withUnit(c.valueText, c.unit), revision: c.revision, unit: c.unit },
   ])));
-  const latest = useRef(entries);
-  const put = useCallback((key: string, change: Partial<Entry>) => {
-    const next = new Map(latest.current).set(key, { ...(latest.current.get(key) ?? EMPTY), ...change });
-    latest.current = next;
-    setEntries(next);
-  }, []);
-  const type = useCallback((key: string, text: string) => put(key, { text, state: "typed", message: "", asks: false }), [put]);
+  const [savedAt, setSavedAt] = useState<Date | null>(null);
+  const onSaved = useCallback(({ line, revision, valueText, unit }: SavedLine) => {
+    setSavedAt(new Date());
+    if (line.headId === headId) setStanding((now) => new Map(now).set(keyOf(line), { text: withUnit(valueText, unit), revision, unit }));
+  }, [headId]);
+  const [queue] = useState(() => new MeasureQueue(deviceStore(slug), lineSender(slug), (s) => onSaved(s), sheet.viewerId));
+  const state = useSyncExternalStore(queue.subscribe, queue.snapshot, queue.snapshot);
 
-  const send = useCallback(async (keys: readonly { key: string; stage: Stage; place: LinePlace; kind: string; unit: string }[], confirmed = false) => {
-    const due = keys.filter(({ key }) => { const e = latest.current.get(key); return e !== undefined && (e.state === "typed" || e.state === "offline" || (confirmed && e.asks)); });
-    const [first] = due;
-    if (!first) return;
-    for (const d of due) put(d.key, { state: "sending", message: "" });
-    const rows = due.map((d) => ({ ...d.place, kind: d.kind, value: (latest.current.get(d.key)?.text ?? "").trim(), unit: d.unit, confirmed, revisionSeen: latest.current.get(d.key)?.revision ?? 0 }))
-      .map((row, i) => ({ row, key: due[i]?.key ?? "" }));
-    const nothing = rows.filter(({ row }) => row.value === "" && row.revisionSeen === 0);
-    for (const n of nothing) put(n.key, { state: "kept" });
-    const real = rows.filter((r) => !nothing.includes(r));
-    if (real.length === 0) return;
-    const input = { headId: sheet.head.id, stage: first.stage, instrument, rows: real.map((r) => r.row) };
-    const what = JSON.stringify(input);
-    try {
-      const reply = await saveMeasurementsAction(slug, { requestId: ids.take(what), input });
-      if (settles(reply)) ids.settle(what);
-      if (reply.status !== "ok") {
-        const words = reply.status === "refused" || reply.status === "conflict" ? reply.message : reply.status === "invalid" ? (reply.fields[0]?.message ?? "Look at this again.") : "Not kept. Sign in again or try once more.";
-        for (const r of real) put(r.key, { state: "offline", message: words });
+  useEffect(() => {
+    const again = () => void queue.flush();
+    void queue.load().then(again);
+    const timer = setInterval(() => { if (queue.snapshot().waiting > 0) again(); }, 5_000);
+    window.addEventListener("online", again);
+    document.addEventListener("visibilitychange", again);
+    return () => {
+      clearInterval(timer);
+      window.removeEventListener("online", again);
+      document.removeEventListener("visibilitychange", again);
+    };
+  }, [queue]);
+
+  const entries = useMemo(() => {
+    const out = new Map<string, Entry>([...standing].map(([key, s]) => [key, { text: s.text, unit: s.unit, isKeptHere: false, stuck: null }]));
+    for (const line of state.lines.values()) {
+      const last = line.edits.at(-1);
+      if (line.headId === headId && last) out.set(keyOf(line), { text: last.value, unit: last.unit, isKeptHere: true, stuck: line.stuck });
+    }
+    return out;
+  }, [standing, state, headId]);
+
+  const at = useCallback((l: LineAsked) => ({ shop: slug, headId, stage: l.stage, place: l.place, kind: l.kind, revision: standing.get(keyOf(l))?.revision ?? 0 }), [slug, headId, standing]);
+  const queueKey = useCallback((l: LineAsked) => keptLineKey(sheet.viewerId, at(l)), [sheet.viewerId, at]);
+
+  const type = useCallback((l: LineAsked, value: string) => void queue.write(at(l), { requestId: crypto.randomUUID(), value, unit: l.unit, instrument, confirmed: false }), [queue, at, instrument]);
+
+  /** Sends the line, or holds it where it is doubtful or no number. Called when it is left. */
+  const leave = useCallback((l: LineAsked) => {
+    const key = queueKey(l);
+    const kept = queue.snapshot().lines.get(key);
+    const last = kept?.edits.at(-1);
+    if (!kept || !last || last.sent || kept.stuck) return;
+    const was = standing.get(keyOf(l));
+    const text = last.value.trim();
+    if (kept.edits.length === 1 && text === (was?.text ?? "")) {
+      void queue.discard(key);
+      return;
+    }
+    const kind = measureKind(l.kind);
+    if (kind && text !== "") {
+      const value = measuredValue(text, kind, last.unit);
+      const question = value.ok ? measureQuestion(value.value, kind) : null;
+      if (!value.ok || (question && !last.confirmed)) {
+        void queue.hold(key, value.ok ? (question?.words ?? "") : value.refusal.message, value.ok);
         return;
       }
-      for (const s of reply.value.saved) put(`${first.stage}/${s.key}`, { state: "kept", revision: s.revision, unit: s.unit, message: "", asks: false, text: s.valueText === "" ? "" : `${s.valueText} ${s.unit}` });
-      for (const n of reply.value.refused) put(`${first.stage}/${n.key}`, { state: "refused", message: n.message, asks: n.asks });
-    } catch {
-      for (const r of real) put(r.key, { state: "offline", message: "No link. It is still here." });
     }
-  }, [ids, instrument, put, sheet.head.id, slug]);
+    void queue.release(key).then(() => queue.flush());
+  }, [queue, queueKey, standing]);
 
   /** Values by kind of one place, from what stands there or is being typed. */
-  const measured = useCallback((stage: Stage, place: LinePlace, unitOf: (kind: string) => string): Map<string, number> => {
+  const measured = useCallback((stage: Stage, place: LinePlace): Map<string, number> => {
     const out = new Map<string, number>();
     const prefix = lineKey(stage, place, "");
     for (const [key, entry] of entries) {
       if (!key.startsWith(prefix) || entry.text.trim() === "") continue;
       const kind = measureKind(key.slice(prefix.length));
-      const value = kind ? measuredValue(entry.text, kind, unitOf(kind.key)) : null;
+      const value = kind ? measuredValue(entry.text, kind, entry.unit) : null;
       if (kind && value?.ok) out.set(kind.key, value.value.base);
     }
     return out;
   }, [entries]);
-  const waiting = useMemo(() => [...entries].filter(([, e]) => e.state === "offline").length, [entries]);
-  return { entries, type, send, measured, waiting };
+
+  return {
+    entries, state, savedAt, type, leave, measured,
+    keepAsTyped: (l: LineAsked) => void queue.insist(queueKey(l), crypto.randomUUID()).then(() => queue.flush()),
+    /** What was typed is let go; what somebody else wrote there meanwhile is shown instead. */
+    forget: (l: LineAsked) => {
+      const theirs = queue.snapshot().lines.get(queueKey(l))?.stuck?.theirs;
+      if (theirs) setStanding((now) => new Map(now).set(keyOf(l), { text: withUnit(theirs.valueText, theirs.unit), revision: theirs.revision, unit: theirs.unit }));
+      void queue.discard(queueKey(l));
+    },
+    tryAgain: () => void queue.flush(),
+  };
 }

@@ -63,6 +63,14 @@ describe("a limit", () => {
 
 describe("figures out of measurements", () => {
   const by = (list: { label: string; value: number }[], label: string) => list.find((d) => d.label === label)?.value;
+  it("give 0.66 mm to coil bind and 40.5 N/mm for 38.5 fitted, 250 and 600 N, solid 29.2 at 8.64 lift: Hooke's law, worked by hand", () => {
+    // 38.5 - 8.64 - 29.2 = 0.66; (600 - 250)/8.64 = 40.51.
+    const m = new Map([["spring-installed", 38.5], ["spring-seat-load", 250], ["spring-open-load", 600], ["spring-solid", 29.2]]);
+    const figures = valveFigures(m, 8.64, none);
+    expect(figures.find((f) => f.label === "Coil-bind clearance")?.value).toBeCloseTo(0.66, 9);
+    expect(figures.find((f) => f.label === "Rate from the loads")?.value).toBeCloseTo(40.509, 3);
+    expect(valveFigures(m, null, none).map((f) => f.label)).not.toContain("Coil-bind clearance");
+  });
   it("give spring rate and coil-bind clearance: 205 N at 33.5, 560 N at 8.6 lift, solid 22.8 (worked example)", () => {
     const m = new Map([["spring-installed", 33.5], ["spring-seat-load", 205], ["spring-open-load", 560], ["spring-solid", 22.8]]);
     const figures = valveFigures(m, 8.6, none);

@@ -1,7 +1,7 @@
 import "server-only";
 import { and, asc, desc, eq } from "drizzle-orm";
 import { engineFamilies, epoxyFills, heads, measurementLimits, measurements, people, workOrders, workPieces } from "@/db/schema";
-import { ableTo, inShop, mustBeAble, NotFound, type ShopContext } from "@/modules/access/context";
+import { ableTo, inShop, mustBeAble, NotFound, personIdOf, type ShopContext } from "@/modules/access/context";
 import type { PortSide } from "../domain/comparison-reasons";
 import { DERIVED_KINDS, measureKind } from "../domain/measure-kinds";
 import { toBase, type MeasureLimit } from "../domain/measure-value";
@@ -19,6 +19,8 @@ export interface MeasurementSheet {
   valvesGuessed: boolean;
   cells: MeasureCell[]; limits: LimitView[]; epoxy: EpoxyLine[];
   canRecord: boolean; canSetUp: boolean; canFind: boolean;
+  /** Whose typed lines are kept on this device. */
+  viewerId: string;
 }
 
 function limitView(l: typeof measurementLimits.$inferSelect): LimitView {
@@ -42,7 +44,7 @@ export async function measurementSheet(ctx: ShopContext, headId: string): Promis
       .where(and(eq(heads.shopId, s), eq(heads.id, headId)));
     if (!row) throw new NotFound("head");
     const { h } = row;
-    const [family] = await tx.select({ valves: engineFamilies.valves }).from(engineFamilies).where(and(eq(engineFamilies.shopId, s), eq(engineFamilies.name, h.family)));
+    const [family] = await tx.select({ valves: engineFamilies.valves, camLiftIntakeUm: engineFamilies.camLiftIntakeUm, camLiftExhaustUm: engineFamilies.camLiftExhaustUm, boreMm: engineFamilies.boreMm, strokeMm: engineFamilies.strokeMm }).from(engineFamilies).where(and(eq(engineFamilies.shopId, s), eq(engineFamilies.name, h.family)));
     const listed = ((family?.valves ?? []) as ValveOfFamily[]).map(({ side, position }) => ({ side, position }));
     const rows = await tx.selectDistinctOn([measurements.cylinder, measurements.side, measurements.position, measurements.kind, measurements.stage], { m: measurements, by: people.shortName }).from(measurements)
       .leftJoin(people, and(eq(people.shopId, measurements.shopId), eq(people.id, measurements.personId)))
@@ -53,7 +55,10 @@ export async function measurementSheet(ctx: ShopContext, headId: string): Promis
       .where(and(eq(epoxyFills.shopId, s), eq(epoxyFills.pieceId, h.pieceId))).orderBy(asc(epoxyFills.mixedAt));
     return {
       head: {
-        id: h.id, mark: h.mark, family: h.family, cylinders: h.cylinders, boreMm: h.boreMm, strokeMm: h.strokeMm, seatMaterial: h.seatMaterial, camLiftIntakeUm: h.camLiftIntakeUm, camLiftExhaustUm: h.camLiftExhaustUm,
+        id: h.id, mark: h.mark, family: h.family, cylinders: h.cylinders, seatMaterial: h.seatMaterial,
+        // What the head itself does not say, its family does.
+        boreMm: h.boreMm ?? family?.boreMm ?? null, strokeMm: h.strokeMm ?? family?.strokeMm ?? null,
+        camLiftIntakeUm: h.camLiftIntakeUm ?? family?.camLiftIntakeUm ?? null, camLiftExhaustUm: h.camLiftExhaustUm ?? family?.camLiftExhaustUm ?? null,
         version: h.version, workDone: h.workDone, notes: h.notes,
       },
       pieceId: h.pieceId, orderId: row.orderId, orderNumber: row.orderNumber,
@@ -66,6 +71,7 @@ export async function measurementSheet(ctx: ShopContext, headId: string): Promis
       // The cure clock runs from mixing; temperatures are the bench's to judge.
       epoxy: fills.map((f) => ({ port: f.port, mixedAt: f.mixedAt.toISOString(), readyAt: f.readyAt.toISOString(), state: f.readyAt > ctx.now ? "curing" as const : "cured" as const })),
       canRecord: ableTo(ctx, "flow.record"), canSetUp: ableTo(ctx, "flow.set-up"), canFind: ableTo(ctx, "finding.record") && row.orderId !== null,
+      viewerId: personIdOf(ctx) ?? ctx.actor.id,
     };
   });
 }
