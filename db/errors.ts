@@ -32,6 +32,7 @@ const RULES: Record<string, { code: string; message: string; field?: string }> =
   bank_files_once: { code: "FILE_KNOWN", message: "This very file was read in before. Nothing was added." },
   movement_reversed_once: { code: "ALREADY_REVERSED", message: "This movement was reversed already." },
   flow_readings_cell: { code: "CHANGED_MEANWHILE", message: "Somebody else wrote this cell at the same moment. Look at it and type again." },
+  bench_check_struck_once: { code: "ALREADY_STRUCK", message: "This check is out of use already." },
   cautions_once: { code: "ALREADY_SEEN", message: "You have confirmed this caution for this job already." },
 };
 

@@ -799,6 +799,8 @@ CREATE TABLE "bench_checks" (
 	"drift_percent" double precision,
 	"flags" text[] DEFAULT '{}'::text[] NOT NULL,
 	"note" text DEFAULT '' NOT NULL,
+	"reason" text,
+	"strikes" uuid,
 	CONSTRAINT "bench_checks_shop_id_id_pk" PRIMARY KEY("shop_id","id")
 );
 --> statement-breakpoint
@@ -1339,6 +1341,7 @@ ALTER TABLE "punches" ADD CONSTRAINT "punches_shop_id_person_id_people_shop_id_i
 ALTER TABLE "time_entries" ADD CONSTRAINT "time_entries_shop_id_person_id_people_shop_id_id_fk" FOREIGN KEY ("shop_id","person_id") REFERENCES "public"."people"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "time_entries" ADD CONSTRAINT "time_entries_shop_id_operation_id_operations_shop_id_id_fk" FOREIGN KEY ("shop_id","operation_id") REFERENCES "public"."operations"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "bench_checks" ADD CONSTRAINT "bench_checks_shop_id_bench_id_benches_shop_id_id_fk" FOREIGN KEY ("shop_id","bench_id") REFERENCES "public"."benches"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
+ALTER TABLE "bench_checks" ADD CONSTRAINT "bench_checks_shop_id_strikes_bench_checks_shop_id_id_fk" FOREIGN KEY ("shop_id","strikes") REFERENCES "public"."bench_checks"("shop_id","id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "benches" ADD CONSTRAINT "benches_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "camshafts" ADD CONSTRAINT "camshafts_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "check_plates" ADD CONSTRAINT "check_plates_shop_id_shops_id_fk" FOREIGN KEY ("shop_id") REFERENCES "public"."shops"("id") ON DELETE no action ON UPDATE no action;--> statement-breakpoint
@@ -1401,6 +1404,7 @@ CREATE INDEX "punches_person" ON "punches" USING btree ("shop_id","person_id","a
 CREATE UNIQUE INDEX "time_one_open" ON "time_entries" USING btree ("shop_id","person_id","clock") WHERE ended_at is null and voided_at is null;--> statement-breakpoint
 CREATE INDEX "time_entries_operation" ON "time_entries" USING btree ("shop_id","operation_id");--> statement-breakpoint
 CREATE INDEX "time_entries_started" ON "time_entries" USING btree ("shop_id","started_at");--> statement-breakpoint
+CREATE UNIQUE INDEX "bench_check_struck_once" ON "bench_checks" USING btree ("shop_id","strikes") WHERE strikes is not null;--> statement-breakpoint
 CREATE INDEX "bench_checks_at" ON "bench_checks" USING btree ("shop_id","bench_id","at");--> statement-breakpoint
 CREATE INDEX "flow_test_summaries_repeats" ON "flow_test_summaries" USING btree ("shop_id","bench_id","started_at") WHERE repeat_dof > 0;--> statement-breakpoint
 CREATE INDEX "flow_test_summaries_family" ON "flow_test_summaries" USING btree ("shop_id","family","side","started_at");--> statement-breakpoint

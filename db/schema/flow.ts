@@ -52,9 +52,15 @@ export const benchChecks = pgTable("bench_checks", {
   driftPercent: doublePrecision("drift_percent"),
   flags: text("flags").array().notNull().default(sql`'{}'::text[]`),
   note: text("note").notNull().default(""),
+  /** Why a doubtful check was kept, or why an earlier one is put out of use. */
+  reason: text("reason"),
+  /** The earlier check of this bench that this row puts out of use. Such a row is itself no check. */
+  strikes: uuid("strikes"),
 }, (t) => [
   primaryKey({ columns: [t.shopId, t.id] }),
   foreignKey({ columns: [t.shopId, t.benchId], foreignColumns: [benches.shopId, benches.id] }),
+  foreignKey({ columns: [t.shopId, t.strikes], foreignColumns: [t.shopId, t.id] }),
+  uniqueIndex("bench_check_struck_once").on(t.shopId, t.strikes).where(sql`strikes is not null`),
   index("bench_checks_at").on(t.shopId, t.benchId, t.at),
 ]);
 
