@@ -18,6 +18,8 @@ module.exports = {
     { name: "known-module", comment: "Every module has its place on the stair: add it to ORDER and STEP.", severity: "error", from: {}, to: { path: "^modules/", pathNot: `^modules/(${ORDER.join("|")})/` } },
     { name: "domain-is-pure", comment: "Domain computes from its arguments. Bring what it needs as an argument; use kernel and lower domains only.", severity: "error",
       from: { path: "^modules/[^/]+/domain/", pathNot: TEST }, to: { pathNot: "^modules/(kernel/|[^/]+/domain/)" } },
+    { name: "workings-are-pure", comment: "Workings run in the browser and on the server alike: domain and kernel only. Bring what the shop decides as an argument.", severity: "error",
+      from: { path: "^modules/flow/workings/", pathNot: TEST }, to: { pathNot: "^modules/(kernel/|flow/(domain|workings)/)" } },
     { name: "kernel-knows-nothing", comment: "The kernel is vocabulary: it imports itself, dayjs and zod.", severity: "error",
       from: { path: "^modules/kernel/", pathNot: TEST }, to: { pathNot: "^(modules/kernel/|node_modules/(dayjs|zod)/)" } },
     { name: "db-knows-no-module", comment: "The database layer is a leaf. Rules go to a domain, joints to commands and queries.", severity: "error", from: { path: "^db/" }, to: { path: "^(modules|app|seed|tests|worker)/" } },

@@ -41,7 +41,7 @@ export default defineConfig([
       "max-lines": ["error", { max: 500, skipBlankLines: true, skipComments: true }],
     },
   },
-  { files: ["modules/*/domain/**/*.ts", "modules/kernel/**/*.ts"], ignores: ["**/*.test.ts"], rules: { "no-restricted-syntax": ["error", ...everywhere, ...CLOCK] } },
+  { files: ["modules/*/domain/**/*.ts", "modules/flow/workings/**/*.ts", "modules/kernel/**/*.ts"], ignores: ["**/*.test.ts"], rules: { "no-restricted-syntax": ["error", ...everywhere, ...CLOCK] } },
   { files: ["modules/kernel/format.ts", "modules/kernel/instant.ts"], rules: { "no-restricted-syntax": ["error", ENV, STAR, HTML, EVAL, ...CLOCK] } },
   { files: ["modules/access/env.ts", "db/client.ts", "db/migrate.ts", "proxy.ts", "*.config.{ts,mjs}", "scripts/**", "seed/**", "tests/**", "**/*.test.ts"], rules: { "no-restricted-syntax": ["error", STAR, EVAL] } },
   { files: ["db/schema/index.ts"], rules: { "no-restricted-syntax": ["error", ...everywhere.filter((r) => r !== STAR)] } },
