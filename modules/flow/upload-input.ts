@@ -15,7 +15,7 @@ export const uploadInput = z.strictObject({
   headId: z.uuid({ error: "Choose the head." }),
   purpose: z.enum(["baseline", "after", "interim", "check"]),
   benchId: z.uuid({ error: "Choose the bench." }),
-  fixtureId: z.uuid({ error: "Choose the fixture." }),
+  fixtureId: z.uuid({ error: "Choose the bore adapter." }),
   nominal: typed,
   flowUnit: z.enum(["cfm", "L/s", "m3/h", "percent", "head"]),
   pressureUnit: z.enum(["inH2O", "Pa", "hPa", "kPa"]),

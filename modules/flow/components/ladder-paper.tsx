@@ -7,7 +7,7 @@ import { liftLadder, liftText, type LiftUnit } from "../domain/lift-ladder";
 import { Pick } from "./upload-mapping";
 
 interface FamilyLift { name: string; camLiftIntakeUm: number | null; camLiftExhaustUm: number | null }
-const BLANKS = ["Tag or mark", "Port", "Order", "Date", "By", "Bench", "Fixture, bore", "Valves", "Seats", "Entry", "Leak, CFM at", "Room, °C and hPa"];
+const BLANKS = ["Tag or mark", "Port", "Order", "Date", "By", "Bench", "Bore adapter", "Valves", "Seats", "Entry", "Leak, CFM at", "Room, °C and hPa"];
 
 /** An empty ladder for one port, both sides, two readings a lift; prints alone on one page. */
 export function LadderPaper({ shopName, nominal, families }: { shopName: string; nominal: number; families: readonly FamilyLift[] }) {

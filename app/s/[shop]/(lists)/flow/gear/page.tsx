@@ -15,7 +15,7 @@ export const metadata = { title: "Bench gear" };
 const VIEWS: readonly { key: GearView; label: string; add: string; how: string }[] = [
   { key: "benches", label: "Benches", add: "New bench", how: "A test names the bench it was read on. Add the first one." },
   { key: "plates", label: "Check plates", add: "New plate", how: "Plates of known flow give the bench its factor." },
-  { key: "fixtures", label: "Fixtures", add: "New fixture", how: "The sleeve that stands in for the cylinder, by its bore." },
+  { key: "fixtures", label: "Bore adapters", add: "New bore adapter", how: "The sleeve that stands in for the cylinder, by its bore." },
   { key: "lift", label: "Lift devices", add: "New device", how: "What opens the valve, and how finely its indicator reads." },
   { key: "camshafts", label: "Camshafts", add: "New camshaft", how: "A table of angle and lift, or lift and duration." },
   { key: "families", label: "Families", add: "New family", how: "Bore, stroke, valves and cam lifts, as this shop names the engine." },

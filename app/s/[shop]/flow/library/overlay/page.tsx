@@ -36,7 +36,7 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
     <main id="main" className="page">
       <PageHead title={`${nameOf(over.a)} and ${nameOf(over.b)}`} sub={over.a.family === over.b.family ? over.a.family : `${over.a.family} and ${over.b.family}`} actions={<LinkButton href={`/s/${slug}/flow/library`}>Library</LinkButton>} />
       {over.comparable
-        ? <Note tone="info" className="mb-6" title="May be compared.">Side, bench, fixture, pressure, entry, open valves and lifts are alike.{over.samePort ? "" : " They are two castings, so the difference is not the gain of one port."} {over.notes.map((n) => n.words).join(" ")}</Note>
+        ? <Note tone="info" className="mb-6" title="May be compared.">Side, bench, bore adapter, pressure, entry, open valves and lifts are alike.{over.samePort ? "" : " They are two castings, so the difference is not the gain of one port."} {over.notes.map((n) => n.words).join(" ")}</Note>
         : <Note className="mb-6" title="Not comparable, so no difference is shown.">{over.reasons.map((r) => r.words).join(" ")} {over.notes.map((n) => n.words).join(" ")}</Note>}
       <div className="split" style={{ "--side": "460px" } as React.CSSProperties}>
         <Bay label="Over each other">
