@@ -90,7 +90,7 @@ export function LibraryList({ first, filters, families }: { first: LibraryPage; 
         error={<EmptyState title="The library cannot be read just now" action={<Button onClick={() => void list.refetch()}>Try again</Button>}>Nothing is lost.</EmptyState>}
         empty={<EmptyState title="No finished test fits">Tests land here when they are finished on the flow sheet or read from a file.</EmptyState>}
         compact={(r) => (
-          <span className="row2 tag">
+          <span className="row2 marked">
             <b className="ord nw">{r.mark}</b><b>{portWords(r.cylinder, r.side)}, {PURPOSE_WORDS[r.purpose]}</b><span className="q at-r">{r.peakCfm === null ? "—" : flowText(r.peakCfm, locale)}</span>
             <span className="l2">{r.family}{r.valveMm === null ? "" : `, ${decimal(r.valveMm, 1, locale)} mm`}</span><span className="q at-r">{day(r.startedAt)}</span>
           </span>

@@ -33,7 +33,7 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
   const families = (await familyNames(ctx)).filter((f) => f.heads > 0);
   const { slug, locale } = ctx.shop;
   const base = `/s/${slug}/flow/library`;
-  const family = typeof asked.family === "string" ? asked.family : families[0]?.name;
+  const family = typeof asked.family === "string" ? asked.family : families.reduce<(typeof families)[number] | undefined>((most, f) => (most && most.heads >= f.heads ? most : f), undefined)?.name;
   const side = asked.side === "exhaust" ? "exhaust" as const : "intake" as const;
   if (family === undefined) return <main id="main" className="page"><PageHead title="What a family did" /><EmptyState title="No heads yet">Families fill as heads are flowed.</EmptyState></main>;
   const p = await orNotFound(familyPicture(ctx, { family, side, last: LAST }));
@@ -47,10 +47,10 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
       <Views label="Side" current={side} views={(["intake", "exhaust"] as const).map((s) => ({ key: s, label: s === "intake" ? "Intake" : "Exhaust", href: href(family, s) }))} />
       <nav aria-label="Families" className="bar">{families.map((f) => <Link key={f.name} className={f.name === family ? "b" : "lk"} aria-current={f.name === family ? "page" : undefined} href={href(f.name, side)}>{f.name} <span className="dim sm">{f.heads}</span></Link>)}</nav>
       <div className="two mt-6">
-        <Bay label={`What the last ${LAST} heads changed, lift by lift`}>
+        <Bay label={`Gains of the last ${LAST} heads`}>
           <div className="hide-s"><LibraryGainStrips gains={p.gains} unit={unitOf} locale={locale} names={`the last heads of ${family}, ${side}`} /></div>
           <div className="only-phone"><LibraryGainStrips gains={p.gains} unit={unitOf} locale={locale} names={`the last heads of ${family}, ${side}`} width={340} /></div>
-          <p className="hint">Only ports whose before and after may be compared. Bars are the middle of the ports; greyed with fewer than three. Open dots left of zero are losses, ▼ counts them.</p>
+          {p.gains.length === 0 ? null : <p className="hint">Only ports whose before and after may be compared. Bars are the middle of the ports; greyed with fewer than three. Open dots left of zero are losses, ▼ counts them.</p>}
         </Bay>
         <Bay label="Middle and best curve">
           <div className="hide-s"><LibraryCurves curves={curvesOf(p)} unit={unitOf} atInH2O={p.atInH2O} camLiftUm={p.camLiftUm} locale={locale} title={`${family}, ${side}`} /></div>
@@ -79,13 +79,13 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
             </table></Lane>
           )}
         </Bay>
-        <Bay label="Gains as figures" flush>
+        {p.gains.length === 0 ? null : <Bay label="Gains as figures" flush>
           <Lane label="Gains as figures"><table className="calm">
             <caption className="sr-only">Gain at each lift: middle, least and most</caption>
             <thead><tr><th scope="col">Lift, {unitOf}</th><th scope="col" className="r">Ports</th><th scope="col" className="r">Least</th><th scope="col" className="r">Middle</th><th scope="col" className="r">Most</th><th scope="col" className="r">Lost flow</th></tr></thead>
             <tbody>{p.gains.map((g) => <tr key={g.liftUm} className={g.isThin ? "dim" : undefined}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(g.liftUm, unitOf, locale)}</th><td className="r q">{g.n}</td><td className="r q">{differenceText(g.dots.at(-1)?.gainCfm ?? 0, locale)}</td><td className="r q"><b>{differenceText(g.medianCfm, locale)}</b></td><td className="r q">{differenceText(g.dots[0]?.gainCfm ?? 0, locale)}</td><td className="r q">{g.losses === 0 ? "none" : g.losses}</td></tr>)}</tbody>
           </table></Lane>
-        </Bay>
+        </Bay>}
       </Bays>
     </main>
   );
