@@ -17,7 +17,7 @@ const files = readdirSync(path.join(ROOT, "app"), { recursive: true, withFileTyp
 
 /** What stands where an address has a name of a thing; the key is the path up to it. */
 type Names = Record<string, string>;
-const NEEDED = ["customers/[id]", "orders/[number]", "parts/[sku]", "parts/[part]", "books/invoices/[id]", "[head]", "estimate/[version]", "flow/gear/[bench]", "flow/reports/[comparison]", "purchases/[order]", "purchases/suppliers/[id]", "settings/people/[id]", "files/[id]", "[pieceNo]"];
+const NEEDED = ["customers/[id]", "orders/[number]", "parts/[sku]", "parts/[part]", "books/invoices/[id]", "[head]", "estimate/[version]", "flow/gear/[bench]", "flow/reports/[comparison]", "purchases/[order]", "purchases/suppliers/[id]", "settings/people/[id]", "files/[id]", "[pieceNo]", "workings/[function]"];
 
 /** Addresses that belong to no shop, each with the reason it is not asked for here. */
 const SHOPLESS: Record<string, string> = {
@@ -29,6 +29,8 @@ const SHOPLESS: Record<string, string> = {
 /** Pages of a customer, opened by a secret link: another shop's people do not hold it, and guessing is a test of its own. */
 const BY_LINK = /^(l\/\[token\]|api\/v1\/l\/)/;
 
+/** A function of the bench is no thing of a shop: it has one name for everybody. */
+const FUNCTION = "convert_unit";
 const shopFiles = files.filter((f) => f.includes("s/[shop]"));
 const addressOf = (file: string) => `/${path.dirname(file).split("/").filter((p) => !/^\(.*\)$/.test(p)).join("/")}`;
 
@@ -63,7 +65,7 @@ async function post(context: APIRequestContext, at: string, body: object): Promi
 
 let a: APIRequestContext;
 let names: Names;
-const nobody: Names = Object.fromEntries(NEEDED.map((k) => [k, k === "orders/[number]" ? "WO-2026-9998" : k === "parts/[sku]" ? "NO-SUCH-PART" : ["[pieceNo]", "estimate/[version]"].includes(k) ? "1" : randomUUID()]));
+const nobody: Names = Object.fromEntries(NEEDED.map((k) => [k, k === "orders/[number]" ? "WO-2026-9998" : k === "parts/[sku]" ? "NO-SUCH-PART" : ["[pieceNo]", "estimate/[version]"].includes(k) ? "1" : k === "workings/[function]" ? FUNCTION : randomUUID()]));
 
 test.beforeAll(async () => {
   a = await signedIn(A.owner);
@@ -87,7 +89,7 @@ test.beforeAll(async () => {
   names = {
     "customers/[id]": String(customer.id), "orders/[number]": String(order.number), "parts/[sku]": sku, "parts/[part]": String(part.id), "purchases/[order]": String(purchase.id), "purchases/suppliers/[id]": String(supplier.id), "[pieceNo]": "1",
     "books/invoices/[id]": await anyOf("invoices"), "estimate/[version]": "1", "[head]": await anyOf("heads"), "flow/gear/[bench]": await anyOf("benches"), "flow/reports/[comparison]": await anyOf("flow_comparisons"),
-    "settings/people/[id]": await anyOf("people"), "files/[id]": await anyOf("files"),
+    "settings/people/[id]": await anyOf("people"), "files/[id]": await anyOf("files"), "workings/[function]": FUNCTION,
   };
   await owner.end();
 });

@@ -4,6 +4,7 @@ import * as customers from "@/modules/customers/endpoints";
 import * as customerWrites from "@/modules/customers/write-endpoints";
 import * as flow from "@/modules/flow/endpoints";
 import * as flowLibrary from "@/modules/flow/library-endpoints";
+import * as flowWorkings from "@/modules/flow/workings-endpoints";
 import * as invoices from "@/modules/invoices/endpoints";
 import * as payments from "@/modules/payments/endpoints";
 import * as paymentWrites from "@/modules/payments/write-endpoints";
@@ -21,5 +22,5 @@ const isEndpoint = (value: unknown): value is AnyEndpoint => typeof value === "o
 
 /** Every address of the API, for its document. A test holds this list against the route files. */
 export const ENDPOINTS: readonly AnyEndpoint[] = [
-  customers, customerWrites, flow, flowLibrary, invoices, payments, paymentWrites, purchasing, purchaseWrites, stock, stockWrites, time, bench, workOrders, workOrderWrites,
+  customers, customerWrites, flow, flowLibrary, flowWorkings, invoices, payments, paymentWrites, purchasing, purchaseWrites, stock, stockWrites, time, bench, workOrders, workOrderWrites,
 ].flatMap((module) => Object.values(module).filter(isEndpoint));
