@@ -7,13 +7,18 @@ import { personIdOf, settingsOf } from "@/modules/access/context";
 import { decimal } from "@/modules/kernel/format";
 import { ok, refuse } from "@/modules/kernel/result";
 import { scaleLiftText } from "../domain/curve-scale";
-import { notTestedWords, reportTest, type ReportSide, type ReportSnapshot } from "../domain/report-snapshot";
+import { notTestedWords, reportSide, type ReportSide, type ReportSnapshot } from "../domain/report-snapshot";
+import { ratiosOfPort } from "../domain/port-ratios";
+import { replacedWhy } from "../domain/report-replaces";
 import { sideGain } from "../domain/side-gain";
-import { standingTests } from "../domain/standing-tests";
+import { camIdOf, standingTests } from "../domain/standing-tests";
 import { issueInput } from "../input";
+import { camsOf } from "../queries/cams-of-tests";
 import { withRepeatHistory } from "../queries/repeat-history";
 import { rawTests } from "../queries/tests-of-head";
 
+/** What a report says of the cam; null on papers issued before it was on them. */
+const cammed = (sides: readonly Pick<ReportSide, "means">[]): string | null => (sides.some((s) => s.means) ? sides.map(({ means }) => (typeof means?.overCam === "object" ? [means.overCam.camLabel, means.overCam.spanDeg, means.overCam.beforeCfm, means.overCam.afterCfm].join() : (means?.overCam ?? ""))).join(";") : null);
 /** Every verdict of a report, to tell whether another one would say something else. */
 const verdictsOf = (sides: readonly Pick<ReportSide, "gain">[]): string => sides.map(({ gain }) => (gain.comparable ? (gain.noise?.rows ?? []).map((r) => r.words).join() : "")).join(";");
 
@@ -48,19 +53,24 @@ export const issueComparison = defineCommand({
     const beforeTestIds = idsOf("before");
     const afterTestIds = idsOf("after");
     if (beforeTestIds.length + afterTestIds.length === 0) return refuse("NOTHING_FINISHED", "No test of this port is finished yet. Finish one first.");
+    const cams = await camsOf(ctx, tests);
+    const told = sides.map((s) => reportSide(s, cams.get(camIdOf(s.standing) ?? "") ?? null));
     const [last] = await tx.select().from(flowComparisons).where(and(eq(flowComparisons.shopId, shop.id), eq(flowComparisons.headId, headId), eq(flowComparisons.cylinder, cylinder)))
       .orderBy(desc(flowComparisons.comparisonNo)).limit(1);
-    if (last && last.customerWords === customerWords && String(last.beforeTestIds) === String(beforeTestIds) && String(last.afterTestIds) === String(afterTestIds) && verdictsOf((last.snapshot as ReportSnapshot).sides) === verdictsOf(sides)) {
+    const lastSides = (last?.snapshot as ReportSnapshot | undefined)?.sides ?? [];
+    const isSameOfCam = cammed(lastSides) === null || cammed(lastSides) === cammed(told);
+    if (last && last.customerWords === customerWords && String(last.beforeTestIds) === String(beforeTestIds) && String(last.afterTestIds) === String(afterTestIds) && verdictsOf(lastSides) === verdictsOf(sides) && isSameOfCam) {
       return refuse("NOTHING_CHANGED", `Report ${last.comparisonNo} already says exactly this.`);
     }
     const comparisonNo = (last?.comparisonNo ?? 0) + 1;
     const unit = tests.at(-1)?.liftUnit ?? "in";
     const liftWords = (um: number) => scaleLiftText(um, unit, (v, d) => decimal(v, d, shop.locale));
     const snapshot: ReportSnapshot = {
-      kind: 3, shop: { name: shop.name, address: settings.address, phone: settings.phone, email: settings.email }, locale: shop.locale, zone: shop.zone,
+      kind: 4, shop: { name: shop.name, address: settings.address, phone: settings.phone, email: settings.email }, locale: shop.locale, zone: shop.zone,
       head: { mark: row.h.mark, family: row.h.family, castingNumber: row.h.castingNumber, orderNumber: row.orderNumber, customerName: row.customerName },
       cylinder, cylinders: row.h.cylinders, comparisonNo,
-      sides: sides.map(({ side, standing, gain }) => ({ side, gain, before: standing.before && reportTest(standing.before), after: standing.after && reportTest(standing.after) })),
+      sides: told, ratios: ratiosOfPort(standingTests(tests, "intake", "complete"), standingTests(tests, "exhaust", "complete")),
+      ...(last ? { replaces: { comparisonNo: last.comparisonNo, issuedAt: last.issuedAt.toISOString(), why: replacedWhy(sides.flatMap((s) => [s.standing.before, s.standing.after].filter((t) => t !== null)), { testIds: [...last.beforeTestIds, ...last.afterTestIds], isReworded: last.customerWords !== customerWords }) } } : {}),
       notTested: notTestedWords(sides, cylinder, row.h.cylinders, liftWords), customerWords, issuedBy: ctx.actor.name, issuedAt: ctx.now.toISOString(),
     };
     const id = randomUUID();

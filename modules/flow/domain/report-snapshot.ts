@@ -1,4 +1,4 @@
-import type { ComparisonMeans } from "./comparison-means";
+import { comparisonMeans, type ComparisonMeans, type NamedCam } from "./comparison-means";
 import type { PortSide } from "./comparison-reasons";
 import { historyUsed } from "./noise-summary";
 import type { RawTest } from "./raw-test";
@@ -91,6 +91,11 @@ export function reportTest(test: RawTest): ReportTest {
     readings: figures.readings.map(({ liftUm, flowCfm }) => ({ liftUm, flowCfm })), repeats: Math.max(0, ...figures.readings.map((r) => r.count)), isConverted: figures.isConverted, leftOut: leftOutOf(figures),
   };
 }
+
+/** One side for the paper. @param cam the one the tests name; null where they name none. */
+export const reportSide = ({ side, standing, gain }: { side: PortSide; standing: Standing; gain: SideGain }, cam: NamedCam | null): ReportSide => ({
+  side, gain, before: standing.before && reportTest(standing.before), after: standing.after && reportTest(standing.after), ...(gain.comparable ? { means: comparisonMeans(gain, cam) } : {}),
+});
 
 const SIDE_WORDS: Readonly<Record<PortSide, string>> = { intake: "Intake", exhaust: "Exhaust" };
 

@@ -8,6 +8,9 @@ export interface Standing {
   readonly interim: readonly RawTest[];
 }
 
+/** The camshaft a comparison is told for: that of the newer test, else of the older. */
+export const camIdOf = ({ before, after }: Standing): string | null => after?.camshaft?.id ?? before?.camshaft?.id ?? null;
+
 /**
  * The tests that count for one side of one port: the newest of each purpose that is neither void nor replaced by a finished
  * correction. @param with "complete": what may be handed out; "draft": the sheet in work as well.

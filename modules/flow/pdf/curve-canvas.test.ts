@@ -98,3 +98,56 @@ describe("plates of losses on paper", () => {
     expect(g.losses).toHaveLength(1);
   });
 });
+
+describe("labels and titles on paper of the fourth kind", () => {
+  const SETS: Record<string, CurveLine[]> = {
+    ...CURVES,
+    "all four ends close together": [side("intake", IN, plus(IN, [1, 2, 3, 3, 3, 2, 2, 1])), side("exhaust", plus(IN, [-2, -2, -3, -3, -3, -3, -2, -2]), plus(IN, [-1, -1, -1, -1, -1, -1, -1, -1]))],
+    "exhaust over intake": [side("intake", EX, plus(EX, [1, 1, 1, 1, 1, 1, 1, 1])), side("exhaust", IN, plus(IN, [1, 2, 3, 4, 5, 6, 7, 8]))],
+    "after below before at the end": [side("intake", IN, plus(IN, [1, 2, 3, 3, 3, 2, 0, -9]))],
+  };
+  const PAPER = Object.entries(SETS).flatMap(([name, lines]) => [{ widthPx: 519, heightPx: 172, mini: false }, { widthPx: 519, heightPx: 116, mini: false }, { widthPx: 216, heightPx: 190, mini: true }].map((size) => ({
+    name: `${name}, ${size.widthPx} by ${size.heightPx}`, g: valueOf(curveGeometry({ ...size, paper: true, unit: "in", atInH2O: 28, camLiftUm: 7600, lines })),
+  })));
+  const endOf = (g: CurveGeometry, key: string) => g.points.filter((p) => `${p.side}-${p.when}` === key).reduce((last, p) => (p.x >= last.x ? p : last));
+
+  it.each(PAPER)("stand in the order of their curves' ends, none over another: $name", ({ g }) => {
+    const column = g.labels.filter((l) => l.x > g.plot.right).sort((a, b) => a.y - b.y);
+    const ends = column.map((l) => endOf(g, l.key).y);
+    expect(ends).toEqual([...ends].sort((a, b) => a - b));
+    column.slice(1).forEach((l, i) => expect(l.y - (column[i]?.y ?? 0)).toBeGreaterThanOrEqual(9.6 * (column[i]?.lines.length ?? 1) - 1e-6));
+  });
+  it.each(PAPER)("are joined to their own curve's end wherever they stand off it: $name", ({ g }) => {
+    for (const label of g.labels) {
+      const end = endOf(g, label.key);
+      if (!label.leader) {
+        // In the column at the height of its end; inside the plot just over it.
+        expect(Math.abs(label.y - 4 - end.y)).toBeLessThanOrEqual(label.x > g.plot.right ? 1.5 : 12);
+        continue;
+      }
+      expect(Math.hypot(label.leader.x1 - end.x, label.leader.y1 - end.y)).toBeLessThanOrEqual(5);
+      expect([label.leader.x2, label.leader.y2]).toEqual([label.x - 3, label.y - 4]);
+    }
+    // In one column no two leaders cross: both ends are in the same order.
+    const leaders = g.labels.flatMap((l) => (l.x > g.plot.right && l.leader && endOf(g, l.key).x === g.plot.right ? [l.leader] : [])).sort((a, b) => a.y1 - b.y1);
+    expect(leaders.map((l) => l.y2)).toEqual(leaders.map((l) => l.y2).sort((a, b) => a - b));
+    const drawn = canvasOf(curveContent(g, 4)).filter((e) => e.type === "line" && g.labels.some((l) => l.leader?.x1 === e.x1 && l.leader.y2 === e.y2));
+    expect(drawn).toHaveLength(g.labels.filter((l) => l.leader).length);
+  });
+  it.each(PAPER)("name both axes clear of the cam's words: $name", ({ g }) => {
+    const text = JSON.stringify(curveContent(g, 4));
+    expect(text).toContain("CFM at 28 in H₂O");
+    expect(text).toContain("Valve lift, in");
+    // Type of 7.6 points is under 10 points high; the cam's words stand 10 over the line's top.
+    expect((g.cam?.top ?? 0) - 10 - (g.flowTitle?.y ?? 0)).toBeGreaterThanOrEqual(10);
+    expect(JSON.stringify(curveContent(g, 3))).not.toContain("Valve lift");
+  });
+  it("mark a loss with a triangle only where no plate stands, and every reading with a point", () => {
+    const triangles = (g: CurveGeometry, kind: DrawingKind) => canvasOf(curveContent(g, kind)).filter((e) => e.type === "polyline" && e.points.length === 3 && e.color === PAPER_INK.ink).length;
+    for (const { g } of PAPER) {
+      expect(triangles(g, 4) + platesOf(g, 4).length).toBe(g.losses.length);
+      expect(triangles(g, 3)).toBe(g.losses.length);
+      expect(canvasOf(curveContent(g, 4)).filter((e) => e.type === "ellipse")).toHaveLength(g.points.length);
+    }
+  });
+});

@@ -9,8 +9,9 @@ const AREA: Record<string, string> = { "intake-gain": PAPER_INK.fluid, "exhaust-
 
 const HATCH_PT = 3.4;
 
-/** 1: before losses and noise were drawn. 2: plates at the ends of the screen's leaders. 3: plates placed for the paper. */
-export type DrawingKind = 1 | 2 | 3;
+/** 1: before losses and noise were drawn. 2: plates at the ends of the screen's leaders. 3: plates placed for the paper.
+ * 4: small points before as well, leaders to the labels, both axes named. */
+export type DrawingKind = 1 | 2 | 3 | 4;
 
 /** As on a paper of the second kind: the screen's plate at the size of the paper's type, kept at the end of its leader. */
 function plateOfSecondKind({ x, y, plate, leader }: CurveGeometry["losses"][number]): PaperPlate | null {
@@ -51,17 +52,24 @@ export function curveContent(drawing: CurveGeometry, kind: DrawingKind = 3): Con
       drawn.push({ type: "polyline", points, lineWidth: l.when === "after" ? 1.7 : 0.9, lineColor: l.when === "after" ? PAPER_INK.ink : PAPER_INK.edge, lineJoin: "round", ...(l.isDashed ? { dash: { length: l.when === "after" ? 4 : 3, space: 2.4 } } : {}) });
     }
   }
+  // Dots of a long ladder would cover the line they stand on.
+  const dot = kind === 4 && g.points.length / Math.max(1, g.lines.length) > 14 ? 1.3 : 1.9;
   for (const p of g.points) {
-    if (p.when !== "after") continue;
-    drawn.push({ type: "ellipse", x: p.x, y: p.y, r1: 1.9, r2: 1.9, color: p.isFilled ? PAPER_INK.ink : "#FFFFFF", lineColor: PAPER_INK.ink, lineWidth: 0.9 });
+    if (p.when === "before") {
+      if (kind === 4) drawn.push({ type: "ellipse", x: p.x, y: p.y, r1: 1.15, r2: 1.15, color: p.isFilled ? PAPER_INK.edge : "#FFFFFF", lineColor: PAPER_INK.edge, lineWidth: 0.6 });
+      continue;
+    }
+    drawn.push({ type: "ellipse", x: p.x, y: p.y, r1: dot, r2: dot, color: p.isFilled ? PAPER_INK.ink : "#FFFFFF", lineColor: PAPER_INK.ink, lineWidth: 0.9 });
   }
   if (g.cam) drawn.push({ type: "line", x1: g.cam.x, y1: g.cam.top, x2: g.cam.x, y2: g.cam.bottom, lineWidth: 0.8, lineColor: PAPER_INK.ink, dash: { length: 1, space: 2 } });
   drawn.push(line(g.plot.left, g.plot.top, g.plot.left, g.plot.bottom, 0.9, PAPER_INK.ink), line(g.plot.left, g.plot.bottom, g.plot.right, g.plot.bottom, 0.9, PAPER_INK.ink));
   for (const t of g.liftTicks) drawn.push(line(t.x, g.plot.bottom, t.x, g.plot.bottom + (t.isLong ? 5.5 : 3), 0.7, PAPER_INK.ink));
 
-  // The mark of a loss stands at its reading even where no plate finds room.
+  if (kind === 4) for (const { leader } of g.labels) if (leader) drawn.push(line(leader.x1, leader.y1, leader.x2, leader.y2, 0.6, PAPER_INK.edge));
+
+  // The mark of a loss stands at its reading where no plate finds room; on older papers beside a plate too.
   for (const [i, m] of g.losses.entries()) {
-    drawn.push({ type: "polyline", points: [{ x: m.x - 3.2, y: m.y + 3.6 }, { x: m.x + 3.2, y: m.y + 3.6 }, { x: m.x, y: m.y + 8.6 }], closePath: true, color: PAPER_INK.ink, lineWidth: 0 });
+    if (kind !== 4 || (plates[i] ?? null) === null) drawn.push({ type: "polyline", points: [{ x: m.x - 3.2, y: m.y + 3.6 }, { x: m.x + 3.2, y: m.y + 3.6 }, { x: m.x, y: m.y + 8.6 }], closePath: true, color: PAPER_INK.ink, lineWidth: 0 });
     const plate = plates[i];
     if (plate?.leader) drawn.push(line(plate.leader.x1, plate.leader.y1, plate.leader.x2, plate.leader.y2, 0.7, PAPER_INK.ink));
     if (plate) drawn.push({ type: "rect", x: plate.x, y: plate.y, w: plate.width, h: plate.height, color: PAPER_INK.ink, lineWidth: 0 });
@@ -74,13 +82,14 @@ export function curveContent(drawing: CurveGeometry, kind: DrawingKind = 3): Con
     ...g.flowTicks.map((t) => boxed(t.text, g.plot.left - 34, t.y - 4.6, 28, "right")),
     ...g.liftTicks.flatMap((t) => (t.text ? [boxed(t.text, t.x - 20, g.plot.bottom + 7, 40, "center")] : [])),
     ...g.labels.flatMap((l) => l.lines.map((text, i) => word(text, l.x, l.y - 8 + i * 9.4, i === 0 ? { bold: true } : { color: PAPER_INK.soft }))),
+    ...(kind === 4 ? [...(g.flowTitle ? [word(g.flowTitle.text, g.flowTitle.x, g.flowTitle.y, { color: PAPER_INK.soft })] : []), ...(g.liftTitle ? [boxed(g.liftTitle.text, g.liftTitle.x - 90, g.liftTitle.y, 90, "right")] : [])] : []),
     ...(g.cam ? [boxed(g.cam.text, Math.min(g.cam.x - 40, g.widthPx - 80), g.cam.top - 10, 80, "center")] : []),
     { canvas: [...drawn, { type: "rect", x: 0, y: 0, w: g.widthPx, h: g.heightPx, lineWidth: 0, lineColor: "#FFFFFF", fillOpacity: 0 }] },
     // Words on plates come after the drawing, so they are counted from its foot.
     ...g.losses.flatMap((m, i): Content[] => {
       const plate = plates[i] ?? null;
       return plate === null ? [] : [{
-        columns: [{ text: m.text, width: plate.width, alignment: "center", fontSize: 7, font: FACE.table, bold: true, color: "#FFFFFF" }], relativePosition: { x: plate.x, y: plate.y + 1.6 - g.heightPx },
+        columns: [{ text: m.text, width: plate.width, alignment: "center", fontSize: kind === 4 ? 7.5 : 7, font: FACE.table, bold: true, color: "#FFFFFF" }], relativePosition: { x: plate.x, y: plate.y + (kind === 4 ? 1.3 : 1.6) - g.heightPx },
       }];
     }),
   ];

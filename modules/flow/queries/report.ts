@@ -2,9 +2,8 @@ import "server-only";
 import { and, eq } from "drizzle-orm";
 import { flowComparisons } from "@/db/schema";
 import { inShop, mustBeAble, NotFound, type ShopContext } from "@/modules/access/context";
-import { renderPdf } from "@/modules/outbound/pdf/render";
 import type { ReportSnapshot } from "../domain/report-snapshot";
-import { flowReport } from "../pdf/flow-report";
+import { reportPaper } from "../pdf/report-on-one-page";
 
 /** An issued comparison as frozen. @throws NotFound */
 export async function issuedReport(ctx: ShopContext, comparisonId: string): Promise<ReportSnapshot> {
@@ -17,6 +16,6 @@ export async function issuedReport(ctx: ShopContext, comparisonId: string): Prom
 /** Its paper, one page; the same snapshot gives the same bytes. @throws NotFound */
 export async function flowReportPdf(ctx: ShopContext, comparisonId: string): Promise<{ name: string; mime: string; bytes: Buffer }> {
   const snapshot = await issuedReport(ctx, comparisonId);
-  const bytes = await renderPdf(flowReport(snapshot), { creationDate: new Date(snapshot.issuedAt) });
+  const bytes = await reportPaper(snapshot);
   return { name: `${snapshot.head.mark}-flow-${snapshot.cylinder}-${snapshot.comparisonNo}.pdf`, mime: "application/pdf", bytes };
 }
