@@ -2,6 +2,7 @@
 import { shopAction } from "@/modules/access/action";
 import { addCamshaft, addOwnHead, changeCamshaft, changeFamily, changeHeadWork, setUpFamily } from "./commands/families";
 import { addCheckPlate, addLiftDevice, changeBench, changeCheckPlate, changeFixture, changeLiftDevice, setUpBench, setUpFixture } from "./commands/gear-set-up";
+import { strikeBenchCheck } from "./commands/strike-check";
 
 export const setUpBenchAction = shopAction(setUpBench);
 export const changeBenchAction = shopAction(changeBench);
@@ -17,3 +18,4 @@ export const setUpFamilyAction = shopAction(setUpFamily);
 export const changeFamilyAction = shopAction(changeFamily);
 export const addOwnHeadAction = shopAction(addOwnHead);
 export const changeHeadWorkAction = shopAction(changeHeadWork);
+export const strikeBenchCheckAction = shopAction(strikeBenchCheck);

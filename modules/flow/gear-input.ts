@@ -1,16 +1,13 @@
 import { z } from "@/modules/kernel/zod";
 import { parseLiftUm } from "./domain/lift-ladder";
+import { plateFlowCfm } from "./domain/plate-reading";
+import type { BenchRange, BenchScale } from "./domain/raw-test";
 import { typedNumber } from "./domain/typed-number";
 import { line, optionalField, typedField, words } from "./typed-field";
 
 /** For the edit forms: which record, and as it was when the form was opened. */
 const edited = { id: z.uuid(), version: z.number().int() };
 const CFM = { min: 0, above: true, max: 5000, unit: "CFM" };
-
-const numberOf = (text: string): number => {
-  const typed = typedNumber(text);
-  return typed.ok ? typed.value : Number.NaN;
-};
 
 /** Valve lift as typed, with its unit behind it where it is not the field's: `8.6`, `.340 in`. Empty = none. */
 const optionalLift = line(24).default("").transform((text, ctx) => {
@@ -68,11 +65,19 @@ const rangesFit = (b: BenchIn, ctx: z.RefinementCtx) => {
 export const benchInput = benchFields.superRefine(rangesFit);
 export const benchEditInput = benchFields.extend(edited).superRefine(rangesFit);
 
-/** Plates as the form of the bench check holds them; a plate left empty was not flowed. */
-export const plateCheckForm = z.strictObject({
-  plates: z.array(z.strictObject({ serial: z.string(), reference: z.string(), indicated: line(20).refine((t) => t === "" || (typedNumber(t).ok && numberOf(t) > 0), "A number above zero, such as 28 or 27,9. Or leave it empty.") })).max(12),
+/** Plates as the form of the bench check holds them, on the bench's own scale; a plate left empty was not flowed. */
+export const plateCheckForm = (bench: { scale: BenchScale; ranges: readonly BenchRange[] }) => z.strictObject({
+  plates: z.array(z.strictObject({ serial: z.string(), reference: z.string(), range: z.string(), indicated: line(20) })).max(12),
   note: words(500).default(""),
-}).refine((c) => c.plates.some((p) => p.indicated !== ""), { error: "Type what the bench showed for at least one plate.", path: ["plates", 0, "indicated"] });
+  reason: words(500).default(""),
+}).superRefine((check, ctx) => {
+  check.plates.forEach((p, i) => {
+    const flow = p.indicated === "" ? null : plateFlowCfm(bench, p);
+    if (flow && !flow.ok) ctx.addIssue({ code: "custom", path: ["plates", i, flow.refusal.field === "range" ? "range" : "indicated"], message: flow.refusal.message });
+  });
+  if (check.plates.every((p) => p.indicated === "")) ctx.addIssue({ code: "custom", path: ["plates", 0, "indicated"], message: "Type what the bench showed for at least one plate." });
+});
+export const strikeCheckInput = z.strictObject({ checkId: z.uuid(), reason: words(500).min(3, "Say why it is put out of use, such as plate typed ten times too high.") });
 
 const plateFields = z.strictObject({
   serial: line(40).min(1, "Type the serial cut into the plate."),
@@ -158,7 +163,8 @@ export const ownHeadInput = z.strictObject({
   mark: line(60).min(1, "Give the casting a mark: a serial, or what is written on it."),
   family: line(80).min(1, "Name the engine family."),
   castingNumber: line(60).default(""),
-  cylinders: z.coerce.number<string | number>().int("Whole cylinders.").min(1, "At least 1.").max(16, "At most 16.").default(1),
+  /** Left out: the family's, else one. */
+  cylinders: z.coerce.number<string | number>().int("Whole cylinders.").min(1, "At least 1.").max(16, "At most 16.").optional(),
   bore: optionalField({ min: 10, max: 300, unit: "mm" }),
   stroke: optionalField({ min: 10, max: 300, unit: "mm" }),
   seatMaterial: z.enum(["unknown", "steel", "iron", "bronze", "copper-beryllium"]).default("unknown"),

@@ -64,7 +64,7 @@ describe("bench checks", () => {
     expect(first.factor).toBeCloseTo(1.011803, 6);
     expect(first.maxResidualPercent).toBeCloseTo(0.169, 3);
     expect(first).toMatchObject({ driftPercent: null, flags: ["CHECK_PLATE_OVERDUE"] });
-    const moved = must(await recordBenchCheck(a.as("tech", "2026-02-18T09:00:00Z"), { benchId: id, plates: [{ serial: "P60", reference: "60", indicated: "58" }] }));
+    const moved = must(await recordBenchCheck(a.as("tech", "2026-02-18T09:00:00Z"), { benchId: id, plates: [{ serial: "P60", reference: "60", indicated: "58" }], reason: "sensor renewed" }));
     expect(moved.flags).toEqual(["CALIBRATION_DRIFT"]);
     expect(moved.driftPercent).toBeCloseTo(((60 / 58) / first.factor - 1) * 100, 9);
     const soon = await benchHistory(a.as("counter", "2026-02-18T12:00:00Z"), id);

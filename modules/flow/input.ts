@@ -33,9 +33,13 @@ export const benchCheckInput = z.strictObject({
     serial: line(60).min(1, "Which plate?"),
     reference: typedPositive,
     indicated: typedPositive,
+    /** The bench's range that `indicated` was read on, in its own scale; empty: it is a flow in CFM. */
+    range: line(20).default(""),
   })).max(12).default([]),
   isFine: z.boolean().default(false),
   note: words(500).default(""),
+  /** Why a doubtful check is kept. */
+  reason: words(500).default(""),
 }).refine((c) => c.plates.length > 0 || c.isFine, { error: "Flow at least one check plate, or say that the bench stands as it was.", path: ["plates"] });
 
 export const addFixtureInput = z.strictObject({
@@ -73,7 +77,7 @@ const sideFields = {
 };
 /** What holds for the whole session. */
 const sessionFields = {
-  fixtureId: z.uuid({ error: "Choose the fixture." }),
+  fixtureId: z.uuid({ error: "Choose the bore adapter." }),
   liftDeviceId: chosen,
   nominal: numberFrom(typedPositive),
   plugClosed: z.boolean().default(true), testSprings: z.boolean().default(true),

@@ -29,7 +29,7 @@ export async function benchRoom(cast: Cast, who: string, at: string, today: stri
   for (const cam of CAMSHAFTS) must(await addCamshaft(ctx, cam), cam.label);
   for (const [benchId, days] of [[bench.id, BENCH_1_CHECKS], [older.id, OLDER_BENCH_CHECKS]] as const) {
     for (const day of days) {
-      must(await recordBenchCheck(cast.as(who, day.at), { benchId, note: day.note, plates: CHECK_PLATES.map((p, i) => ({ serial: p.serial, reference: p.referenceFlow, indicated: day.shown[i] ?? "" })) }), `plates of ${day.at}`);
+      must(await recordBenchCheck(cast.as(who, day.at), { benchId, note: day.note, reason: day.reason ?? "", plates: CHECK_PLATES.map((p, i) => ({ serial: p.serial, reference: p.referenceFlow, indicated: day.shown[i] ?? "" })) }), `plates of ${day.at}`);
     }
   }
   return { benchId: bench.id, olderBenchId: older.id, fixtures, liftDeviceId: devices[0] ?? "" };

@@ -117,6 +117,7 @@ export const COMMAND_CASES: Record<string, Case> = {
   "flow.change-lift-device": { input: (at) => ({ ...edit(at, "lift_devices"), name: "Dial", resolution: "0.01" }) },
   "flow.save-measurements": { input: (at) => ({ headId: at("heads").id, stage: "before", rows: [{ cylinder: 1, side: "", kind: "deck flatness", value: "0.02", unit: "mm" }] }) },
   "flow.record-bench-check": { input: (at) => ({ benchId: at("benches").id, isFine: true }) },
+  "flow.strike-bench-check": { input: (at) => ({ checkId: at("bench_checks").id, reason: "because" }) },
   "flow.start-test": { input: (at) => ({ headId: at("heads").id, benchId: at("benches").id, fixtureId: at("fixtures").id, liftDeviceId: at("lift_devices").id, camshaftId: at("camshafts").id, operatorId: at("people").id, side: "intake", purpose: "baseline", nominal: "28", lifts: ["0.1"] }) },
   "flow.start-sheet": { input: (at) => ({ headId: at("heads").id, benchId: at("benches").id, fixtureId: at("fixtures").id, liftDeviceId: at("lift_devices").id, operatorId: at("people").id, purpose: "baseline", nominal: "28", step: "0.05", camLiftForLadder: "0.34", intake: { camshaftId: at("camshafts").id }, exhaust: { camshaftId: at("camshafts").id } }) },
   "flow.post-test": { input: (at) => ({ headId: at("heads").id, benchId: at("benches").id, fixtureId: at("fixtures").id, liftDeviceId: at("lift_devices").id, camshaftId: at("camshafts").id, operatorId: at("people").id, side: "intake", purpose: "baseline", nominal: "28", readings: [{ lift: "0.1", value: "20" }] }) },

@@ -88,14 +88,18 @@ export const changeFamily = defineCommand({
   },
 });
 
-/** The shop's own casting, for development. It has no customer and no order. */
+/** The shop's own casting, for development. It has no customer and no order. Sheets are found by the mark, so no two heads carry one. */
 export const addOwnHead = defineCommand({
   name: "flow.add-own-head", act: "flow.record", input: ownHeadInput,
   async run(ctx, input) {
+    // Two of one mark at the same moment: the second waits and then sees the first.
+    await ctx.tx.execute(sql`select pg_advisory_xact_lock(hashtextextended(${`${ctx.shop.id}:mark:${input.mark.toLowerCase()}`}, 2))`);
+    const taken = await ctx.tx.select({ id: heads.id }).from(heads).where(and(eq(heads.shopId, ctx.shop.id), sql`lower(${heads.mark}) = lower(${input.mark})`)).limit(1);
+    if (taken[0]) return refuse("MARK_TAKEN", "A head of this mark is here already: open it, or give this one another mark.", { field: "mark", data: { headId: taken[0].id } });
     const [family] = await ctx.tx.select().from(engineFamilies).where(and(eq(engineFamilies.shopId, ctx.shop.id), eq(engineFamilies.name, input.family)));
     const id = randomUUID();
     await ctx.tx.insert(heads).values({
-      shopId: ctx.shop.id, id, ownerKind: "development", mark: input.mark, family: input.family, castingNumber: input.castingNumber, cylinders: input.cylinders,
+      shopId: ctx.shop.id, id, ownerKind: "development", mark: input.mark, family: input.family, castingNumber: input.castingNumber, cylinders: input.cylinders ?? family?.cylinders ?? 1,
       boreMm: input.bore ?? family?.boreMm ?? null, strokeMm: input.stroke ?? family?.strokeMm ?? null, seatMaterial: input.seatMaterial, workDone: input.workDone, notes: input.notes,
       camLiftIntakeUm: family?.camLiftIntakeUm ?? null, camLiftExhaustUm: family?.camLiftExhaustUm ?? null,
     });

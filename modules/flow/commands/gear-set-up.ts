@@ -15,7 +15,7 @@ import { staleOrGone } from "./stale";
 type BenchIn = z.output<typeof benchInput>;
 const benchColumns = (b: BenchIn) => ({
   name: b.name, kind: b.kind, scale: b.scale, waterUnit: b.waterUnit, nominalPressuresInH2O: b.nominalPressures, maxFlowCfm: b.maxFlow,
-  ranges: b.ranges.map((r): BenchRange => ({ label: r.label, fullScaleCfm: r.fullScaleCfm, ...(r.fullScaleHead === null ? {} : { fullScaleHead: r.fullScaleHead }) })),
+  ranges: b.ranges.map((r): BenchRange => ({ label: r.label, fullScaleCfm: r.fullScaleCfm, ...(r.fullScaleHead === null || b.scale !== "orifice_head" ? {} : { fullScaleHead: r.fullScaleHead }) })),
   pressureUncertaintyInH2O: b.uPressure, readingUncertaintyCfm: b.uReading, altitudeM: b.altitude, active: b.active,
 });
 
@@ -30,7 +30,8 @@ export const setUpBench = defineCommand({
 });
 
 const readOn = (ctx: TxContext, at: ReturnType<typeof eq>) => ctx.tx.select({ id: flowTests.id }).from(flowTests).where(and(eq(flowTests.shopId, ctx.shop.id), at)).limit(1);
-const sameRange = (a: BenchRange, b: BenchRange) => a.label === b.label && a.fullScaleCfm === b.fullScaleCfm && (a.fullScaleHead ?? null) === (b.fullScaleHead ?? null);
+/** The head at full scale counts on a manometer only. */
+const sameRange = (scale: string, a: BenchRange, b: BenchRange) => a.label === b.label && a.fullScaleCfm === b.fullScaleCfm && (scale !== "orifice_head" || (a.fullScaleHead ?? null) === (b.fullScaleHead ?? null));
 
 /** Scale, ranges and water unit turn raw readings into flow, so once a test was read on the bench they stay; ranges may be added. */
 export const changeBench = defineCommand({
@@ -41,7 +42,7 @@ export const changeBench = defineCommand({
     const [now] = await ctx.tx.select().from(benches).where(at);
     if (!now) return refuse("NOT_FOUND", "This bench is not here any more.");
     const values = benchColumns(input);
-    const kept = (now.ranges as BenchRange[]).every((old) => values.ranges.some((r) => sameRange(old, r)));
+    const kept = (now.ranges as BenchRange[]).every((old) => values.ranges.some((r) => sameRange(now.scale, old, r)));
     if (!kept || now.scale !== values.scale || now.kind !== values.kind || now.waterUnit !== values.waterUnit) {
       if ((await readOn(ctx, eq(flowTests.benchId, id))).length > 0) {
         return refuse("BENCH_IN_USE", "Tests were read on this bench, and their flow comes from its scale and ranges. Ranges may be added, not changed. Add a rebuilt bench under its own name.", { field: kept ? "scale" : "ranges" });

@@ -1,5 +1,6 @@
 "use client";
 
+import type { MouseEvent } from "react";
 import { useFieldArray, useWatch } from "react-hook-form";
 import { Button } from "@/modules/ui/button";
 import { Checkbox } from "@/modules/ui/form/checkbox";
@@ -19,6 +20,14 @@ export const BENCH_KIND_WORDS = { series_orifice: "Port and orifice in one air p
 export const WATER_WORDS = { conventional: "Conventional (249.089 Pa)", "39.2F": "At 39.2 °F (249.082 Pa)", "60F": "At 60 °F (248.84 Pa)" } as const;
 const options = (words: Readonly<Record<string, string>>) => Object.entries(words).map(([value, label]) => ({ value, label }));
 
+/** The next range of a bench, under the next number. */
+const nextRange = (rows: readonly { label: string }[] | undefined) => {
+  const numbers = (rows ?? []).map((r) => Number(r.label)).filter((n) => Number.isInteger(n));
+  return { label: String(Math.max(0, ...numbers) + 1), fullScaleCfm: "", fullScaleHead: "" };
+};
+/** The field keeps the focus while the key is pressed: what its leaving would say must not push the key from under the pointer. */
+const keepFocus = (event: MouseEvent) => event.preventDefault();
+
 export function BenchForm({ bench }: { bench: BenchView | null }) {
   const { slug } = usePlace();
   const done = useGearDone("benches");
@@ -35,27 +44,35 @@ export function BenchForm({ bench }: { bench: BenchView | null }) {
   });
   const ranges = useFieldArray({ control: form.rhf.control, name: "ranges" });
   const scale = useWatch({ control: form.rhf.control, name: "scale" });
+  /** A bench read on a scale has a range at once; what is not asked of this scale is not left standing unseen. */
+  const fitRanges = (next: string) => {
+    const rows = form.rhf.getValues("ranges") ?? [];
+    const untyped = rows.flatMap((r, i) => (r.fullScaleCfm === "" && !r.fullScaleHead ? [i] : []));
+    if (next === "direct" && untyped.length > 0) ranges.remove(untyped);
+    if (next !== "direct" && rows.length === 0) ranges.append(nextRange([]), { shouldFocus: false });
+    if (next === "percent_linear") rows.forEach((_, i) => form.rhf.setValue(`ranges.${i}.fullScaleHead`, ""));
+  };
   const rangesError = form.rhf.formState.errors.ranges?.message ?? form.rhf.formState.errors.ranges?.root?.message;
   return (
     <GearFormFrame form={form} view="benches" title={bench ? bench.name : "New bench"} save={bench ? "Keep changes" : "Add bench"}>
       <div className="fields">
         <TextInput name="name" label="Name" className="full" />
         <SelectInput name="kind" label="Kind" options={options(BENCH_KIND_WORDS)} className="full" />
-        <SelectInput name="scale" label="What its scale shows" options={options(SCALE_WORDS)} className="full" />
+        <SelectInput name="scale" label="What its scale shows" options={options(SCALE_WORDS)} className="full" onChange={(e) => fitRanges(e.target.value)} />
       </div>
       {scale === "direct" ? null : (
         <fieldset className="mt-4">
           <legend className="eng ink mb-2">Ranges</legend>
           {ranges.fields.map((row, i) => (
-            <div key={row.id} className="mb-2 grid grid-cols-[1fr_1fr_1fr_auto] items-end gap-2">
+            <div key={row.id} className={`mb-3 grid items-start gap-2 ${scale === "orifice_head" ? "grid-cols-2 border-b border-line pb-3" : "grid-cols-[1fr_1fr_auto]"}`}>
               <TextInput name={`ranges.${i}.label`} label="Range" />
               <TextInput name={`ranges.${i}.fullScaleCfm`} label="Full scale" unit="CFM" inputMode="decimal" alignEnd />
-              <TextInput name={`ranges.${i}.fullScaleHead`} label="Full head" inputMode="decimal" alignEnd optional={scale !== "orifice_head"} />
-              <Button variant="lo" onClick={() => ranges.remove(i)} aria-label={`Take out range ${i + 1}`}>Take out</Button>
+              {scale === "orifice_head" ? <TextInput name={`ranges.${i}.fullScaleHead`} label="Head at full scale" inputMode="decimal" alignEnd hint="In the manometer's own unit." /> : null}
+              <span className="mt-[1.45rem]"><Button variant="lo" onMouseDown={keepFocus} onClick={() => ranges.remove(i)} aria-label={`Take out range ${i + 1}`}>Take out</Button></span>
             </div>
           ))}
           {typeof rangesError === "string" ? <p className="err" role="alert">{rangesError}</p> : null}
-          <Button size="sm" icon="plus" onClick={() => ranges.append({ label: "", fullScaleCfm: "", fullScaleHead: "" })}>Another range</Button>
+          <Button size="sm" icon="plus" onMouseDown={keepFocus} onClick={() => ranges.append(nextRange(form.rhf.getValues("ranges")))}>Another range</Button>
         </fieldset>
       )}
       <div className="fields mt-4">

@@ -1,4 +1,5 @@
 import { decimal } from "@/modules/kernel/format";
+import { factorScale } from "../domain/factor-scale";
 
 export interface FactorPoint { at: string; factor: number; drifted: boolean }
 
@@ -9,21 +10,19 @@ export function GearFactorChart({ points, locale, dateText }: { points: readonly
   const [first, last] = [points[0], points.at(-1)];
   if (!first || !last) return null;
   const factors = points.map((p) => p.factor);
-  // At least one percent either way, so that a steady bench looks steady.
-  const middle = (Math.min(...factors) + Math.max(...factors)) / 2;
-  const half = Math.max((Math.max(...factors) - Math.min(...factors)) / 2, middle * 0.01) * 1.15;
+  const { low, high, ticks, digits } = factorScale(factors);
   const span = Math.max(1, Date.parse(last.at) - Date.parse(first.at));
   const x = (iso: string) => (points.length === 1 ? (LEFT + W - RIGHT) / 2 : LEFT + ((Date.parse(iso) - Date.parse(first.at)) / span) * (W - RIGHT - LEFT));
-  const y = (f: number) => BOTTOM - ((f - (middle - half)) / (2 * half)) * (BOTTOM - TOP);
+  const y = (f: number) => BOTTOM - ((f - low) / (high - low)) * (BOTTOM - TOP);
   const steps = points.map((p, i) => (i === 0 ? `M${x(p.at)} ${y(p.factor)}` : `H${x(p.at)}V${y(p.factor)}`)).join("");
-  const ticks = [middle - half * 0.8, middle, middle + half * 0.8];
-  const label = `Bench factor over ${points.length} check${points.length === 1 ? "" : "s"}: from ${decimal(first.factor, 4, locale)} on ${dateText(first.at)} to ${decimal(last.factor, 4, locale)} on ${dateText(last.at)}. The axis does not begin at zero.`;
+  const [begun, ended] = [dateText(first.at), dateText(last.at)];
+  const label = `Bench factor over ${points.length} check${points.length === 1 ? "" : "s"}: from ${decimal(first.factor, 4, locale)} on ${begun} to ${decimal(last.factor, 4, locale)} on ${ended}. The axis does not begin at zero.`;
   return (
     <svg className="ch max-w-[720px]" viewBox={`0 0 ${W} ${H}`} role="img" aria-label={label}>
       {ticks.map((t) => (
         <g key={t}>
           <path className="gr" d={`M${LEFT} ${y(t)}H${W - RIGHT}`} />
-          <text x={LEFT - 8} y={y(t) + 4} textAnchor="end">{decimal(t, 3, locale)}</text>
+          <text x={LEFT - 8} y={y(t) + 4} textAnchor="end">{decimal(t, digits, locale)}</text>
         </g>
       ))}
       {/* The axis is broken: it does not reach zero. */}
@@ -32,8 +31,8 @@ export function GearFactorChart({ points, locale, dateText }: { points: readonly
       {points.map((p) => (p.drifted
         ? <path key={p.at} className="inv" d={`M${x(p.at)} ${y(p.factor) - 7}l7 12h-14Z`} />
         : <circle key={p.at} className="pt" cx={x(p.at)} cy={y(p.factor)} r={3.4} />))}
-      <text x={LEFT} y={H - 4}>{dateText(first.at)}</text>
-      {points.length > 1 ? <text x={W - RIGHT} y={H - 4} textAnchor="end">{dateText(last.at)}</text> : null}
+      {/* Checks of one day have one date under them. */}
+      {begun === ended ? <text x={(LEFT + W - RIGHT) / 2} y={H - 4} textAnchor="middle">{begun}</text> : <><text x={LEFT} y={H - 4}>{begun}</text><text x={W - RIGHT} y={H - 4} textAnchor="end">{ended}</text></>}
     </svg>
   );
 }

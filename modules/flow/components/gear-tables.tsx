@@ -22,7 +22,7 @@ function rowsOf(view: GearView, { room, locale, slug, when }: TableProps): { hea
         caption: "Benches", heads: [["Bench"], ["Scale"], ["Pressures", true], ["Factor", true], ["Last check"]],
         rows: room.benches.map((b) => ({
           id: b.id, active: b.active, cells: [
-            <Link key="l" className="lk" href={`/s/${slug}/flow/gear/${b.id}`}>{b.name}</Link>, BENCH_SCALE_SHORT[b.scale], b.nominalPressuresInH2O.join(", "), b.check ? n(b.check.factor, 4) : "1",
+            <Link key="l" className="lk" href={`/s/${slug}/flow/gear/${b.id}`}>{b.name}</Link>, BENCH_SCALE_SHORT[b.scale], b.nominalPressuresInH2O.join(", "), n(b.check?.factor ?? 1, 4),
             b.check === null ? <Flag key="f" icon="warn">never checked</Flag> : b.check.isOld ? <Flag key="f" icon="warn">{`check ${when(b.check.at)} too old`}</Flag> : <Status key="f" dial="ready">{when(b.check.at)}</Status>,
           ],
         })),
@@ -34,7 +34,7 @@ function rowsOf(view: GearView, { room, locale, slug, when }: TableProps): { hea
       };
     case "fixtures":
       return {
-        caption: "Fixtures and adapter plates by bore", heads: [["Fixture"], ["Bore mm", true], ["Length mm", true], ["Head pattern"], ["Adapter plate"]],
+        caption: "Bore adapters and plates", heads: [["Bore adapter"], ["Bore mm", true], ["Length mm", true], ["Head pattern"], ["Adapter plate"]],
         rows: room.fixtures.map((f) => ({ id: f.id, active: f.active, cells: [f.name, n(f.boreMm), n(f.lengthMm, 0), f.headPattern || "—", f.plate || "—"] })),
       };
     case "lift":

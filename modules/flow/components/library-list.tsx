@@ -80,8 +80,11 @@ export function LibraryList({ first, filters, families }: { first: LibraryPage; 
         {chip("owner", "Owner", [{ value: "customer", label: "Customer" }, { value: "development", label: "Shop's own" }])}
         <TypedFilter label="Valve mm" value={filters.valve} onSet={(v) => set("valve", v)} inputMode="decimal" />
         <TypedFilter label="Seat" value={filters.seat} onSet={(v) => set("seat", v)} />
-        <TypedFilter label="From" value={filters.from} onSet={(v) => set("from", v)} type="date" />
-        <TypedFilter label="To" value={filters.to} onSet={(v) => set("to", v)} type="date" />
+        {/* The two ends of one span wrap together. */}
+        <span className="inline-flex flex-wrap gap-x-2.5 gap-y-2">
+          <TypedFilter label="From" value={filters.from} onSet={(v) => set("from", v)} type="date" />
+          <TypedFilter label="To" value={filters.to} onSet={(v) => set("to", v)} type="date" />
+        </span>
       </div>
       <DataTable
         caption="Finished flow tests, newest first" columns={columns} rows={rows} rowKey={(r) => r.testId} hrefOf={(r) => `/s/${slug}/flow/${r.headId}${r.cylinder > 1 ? `?port=${r.cylinder}` : ""}`}

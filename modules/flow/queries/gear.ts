@@ -1,14 +1,23 @@
 import "server-only";
-import { and, asc, desc, eq, sql } from "drizzle-orm";
+import { and, asc, desc, eq, isNull, sql } from "drizzle-orm";
+import { alias } from "drizzle-orm/pg-core";
 import { benchChecks, benches, camshafts, checkPlates, engineFamilies, fixtures, flowTests, liftDevices, people } from "@/db/schema";
 import { ableTo, inShop, mustBeAble, NotFound, settingsOf, type ShopContext } from "@/modules/access/context";
 import { localDate } from "@/modules/kernel/instant";
+import { standingCheck } from "../bench-check-sql";
 import type { CamPoint } from "../domain/cam-table";
 import type { PortSide } from "../domain/comparison-reasons";
 import type { BenchRange, BenchScale, WaterUnit } from "../domain/raw-test";
 import type { ValveOfFamily } from "../domain/valve-list";
 
-export interface BenchCheckView { id: string; at: string; by: string | null; factor: number; maxResidualPercent: number; driftPercent: number | null; flags: string[]; note: string; plates: { serial: string; referenceCfm: number; indicatedText: string; indicatedCfm: number }[] }
+export interface BenchCheckView {
+  id: string; at: string; by: string | null; factor: number; maxResidualPercent: number; driftPercent: number | null; flags: string[]; note: string;
+  /** Why a doubtful check was kept. */
+  reason: string | null;
+  /** Put out of use: when, by whom and why. */
+  struck: { at: string; by: string | null; reason: string } | null;
+  plates: { serial: string; referenceCfm: number; indicatedText: string; rangeLabel: string | null; indicatedCfm: number }[];
+}
 export interface BenchView {
   id: string; name: string; kind: string; scale: BenchScale; ranges: BenchRange[]; waterUnit: WaterUnit; nominalPressuresInH2O: number[]; maxFlowCfm: number;
   pressureUncertaintyInH2O: number | null; readingUncertaintyCfm: number | null; altitudeM: number | null; active: boolean; version: number;
@@ -43,7 +52,7 @@ export async function gearRoom(ctx: ShopContext): Promise<GearRoom> {
   const s = ctx.shop.id;
   return inShop(ctx, async (tx) => {
     const { benchCheckHours } = await settingsOf({ ...ctx, tx });
-    const checks = await tx.selectDistinctOn([benchChecks.benchId]).from(benchChecks).where(eq(benchChecks.shopId, s)).orderBy(benchChecks.benchId, desc(benchChecks.at));
+    const checks = await tx.selectDistinctOn([benchChecks.benchId]).from(benchChecks).where(and(eq(benchChecks.shopId, s), standingCheck)).orderBy(benchChecks.benchId, desc(benchChecks.at));
     const today = localDate(ctx.now, ctx.shop.zone);
     const [b, p, f, d, c, fam] = [
       await tx.select().from(benches).where(eq(benches.shopId, s)).orderBy(desc(benches.active), asc(benches.name)),
@@ -73,14 +82,20 @@ export async function benchHistory(ctx: ShopContext, benchId: string): Promise<B
   const bench = room.benches.find((b) => b.id === benchId);
   if (!bench) throw new NotFound("bench");
   return inShop(ctx, async (tx) => {
-    const rows = await tx.select({ c: benchChecks, by: people.shortName }).from(benchChecks).leftJoin(people, and(eq(people.shopId, benchChecks.shopId), eq(people.id, benchChecks.personId)))
-      .where(and(eq(benchChecks.shopId, ctx.shop.id), eq(benchChecks.benchId, benchId))).orderBy(desc(benchChecks.at)).limit(200);
+    const later = alias(benchChecks, "later");
+    const striker = alias(people, "striker");
+    const rows = await tx.select({ c: benchChecks, by: people.shortName, struckAt: later.at, struckBy: striker.shortName, struckReason: later.reason }).from(benchChecks)
+      .leftJoin(people, and(eq(people.shopId, benchChecks.shopId), eq(people.id, benchChecks.personId)))
+      .leftJoin(later, and(eq(later.shopId, benchChecks.shopId), eq(later.strikes, benchChecks.id)))
+      .leftJoin(striker, and(eq(striker.shopId, later.shopId), eq(striker.id, later.personId)))
+      .where(and(eq(benchChecks.shopId, ctx.shop.id), eq(benchChecks.benchId, benchId), isNull(benchChecks.strikes))).orderBy(desc(benchChecks.at)).limit(200);
     const [{ n } = { n: 0 }] = await tx.select({ n: sql<number>`count(*)::int` }).from(flowTests).where(and(eq(flowTests.shopId, ctx.shop.id), eq(flowTests.benchId, benchId)));
     return {
       bench, tests: n, plates: room.plates.filter((p) => p.active), benchCheckHours: room.benchCheckHours, canRecord: room.canRecord, canSetUp: room.canSetUp,
-      checks: rows.map(({ c, by }) => ({
-        id: c.id, at: c.at.toISOString(), by, factor: c.factor, maxResidualPercent: c.maxResidualPercent, driftPercent: c.driftPercent, flags: c.flags, note: c.note,
-        plates: (c.plateReadings as BenchCheckView["plates"]).map(({ serial, referenceCfm, indicatedText, indicatedCfm }) => ({ serial, referenceCfm, indicatedText, indicatedCfm })),
+      checks: rows.map(({ c, by, struckAt, struckBy, struckReason }) => ({
+        id: c.id, at: c.at.toISOString(), by, factor: c.factor, maxResidualPercent: c.maxResidualPercent, driftPercent: c.driftPercent, flags: c.flags, note: c.note, reason: c.reason,
+        struck: struckAt === null ? null : { at: struckAt.toISOString(), by: struckBy, reason: struckReason ?? "" },
+        plates: (c.plateReadings as BenchCheckView["plates"]).map(({ serial, referenceCfm, indicatedText, rangeLabel, indicatedCfm }) => ({ serial, referenceCfm, indicatedText, rangeLabel: rangeLabel ?? null, indicatedCfm })),
       })),
     };
   });

@@ -76,16 +76,16 @@ async function rowsOf(ctx: ShopContext, tx: Tx, ids: readonly string[]): Promise
   return rows.map(({ startedAt, side, purpose, liftUnit, ...r }) => ({ ...r, startedAt: startedAt.toISOString(), side: side as PortSide, purpose: purpose as Purpose, liftUnit: liftUnit as LiftUnit }));
 }
 
-export interface FamilyName { name: string; heads: number; isSetUp: boolean }
+export interface FamilyName { name: string; heads: number; isSetUp: boolean; /** Of a head, as the shop set it up; null where it did not. */ cylinders: number | null }
 
 /** Families as the shop set them up, and those only written on heads; with how many heads stand in each. */
 export async function familyNames(ctx: ShopContext): Promise<FamilyName[]> {
   mustBeAble(ctx, "flow.see");
   return inShop(ctx, async (tx) => {
-    const made = await tx.select({ name: engineFamilies.name }).from(engineFamilies).where(eq(engineFamilies.shopId, ctx.shop.id)).orderBy(asc(engineFamilies.name));
+    const made = await tx.select({ name: engineFamilies.name, cylinders: engineFamilies.cylinders }).from(engineFamilies).where(eq(engineFamilies.shopId, ctx.shop.id)).orderBy(asc(engineFamilies.name));
     const used = await tx.select({ name: heads.family, n: sql<number>`count(*)::int` }).from(heads).where(eq(heads.shopId, ctx.shop.id)).groupBy(heads.family).orderBy(asc(heads.family));
     const counts = new Map(used.map((u) => [u.name, u.n]));
     return [...new Set([...made.map((m) => m.name), ...used.map((u) => u.name)])].sort((a, b) => a.localeCompare(b))
-      .map((name) => ({ name, heads: counts.get(name) ?? 0, isSetUp: made.some((m) => m.name === name) }));
+      .map((name) => ({ name, heads: counts.get(name) ?? 0, isSetUp: made.some((m) => m.name === name), cylinders: made.find((m) => m.name === name)?.cylinders ?? null }));
   });
 }

@@ -2,6 +2,7 @@ import "server-only";
 import { and, asc, desc, eq, isNull } from "drizzle-orm";
 import { benches, benchChecks, camshafts, customers, engineFamilies, fixtures, flowComparisons, heads, liftDevices, people, workOrders, workPieces } from "@/db/schema";
 import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
+import { standingCheck } from "../bench-check-sql";
 import type { PortSide } from "../domain/comparison-reasons";
 import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
 import { rawTests } from "./tests-of-head";
@@ -54,7 +55,7 @@ export async function gearOf(ctx: ShopContext): Promise<BenchGear> {
     const b = await tx.select().from(benches).where(and(eq(benches.shopId, s), eq(benches.active, true))).orderBy(asc(benches.name));
     const f = await tx.select({ id: fixtures.id, name: fixtures.name, boreMm: fixtures.boreMm }).from(fixtures).where(and(eq(fixtures.shopId, s), eq(fixtures.active, true))).orderBy(asc(fixtures.name));
     const checks = await tx.selectDistinctOn([benchChecks.benchId], { benchId: benchChecks.benchId, at: benchChecks.at, factor: benchChecks.factor }).from(benchChecks)
-      .where(eq(benchChecks.shopId, s)).orderBy(benchChecks.benchId, desc(benchChecks.at));
+      .where(and(eq(benchChecks.shopId, s), standingCheck)).orderBy(benchChecks.benchId, desc(benchChecks.at));
     const byBench = new Map(checks.map((c) => [c.benchId, c]));
     const devices = await tx.select({ id: liftDevices.id, name: liftDevices.name }).from(liftDevices).where(and(eq(liftDevices.shopId, s), eq(liftDevices.active, true))).orderBy(asc(liftDevices.name));
     const cams = await tx.select({ id: camshafts.id, label: camshafts.label, side: camshafts.side, maxLiftUm: camshafts.maxLiftUm }).from(camshafts).where(and(eq(camshafts.shopId, s), eq(camshafts.active, true))).orderBy(asc(camshafts.label));

@@ -26,7 +26,7 @@ export default async function LibraryPage({ params, searchParams }: { params: Pr
         actions={<>
           <LinkButton href={base}>Flow room</LinkButton>
           <LinkButton href={`${base}/library/family${ask.family ? `?family=${encodeURIComponent(ask.family)}` : ""}`}>What a family did</LinkButton>
-          {ableTo(ctx, "flow.record") ? <><LinkButton href={`${base}/upload`}>Read from a file</LinkButton><OwnHeadDialog families={names} /></> : null}
+          {ableTo(ctx, "flow.record") ? <><LinkButton href={`${base}/upload`}>Read from a file</LinkButton><OwnHeadDialog families={families} /></> : null}
         </>} />
       <LibraryList key={JSON.stringify(filters)} first={first} filters={filters} families={names} />
     </main>

@@ -1,6 +1,7 @@
 import { orNotFound, shopPage } from "@/modules/access/page";
 import { GearCheckForm } from "@/modules/flow/components/gear-check-form";
 import { GearFactorChart } from "@/modules/flow/components/gear-factor-chart";
+import { GearStrikeDialog } from "@/modules/flow/components/gear-strike-dialog";
 import { BENCH_SCALE_SHORT } from "@/modules/flow/components/gear-words";
 import { FLOW_FLAGS } from "@/modules/flow/domain/flow-flags";
 import { benchHistory } from "@/modules/flow/queries/gear";
@@ -25,6 +26,7 @@ export default async function BenchPage({ params }: { params: Promise<{ shop: st
   const n = (v: number, digits: number) => decimal(v, digits, locale);
   const day = (iso: string) => date(localDate(new Date(iso), ctx.shop.zone), locale);
   const latest = bench.check;
+  const standing = checks.filter((c) => c.struck === null).length;
   return (
     <main id="main" className="page">
       <PageHead title={bench.name} sub={`${BENCH_SCALE_SHORT[bench.scale]}, ${tests} test${tests === 1 ? "" : "s"} read on it`}
@@ -33,9 +35,9 @@ export default async function BenchPage({ params }: { params: Promise<{ shop: st
         : latest.isOld ? <Note className="mb-6" title={`Last check ${dateTime(latest.at, ctx.shop)}.`}>It holds {benchCheckHours} h. Tests read now rely on an old check and say so.</Note> : null}
       <div className="split" style={{ "--side": "420px" } as React.CSSProperties}>
         <Bays>
-          {checks.length === 0 ? null : (
-            <Bay label="Bench factor" aside={`${checks.length} check${checks.length === 1 ? "" : "s"}`}>
-              <GearFactorChart locale={locale} dateText={day} points={[...checks].reverse().map((c) => ({ at: c.at, factor: c.factor, drifted: c.flags.includes("CALIBRATION_DRIFT") }))} />
+          {standing === 0 ? null : (
+            <Bay label="Bench factor" aside={`${standing} check${standing === 1 ? "" : "s"}`}>
+              <GearFactorChart locale={locale} dateText={day} points={checks.filter((c) => c.struck === null).reverse().map((c) => ({ at: c.at, factor: c.factor, drifted: c.flags.includes("CALIBRATION_DRIFT") }))} />
             </Bay>
           )}
           <Bay label="Checks" flush>
@@ -45,9 +47,13 @@ export default async function BenchPage({ params }: { params: Promise<{ shop: st
                 <thead><tr><th scope="col">When</th><th scope="col">By</th><th scope="col" className="r">Factor</th><th scope="col" className="r">Moved %</th><th scope="col" className="r">Worst plate %</th><th scope="col">Plates: certified, shown</th></tr></thead>
                 <tbody>{checks.map((c) => (
                   <tr key={c.id}>
-                    <td className="nw">{dateTime(c.at, ctx.shop)}</td><td>{c.by ?? "—"}</td><td className="r q"><b>{n(c.factor, 4)}</b></td>
+                    <td className="nw">{dateTime(c.at, ctx.shop)}</td><td>{c.by ?? "—"}</td><td className="r q">{c.struck ? <s>{n(c.factor, 4)}</s> : <b>{n(c.factor, 4)}</b>}</td>
                     <td className="r q">{c.driftPercent === null ? "—" : n(c.driftPercent, 2)}</td><td className="r q">{c.plates.length === 0 ? "—" : n(c.maxResidualPercent, 2)}</td>
-                    <td className="sm">{c.plates.length === 0 ? "looked over" : c.plates.map((p) => `${p.serial}: ${n(p.referenceCfm, 1)}, ${p.indicatedText}`).join("; ")}{c.note ? ` ${c.note}` : ""} {c.flags.map((f) => <Flag key={f} icon="warn">{words(f)}</Flag>)}</td>
+                    <td className="sm">
+                      {c.plates.length === 0 ? "looked over" : c.plates.map((p) => `${p.serial}: ${n(p.referenceCfm, 1)}, ${p.rangeLabel === null ? p.indicatedText : `${p.indicatedText} on range ${p.rangeLabel} = ${n(p.indicatedCfm, 1)}`}`).join("; ")}{c.note ? ` ${c.note}` : ""} {c.flags.map((f) => <Flag key={f} icon="warn">{words(f)}</Flag>)}
+                      {c.reason ? <span className="block">Kept because: {c.reason}</span> : null}
+                      {c.struck ? <b className="block">Out of use since {dateTime(c.struck.at, ctx.shop)}{c.struck.by ? `, ${c.struck.by}` : ""}: {c.struck.reason}</b> : canSetUp ? <span className="block noprint"><GearStrikeDialog checkId={c.id} when={dateTime(c.at, ctx.shop)} factorText={n(c.factor, 4)} /></span> : null}
+                    </td>
                   </tr>
                 ))}</tbody>
               </table></Lane>
@@ -55,7 +61,7 @@ export default async function BenchPage({ params }: { params: Promise<{ shop: st
           </Bay>
         </Bays>
         <Bays>
-          {canRecord && bench.active ? <Bay label="New check"><GearCheckForm benchId={bench.id} plates={plates} /></Bay> : null}
+          {canRecord && bench.active ? <Bay label="New check"><GearCheckForm bench={{ id: bench.id, scale: bench.scale, ranges: bench.ranges }} plates={plates} /></Bay> : null}
           <Bay label="As set up">
             <Kv pairs={[
               ["Pressures", `${bench.nominalPressuresInH2O.join(", ")} in H₂O`],

@@ -39,13 +39,13 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
   const p = await orNotFound(familyPicture(ctx, { family, side, last: LAST }));
   const href = (f: string, s: string) => `${base}/family?family=${encodeURIComponent(f)}&side=${s}`;
   const day = (iso: string) => date(localDate(new Date(iso), ctx.shop.zone), locale);
-  const facts = [p.bore === null ? null : `${decimal(p.bore, 1, locale)} × ${p.stroke === null ? "?" : decimal(p.stroke, 1, locale)} mm`, p.valves ? `${side} ${p.valves}` : null, `${p.tests} test${p.tests === 1 ? "" : "s"} of ${p.heads} head${p.heads === 1 ? "" : "s"}`].filter(Boolean).join(", ");
+  const facts = [p.bore === null ? null : `${decimal(p.bore, 1, locale)} × ${p.stroke === null ? "?" : decimal(p.stroke, 1, locale)} mm`, p.valves ? `${side} ${p.valves}` : null, `${p.tests} test${p.tests === 1 ? "" : "s"} of ${p.heads} flowed head${p.heads === 1 ? "" : "s"}`].filter(Boolean).join(", ");
   const unitOf = p.liftUnit;
   return (
     <main id="main" className="page">
       <PageHead title={family} sub={facts} close actions={<><LinkButton href={`${base}?family=${encodeURIComponent(family)}&side=${side}`}>Its tests</LinkButton><LinkButton href={base}>Library</LinkButton></>} />
       <Views label="Side" current={side} views={(["intake", "exhaust"] as const).map((s) => ({ key: s, label: s === "intake" ? "Intake" : "Exhaust", href: href(family, s) }))} />
-      <nav aria-label="Families" className="bar">{families.map((f) => <Link key={f.name} className={f.name === family ? "b" : "lk"} aria-current={f.name === family ? "page" : undefined} href={href(f.name, side)}>{f.name} <span className="dim sm">{f.heads}</span></Link>)}</nav>
+      <nav aria-label="Families" className="bar">{families.map((f) => <Link key={f.name} className={f.name === family ? "b" : "lk"} aria-current={f.name === family ? "page" : undefined} href={href(f.name, side)}>{f.name} <span className="dim sm">{f.heads} head{f.heads === 1 ? "" : "s"}</span></Link>)}</nav>
       <div className="two mt-6">
         <Bay label={`Gains of the last ${LAST} heads`}>
           <div className="hide-s"><LibraryGainStrips gains={p.gains} unit={unitOf} locale={locale} names={`the last heads of ${family}, ${side}`} /></div>
