@@ -43,6 +43,7 @@ const PAGES: Record<string, { where: string | ((p: Places) => Promise<string>); 
   "s/[shop]/flow/ladder": { where: at("/flow/ladder") },
   "s/[shop]/flow/gear": { where: at("/flow/gear") },
   "s/[shop]/flow/gear/[bench]": { where: (p) => linkOn(p, at("/flow/gear"), new RegExp(`/s/${SLUG}/flow/gear/${UUID}`)) },
+  "s/[shop]/flow/workings": { where: at("/flow/workings?f=gain_table&lifts_mm=1+2+3&before_cfm=14.2+27.8+40.1&after_cfm=13.6+27.5+41.9") },
   "s/[shop]/flow/library": { where: at("/flow/library") },
   "s/[shop]/flow/library/family": { where: at("/flow/library/family?family=S250-4V") },
   "s/[shop]/flow/library/overlay": { where: async (p) => at(`/flow/library/overlay?${await twoTests(p)}`) },

@@ -22,6 +22,7 @@ export default async function FlowRoomPage({ params, searchParams }: { params: P
       <PageHead title="Flow" sub="Heads on the bench, waiting for it, and proved." close actions={<>
         <LinkButton href={`${at}/gear`} variant="lo" size="sm">Benches and gear</LinkButton>
         <LinkButton href={`${at}/library`} variant="lo" size="sm">Library</LinkButton>
+        <LinkButton href={`${at}/workings`} variant="lo" size="sm">Workings</LinkButton>
         {ableTo(ctx, "flow.record") ? <><LinkButton href={`${at}/upload`} variant="lo" size="sm">Read from a file</LinkButton><LinkButton href={`${at}/ladder`} variant="lo" size="sm">Ladder for paper</LinkButton></> : null}
         {ableTo(ctx, "flow.record") ? <TagStart at={at} missing={asked} /> : null}
       </>} />

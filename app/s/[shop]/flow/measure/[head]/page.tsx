@@ -20,7 +20,7 @@ export default async function MeasurePage({ params }: { params: Promise<{ shop: 
   return (
     <main id="main" className="page">
       <PageHead title={<>Measurement sheet <span className="dim">{sheet.head.mark}</span></>} sub={`${sheet.head.family}. Limits are the shop's, with their source; where none is entered, defer to the service manual.`}
-        actions={<><LinkButton href={`${base}/flow/${sheet.head.id}`}>Flow sheet</LinkButton>{sheet.orderNumber ? <LinkButton href={`${base}/orders/${sheet.orderNumber}`}>Order</LinkButton> : null}</>} />
+        actions={<><LinkButton href={`${base}/flow/${sheet.head.id}`}>Flow sheet</LinkButton><LinkButton href={`${base}/flow/workings`}>Workings</LinkButton>{sheet.orderNumber ? <LinkButton href={`${base}/orders/${sheet.orderNumber}`}>Order</LinkButton> : null}</>} />
       {sheet.canRecord ? <div className="mb-4"><CautionNote hazards={hazards} workOrderId={sheet.orderId} headId={sheet.head.id} step={STEP} /></div> : null}
       <div className="mb-4 noprint"><HeadWork head={sheet.head} mayChange={sheet.canRecord} /></div>
       <MeasureSheet sheet={sheet} />
