@@ -42,6 +42,11 @@ export function UploadForm({ heads, gear, headId: given, nominal }: { heads: rea
   const head = heads.find((h) => h.id === headId);
   const read = useMemo(() => (chosen && mapping ? fileRows(chosen.rows, mapping, head?.cylinders ?? 1) : null), [chosen, mapping, head]);
 
+  // The address names the head, so that its photographs stand below; file and choices stay as they are.
+  const chooseHead = (id: string) => {
+    setHeadId(id);
+    router.replace(`/s/${slug}/flow/upload${id === "" ? "" : `?head=${id}`}`, { scroll: false });
+  };
   const choose = async (file: File | undefined) => {
     setTrouble(null);
     if (!file) return;
@@ -79,16 +84,16 @@ export function UploadForm({ heads, gear, headId: given, nominal }: { heads: rea
   };
   const set = (key: keyof typeof more) => (value: string) => setMore((old) => ({ ...old, [key]: value }));
   const unsettled = read ? read.refusals.filter((r) => !leaveOut.has(r.row)).length : 0;
-  const missing = !headId ? "Choose the head first." : !benchId || !fixtureId ? "Add a bench and a fixture under Bench gear first." : !read ? "Choose a file first." : unsettled > 0 ? `${unsettled} refused row${unsettled === 1 ? "" : "s"}: mend, map anew or leave out.` : read.readings.length === 0 ? "No row holds a reading." : undefined;
+  const missing = !headId ? "Choose the head first." : !benchId || !fixtureId ? "Add a bench and a bore adapter under Bench gear first." : !read ? "Choose a file first." : unsettled > 0 ? `${unsettled} refused row${unsettled === 1 ? "" : "s"}: mend, map anew or leave out.` : read.readings.length === 0 ? "No row holds a reading." : undefined;
   return (
     <Bays>
       {trouble ? <Note tone="stop" live title="Nothing was kept.">{trouble.message} {trouble.fields.map((f) => `${f.path}: ${f.message}`).join(" ")}</Note> : null}
       <Bay label="1. Of which head, read how">
         <div className="fields three">
-          <Pick label="Head" value={headId} options={[{ value: "", label: "Choose the head" }, ...heads.map((h) => ({ value: h.id, label: `${h.mark}, ${h.family}` }))]} onChange={setHeadId} />
+          <Pick label="Head" value={headId} options={[{ value: "", label: "Choose the head" }, ...heads.map((h) => ({ value: h.id, label: `${h.mark}, ${h.family}` }))]} onChange={chooseHead} />
           <Pick label="Test" value={purpose} options={[{ value: "baseline", label: "Before work" }, { value: "after", label: "After work" }, { value: "interim", label: "A pass in between" }, { value: "check", label: "A check" }]} onChange={setPurpose} />
           <Pick label="Bench" value={benchId} options={gear.benches.map((b) => ({ value: b.id, label: b.name }))} onChange={setBenchId} />
-          <Pick label="Fixture" value={fixtureId} options={gear.fixtures.map((f) => ({ value: f.id, label: `${f.name} (${f.boreMm} mm)` }))} onChange={setFixtureId} />
+          <Pick label="Bore adapter" value={fixtureId} options={gear.fixtures.map((f) => ({ value: f.id, label: `${f.name} (${f.boreMm} mm)` }))} onChange={setFixtureId} />
           <div className="field"><label htmlFor={nominalId}>Nominal pressure</label><span className="in"><input id={nominalId} className="at-r" inputMode="decimal" value={pressure} onChange={(e) => setPressure(e.target.value)} /><span className="unit">in H₂O</span></span></div>
           <Typed label="Flowed on" type="datetime-local" value={more.flowedAt} onChange={set("flowedAt")} hint="Empty = now. The bench check of that day counts." />
           <Typed label="Valve head" unit="mm" value={more.valve} onChange={set("valve")} hint="If one size." />
@@ -102,7 +107,7 @@ export function UploadForm({ heads, gear, headId: given, nominal }: { heads: rea
       </Bay>
       {read ? (
         <Bay label="3. What it says">
-          <UploadPreview read={read} leaveOut={leaveOut} onLeaveOut={setLeaveOut} />
+          <UploadPreview units={{ lift: mapping?.liftUnit ?? "in", ...units }} read={read} leaveOut={leaveOut} onLeaveOut={setLeaveOut} />
           <div className="fields one mt-4"><Typed label="Why doubtful readings are kept" value={more.reason} onChange={set("reason")} hint="Empty: a reading far from its neighbours stops the file, by its row." /></div>
         </Bay>
       ) : null}

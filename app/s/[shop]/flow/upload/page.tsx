@@ -24,7 +24,7 @@ export default async function UploadPage({ params, searchParams }: { params: Pro
     <main id="main" className="page">
       <PageHead title="Readings from a file" sub="A table of lifts and flows, in any order of columns." actions={<><LinkButton href={base}>Flow room</LinkButton><LinkButton href={`${base}/library`}>Library</LinkButton></>} />
       {heads.length === 0 ? <EmptyState title="No heads yet" action={<LinkButton href={`${base}/library`}>Add an own head</LinkButton>}>A head is here when its order is booked in, or when the shop adds one of its own.</EmptyState>
-        : <UploadForm key={known ?? "any"} heads={heads} gear={gear} headId={known} nominal={settings.nominalPressureInH2O} />}
+        : <UploadForm heads={heads} gear={gear} headId={known} nominal={settings.nominalPressureInH2O} />}
       {known && attached ? <div className="mt-7"><Bay label="Sheets and files of this head"><UploadPhotos headId={known} photos={attached.photos} files={attached.files} mayAdd /></Bay></div> : null}
     </main>
   );
