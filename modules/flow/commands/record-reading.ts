@@ -7,6 +7,7 @@ import { personIdOf, type TxContext } from "@/modules/access/context";
 import { ok, refuse, type Result } from "@/modules/kernel/result";
 import type { z } from "@/modules/kernel/zod";
 import { heldInH2O, SCALE_UNIT } from "../domain/computed-reading";
+import { mayBeKept } from "../domain/entry-questions";
 import { parseLiftUm } from "../domain/lift-ladder";
 import type { RawCell, RawTest } from "../domain/raw-test";
 import { figuresOfTest } from "../domain/test-figures";
@@ -19,8 +20,6 @@ import { latestCheck } from "./gear";
 export type TypedCell = Omit<z.output<typeof readingInput>, "testId">;
 export interface SavedReading { testId: string; liftUm: number; repeatNo: number; revision: number; valueText: string; flowCfm: number | null; flags: string[]; takenAt: string }
 
-/** Mistakes no reason can mend: the scale cannot show it, or it is no number. */
-const NEVER = new Set(["NUMBER_NOT_FINITE", "PRESSURE_NOT_POSITIVE", "LIFT_NOT_READABLE", "TEMPERATURE_PAIR", "UNIT_KIND_MISMATCH", "DENSITY_REQUIRED"]);
 /** A reading may have been typed without a link; so old it may be. */
 const KEPT_DAYS = 14;
 
@@ -46,8 +45,8 @@ function judged(test: RawTest, cell: RawCell) {
   const refusal = computed?.refusal ?? null;
   const negativeKept = computed?.question?.code === "FLOW_NEGATIVE" && hasReason;
   if (refusal && !negativeKept) {
-    const mayKeep = !NEVER.has(refusal.code) && refusal.code !== "READING_OUT_OF_RANGE" && hasReason;
-    if (!mayKeep) return { computed, refused: refuse(refusal.code, refusal.message, { field: refusal.field ?? "value", data: { askReason: !NEVER.has(refusal.code) && refusal.code !== "READING_OUT_OF_RANGE" } }) };
+    const mayKeep = mayBeKept(refusal.code);
+    if (!mayKeep || !hasReason) return { computed, refused: refuse(refusal.code, refusal.message, { field: refusal.field ?? "value", data: { askReason: mayKeep } }) };
   }
   return { computed, refused: null };
 }

@@ -16,6 +16,11 @@ export interface EntryQuestion {
   readonly words: string;
 }
 
+/** Refusals no reason can mend: it is no number, or the scale cannot show it, or its air cannot be read. */
+const NEVER_KEPT = new Set(["NUMBER_NOT_FINITE", "PRESSURE_NOT_POSITIVE", "LIFT_NOT_READABLE", "TEMPERATURE_PAIR", "UNIT_KIND_MISMATCH", "DENSITY_REQUIRED", "READING_OUT_OF_RANGE"]);
+/** May a reading that gives no figure be kept as it was read, with a reason? */
+export const mayBeKept = (refusalCode: string): boolean => !NEVER_KEPT.has(refusalCode);
+
 interface At {
   readonly liftUm: number;
   readonly flowCfm: number;

@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { HERO_CAM_UM, HERO_LIFTS_UM } from "@/tests/support/hero-flow";
 import { refusalOf, valueOf } from "@/tests/support/value-of";
-import { liftLadder, liftText, parseLiftUm } from "./lift-ladder";
+import { liftInOtherUnit, liftLadder, liftText, parseLiftUm } from "./lift-ladder";
 
 describe("a lift as typed, in whole micrometres (1 in = 25.4 mm by definition)", () => {
   it.each([
@@ -65,4 +65,10 @@ describe("lifts to test", () => {
     expect(refusalOf(liftLadder({ step: "0.05", camLift: "", unit: "in" })).field).toBe("camLift");
     expect(refusalOf(liftLadder({ step: "0.01", camLift: "0.34", unit: "in" })).code).toBe("TOO_MANY_LIFTS");
   });
+});
+
+describe("a lift typed in one unit, shown in the other", () => {
+  // 1 in = 25.4 mm by definition.
+  it.each([[".050", "in", "mm", "1.27"], ["0.340", "in", "mm", "8.636"], ["0,34", "in", "mm", "8.636"], ["8.636", "mm", "in", "0.340"], ["1", "mm", "in", "0.0394"], ["1.27", "mm", "in", "0.050"]] as const)("%s %s is %s %s", (text, from, to, made) => expect(liftInOtherUnit(text, from, to)).toBe(made));
+  it.each([["8.6 mm", "in", "mm"], ["soon", "in", "mm"], ["", "in", "mm"], [".050", "in", "in"]] as const)("%j stays as it was typed", (text, from, to) => expect(liftInOtherUnit(text, from, to)).toBe(text));
 });

@@ -51,6 +51,19 @@ export function parseLiftUm(text: string, unit: LiftUnit): Result<number> {
 export const liftText = (liftUm: number, unit: LiftUnit): string =>
   unit === "in" ? (liftUm / 25_400).toFixed(3) : (liftUm / 1000).toFixed(2);
 
+/**
+ * A lift typed in one unit, as it would be typed in the other: `.050` in -> `1.27` mm, `1` mm -> `0.0394` in. A text that names its own
+ * unit, or is no lift, stays as it was typed.
+ */
+export function liftInOtherUnit(text: string, from: LiftUnit, to: LiftUnit): string {
+  const lift = exactLift(text, from);
+  if (from === to || !lift || /[a-z"″]/i.test(text)) return text;
+  const um = umOf(lift);
+  if (to === "mm") return String(um / 1000);
+  const inches = (um / 25_400).toFixed(4);
+  return inches.endsWith("0") ? inches.slice(0, -1) : inches;
+}
+
 export interface LadderRung {
   readonly liftUm: number;
   /** In the unit and with the decimals of the step. */

@@ -20,3 +20,18 @@ export function valveListWords(valves: readonly ValveOfFamily[], side: PortSide)
   if (sizes.length === 1) return `${first} mm`;
   return sizes.every((d) => d === first) ? `${sizes.length} × ${first} mm` : `${sizes.join(", ")} mm`;
 }
+
+/**
+ * Head diameters of the valves a test ran with, mm: as the family lists them where the test states no size; all of the stated
+ * size, as many as the family lists, where it does; the stated one alone where the family lists none.
+ */
+export const valvesOfTest = (valveMm: number | null, listedMm: readonly number[]): number[] =>
+  valveMm === null ? [...listedMm] : listedMm.length > 0 ? listedMm.map(() => valveMm) : [valveMm];
+
+/** What an empty valve field and one number in it mean, for a side with these valves; empty where there is nothing to say. */
+export function valveFieldHint(listedMm: readonly number[]): string {
+  const [first] = listedMm;
+  if (first === undefined || listedMm.length < 2) return "";
+  const all = listedMm.length === 2 ? "both" : `all ${listedMm.length}`;
+  return listedMm.every((d) => d === first) ? `One number: ${all} valves are that size.` : `Empty: ${listedMm.join(", ")} mm, as the family lists. One number: ${all} are that size.`;
+}
