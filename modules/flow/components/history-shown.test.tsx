@@ -64,7 +64,7 @@ describe("a verdict by bench history", () => {
   it("has shapes of its own in the grid, with the words for the ear, and a legend", () => {
     const figures = sheetFigures(single(), 8);
     const nothing = () => undefined;
-    const sheet = { figures, textAt: () => "", stuckAt: () => null, type: nothing, commit: nothing };
+    const sheet = { figures, textAt: () => "", stuckAt: () => null, keptAt: () => undefined, type: nothing, commit: nothing };
     const html = words(renderToStaticMarkup(<ReadingGrid sheet={sheet} unit="in" locale="en-US" port={1} canRecord isBench={false} active={null} onActive={nothing} onKey={nothing} />));
     expect(html).toContain("◇ not distinguishable from zero, by bench history, +0.4");
     expect(html).toContain("◆ larger than the measurement noise (95 %), by bench history, +2.7");

@@ -1,26 +1,40 @@
 import { FLOW_FLAGS, LIFT_FLAGS, type FlowFlag, type LiftFlag } from "../../domain/flow-flags";
 import type { ComputedCell, TestFigures } from "../../domain/test-figures";
+import { typingDoubt } from "../../domain/typing-doubt";
 import type { Stuck } from "./reading-queue";
 
-/** Short words that stand in the cell itself, beside a triangle. */
+/** Short words that stand in the cell itself, beside a triangle; the most pressing first, because a cell shows one. */
 const SHORT: Partial<Record<FlowFlag | LiftFlag, string>> = {
-  READING_LOW_IN_RANGE: "low on scale", READING_HIGH_IN_RANGE: "top of scale", CONVERTED_PRESSURE: "converted", PRESSURE_OFF_NOMINAL: "pressure off", PRESSURE_RATIO_LARGE: "far converted",
-  LEAK_HIGH: "leak high", LEAK_SCALED: "leak scaled", FLOW_FALLS_WITH_LIFT: "flow falls", OUTLIER: "off the line", FLOW_AT_ZERO_LIFT: "flows shut",
+  CD_ABOVE_ONE: "impossible", ABOVE_IDEAL_PORT_LIMIT: "over section", FLOW_AT_ZERO_LIFT: "flows when shut", OUTLIER: "off the line", GAIN_UNUSUAL: "gain over 40 %", FLOW_FALLS_WITH_LIFT: "flow falls", PRESSURE_OFF_NOMINAL: "pressure off",
+  LEAK_HIGH: "leak high", CD_UNUSUAL: "unusual Cd", READING_HIGH_IN_RANGE: "top of scale", READING_LOW_IN_RANGE: "low on scale", PRESSURE_RATIO_LARGE: "far converted", CONVERTED_PRESSURE: "converted", LEAK_SCALED: "leak scaled",
 };
+const PRESSING = Object.keys(SHORT);
+const wordsOf = (flag: FlowFlag | LiftFlag): string => (flag in LIFT_FLAGS ? LIFT_FLAGS[flag as LiftFlag] : FLOW_FLAGS[flag as FlowFlag]);
 const STUCK_SHORT: Record<Stuck["kind"], string> = { asked: "sure?", refused: "look again", conflict: "changed" };
 
-export interface CellDoubt { readonly short: string; readonly words: string }
+export interface CellDoubt {
+  readonly short: string;
+  readonly words: string;
+  /** It does not stand as it is: no number, or asked. */
+  readonly isWrong: boolean;
+  /** A check it failed and may be kept over, with a reason. */
+  readonly isCheck: boolean;
+}
+const doubt = (short: string, words: string, more: Partial<CellDoubt> = {}): CellDoubt => ({ short, words, isWrong: false, isCheck: false, ...more });
 
-/** What is doubtful about one cell, the most pressing first. */
-export function cellDoubts(cell: ComputedCell | null, figures: TestFigures, stuck: Stuck | null, liftUm: number): CellDoubt[] {
+/**
+ * What is doubtful about one cell, the most pressing first.
+ * @param text what stands in it now. @param isTyping it is being typed: only what no further key can mend is said.
+ */
+export function cellDoubts({ cell, figures, stuck, liftUm, text, isTyping }: { cell: ComputedCell | null; figures: TestFigures; stuck: Stuck | null; liftUm: number; text: string; isTyping: boolean }): CellDoubt[] {
   const found: CellDoubt[] = [];
-  if (stuck) found.push({ short: STUCK_SHORT[stuck.kind], words: stuck.message });
-  if (stuck === null && cell?.excludedReason) found.push({ short: "left out", words: `Left out: ${cell.excludedReason}` });
-  else if (stuck === null && cell?.acceptedReason) found.push({ short: "kept", words: `Kept with a reason: ${cell.acceptedReason}` });
-  for (const flag of cell?.flags ?? []) if (SHORT[flag]) found.push({ short: SHORT[flag] ?? "", words: FLOW_FLAGS[flag] });
-  for (const d of figures.doubts) {
-    const isHere = d.liftUm === liftUm || (d.flag === "FLOW_AT_ZERO_LIFT" && liftUm === 0);
-    if (isHere && SHORT[d.flag]) found.push({ short: SHORT[d.flag] ?? "", words: d.flag in LIFT_FLAGS ? LIFT_FLAGS[d.flag as LiftFlag] : FLOW_FLAGS[d.flag as FlowFlag] });
-  }
-  return found;
+  const typed = stuck === null ? typingDoubt(text, cell) : null;
+  if (stuck) found.push(doubt(STUCK_SHORT[stuck.kind], stuck.message, { isWrong: stuck.kind !== "conflict" }));
+  else if (typed) found.push(doubt(STUCK_SHORT[typed.kind], typed.words, { isWrong: true }));
+  else if (cell?.refusal && !isTyping && cell.question === null) found.push(doubt("no figure", cell.refusal.message));
+  if (stuck === null && cell?.excludedReason) found.push(doubt("left out", `Left out: ${cell.excludedReason}`));
+  else if (stuck === null && cell?.acceptedReason) found.push(doubt("kept", `Kept with a reason: ${cell.acceptedReason}`));
+  const here = figures.doubts.filter((d) => d.liftUm === liftUm || (d.flag === "FLOW_AT_ZERO_LIFT" && liftUm === 0)).map((d) => d.flag);
+  const flags = [...new Set([...(cell?.flags ?? []), ...here])].filter((f) => SHORT[f] !== undefined).sort((a, b) => PRESSING.indexOf(a) - PRESSING.indexOf(b));
+  return [...found, ...flags.map((f) => doubt(SHORT[f] ?? "", wordsOf(f), { isCheck: true }))];
 }

@@ -15,12 +15,15 @@ export function ConditionStrip({ figures, valves, locale, change }: { figures: S
   if (!test) return null;
   const both = (of: (t: RawTest) => string | null) => [intake && of(intake), exhaust && of(exhaust)].map((v) => v ?? "–").join(" / ");
   const mm = (v: number) => decimal(v, Number.isInteger(v) ? 0 : 1, locale);
+  const camOf = (t: RawTest | null) => (t === null || t.camLiftUm === null ? null : `${liftWords(t.camLiftUm, t.liftUnit, locale)} ${t.liftUnit}`);
+  const [camIn, camEx] = [camOf(intake), camOf(exhaust)];
+  const cam = camIn !== null && camIn === camEx ? `${camIn}, both sides` : [camIn && `intake ${camIn}`, camEx && `exhaust ${camEx}`].filter(Boolean).join(", ") || "not noted";
   const cells: [string, ReactNode][] = [
-    ["Depression", `${decimal(test.nominalInH2O, 1, locale)} in H₂O`],
+    ["Depression", intake && exhaust && intake.nominalInH2O !== exhaust.nominalInH2O ? `${both((t) => decimal(t.nominalInH2O, 1, locale))} in H₂O` : `${decimal(test.nominalInH2O, 1, locale)} in H₂O`],
     ["Bore adapter", test.fixture.name.includes(String(test.fixture.boreMm)) ? `${test.fixture.name} mm` : `${test.fixture.name}, ${mm(test.fixture.boreMm)} mm`],
     ["Air", [test.roomTemperatureText, test.roomPressureText].filter(Boolean).join(", ") || "not noted"],
     ["Valves, mm", both((t) => (t.valveMm === null ? headDiametersMm(valves, t.side).map(mm).join("+") || null : mm(t.valveMm)))],
-    ["Cam lift at valve", intake?.camLiftUm === null && exhaust?.camLiftUm === null ? "not noted" : both((t) => (t.camLiftUm === null ? null : `${liftWords(t.camLiftUm, t.liftUnit, locale)} ${t.side === "intake" ? "in" : "ex"}`))],
+    ["Cam lift at valve", cam],
   ];
   return (
     <div className="set">

@@ -8,13 +8,14 @@ import { useCommandForm } from "@/modules/ui/form/use-command-form";
 import { usePlace } from "@/modules/ui/place";
 import { changeSheetConditionsAction } from "../../actions";
 import type { RawTest } from "../../domain/raw-test";
+import type { ValveOfFamily } from "../../domain/valve-list";
 import { changeSheetInput } from "../../input";
 import type { BenchGear } from "../../queries/sheet";
 import { liftTyped, SessionFields, SideFields } from "./start-sheet-form";
 
 type Drafts = { intake: RawTest | null; exhaust: RawTest | null };
 
-function ChangeForm({ gear, drafts, onChanged }: { gear: BenchGear; drafts: Drafts; onChanged: () => void }) {
+function ChangeForm({ gear, valves, drafts, onChanged }: { gear: BenchGear; valves: readonly ValveOfFamily[]; drafts: Drafts; onChanged: () => void }) {
   const { slug } = usePlace();
   const test = drafts.intake ?? drafts.exhaust;
   const side = (t: RawTest | null) => t ? {
@@ -37,8 +38,8 @@ function ChangeForm({ gear, drafts, onChanged }: { gear: BenchGear; drafts: Draf
     <CommandForm form={form} toFix="before the conditions change">
       <div className="fields">
         <SessionFields gear={gear} />
-        {intake ? <SideFields name="intake" title="Intake" gear={gear} unit={test?.liftUnit ?? "in"} onCam={(lift) => form.rhf.setValue("intake.camLift", lift)} /> : null}
-        {exhaust ? <SideFields name="exhaust" title="Exhaust" gear={gear} unit={test?.liftUnit ?? "in"} onCam={(lift) => form.rhf.setValue("exhaust.camLift", lift)} /> : null}
+        {intake ? <SideFields name="intake" title="Intake" gear={gear} unit={test?.liftUnit ?? "in"} valves={valves} onCam={(lift) => form.rhf.setValue("intake.camLift", lift)} /> : null}
+        {exhaust ? <SideFields name="exhaust" title="Exhaust" gear={gear} unit={test?.liftUnit ?? "in"} valves={valves} onCam={(lift) => form.rhf.setValue("exhaust.camLift", lift)} /> : null}
         <TextareaInput name="notes" label="Notes" rows={2} optional className="full" />
       </div>
       <div className="form-act"><SubmitButton pendingText="Changing…">Change them</SubmitButton><DialogClose>Leave as they are</DialogClose></div>
@@ -47,11 +48,11 @@ function ChangeForm({ gear, drafts, onChanged }: { gear: BenchGear; drafts: Draf
 }
 
 /** Conditions of the drafts in hand. */
-export function ConditionsDialog({ gear, drafts, onChanged }: { gear: BenchGear; drafts: Drafts; onChanged: () => void }) {
+export function ConditionsDialog({ gear, valves, drafts, onChanged }: { gear: BenchGear; valves: readonly ValveOfFamily[]; drafts: Drafts; onChanged: () => void }) {
   const [open, setOpen] = useState(false);
   return (
     <TaskDialog open={open} onOpenChange={setOpen} wide trigger={<button type="button" className="lk">Change</button>} title="Conditions of this test">
-      <ChangeForm gear={gear} drafts={drafts} onChanged={() => { setOpen(false); onChanged(); }} />
+      <ChangeForm gear={gear} valves={valves} drafts={drafts} onChanged={() => { setOpen(false); onChanged(); }} />
     </TaskDialog>
   );
 }

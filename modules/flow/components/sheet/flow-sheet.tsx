@@ -6,6 +6,11 @@ import { KeyHints } from "@/modules/ui/key-hints";
 import { Bay } from "@/modules/ui/bay";
 import { ToggleChip } from "@/modules/ui/chip";
 import { usePlace } from "@/modules/ui/place";
+import { useToast } from "@/modules/ui/toast";
+import { decimal } from "@/modules/kernel/format";
+import { arrivedWords } from "../../domain/arrived-readings";
+import { leftOutWords } from "../../domain/one-pressure";
+import { nextRange } from "../../domain/range-choice";
 import type { PortSide } from "../../domain/comparison-reasons";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
 import { CautionNote } from "../caution-note";
@@ -14,7 +19,8 @@ import { liftWords } from "../flow-words";
 import { NoiseLines } from "../noise-verdicts";
 import { AddLiftDialog, RemoveLift } from "./add-lift-dialog";
 import { BenchKeypad } from "./bench-keypad";
-import { CellPanel } from "./cell-panel";
+import { BenchLine } from "./bench-line";
+import { CellPanel, repeatId } from "./cell-panel";
 import { ConditionStrip } from "./condition-strip";
 import { ConditionsDialog } from "./conditions-form";
 import { NextStep } from "./next-step";
@@ -24,11 +30,14 @@ import { readingsLabel } from "./scale-words";
 import { SaveState } from "./save-state";
 import { notesOf, SheetNotes } from "./sheet-notes";
 import { meanText, SheetSummary } from "./sheet-summary";
-import type { SheetColumn } from "./sheet-figures";
+import { linesAt, repeatsRead, statedColumns, type SheetColumn } from "./sheet-figures";
 import { useSheet, type Pos } from "./use-sheet";
 
 const HINTS = [
   { keys: ["0–9"], does: "reading" }, { keys: ["Enter"], does: "next lift" }, { keys: ["→"], does: "exhaust" }, { keys: ["Shift", "Enter"], does: "back" },
+];
+const RANGE_HINT = { keys: ["Alt", "↑", "↓"], does: "range" };
+const MORE_HINTS = [
   { keys: ["PgDn"], does: "next port" }, { keys: ["*"], does: "take from bench" }, { keys: ["Ctrl", "Z"], does: "undo" },
 ];
 
@@ -39,13 +48,18 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const router = useRouter();
   const sheet = useSheet(given, slug);
   const [active, setActive] = useState<Pos | null>(null);
-  const [said, setSaid] = useState("");
+  const toast = useToast();
+  const [again, setAgain] = useState<{ cell: string; count: number } | null>(null);
+  const [drawAt, setDrawAt] = useState<number | null>(null);
   const [everyPass, setEveryPass] = useState(false);
   const { figures } = sheet;
   const columns = figures.sides.flatMap((s) => [s.before, s.after]).filter((c): c is SheetColumn => c !== null);
   const drafts = columns.filter((c) => c.test.state === "draft");
   const unit = columns[0]?.test.liftUnit ?? (locale.endsWith("US") ? "in" : "mm");
-  const nominal = columns[0]?.test.nominalInH2O ?? given.nominalInH2O;
+  const [newest = columns[0]?.test.nominalInH2O ?? given.nominalInH2O] = figures.pressures;
+  const atInH2O = drawAt !== null && figures.pressures.includes(drawAt) ? drawAt : newest;
+  const inH2O = (v: number) => decimal(v, Number.isInteger(v) ? 0 : 1, locale);
+  const notDrawn = leftOutWords(statedColumns(figures.sides), atInH2O, inH2O);
   const cam = columns.find((c) => c.test.camLiftUm !== null)?.test.camLiftUm ?? null;
   const activeColumn = active ? (columns.find((c) => c.test.id === active.testId) ?? null) : null;
   const notes = notesOf(figures, given.benchCheckHours, locale);
@@ -70,7 +84,21 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
     const to = given.cylinder + by;
     if (to >= 1 && to <= given.head.cylinders) router.push(`/s/${slug}/flow/${given.head.id}?port=${to}${isBench ? "&bench=1" : ""}`);
   };
-  const fromBench = () => void sheet.takeFromBench().then((did) => setSaid(did ? "Taken from the bench." : "No link to the shop's records."));
+  const fromBench = () => void sheet.takeFromBench().then((n) => toast({ text: n === null ? "No link to the shop's records." : arrivedWords(n) }));
+  const stepRange = (pos: Pos, by: 1 | -1) => {
+    const ranges = columns.find((c) => c.test.id === pos.testId)?.test.bench.ranges ?? [];
+    const to = nextRange(ranges, sheet.rangeAt(pos), by);
+    if (to !== null && sheet.rangeAt(pos) !== null) sheet.pressRange(pos, to);
+  };
+  const readAgain = (pos: Pos) => {
+    const col = columns.find((c) => c.test.id === pos.testId);
+    if (!col) return;
+    const count = Math.min(9, repeatsRead(col, pos.liftUm) + 1);
+    setActive({ ...pos, repeatNo: 1 });
+    setAgain({ cell: `${pos.testId}${pos.liftUm}`, count });
+    // The field is there after this press has been drawn.
+    requestAnimationFrame(() => document.getElementById(repeatId({ ...pos, repeatNo: count }))?.focus());
+  };
   const undo = (pos: Pos | null) => {
     const where = sheet.undo(pos);
     if (where) focus(where.side, where.when, where.liftUm);
@@ -80,7 +108,8 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
     const { selectionStart, selectionEnd, value } = e.currentTarget;
     const all = selectionStart === 0 && selectionEnd === value.length;
     const act: (() => void) | undefined =
-      e.key === "Enter" ? () => step(pos, e.shiftKey ? -1 : 1)
+      e.altKey && (e.key === "ArrowUp" || e.key === "ArrowDown") ? () => stepRange(pos, e.key === "ArrowUp" ? 1 : -1)
+      : e.key === "Enter" ? () => step(pos, e.shiftKey ? -1 : 1)
       : e.key === "ArrowDown" ? () => step(pos, 1)
       : e.key === "ArrowUp" ? () => step(pos, -1)
       : e.key === "ArrowRight" && (all || selectionStart === value.length) ? () => across(pos, "exhaust")
@@ -97,16 +126,19 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const digit = (d: string) => {
     if (!active || !activeColumn) return;
     const input = document.activeElement;
-    const isWhole = input instanceof HTMLInputElement && input.id === cellId(active.side, active.when, active.liftUm) && input.selectionStart === 0 && input.selectionEnd === input.value.length;
+    const isWhole = input instanceof HTMLInputElement && input.id === repeatId(active) && input.selectionStart === 0 && input.selectionEnd === input.value.length;
     sheet.type(active, (isWhole ? "" : sheet.textAt(active)) + d);
   };
 
   const means = ([["in", intake], ["ex", exhaust]] as const).flatMap(([short, side]) => { const mean = meanText(side, locale); return mean ? [`${mean} mean ${short}`] : []; }).join(", ");
   const name = active && activeColumn ? `${active.side} ${liftWords(active.liftUm, unit, locale)} ${activeColumn.head.toLowerCase()}` : "no cell yet";
   const firstDraft = drafts[0];
+  // Before a cell is in hand, range and pressure are those of the first that will be.
+  const inHand = active && activeColumn?.test.state === "draft" ? active : firstDraft ? posOf(firstDraft, figures.liftsUm[0] ?? 0) : null;
+  const inHandColumn = inHand ? (columns.find((c) => c.test.id === inHand.testId) ?? null) : null;
   const live = drafts.some((c) => c.when === "before") && !drafts.some((c) => c.when === "after") ? "typing-before" : "typing-after";
   const draftOf = (i: 0 | 1) => { const s = figures.sides[i]; return [s?.after, s?.before].find((c) => c?.test.state === "draft")?.test ?? null; };
-  const change = drafts.length > 0 && given.canRecord ? <ConditionsDialog gear={gear} drafts={{ intake: draftOf(0), exhaust: draftOf(1) }} onChanged={() => router.refresh()} /> : undefined;
+  const change = drafts.length > 0 && given.canRecord ? <ConditionsDialog gear={gear} valves={given.head.valves} drafts={{ intake: draftOf(0), exhaust: draftOf(1) }} onChanged={() => router.refresh()} /> : undefined;
   // At the bench it stands over the grid, so that the keypad keeps its place.
   const caution = drafts.length > 0 ? <CautionNote hazards={given.cautions} workOrderId={given.head.workOrderId} headId={given.head.id} step="bench session" /> : null;
   const canAddLift = drafts.length > 0 && given.canRecord && !isBench;
@@ -114,7 +146,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const keysWork = !isBench || drafts.length > 0;
   const next = <NextStep sheet={given} gear={gear} figures={figures} settle={sheet.settle} onChanged={() => router.refresh()} />;
   const passed = sidesWithPasses(sheet.tests);
-  const curve = { lines: figures.lines, unit, atInH2O: nominal, camLiftUm: cam, locale, label: "Read the curve point by point" } as const;
+  const curve = { lines: linesAt(figures.sides, atInH2O), unit, atInH2O, camLiftUm: cam, locale, label: "Read the curve point by point" } as const;
 
   return (
     <div className={`flow-sheet ${live}${isBench ? " bench" : ""}`}>
@@ -126,7 +158,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
           {columns.length === 0 ? <Bay label="Readings, CFM"><p className="mid">No test of this port yet. The before test is read before any work is done.</p></Bay> : (
             <Bay label={readingsLabel(columns.map((c) => c.test.bench.scale))} flush className="fg" aside={canAddLift ? <AddLiftDialog drafts={drafts.map((c) => c.test)} settle={sheet.settle} onAdded={() => router.refresh()} /> : undefined}>
               <ReadingGrid sheet={sheet} unit={unit} locale={locale} port={given.cylinder} canRecord={given.canRecord} isBench={isBench} active={active} onActive={setActive} onKey={onKey} />
-              {active && activeColumn?.test.state === "draft" ? <CellPanel key={`${active.testId}${active.liftUm}`} sheet={sheet} pos={active} col={activeColumn} locale={locale} /> : null}
+              {active && activeColumn?.test.state === "draft" ? <CellPanel key={`${active.testId}${active.liftUm}`} sheet={sheet} pos={active} col={activeColumn} locale={locale} asked={again?.cell === `${active.testId}${active.liftUm}` ? again.count : 1} onActive={setActive} {...(isBench ? {} : { onAgain: () => readAgain(active) })} /> : null}
               {active && canAddLift ? <RemoveLift key={active.liftUm} drafts={drafts.map((c) => c.test)} liftUm={active.liftUm} name={liftWords(active.liftUm, unit, locale)} settle={sheet.settle} onRemoved={() => router.refresh()} /> : null}
               {isBench ? null : <NoiseLines gains={figures.sides.map((s) => s.gain)} locale={locale} />}
             </Bay>
@@ -137,7 +169,10 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
           {keysWork ? next : null}
         </div>
         <div className="fl-r">
-          <Bay label="Live curve" aside={isBench && means !== "" ? means : undefined}>
+          <Bay label="Live curve" aside={isBench ? <>{means === "" ? null : <span className="mr-3">{means}</span>}<Link className="lk" href={`/s/${slug}/flow/${given.head.id}?port=${given.cylinder}`}>Desk view</Link></> : undefined}>
+            {figures.pressures.length > 1 && !(everyPass && !isBench) ? (
+              <div role="group" aria-label="Pressure that is drawn" className="mb-2 flex flex-wrap gap-1">{figures.pressures.map((p) => <ToggleChip key={p} on={p === atInH2O} onChange={() => setDrawAt(p)}>{`At ${inH2O(p)} in H₂O`}</ToggleChip>)}</div>
+            ) : null}
             {passed.length > 0 && !isBench ? (
               <div role="group" aria-label="What the curve shows" className="mb-2 flex flex-wrap gap-1">
                 <ToggleChip on={!everyPass} onChange={() => setEveryPass(false)}>Before and newest</ToggleChip>
@@ -146,13 +181,15 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
             ) : null}
             {everyPass && passed.length > 0 && !isBench ? <PassCurves tests={sheet.tests} place={place} sides={passed} /> : (
               <>
-                <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 214 : 366} /></div>
+                <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 160 : 366} /></div>
                 <div className="only-narrow"><CurveReader {...curve} width={350} height={290} mini /></div>
+                {notDrawn === "" ? null : <p className="sm mt-2" role="note"><span aria-hidden="true">▲ </span>{notDrawn}</p>}
               </>
             )}
             {isBench ? null : <SheetSummary figures={figures} locale={locale} />}
           </Bay>
           {keysWork ? null : next}
+          {isBench && keysWork && inHand && inHandColumn ? <BenchLine sheet={sheet} pos={inHand} col={inHandColumn} onAgain={() => readAgain(inHand)} /> : null}
           {isBench && keysWork ? (
             <BenchKeypad
               name={name} onDigit={digit} onBack={() => { if (active) sheet.type(active, sheet.textAt(active).slice(0, -1)); }} onBench={fromBench}
@@ -164,8 +201,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
         </div>
       </div>
       <div className="fl-foot">
-        {isBench ? null : <KeyHints hints={HINTS} />}
-        <span className="sr-only" role="status">{said}</span>
+        {isBench ? null : <KeyHints hints={[...HINTS, ...(drafts.some((c) => c.test.bench.scale !== "direct") ? [RANGE_HINT] : []), ...MORE_HINTS]} />}
         <SaveState state={sheet.state} savedAt={sheet.savedAt} place={place} />
         {isBench ? null : <Link className="lk" href={`/s/${slug}/flow/${given.head.id}?port=${given.cylinder}&bench=1`}>Bench view</Link>}
       </div>

@@ -9,6 +9,8 @@ import { RequestIds } from "@/modules/ui/form/request-id";
 import { completeTestAction, correctTestAction, issueComparisonAction, voidTestAction } from "../../actions";
 import type { RawTest } from "../../domain/raw-test";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
+import { unreadLifts, type UnreadLifts } from "../../domain/unread-lifts";
+import { FinishDialog, ZeroReturn, type EmptyAct } from "./finish-dialog";
 import { PURPOSE_WORDS, StartSheetDialog } from "./start-sheet-form";
 import type { SheetFigures } from "./sheet-figures";
 
@@ -35,7 +37,7 @@ function ReasonDialog({ label, question, action, onAction }: { label: string; qu
 
 /** The one next step of the sheet: start, finish, issue; and the rarer ones beside it. */
 export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: FlowSheet; gear: BenchGear; figures: SheetFigures; settle: () => Promise<string | null>; onChanged: () => void }) {
-  const { slug } = usePlace();
+  const { slug, locale } = usePlace();
   const [pending, setPending] = useState(false);
   const [trouble, setTrouble] = useState<string | null>(null);
   const columns = figures.sides.flatMap((s) => [s.before, s.after]).flatMap((c) => (c ? [c.test] : []));
@@ -65,27 +67,42 @@ export function NextStep({ sheet, gear, figures, settle, onChanged }: { sheet: F
     setPending(false);
     onChanged();
   };
+  const [asking, setAsking] = useState<readonly UnreadLifts[] | null>(null);
+  const [zero, setZero] = useState<Readonly<Record<string, string>>>({});
   const finish = async () => {
     setPending(true);
     const inTheWay = await settle();
     setPending(false);
+    const holes = unreadLifts(drafts);
     if (inTheWay) setTrouble(inTheWay);
-    else await finishAll();
+    else if (holes.length > 0 && !holes.every((h) => h.isEmpty && holes.length === drafts.length)) setAsking(holes);
+    else await finishAll(drafts);
   };
-  const finishAll = () => run(drafts.map((t) => ({ what: `finish ${t.id}`, act: (requestId) => completeTestAction(slug, { requestId, input: { testId: t.id, version: t.version } }) })));
+  const voidAct = (t: RawTest, reason: string) => ({ what: `void ${t.id} ${reason}`, act: (requestId: string) => voidTestAction(slug, { requestId, input: { testId: t.id, version: t.version, reason } }) });
+  const finishAll = (read: readonly RawTest[], empty: readonly RawTest[] = []) => run([
+    ...read.map((t) => ({ what: `finish ${t.id} ${zero[t.id] ?? ""}`, act: (requestId: string) => completeTestAction(slug, { requestId, input: { testId: t.id, version: t.version, zeroReturn: zero[t.id] ?? "" } }) })),
+    ...empty.map((t) => voidAct(t, "nothing was read")),
+  ]);
+  const finishAsked = (act: EmptyAct) => {
+    const isEmpty = (t: RawTest) => asking?.some((h) => h.isEmpty && h.test.id === t.id) === true;
+    setAsking(null);
+    void finishAll(drafts.filter((t) => !isEmpty(t)), act === "void" ? drafts.filter(isEmpty) : []);
+  };
   const issue = () => void run([{ what: "issue", act: (requestId) => issueComparisonAction(slug, { requestId, input: { headId: sheet.head.id, cylinder: sheet.cylinder, customerWords: "" } }) }]);
   const [latest] = sheet.comparisons;
   if (!sheet.canRecord) return latest ? <LinkButton href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">Report {latest.comparisonNo}</LinkButton> : null;
   return (
     <>
       {trouble ? <Note tone="warn" live title="Not done.">{trouble}</Note> : null}
+      {asking ? <FinishDialog holes={asking} unit={drafts[0]?.liftUnit ?? "in"} locale={locale} onFinish={finishAsked} onLeave={() => setAsking(null)} /> : null}
       <div className="commit-bar">
         <span>
           <b>{drafts.length > 0 ? drafts.map((t) => `${t.side} ${PURPOSE_WORDS[t.purpose]}`).join(", ") : finished.length > 0 ? (hasAfter ? "Before and after are finished" : "Before test finished") : "Nothing read yet"}</b>{" "}
           <span className="mid">{drafts[0] ? `run ${drafts[0].runNo}, ${drafts[0].operator.name}` : ""}</span>
         </span>
+        {drafts.length > 0 ? <ZeroReturn drafts={drafts} values={zero} onChange={(testId, text) => setZero({ ...zero, [testId]: text })} /> : null}
         <span className="ml-auto flex flex-wrap items-center gap-2">
-          {drafts.length > 0 ? <ReasonDialog label="Void" question={`Void ${drafts.length > 1 ? "these tests" : "this test"}?`} action="Void it" onAction={(reason) => void run(drafts.map((t) => ({ what: `void ${t.id} ${reason}`, act: (requestId) => voidTestAction(slug, { requestId, input: { testId: t.id, version: t.version, reason } }) })))} /> : null}
+          {drafts.length > 0 ? <ReasonDialog label="Void" question={`Void ${drafts.length > 1 ? "these tests" : "this test"}?`} action="Void it" onAction={(reason) => void run(drafts.map((t) => voidAct(t, reason)))} /> : null}
           {drafts.length === 0 ? newest.map((t) => <ReasonDialog key={t.id} label={`Correct ${t.side}`} question={`Correct the finished ${t.side} ${PURPOSE_WORDS[t.purpose]}?`} action="Correct it" onAction={(reason) => void run([{ what: `correct ${t.id} ${reason}`, act: (requestId) => correctTestAction(slug, { requestId, input: { testId: t.id, reason } }) }])} />) : null}
           {latest ? <LinkButton size="sm" href={`/s/${slug}/flow/reports/${latest.id}`} newTab icon="print">{`Report ${latest.comparisonNo}`}</LinkButton> : null}
           {drafts.length > 0 ? <Button variant="go" pending={pending} pendingText="Finishing…" onClick={() => void finish()}>{drafts.length > 1 ? "Finish both tests" : "Finish test"}</Button> : null}

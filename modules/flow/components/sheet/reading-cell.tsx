@@ -8,6 +8,8 @@ export interface ReadingCellProps {
   /** Ids of the heads that name it: lift, side, column. */
   labelledBy: string;
   text: string;
+  /** Unit of what is typed, where it is not the column's. */
+  unit: string | null;
   /** Flow at the nominal pressure where it differs from what is typed. */
   corrected: string | null;
   isLoss: boolean;
@@ -27,7 +29,8 @@ export function ReadingCell(p: ReadingCellProps) {
   const noteId = `${p.id}-n`;
   const under = (
     <>
-      {p.corrected === null ? null : <span className="cor">{p.corrected}</span>}
+      {p.unit === null ? null : <span className="cor cu">in {p.unit}{p.corrected === null ? "" : " ="}</span>}
+      {p.corrected === null ? null : <span className="cor">{p.corrected}{p.unit === null ? "" : " CFM"}</span>}
       {doubt === undefined ? null : <span className="fw"><span aria-hidden="true">▲ </span>{doubt.short}</span>}
       {p.doubts.length === 0 ? null : <span id={noteId} className="sr-only">{p.doubts.map((d) => d.words).join(" ")}</span>}
     </>
@@ -37,7 +40,7 @@ export function ReadingCell(p: ReadingCellProps) {
     <>
       <input
         id={p.id} className={clsx(p.isLoss && "loss", p.text === "" && "todo")} value={p.text} aria-labelledby={p.labelledBy} aria-describedby={p.doubts.length > 0 ? noteId : undefined}
-        aria-invalid={p.doubts.some((d) => d.short === "look again" || d.short === "sure?") || undefined} inputMode={p.isBench ? "none" : "decimal"} autoComplete="off" enterKeyHint="next" maxLength={20}
+        aria-invalid={p.doubts.some((d) => d.isWrong) || undefined} inputMode={p.isBench ? "none" : "decimal"} autoComplete="off" enterKeyHint="next" maxLength={20}
         // A press on another cell selects what stands there, so that typing replaces it.
         onMouseDown={(e) => { if (document.activeElement !== e.currentTarget) { e.preventDefault(); e.currentTarget.focus(); } }}
         onChange={(e) => p.onText(e.target.value)} onKeyDown={p.onKey} onFocus={(e) => { e.currentTarget.select(); p.onEnter(); }} onBlur={p.onLeave}

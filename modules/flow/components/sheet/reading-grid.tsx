@@ -2,6 +2,7 @@
 import { Fragment, type KeyboardEvent } from "react";
 import { decimal } from "@/modules/kernel/format";
 import type { PortSide } from "../../domain/comparison-reasons";
+import { SCALE_UNIT } from "../../domain/computed-reading";
 import { interpolateFlow } from "../../domain/interpolate-flow";
 import type { LiftUnit } from "../../domain/lift-ladder";
 import { typedNumber } from "../../domain/typed-number";
@@ -9,7 +10,7 @@ import { differenceText, flowText, liftWords } from "../flow-words";
 import { NoiseMark } from "../noise-verdicts";
 import { cellDoubts } from "./cell-words";
 import { ReadingCell } from "./reading-cell";
-import { SCALE_SIGN } from "./scale-words";
+import { SCALE_SIGN, VALUE_SIGN } from "./scale-words";
 import { cellAt, flowAt, type SheetColumn, type SheetSide, type When } from "./sheet-figures";
 import type { Pos, Sheet } from "./use-sheet";
 
@@ -17,7 +18,7 @@ export const cellId = (side: PortSide, when: When, liftUm: number): string => `c
 export const posOf = (col: SheetColumn, liftUm: number, repeatNo = 1): Pos => ({ side: col.side, when: col.when, testId: col.test.id, liftUm, repeatNo });
 
 /** What the grid needs of the sheet's state. */
-export type GridSheet = Pick<Sheet, "figures" | "textAt" | "stuckAt" | "type" | "commit">;
+export type GridSheet = Pick<Sheet, "figures" | "textAt" | "keptAt" | "stuckAt" | "type" | "commit">;
 
 interface GridProps {
   sheet: GridSheet;
@@ -80,6 +81,10 @@ export function ReadingGrid({ sheet, unit, locale, port, canRecord, isBench, act
   const camUm = sides.map((s) => (s.after ?? s.before)?.test.camLiftUm ?? null).find((c) => c !== null) ?? null;
   const camAfter = camUm === null ? null : liftsUm.filter((um) => um < camUm).at(-1);
 
+  // Where the tests are stated at different pressures, each column says its own.
+  const apart = new Set(sides.flatMap((s) => [s.before, s.after]).flatMap((c) => (c ? [c.test.nominalInH2O] : []))).size > 1;
+  const pressureOf = (col: SheetColumn | null) => (apart && col ? <span className="unit"> at {decimal(col.test.nominalInH2O, Number.isInteger(col.test.nominalInH2O) ? 0 : 1, locale)}<span className="sr-only"> inches of water</span></span> : null);
+
   const cell = (side: SheetSide, when: When, liftUm: number) => {
     const col = side[when];
     const cls = when === "before" ? "r cell bf" : "r cell af";
@@ -91,14 +96,17 @@ export function ReadingGrid({ sheet, unit, locale, port, canRecord, isBench, act
     const isEditable = canRecord && col.test.state === "draft";
     const text = sheet.textAt(pos);
     const typed = typedNumber(text);
-    const shown = flow !== null && !(typed.ok && Math.abs(typed.value - flow) < 0.05 && col.test.bench.scale === "direct") ? flowText(flow, locale) : null;
+    const shown = flow !== null && !(typed.ok && (computed?.valueUnit ?? "cfm") === "cfm" && Math.abs(typed.value - flow) < 0.05 && col.test.bench.scale === "direct") ? flowText(flow, locale) : null;
     const isLoss = when === "after" && side.gain?.comparable === true && (side.gain.rows.find((r) => r.liftUm === liftUm)?.gainCfm ?? 0) < 0;
     const isActive = active?.testId === col.test.id && active.liftUm === liftUm;
-    const doubts = cellDoubts(computed, col.figures, sheet.stuckAt(pos), liftUm).filter((d) => !isActive || d.short !== "off the line");
+    const isTyping = isActive && sheet.keptAt(pos)?.isReady === false;
+    const doubts = cellDoubts({ cell: computed, figures: col.figures, stuck: sheet.stuckAt(pos), liftUm, text, isTyping }).filter((d) => !isActive || d.short !== "off the line");
+    const unitNow = computed?.valueUnit ?? SCALE_UNIT[col.test.bench.scale];
     return (
       <td className={cls}>
         <ReadingCell
           id={cellId(side.side, when, liftUm)} labelledBy={`l-${liftUm} g-${side.side} h-${side.side}-${when}`} text={isEditable || !typed.ok || col.test.bench.scale !== "direct" ? text : decimal(typed.value, Math.max(1, /[.,](\d+)/.exec(text)?.[1]?.length ?? 0), locale)}
+          unit={text !== "" && unitNow !== SCALE_UNIT[col.test.bench.scale] ? VALUE_SIGN[unitNow] : null}
           corrected={shown} isLoss={isLoss} isEditable={isEditable} isBench={isBench} doubts={doubts} repeats={repeats}
           onText={(value) => sheet.type(pos, value)} onKey={(e) => onKey(pos, e)} onEnter={() => onActive(pos)} onLeave={() => sheet.commit(pos)}
         />
@@ -117,8 +125,8 @@ export function ReadingGrid({ sheet, unit, locale, port, canRecord, isBench, act
           <th scope="col">Lift<span className="sr-only">, {unit}</span></th>
           {sides.map((s) => (
             <Fragment key={s.side}>
-              <th scope="col" id={`h-${s.side}-before`} className="r bf">Before{unitOf(s.before)}</th>
-              <th scope="col" id={`h-${s.side}-after`} className="r af">{s.after?.head ?? "After"}{unitOf(s.after)}</th>
+              <th scope="col" id={`h-${s.side}-before`} className="r bf">Before{unitOf(s.before)}{pressureOf(s.before)}</th>
+              <th scope="col" id={`h-${s.side}-after`} className="r af">{s.after?.head ?? "After"}{unitOf(s.after)}{pressureOf(s.after)}</th>
               <th scope="col" className="r gh">{s.gain && !s.gain.comparable && s.gain.state === "withheld" ? "Withheld" : "Gain"}</th>
             </Fragment>
           ))}

@@ -45,6 +45,23 @@ const queue = (person = "june") => new ReadingQueue(store, server.send, (s) => s
 beforeEach(() => { store = tablet(); server = records(); saved = []; });
 
 describe("readings on their way", () => {
+  it("go once what held them back holds no longer, as a new try; one written over by somebody else stays held", async () => {
+    const q = queue();
+    await put(q, at(1270), edit("24.6"));
+    await q.hold(at(1270).key, "The leak was read at another pressure.", true);
+    await q.flush();
+    expect(server.log).toEqual([]);
+    await q.unhold(at(1270).key, "again");
+    await q.flush();
+    expect(server.log).toEqual(["1270=24.6"]);
+    server.cells.set(at(2540).key, { revision: 1, value: "50" });
+    await put(q, at(2540), edit("48.9"));
+    await q.flush();
+    await q.unhold(at(2540).key, "more");
+    await q.flush();
+    expect(server.cells.get(at(2540).key)?.value).toBe("50");
+  });
+
   it("are saved in the order they were typed and leave the tablet empty", async () => {
     const q = queue();
     await put(q, at(2540), edit("48.9"));

@@ -1,10 +1,16 @@
+import type { HeldUnit, ValueUnit } from "../../domain/raw-test";
+
 /** One typed value on its way to the shop's records. */
 export interface CellEdit {
   readonly requestId: string;
   readonly value: string;
+  /** Left out: the unit of the bench's scale. */
+  readonly valueUnit?: ValueUnit;
   readonly range: string | null;
   /** Empty: the nominal pressure. */
   readonly pressure: string;
+  /** Left out: inches of water. */
+  readonly pressureUnit?: HeldUnit;
   /** Air at the port and at the orifice with units; left out: not measured. */
   readonly portTemperature?: string;
   readonly orificeTemperature?: string;
@@ -136,6 +142,13 @@ export class ReadingQueue {
   async hold(key: string, message: string, askReason: boolean): Promise<void> {
     const cell = this.cells.get(key);
     if (cell) await this.keep({ ...cell, stuck: { kind: askReason ? "asked" : "refused", message, askReason, theirs: null } });
+  }
+
+  /** What held it back holds no longer: it goes as a new try. One that somebody else wrote over stays held. */
+  async unhold(key: string, requestId: string): Promise<void> {
+    const cell = this.cells.get(key);
+    const last = cell?.edits.at(-1);
+    if (cell?.stuck && last && !cell.stuck.theirs) await this.keep({ ...cell, stuck: null, isReady: true, edits: [...cell.edits.slice(0, -1), { ...last, requestId, sent: false }] });
   }
 
   /** Forgets the value that was never sent; one that is on its way, or what stands in the records, counts again. */

@@ -39,7 +39,7 @@ export const readingSender = (slug: string): Sender => async (cell, edit): Promi
       headers: { "content-type": "application/json", "idempotency-key": edit.requestId },
       body: JSON.stringify({
         testId: cell.testId, lift: cell.lift, liftUnit: cell.liftUnit, repeatNo: cell.repeatNo, value: edit.value, revisionSeen: cell.revision, takenAt: edit.takenAt,
-        ...(edit.pressure === "" ? {} : { pressure: edit.pressure }), ...(edit.range === null ? {} : { range: edit.range }),
+        ...(edit.valueUnit ? { valueUnit: edit.valueUnit } : {}), ...(edit.pressure === "" ? {} : { pressure: edit.pressure, ...(edit.pressureUnit ? { pressureUnit: edit.pressureUnit } : {}) }), ...(edit.range === null ? {} : { range: edit.range }),
         ...(edit.portTemperature ? { portTemperature: edit.portTemperature } : {}), ...(edit.orificeTemperature ? { orificeTemperature: edit.orificeTemperature } : {}),
         ...(edit.acceptedReason === null ? {} : { acceptedReason: edit.acceptedReason }), ...(edit.excludedReason === null ? {} : { excludedReason: edit.excludedReason }),
       }),

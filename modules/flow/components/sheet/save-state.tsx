@@ -13,7 +13,7 @@ export function SaveState({ state, savedAt, place }: { state: QueueState; savedA
   return (
     <span className="saved" role="status">
       <Icon name={waiting > 0 && link !== "up" ? "unplug" : "check"} size={15} />
-      {words}{held > 0 ? `, ${held} for you to look at` : ""}
+      {words}{held > 0 ? `${words.endsWith(".") ? "" : "."} ${held} for you to look at.` : ""}
     </span>
   );
 }

@@ -1,5 +1,6 @@
 import type { ReactNode } from "react";
 import { Note } from "@/modules/ui/note";
+import { FLOW_FLAGS } from "../../domain/flow-flags";
 import { differenceText, liftWords } from "../flow-words";
 import type { SheetFigures } from "./sheet-figures";
 
@@ -33,6 +34,11 @@ export function notesOf(figures: SheetFigures, benchCheckHours: number, locale: 
           add({ key: `check-${col.when}`, title: at === null ? "The bench has not been checked." : `The bench check was ${Math.round(hours)} h old.`, words: `${col.head} relies on it; it holds for ${benchCheckHours} h. Check the bench, or no difference will be shown.` });
         }
       }
+    }
+  }
+  for (const col of figures.sides.flatMap((s) => [s.before, s.after])) {
+    for (const { flag } of col?.figures.doubts ?? []) {
+      if (col && (flag === "NOT_TESTED_TO_CAM_LIFT" || flag === "LIFT_ZERO_DRIFT")) add({ key: `${flag}-${col.side}-${col.when}`, title: `${SIDE_WORDS[col.side]}, ${col.head.toLowerCase()}.`, words: FLOW_FLAGS[flag] });
     }
   }
   return [...notes.values()];

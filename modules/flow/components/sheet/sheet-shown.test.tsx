@@ -23,8 +23,8 @@ function sheetOf(tests: readonly RawTest[], typed: Record<string, RawCell[]> = {
   const live = tests.map((t) => withTyped(t, typed[t.id] ?? []));
   const textAt = (pos: Pos) => live.find((t) => t.id === pos.testId)?.cells.find((c) => c.liftUm === pos.liftUm && c.repeatNo === pos.repeatNo)?.valueText ?? "";
   return {
-    figures: sheetFigures(live, 8), textAt, stuckAt: () => null, keptAt: () => undefined, type: nothing, commit: nothing, range: null, setRange: nothing, held, setHeld: nothing, mark: nothing,
-    keepWithReason: nothing, discard: nothing, insist: nothing, takeFromBench: () => Promise.resolve(true),
+    figures: sheetFigures(live, 8), textAt, stuckAt: () => null, keptAt: () => undefined, type: nothing, commit: nothing, rangeAt: (pos) => live.find((t) => t.id === pos.testId)?.cells.find((c) => c.liftUm === pos.liftUm)?.rangeLabel ?? null, pressRange: nothing, held, setHeld: nothing, mark: nothing,
+    keepWithReason: nothing, discard: nothing, insist: nothing, takeFromBench: () => Promise.resolve(0),
   };
 }
 const grid = (sheet: GridSheet) => renderToStaticMarkup(<ReadingGrid sheet={sheet} unit="in" locale="en-US" port={1} canRecord isBench={false} active={null} onActive={nothing} onKey={nothing} />);
@@ -95,21 +95,21 @@ describe("a bench read by range", () => {
     const sheet = sheetOf([test]);
     const col = sheet.figures.sides[0]?.before;
     if (!col) throw new Error("no column");
-    const html = renderToStaticMarkup(<CellPanel sheet={sheet} pos={posOf(col, 3810)} col={col} locale="en-US" />);
+    const html = renderToStaticMarkup(<CellPanel sheet={sheet} pos={posOf(col, 3810)} col={col} locale="en-US" asked={1} onAgain={nothing} />);
     expect(html).toMatch(/aria-label="Range"/);
     expect(html).toMatch(/<button[^>]*aria-pressed="true"[^>]*>200<\/button>/);
     expect(words(html)).toContain("73.5 % of range 200 = 147.0 CFM at 28 in H₂O");
     const direct = sheetOf([heroTest("intake", "before", { state: "draft" })]);
     const plain = direct.figures.sides[0]?.before;
     if (!plain) throw new Error("no column");
-    expect(renderToStaticMarkup(<CellPanel sheet={direct} pos={posOf(plain, 3810)} col={plain} locale="en-US" />)).not.toContain('aria-label="Range"');
+    expect(renderToStaticMarkup(<CellPanel sheet={direct} pos={posOf(plain, 3810)} col={plain} locale="en-US" asked={1} onAgain={nothing} />)).not.toContain('aria-label="Range"');
   });
   it("is told in the start dialog and over the grid", () => {
     const listed = { name: "Bench 1", id: "b", nominalPressuresInH2O: [28], checkedAt: null, factor: 1, ranges: [...RANGES] };
     expect(benchHint({ ...listed, scale: "percent_linear" })).toBe("Readings are typed as percent of the range, on range 100, 200; the flow in CFM stands beside each.");
     expect(benchHint({ ...listed, scale: "orifice_head" })).toContain("head on the manometer");
     expect(benchHint({ ...listed, scale: "direct" })).toBe("Readings are typed in CFM.");
-    expect(readingsLabel(["percent_linear", "percent_linear"])).toBe("Readings, percent of the range; CFM beside it");
+    expect(readingsLabel(["percent_linear", "percent_linear"])).toBe("Readings, % and CFM");
     expect(readingsLabel(["direct"])).toBe("Readings, CFM");
     expect(startSheetInput.safeParse({ headId: crypto.randomUUID(), purpose: "baseline", benchId: crypto.randomUUID(), fixtureId: crypto.randomUUID(), nominal: "28", step: "0.050", camLiftForLadder: "0.340", intake: {} }).success).toBe(true);
   });

@@ -1,5 +1,5 @@
 "use client";
-import { useState } from "react";
+import { useRef, useState } from "react";
 import { Button } from "@/modules/ui/button";
 import { DialogClose, TaskDialog } from "@/modules/ui/dialog";
 import { Checkbox } from "@/modules/ui/form/checkbox";
@@ -14,8 +14,8 @@ import { startSheetAction } from "../../actions";
 import { BORE_WITHIN_MM } from "../../domain/comparability";
 import type { PortSide } from "../../domain/comparison-reasons";
 import type { Purpose, RawTest } from "../../domain/raw-test";
-import type { LiftUnit } from "../../domain/lift-ladder";
-import { headDiametersMm, type ValveOfFamily } from "../../domain/valve-list";
+import { liftInOtherUnit, type LiftUnit } from "../../domain/lift-ladder";
+import { headDiametersMm, valveFieldHint, valveListWords, type ValveOfFamily } from "../../domain/valve-list";
 import { startSheetInput } from "../../input";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
 import { SCALE_READ, SCALE_WORDS } from "./scale-words";
@@ -33,7 +33,9 @@ export const liftTyped = (um: number | null, unit: "in" | "mm"): string => (um =
 const ENTRIES = [{ value: "radius", label: "Radius plate" }, { value: "clay", label: "Clay radius" }, { value: "manifold", label: "Manifold" }, { value: "none", label: "None" }];
 
 /** Fields of one side of the port, under `name.` */
-export function SideFields({ name, title, gear, unit, onCam }: { name: PortSide; title: string; gear: BenchGear; unit: LiftUnit; onCam: (camLift: string) => void }) {
+export function SideFields({ name, title, gear, unit, valves, onCam }: { name: PortSide; title: string; gear: BenchGear; unit: LiftUnit; valves: readonly ValveOfFamily[]; onCam: (camLift: string) => void }) {
+  const listed = headDiametersMm(valves, name);
+  const valveHint = valveFieldHint(listed);
   const cams = gear.camshafts.filter((c) => c.side === name);
   return (
     <fieldset className="fields three full">
@@ -42,8 +44,8 @@ export function SideFields({ name, title, gear, unit, onCam }: { name: PortSide;
         <SelectInput name={`${name}.camshaftId`} label="Camshaft" className="full" options={[{ value: "", label: "not said" }, ...cams.map((c) => ({ value: c.id, label: `${c.label}, ${liftTyped(c.maxLiftUm, unit)} ${unit}` }))]}
           onChange={(e) => { const cam = cams.find((c) => c.id === e.target.value); if (cam) onCam(liftTyped(cam.maxLiftUm, unit)); }} />
       )}
-      <TextInput name={`${name}.valve`} label="Valve" unit="mm" inputMode="decimal" optional />
-      <TextInput name={`${name}.camLift`} label="Cam lift" inputMode="decimal" optional />
+      <TextInput name={`${name}.valve`} label="Valve" unit="mm" inputMode="decimal" optional placeholder={valveListWords(valves, name).replace(/ mm$/, "")} hint={valveHint === "" ? undefined : valveHint} />
+      <TextInput name={`${name}.camLift`} label="Cam lift" unit={unit} inputMode="decimal" optional />
       <SelectInput name={`${name}.entry`} label="Entry piece" options={ENTRIES} />
       <TextInput name={`${name}.valvesOpen`} label="Valves open" hint="all, or which" />
       <TextInput name={`${name}.seatNote`} label="Seats" hint="Printed beside the table" className="col-span-2" />
@@ -107,20 +109,32 @@ function StartForm({ sheet, gear, purpose, basis, onStarted }: { sheet: FlowShee
     onDone: onStarted,
     draft: `flow-start-${sheet.head.id}-${sheet.cylinder}-${purpose}`,
   });
+  const liftUnit = form.rhf.watch("liftUnit") ?? unit;
+  const turned = useRef(new Map<string, { from: string; to: string }>());
+  /** Lifts typed so far are turned into the unit chosen; turned back they are what was typed. */
+  const turnLifts = (to: LiftUnit) => {
+    for (const name of ["step", "camLiftForLadder", "intake.camLift", "exhaust.camLift"] as const) {
+      const text = form.rhf.getValues(name) ?? "";
+      const before = turned.current.get(name);
+      const made = before?.to === text ? before.from : liftInOtherUnit(text, to === "mm" ? "in" : "mm", to);
+      turned.current.set(name, { from: text, to: made });
+      if (made !== text) form.rhf.setValue(name, made, { shouldDirty: true });
+    }
+  };
   return (
     <CommandForm form={form} toFix="before the test starts">
       <div className="fields">
         <SelectInput name="benchId" label="Bench" options={gear.benches.map((b) => ({ value: b.id, label: `${b.name}, ${SCALE_READ[b.scale]}` }))} hint={benchHint(gear.benches.find((b) => b.id === form.rhf.watch("benchId")))} />
         <SelectInput name="operatorId" label="At the bench" options={gear.operators.map((o) => ({ value: o.id, label: o.name }))} />
-        <SelectInput name="liftUnit" label="Lifts in" options={[{ value: "in", label: "inches" }, { value: "mm", label: "millimetres" }]} />
-        <TextInput name="step" label="Step" inputMode="decimal" hint="The ladder is made of its multiples" />
-        <TextInput name="camLiftForLadder" label="Past cam lift" inputMode="decimal" hint="One lift goes past it" />
+        <SelectInput name="liftUnit" label="Lifts in" options={[{ value: "in", label: "inches" }, { value: "mm", label: "millimetres" }]} onChange={(e) => turnLifts(e.target.value === "mm" ? "mm" : "in")} />
+        <TextInput name="step" label="Step" unit={liftUnit} inputMode="decimal" hint="The ladder is made of its multiples" />
+        <TextInput name="camLiftForLadder" label="Past cam lift" unit={liftUnit} inputMode="decimal" hint="One lift goes past it" />
         <SessionFields gear={gear} />
         <div className="full flex gap-5">
           {(["intake", "exhaust"] as const).map((s) => <label key={s} className="tick"><input type="checkbox" checked={sides[s]} onChange={(e) => setSides({ ...sides, [s]: e.target.checked })} /><span className="capitalize">{s}</span></label>)}
         </div>
-        {sides.intake ? <SideFields name="intake" title="Intake" gear={gear} unit={form.rhf.watch("liftUnit") ?? unit} onCam={(lift) => form.rhf.setValue("intake.camLift", lift)} /> : null}
-        {sides.exhaust ? <SideFields name="exhaust" title="Exhaust" gear={gear} unit={form.rhf.watch("liftUnit") ?? unit} onCam={(lift) => form.rhf.setValue("exhaust.camLift", lift)} /> : null}
+        {sides.intake ? <SideFields name="intake" title="Intake" gear={gear} unit={liftUnit} valves={sheet.head.valves} onCam={(lift) => form.rhf.setValue("intake.camLift", lift)} /> : null}
+        {sides.exhaust ? <SideFields name="exhaust" title="Exhaust" gear={gear} unit={liftUnit} valves={sheet.head.valves} onCam={(lift) => form.rhf.setValue("exhaust.camLift", lift)} /> : null}
         <TextareaInput name="notes" label="Notes" rows={2} optional className="full" />
       </div>
       <div className="form-act">

@@ -1,8 +1,11 @@
 "use client";
 import { useCallback, useEffect, useMemo, useRef, useState, useSyncExternalStore } from "react";
 import { getJson } from "@/modules/ui/fetch-json";
+import { arrivedReadings } from "../../domain/arrived-readings";
 import type { PortSide } from "../../domain/comparison-reasons";
 import { SCALE_UNIT } from "../../domain/computed-reading";
+import { mayBeKept } from "../../domain/entry-questions";
+import { lastRead, rangeOfCell, type PressedRange } from "../../domain/range-choice";
 import type { RawCell, RawTest } from "../../domain/raw-test";
 import { figuresOfTest } from "../../domain/test-figures";
 import type { FlowSheet } from "../../queries/sheet";
@@ -12,15 +15,16 @@ import { sheetFigures, withTyped, type When } from "./sheet-figures";
 
 export interface Pos { readonly side: PortSide; readonly when: When; readonly testId: string; readonly liftUm: number; readonly repeatNo: number }
 type CellMore = Partial<Pick<CellEdit, "acceptedReason" | "excludedReason" | "range" | "pressure" | "portTemperature" | "orificeTemperature">>;
-interface Undo { readonly pos: Pos; readonly value: string }
+interface Stood { readonly value: string; readonly range: string | null }
+interface Undo extends Stood { readonly pos: Pos }
 
 const lastEdit = (cell: KeptCell | undefined): CellEdit | undefined => cell?.edits.at(-1);
 
 /** A kept value as a cell of its test, so that figures and curve follow the key, not the network. */
 function rawOf(cell: KeptCell, edit: CellEdit, test: RawTest): RawCell {
   return {
-    liftUm: cell.liftUm, repeatNo: cell.repeatNo, revision: cell.revision + 1, valueText: edit.value, valueUnit: SCALE_UNIT[test.bench.scale], rangeLabel: edit.range,
-    pressureText: edit.pressure || String(test.nominalInH2O), pressureUnit: "inH2O",
+    liftUm: cell.liftUm, repeatNo: cell.repeatNo, revision: cell.revision + 1, valueText: edit.value, valueUnit: edit.valueUnit ?? SCALE_UNIT[test.bench.scale], rangeLabel: edit.range,
+    pressureText: edit.pressure || String(test.nominalInH2O), pressureUnit: edit.pressureUnit ?? "inH2O",
     ...(edit.portTemperature ? { portTemperatureText: edit.portTemperature } : {}), ...(edit.orificeTemperature ? { orificeTemperatureText: edit.orificeTemperature } : {}), acceptedReason: edit.acceptedReason,
     // A value that waits for a person is shown where it stands, and drawn nowhere.
     excludedReason: edit.excludedReason ?? (cell.stuck && cell.stuck.kind !== "conflict" ? "held back" : null), takenAt: edit.takenAt,
@@ -31,11 +35,12 @@ function rawOf(cell: KeptCell, edit: CellEdit, test: RawTest): RawCell {
 export function useSheet(sheet: FlowSheet, slug: string) {
   const [saved, setSaved] = useState<readonly RawTest[]>(sheet.tests);
   const [savedAt, setSavedAt] = useState<Date | null>(null);
-  const [range, setRange] = useState<string | null>(null);
+  const [pressed, setPressed] = useState<PressedRange | null>(null);
   const [held, setHeld] = useState("");
   const undos = useRef<Undo[]>([]);
-  const committed = useRef(new Map<string, string>());
+  const committed = useRef(new Map<string, Stood>());
   const idle = useRef<ReturnType<typeof setTimeout> | undefined>(undefined);
+  const recheck = useRef<() => Promise<void>>(() => Promise.resolve());
 
   const onSaved = useCallback(({ cell, edit, revision }: SavedCell) => {
     setSavedAt(new Date());
@@ -46,7 +51,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
 
   useEffect(() => {
     const again = () => void queue.flush();
-    void queue.load().then(again);
+    void queue.load().then(() => recheck.current()).then(again);
     const timer = setInterval(() => { if (queue.snapshot().waiting > 0) again(); }, 5_000);
     window.addEventListener("online", again);
     document.addEventListener("visibilitychange", again);
@@ -58,12 +63,22 @@ export function useSheet(sheet: FlowSheet, slug: string) {
   }, [queue]);
 
   const tests = useMemo(() => saved.map((t) => withTyped(t, [...state.cells.values()].filter((c) => c.testId === t.id).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c, e, t)] : []; }))), [saved, state]);
-  const figures = useMemo(() => sheetFigures(tests, sheet.benchCheckHours), [tests, sheet.benchCheckHours]);
+  const figures = useMemo(() => sheetFigures(tests, sheet.benchCheckHours, { valves: sheet.head.valves }), [tests, sheet.benchCheckHours, sheet.head.valves]);
 
   const keyOf = useCallback((pos: Pos) => keptKey(slug, pos.testId, pos.liftUm, pos.repeatNo), [slug]);
   const savedCell = useCallback((pos: Pos) => saved.find((t) => t.id === pos.testId)?.cells.find((c) => c.liftUm === pos.liftUm && c.repeatNo === pos.repeatNo), [saved]);
   const textAt = useCallback((pos: Pos): string => lastEdit(state.cells.get(keyOf(pos)))?.value ?? savedCell(pos)?.valueText ?? "", [state, keyOf, savedCell]);
   const keptAt = useCallback((pos: Pos): KeptCell | undefined => state.cells.get(keyOf(pos)), [state, keyOf]);
+
+  const rangeAt = useCallback((pos: Pos): string | null => {
+    const test = tests.find((t) => t.id === pos.testId);
+    const typed = lastEdit(queue.snapshot().cells.get(keyOf(pos)));
+    if (!test || test.bench.scale === "direct") return (typed ? typed.range : savedCell(pos)?.rangeLabel) ?? null;
+    return rangeOfCell({
+      cell: keyOf(pos), pressed, typed: typed ? { valueText: typed.value, rangeLabel: typed.range } : null, saved: savedCell(pos) ?? null,
+      last: lastRead(test.cells.filter((c) => c.liftUm !== pos.liftUm || c.repeatNo !== pos.repeatNo)), ranges: test.bench.ranges,
+    });
+  }, [tests, queue, keyOf, pressed, savedCell]);
 
   const put = useCallback((pos: Pos, value: string, more: CellMore = {}) => {
     const test = saved.find((t) => t.id === pos.testId);
@@ -71,15 +86,41 @@ export function useSheet(sheet: FlowSheet, slug: string) {
     const kept = queue.snapshot().cells.get(keyOf(pos));
     const before = savedCell(pos);
     const was = lastEdit(kept);
+    const stood = before && before.valueText.trim() !== "" ? before : null;
+    // What is in the cell already keeps its pressure and its unit; a new value is read as the bench stands now.
+    const asBefore = was && was.value.trim() !== "" ? was : stood?.valueText === value ? { pressure: stood.pressureText, pressureUnit: stood.pressureUnit } : { pressure: held };
+    const valueUnit = was ? (was.value.trim() === "" ? undefined : was.valueUnit) : stood && stood.valueUnit !== SCALE_UNIT[test.bench.scale] ? stood.valueUnit : undefined;
+    // Leaving out and correcting for the air do not touch the value, so the reason it was kept with stands.
+    const isUntouched = "excludedReason" in more || "portTemperature" in more;
     const edit: CellEdit = {
-      requestId: crypto.randomUUID(), value, range: test.bench.scale === "direct" ? null : (was?.range ?? before?.rangeLabel ?? range ?? test.bench.ranges[0]?.label ?? null),
-      pressure: was?.pressure ?? held, portTemperature: was?.portTemperature ?? before?.portTemperatureText ?? "", orificeTemperature: was?.orificeTemperature ?? before?.orificeTemperatureText ?? "", acceptedReason: null, excludedReason: null, takenAt: new Date().toISOString(), ...more,
+      requestId: crypto.randomUUID(), value, range: rangeAt(pos), pressure: asBefore.pressure, ...(asBefore.pressureUnit && asBefore.pressureUnit !== "inH2O" && more.pressure === undefined ? { pressureUnit: asBefore.pressureUnit } : {}), ...(valueUnit ? { valueUnit } : {}),
+      portTemperature: was?.portTemperature ?? before?.portTemperatureText ?? "", orificeTemperature: was?.orificeTemperature ?? before?.orificeTemperatureText ?? "", acceptedReason: isUntouched ? ((was ?? stood)?.acceptedReason ?? null) : null,
+      excludedReason: null, takenAt: isUntouched && stood ? stood.takenAt : new Date().toISOString(), ...more,
     };
     void queue.write({
       key: keyOf(pos), shop: slug, testId: pos.testId, liftUm: pos.liftUm, lift: test.lifts.find((l) => l.liftUm === pos.liftUm)?.text ?? String(pos.liftUm / (test.liftUnit === "in" ? 25_400 : 1000)),
       liftUnit: test.liftUnit, repeatNo: pos.repeatNo, revision: before?.revision ?? 0,
     }, edit);
-  }, [saved, queue, keyOf, savedCell, slug, range, held]);
+  }, [saved, queue, keyOf, savedCell, slug, rangeAt, held]);
+
+  /** A kept value among the others of its test, whether or not it is held back. */
+  const judged = useCallback((testId: string, key: string, at: Pick<Pos, "liftUm" | "repeatNo">) => {
+    const test = saved.find((t) => t.id === testId);
+    if (!test) return null;
+    const others = [...queue.snapshot().cells.values()].filter((c) => c.testId === testId).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c.key === key ? { ...c, stuck: null } : c, e, test)] : []; });
+    return figuresOfTest(withTyped(test, others)).cells.find((c) => c.liftUm === at.liftUm && c.repeatNo === at.repeatNo) ?? null;
+  }, [saved, queue]);
+
+  /** What was held back under other conditions of the test goes once nothing stands against it any more. */
+  useEffect(() => {
+    recheck.current = async () => {
+      for (const c of queue.snapshot().cells.values()) {
+        if (!c.stuck || c.stuck.theirs || c.person !== sheet.viewer.id) continue;
+        const now = judged(c.testId, c.key, c);
+        if (now && !now.refusal && !now.question) await queue.unhold(c.key, crypto.randomUUID());
+      }
+    };
+  }, [judged, queue, sheet.viewer.id]);
 
   /** Sends the cell, or holds it where it is doubtful or no number. Called when the cell is left. */
   const commit = useCallback((pos: Pos) => {
@@ -96,24 +137,20 @@ export function useSheet(sheet: FlowSheet, slug: string) {
       void queue.discard(key);
       return;
     }
-    const wasValue = committed.current.get(key) ?? before?.valueText ?? "";
-    if (wasValue !== edit.value) undos.current.push({ pos, value: wasValue });
-    committed.current.set(key, edit.value);
-    const test = saved.find((t) => t.id === pos.testId);
-    if (test && edit.value.trim() !== "") {
-      const others = [...queue.snapshot().cells.values()].filter((c) => c.testId === test.id).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c.key === key ? { ...c, stuck: null } : c, e, test)] : []; });
-      const cell = figuresOfTest(withTyped(test, others)).cells.find((c) => c.liftUm === pos.liftUm && c.repeatNo === pos.repeatNo);
-      if (cell?.question && !edit.acceptedReason) {
-        void queue.hold(key, cell.question.words, true);
-        return;
-      }
-      if (cell?.refusal && !cell.question) {
-        void queue.hold(key, cell.refusal.message, false);
-        return;
-      }
+    const stood = committed.current.get(key) ?? { value: before?.valueText ?? "", range: before?.rangeLabel ?? null };
+    if (stood.value !== edit.value) undos.current.push({ pos, ...stood });
+    committed.current.set(key, { value: edit.value, range: edit.range });
+    const doubt = edit.value.trim() === "" ? null : judged(pos.testId, key, pos);
+    if (doubt?.question && !edit.acceptedReason) {
+      void queue.hold(key, doubt.question.words, true);
+      return;
+    }
+    if (doubt?.refusal && !doubt.question && !(edit.acceptedReason && mayBeKept(doubt.refusal.code))) {
+      void queue.hold(key, doubt.refusal.message, mayBeKept(doubt.refusal.code));
+      return;
     }
     void queue.release(key).then(() => queue.flush());
-  }, [keyOf, queue, savedCell, saved]);
+  }, [keyOf, queue, savedCell, judged]);
 
   const type = useCallback((pos: Pos, value: string) => {
     put(pos, value);
@@ -124,35 +161,43 @@ export function useSheet(sheet: FlowSheet, slug: string) {
   /** Back to what the cell said before. Returns where that was. */
   const undo = useCallback((at: Pos | null): Pos | null => {
     const now = at ? lastEdit(queue.snapshot().cells.get(keyOf(at)))?.value : undefined;
-    const stands = at ? (committed.current.get(keyOf(at)) ?? savedCell(at)?.valueText ?? "") : "";
-    if (at && now !== undefined && now !== stands) {
-      put(at, stands);
+    const saw = at ? savedCell(at) : undefined;
+    const stands = (at && committed.current.get(keyOf(at))) ?? { value: saw?.valueText ?? "", range: saw?.rangeLabel ?? null };
+    const back = ({ value, range }: Stood): CellMore => (value === "" ? {} : { range });
+    if (at && now !== undefined && now !== stands.value) {
+      put(at, stands.value, back(stands));
       commit(at);
       return at;
     }
     const last = undos.current.pop();
     if (!last) return null;
-    committed.current.set(keyOf(last.pos), last.value);
-    put(last.pos, last.value);
+    committed.current.set(keyOf(last.pos), last);
+    put(last.pos, last.value, back(last));
     void queue.release(keyOf(last.pos)).then(() => queue.flush());
     return last.pos;
   }, [queue, keyOf, savedCell, put, commit]);
 
-  /** Takes over what a bench computer has sent meanwhile. */
-  const takeFromBench = useCallback(async (): Promise<boolean> => {
+  /** Takes over what a bench computer has sent meanwhile. Answers how many readings came; null without a link. */
+  const takeFromBench = useCallback(async (): Promise<number | null> => {
     try {
       const fresh = await getJson<FlowSheet>(`/api/v1/s/${slug}/flow/sheet`, { headId: sheet.head.id, cylinder: sheet.cylinder });
       setSaved(fresh.tests);
-      return true;
+      return arrivedReadings(saved, fresh.tests);
     } catch {
-      return false;
+      return null;
     }
-  }, [slug, sheet.head.id, sheet.cylinder]);
+  }, [slug, sheet.head.id, sheet.cylinder, saved]);
 
   const mark = useCallback((pos: Pos, more: CellMore) => {
     put(pos, textAt(pos), more);
     commit(pos);
   }, [put, textAt, commit]);
+
+  /** A range pressed by hand for the cell in hand: it holds for this cell, and for empty ones until the next reading. */
+  const pressRange = useCallback((pos: Pos, label: string) => {
+    setPressed({ cell: keyOf(pos), label, at: new Date().toISOString() });
+    if (textAt(pos) !== "") mark(pos, { range: label });
+  }, [keyOf, textAt, mark]);
 
   return {
     /** Null when every value of this sheet is in the records; otherwise what stands in the way, in words. */
@@ -162,7 +207,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
       if (here.some((c) => c.stuck)) return "A reading waits for you: keep it with a reason, or forget it.";
       return here.length > 0 ? "Some readings are not saved yet. They go as soon as the link is back." : null;
     },
-    tests, figures, state, savedAt, range, setRange, held, setHeld, textAt, keptAt, type, commit, undo, takeFromBench, mark,
+    tests, figures, state, savedAt, rangeAt, pressRange, held, setHeld, textAt, keptAt, type, commit, undo, takeFromBench, mark,
     keepWithReason: (pos: Pos, reason: string) => mark(pos, { acceptedReason: reason }),
     discard: (pos: Pos) => void queue.discard(keyOf(pos)),
     insist: (pos: Pos) => void queue.insist(keyOf(pos), crypto.randomUUID()).then(() => queue.flush()),
