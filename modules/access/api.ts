@@ -44,11 +44,15 @@ export function handle<S extends z.ZodType, T>(endpoint: Endpoint<S, T>) {
     try {
       // An address without a variable part comes without params.
       const { shop = "", ...rest } = (await params) ?? {};
-      const bearer = /^Bearer ([\w-]{20,200})$/.exec(request.headers.get("authorization") ?? "")?.[1];
+      const authorization = request.headers.get("authorization") ?? "";
+      const isBearer = /^Bearer\b/i.test(authorization);
+      const bearer = /^Bearer ([\w-]{20,200})$/i.exec(authorization)?.[1];
       let ctx: ShopContext | null = null;
       const revoked = endpoint.revokedToo ? { revokedToo: true } : {};
-      if (bearer) {
-        if (endpoint.by.includes("device")) ctx = await deviceContext(bearer, shop, revoked);
+      if (isBearer) {
+        // Sent by hand, never by a browser of itself, and no cookie is looked at beside it: no origin is asked.
+        if (bearer && endpoint.by.includes("device")) ctx = await deviceContext(bearer, shop, revoked);
+        if (!ctx) return problem(401, "This token opens nothing here: it is unknown, put out of use, or of another shop.", {}, { "www-authenticate": "Bearer" });
       } else {
         // Both secrets may come in cookies, which the browser sends by itself: so the origin is asked.
         if (endpoint.method !== "GET" && !isOwnOrigin(request.headers)) return problem(403, "This came from another site.");

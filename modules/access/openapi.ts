@@ -54,7 +54,7 @@ export function openApiDocument(endpoints: readonly AnyEndpoint[], serverUrl: st
     components: {
       securitySchemes: {
         person: { type: "apiKey", in: "cookie", name: "next-auth.session-token", description: "A signed-in member of the shop" },
-        device: { type: "http", scheme: "bearer", description: "Token of an enrolled tablet or bench computer" },
+        device: { type: "http", scheme: "bearer", description: "Token of an enrolled tablet, or of a bench computer as made under Shop settings, Tablets. Sent as `Authorization: Bearer <token>`; no cookie and no Origin are needed" },
       },
       schemas: {
         Problem: {

@@ -150,10 +150,15 @@ export const wholeTestInput = startTestInput.omit({ headId: true, lifts: true })
   tag: line(40).optional(),
   readings: z.array(z.strictObject(typedCell).omit({ liftUnit: true })).min(1, "Send at least one reading.").max(200),
   complete: z.boolean().default(false),
+  /** What the lift indicator showed on the closed seat after the last lift; kept when the test is completed. */
+  zeroReturn: line(20).default(""),
 }).refine((t) => t.headId !== undefined || t.tag !== undefined, { error: "Say which head: headId or tag.", path: ["tag"] });
 
 export const issueInput = z.strictObject({ headId: z.uuid(), cylinder: z.number().int().min(1).max(16).default(1), customerWords: words(1000).default("") });
 export const sheetInput = z.strictObject({ headId: z.uuid(), cylinder: z.coerce.number().int().min(1).max(16).default(1) });
+/** The same for a caller who may know the head by its tag only. */
+export const sheetAskInput = z.strictObject({ headId: z.uuid().optional(), tag: line(40).default(""), cylinder: sheetInput.shape.cylinder })
+  .refine((s) => (s.headId === undefined) !== (s.tag === ""), { error: "Name the head by its headId or by its tag.", path: ["tag"] });
 export const roomInput = z.strictObject({
   q: line(60).default(""), state: z.enum(["", "bench", "before", "after", "proved"]).default(""), limit: z.coerce.number().int().min(1).max(200).default(50), after: z.string().max(120).optional(),
 });

@@ -1,7 +1,7 @@
 "use server";
 import { shopAction } from "@/modules/access/action";
 import { acceptCorrection, askCorrection, enterTime, refuseCorrection, setAsideEntry, settlePunch } from "./commands/corrections";
-import { addDevice, makeEnrolCode, revokeDevice } from "./commands/devices";
+import { addDevice, makeBenchToken, makeEnrolCode, revokeDevice } from "./commands/devices";
 import { addPerson, changePerson, leaveShop, setBadge, setPin, setRate } from "./commands/people";
 
 export const askCorrectionAction = shopAction(askCorrection);
@@ -12,6 +12,7 @@ export const setAsideEntryAction = shopAction(setAsideEntry);
 export const settlePunchAction = shopAction(settlePunch);
 export const addDeviceAction = shopAction(addDevice);
 export const makeEnrolCodeAction = shopAction(makeEnrolCode);
+export const makeBenchTokenAction = shopAction(makeBenchToken);
 export const revokeDeviceAction = shopAction(revokeDevice);
 export const addPersonAction = shopAction(addPerson);
 export const changePersonAction = shopAction(changePerson);

@@ -149,6 +149,7 @@ export const COMMAND_CASES: Record<string, Case> = {
   "time.setRate": { input: (at) => ({ personId: at("people").id, validFrom: "2026-04-01", rate: "20.00" }) },
 
   "time.makeEnrolCode": { input: (at) => ({ id: at("devices").id, code: "ABCD-EFGH" }) },
+  "time.makeBenchToken": { input: (at) => ({ id: at("devices").id, token: "t".repeat(43) }) },
   "time.revokeDevice": { input: (at) => ({ id: at("devices").id }) },
   "time.doorIn": { as: "tablet", ...stamp, input: (at) => ({ proof: proof(at), actId }) },
   "time.doorOut": { as: "tablet", ...stamp, input: (at) => ({ proof: proof(at), actId }) },

@@ -39,6 +39,20 @@ export const makeEnrolCode = defineCommand({
   subject: (input) => ({ kind: "device", id: input.id }),
 });
 
+/**
+ * The token of a bench computer. Made where it is shown and sent along once, like a code: only its hash is kept, in no record of
+ * what was asked or answered. A new one ends the one before it at once.
+ */
+export const makeBenchToken = defineCommand({
+  name: "time.makeBenchToken", act: "devices.write", input: z.strictObject({ id: z.uuid(), token: z.string().regex(/^[\w-]{43}$/, "A token of 43 letters.") }), secret: ["token"],
+  run: async (ctx, { id, token }) => {
+    const changed = await ctx.tx.update(devices).set({ tokenHash: hashToken(token), enrolCodeHash: null, enrolCodeExpiresAt: null, enrolledBy: personIdOf(ctx) })
+      .where(and(eq(devices.shopId, ctx.shop.id), eq(devices.id, id), eq(devices.kind, "bench"), isNull(devices.revokedAt))).returning({ name: devices.name });
+    return changed[0] ? ok({ id, name: changed[0].name }) : refuse("NOT_A_BENCH", "Only a bench computer in use has a token to copy. Add one, or choose another.");
+  },
+  subject: (input) => ({ kind: "device", id: input.id }),
+});
+
 export const freshEnrolCode = newEnrolCode;
 
 /** Ends a tablet's token at once. What it kept meanwhile may still be handed over, to be checked. */
