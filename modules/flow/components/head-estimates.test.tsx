@@ -35,7 +35,7 @@ describe("estimates on a screen", () => {
       .filter((e) => e.isFile() && /\.tsx?$/.test(e.name) && !/\.test\.tsx?$/.test(e.name)).map((e) => path.relative(root, path.join(e.parentPath, e.name))))
       .filter((file) => /from "[^"]*(engine-estimate|power-estimate|head-estimates|workings\/(registry|engine)|\.\/registry|\.\/engine)"/.test(readFileSync(path.join(root, file), "utf8")));
     expect(takers.sort()).toEqual([
-      "app/s/[shop]/flow/figures/[head]/page.tsx", "modules/flow/components/head-estimates.tsx", "modules/flow/domain/engine-estimate.ts",
+      "app/s/[shop]/flow/figures/[head]/page.tsx", "modules/flow/components/head-estimates.tsx", "modules/flow/components/workings/workings-desk.tsx", "modules/flow/components/workings/workings-list.tsx", "modules/flow/domain/engine-estimate.ts",
       "modules/flow/workings-endpoints.ts", "modules/flow/workings-input.ts", "modules/flow/workings/engine.ts", "modules/flow/workings/listing.ts", "modules/flow/workings/registry.ts", "modules/flow/workings/typed-inputs.ts",
     ]);
   });

@@ -40,7 +40,7 @@ export const ENGINE_WORKINGS = [
     name: "weather_power_factor", title: "Weather factor of a dynamometer", purpose: "Brings a power reading of a dynamometer to standard weather.",
     fields: { dry_pressure_hPa: { ...num("Dry pressure", "hPa", "999.25"), hint: "Station pressure less the vapour's." }, temperature_C: num("Temperature", "°C", "30") },
     outputs: [figure("factor", "Factor", "", 3)],
-    source: "SAE J1349 (June 1990); the usual range 0.93 to 1.07 from memory.", caution: "For dynamometer readings only, never for flow. It makes no power of its own.",
+    source: "SAE J1349 (June 1990); the usual range 0.93 to 1.07 from memory.", caution: "For dynamometer readings only, never for flow.",
     compute: (v) => named(weatherPowerFactor({ dryPressureHPa: v.dry_pressure_hPa, temperatureC: v.temperature_C }), (a) => ({ values: { factor: a.factor }, flags: a.flags })),
   }),
 ];

@@ -136,6 +136,13 @@ describe("inputs", () => {
     expect(run("sanity_flags", { lifts_mm: [1, 2], flows_cfm: [1, 2], percent: 50 })).toMatchObject({ ok: false, refusal: { code: "INPUT_TWICE" } });
     expect(run("sanity_flags", {})).toMatchObject({ ok: false, refusal: { code: "INPUT_MISSING" } });
   });
+  it("are named in a refusal as they were given", () => {
+    expect(run("gain_table", { lifts_in: [0.2, 0.1], before_cfm: [1, 2], after_cfm: [1, 2] })).toMatchObject({ ok: false, refusal: { code: "LIFTS_NOT_INCREASING", field: "lifts_in" } });
+    expect(run("gain_table", { lifts_mm: [2, 1], before_cfm: [1, 2], after_cfm: [1, 2] })).toMatchObject({ ok: false, refusal: { field: "lifts_mm" } });
+    expect(run("mean_velocity", { flow_cfm: 100, area_in2: -1 })).toMatchObject({ ok: false, refusal: { code: "GEOMETRY_INVALID", field: "area_in2" } });
+    expect(run("seat_flow_area", { valve_diameter_mm: 31, seat_face_width_mm: 40, seat_angle_deg: 45, port_diameter_mm: 27, stem_diameter_mm: 5.5, lift_mm: 5 })).toMatchObject({ ok: false, refusal: { field: "seat_face_width_mm" } });
+    expect(run("lash_after_seat_cut", { clearance_before_mm: 0.14, removed_normal_mm: -1, seat_angle_deg: 45 })).toMatchObject({ ok: false, refusal: { field: "removed_normal_mm" } });
+  });
   it("in inches give what the same lifts in millimetres give", () => {
     const flows = { flows_cfm: [24.6, 48.9, 88, 120] };
     const inches = [0.05, 0.1, 0.2, 0.3];

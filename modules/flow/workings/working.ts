@@ -70,6 +70,17 @@ function refuseEither(either: readonly Either[], values: Readonly<Record<string,
   return null;
 }
 
+/** The input that was really given, where a refusal names the other way of saying the same. */
+function asGiven(either: readonly Either[], values: Readonly<Record<string, unknown>>, key: string): string {
+  if (values[key] !== undefined) return key;
+  for (const { of } of either) {
+    const at = of.find((set) => set.includes(key))?.indexOf(key);
+    const given = of.find((set) => set.every((k) => values[k] !== undefined));
+    if (at !== undefined && given) return given[at] ?? given[0] ?? key;
+  }
+  return key;
+}
+
 const isFiniteThroughout = (value: unknown): boolean =>
   typeof value === "number" ? Number.isFinite(value) : typeof value === "object" && value !== null ? Object.values(value).every(isFiniteThroughout) : true;
 
@@ -97,7 +108,9 @@ export function working<F extends Fields>(spec: Spec<F>): Working {
     if (made.ok || made.refusal.field === undefined) return made;
     const { field, ...refusal } = made.refusal;
     const key = keyOfField(spec.fields, called, field);
-    return { ok: false, refusal: { ...refusal, ...(key === undefined ? {} : { field: key }) } };
+    // A code of our own is about what is missing or too much, so it names that input itself.
+    const input = key === undefined || refusal.code.startsWith("INPUT_") ? key : asGiven(either, values, key);
+    return { ok: false, refusal: { ...refusal, ...(input === undefined ? {} : { field: input }) } };
   };
   return {
     ...description, schema, either, compute,
