@@ -326,11 +326,12 @@ describe("a test", () => {
   it("is posted whole or not at all, by tag", async () => {
     const { headId } = await newHead();
     const { head } = await flowSheetFor(a.as("tech"), headId, 1);
-    const post = (readings: { lift: string; value: string }[]) => postWholeTest(a.as("tech"), { benchId: bench, fixtureId: fixture, nominal: "28", tag: head.mark, side: "exhaust", purpose: "baseline", readings, complete: true });
+    const post = (readings: { lift: string; value: string }[]) => postWholeTest(a.as("tech"), { benchId: bench, fixtureId: fixture, nominal: "28", tag: head.mark, side: "exhaust", purpose: "baseline", readings, complete: true, zeroReturn: "0.02 mm" });
     expect(await post([{ lift: "0.050", value: "21.8" }, { lift: "0.100", value: "430" }])).toMatchObject({ ok: false, refusal: { code: "JUMP_LARGE", field: "readings.1.value" } });
     expect((await flowSheetFor(a.as("tech"), headId, 1)).tests).toEqual([]);
     expect(await post([{ lift: "0.100", value: "43.0" }, { lift: "0.050", value: "21.8" }])).toMatchObject({ ok: false, refusal: { code: "LIFTS_NOT_ASCENDING" } });
     expect(must(await post([{ lift: "0.050", value: "21.8" }, { lift: "0.100", value: "43.0" }]))).toMatchObject({ state: "complete", readings: [{ flowCfm: 21.8 }, { flowCfm: 43 }] });
+    expect((await flowSheetFor(a.as("tech"), headId, 1)).tests[0]?.zeroReturnUm).toBe(20);
   });
 });
 

@@ -15,7 +15,7 @@ export const postWholeTest = defineCommand({
   name: "flow.post-test",
   act: "flow.record",
   input: wholeTestInput,
-  async run(ctx, { headId: givenId, tag, readings, complete, ...input }) {
+  async run(ctx, { headId: givenId, tag, readings, complete, zeroReturn, ...input }) {
     const [head] = await ctx.tx.select({ id: heads.id }).from(heads)
       .where(and(eq(heads.shopId, ctx.shop.id), givenId ? eq(heads.id, givenId) : eq(heads.mark, tag ?? ""))).orderBy(desc(heads.createdAt)).limit(1);
     if (!head) return refuse("NOT_FOUND", "No head of that tag is here.", { field: givenId ? "headId" : "tag" });
@@ -43,7 +43,7 @@ export const postWholeTest = defineCommand({
       saved.push(one.value);
     }
     if (!complete) return ok({ testId, version: 1, state: "draft", readings: saved });
-    const done = await completeTest(ctx, { testId, version: 1 });
+    const done = await completeTest(ctx, { testId, version: 1, zeroReturn });
     if (!done.ok) return done;
     return ok({ testId, version: done.value.version, state: "complete", readings: saved });
   },

@@ -9,8 +9,8 @@ export function BenchLine({ sheet, pos, col, onAgain }: { sheet: ToolSheet; pos:
   return (
     <div className="b-line" role="group" aria-label="How it is read">
       <RangeKeys sheet={sheet} pos={pos} col={col} />
-      <HeldField sheet={sheet} pos={pos} col={col} />
-      <Button size="sm" variant="lo" icon="plus" onClick={onAgain}>Read again</Button>
+      <HeldField sheet={sheet} pos={pos} col={col} width={116} />
+      <Button size="sm" variant="lo" onClick={onAgain}>Read again</Button>
     </div>
   );
 }

@@ -22,12 +22,12 @@ export function RangeKeys({ sheet, pos, col }: { sheet: ToolSheet; pos: Pos; col
 }
 
 /** Pressure held while reading; empty is the nominal one. */
-export function HeldField({ sheet, pos, col }: { sheet: ToolSheet; pos: Pos; col: SheetColumn }) {
+export function HeldField({ sheet, pos, col, width = 140 }: { sheet: ToolSheet; pos: Pos; col: SheetColumn; width?: number }) {
   const id = useId();
   return (
     <span className="flex items-center gap-2">
       <label htmlFor={id} className="sm">Held</label>
-      <span className="in" style={{ width: 140 }}>
+      <span className="in" style={{ width }}>
         <input id={id} inputMode="decimal" value={sheet.held} placeholder={String(col.test.nominalInH2O)} onChange={(e) => sheet.setHeld(e.target.value)} onBlur={() => { if (sheet.textAt(pos) !== "" && sheet.held !== "") sheet.mark(pos, { pressure: sheet.held }); }} />
         <span className="unit">in H₂O</span>
       </span>

@@ -9,12 +9,12 @@ import { lastRead, rangeOfCell, type PressedRange } from "../../domain/range-cho
 import type { RawCell, RawTest } from "../../domain/raw-test";
 import { figuresOfTest } from "../../domain/test-figures";
 import type { FlowSheet } from "../../queries/sheet";
+import { nextEdit, type CellMore } from "./next-edit";
 import { keptKey, ReadingQueue, type CellEdit, type KeptCell, type SavedCell, type Stuck } from "./reading-queue";
 import { readingSender, tabletStore } from "./reading-store";
 import { sheetFigures, withTyped, type When } from "./sheet-figures";
 
 export interface Pos { readonly side: PortSide; readonly when: When; readonly testId: string; readonly liftUm: number; readonly repeatNo: number }
-type CellMore = Partial<Pick<CellEdit, "acceptedReason" | "excludedReason" | "range" | "pressure" | "portTemperature" | "orificeTemperature">>;
 interface Stood { readonly value: string; readonly range: string | null }
 interface Undo extends Stood { readonly pos: Pos }
 
@@ -86,17 +86,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
     const kept = queue.snapshot().cells.get(keyOf(pos));
     const before = savedCell(pos);
     const was = lastEdit(kept);
-    const stood = before && before.valueText.trim() !== "" ? before : null;
-    // What is in the cell already keeps its pressure and its unit; a new value is read as the bench stands now.
-    const asBefore = was && was.value.trim() !== "" ? was : stood?.valueText === value ? { pressure: stood.pressureText, pressureUnit: stood.pressureUnit } : { pressure: held };
-    const valueUnit = was ? (was.value.trim() === "" ? undefined : was.valueUnit) : stood && stood.valueUnit !== SCALE_UNIT[test.bench.scale] ? stood.valueUnit : undefined;
-    // Leaving out and correcting for the air do not touch the value, so the reason it was kept with stands.
-    const isUntouched = "excludedReason" in more || "portTemperature" in more;
-    const edit: CellEdit = {
-      requestId: crypto.randomUUID(), value, range: rangeAt(pos), pressure: asBefore.pressure, ...(asBefore.pressureUnit && asBefore.pressureUnit !== "inH2O" && more.pressure === undefined ? { pressureUnit: asBefore.pressureUnit } : {}), ...(valueUnit ? { valueUnit } : {}),
-      portTemperature: was?.portTemperature ?? before?.portTemperatureText ?? "", orificeTemperature: was?.orificeTemperature ?? before?.orificeTemperatureText ?? "", acceptedReason: isUntouched ? ((was ?? stood)?.acceptedReason ?? null) : null,
-      excludedReason: null, takenAt: isUntouched && stood ? stood.takenAt : new Date().toISOString(), ...more,
-    };
+    const edit = nextEdit({ scale: test.bench.scale, value, more, was: was ?? null, saved: before ?? null, held, range: rangeAt(pos), requestId: crypto.randomUUID(), at: new Date().toISOString() });
     void queue.write({
       key: keyOf(pos), shop: slug, testId: pos.testId, liftUm: pos.liftUm, lift: test.lifts.find((l) => l.liftUm === pos.liftUm)?.text ?? String(pos.liftUm / (test.liftUnit === "in" ? 25_400 : 1000)),
       liftUnit: test.liftUnit, repeatNo: pos.repeatNo, revision: before?.revision ?? 0,
