@@ -21,7 +21,7 @@ type Told = Pick<ComparableGain, "rows" | "meanBeforeCfm" | "meanAfterCfm" | "me
  */
 export function meanRows(gain: Told, means: ComparisonMeans | undefined, w: UnitWords): MeanRow[] {
   const row = (name: string, b: number, a: number, g: number, percent: number | null, digits = 1): MeanRow =>
-    ({ name, before: w.flow(b), after: w.flow(a), gain: w.difference(g, digits), isLoss: g < 0, percent: percent === null ? "" : w.percent(percent, digits) });
+    ({ name, before: w.flow(b, digits), after: w.flow(a, digits), gain: w.difference(g, digits), isLoss: g < 0, percent: percent === null ? "" : w.percent(percent, digits) });
   const { rows, atCamLift } = gain;
   const overLift = means?.overLift ?? null;
   const overCam = means?.overCam;

@@ -1,21 +1,23 @@
 "use client";
 import { useState, type KeyboardEvent, type PointerEvent } from "react";
+import { decimal } from "@/modules/kernel/format";
 import type { CurveLine } from "../domain/curve-geometry";
 import { gainAt } from "../domain/gain";
 import { GainCurve, geometryOf, type GainCurveProps } from "./gain-curve";
-import { differenceText, flowText, liftWords } from "./flow-words";
+import { differenceText, liftWords } from "./flow-words";
 
 const SIDE_WORDS = { intake: "Intake", exhaust: "Exhaust" } as const;
 
-function wordsAt(lines: readonly CurveLine[], liftUm: number, locale: string): string {
+function wordsAt(lines: readonly CurveLine[], liftUm: number, locale: string, digits: number): string {
+  const text = (value: number) => decimal(value, digits, locale);
   return lines.flatMap((line) => {
     const before = line.before.find((r) => r.liftUm === liftUm);
     const after = line.after.find((r) => r.liftUm === liftUm);
     if (!before && !after) return [];
-    const parts = [before && `${flowText(before.flowCfm, locale)} before`, after && `${flowText(after.flowCfm, locale)} after`].filter(Boolean).join(", ");
+    const parts = [before && `${text(before.flowCfm)} before`, after && `${text(after.flowCfm)} after`].filter(Boolean).join(", ");
     const gain = before && after && line.gain === "shown" ? gainAt(before.flowCfm, after.flowCfm) : null;
     const margin = line.margins?.find((m) => m.liftUm === liftUm);
-    return [`${SIDE_WORDS[line.side]} ${parts}${gain === null ? "" : `, ${gain < 0 ? "loss" : "gain"} ${differenceText(gain, locale)}${margin === undefined ? "" : `, noise ±${flowText(margin.marginCfm, locale)}${margin.byHistory ? " by bench history" : ""}`}`}`];
+    return [`${SIDE_WORDS[line.side]} ${parts}${gain === null ? "" : `, ${gain < 0 ? "loss" : "gain"} ${differenceText(gain, locale, digits)}${margin === undefined ? "" : `, noise ±${text(margin.marginCfm)}${margin.byHistory ? " by bench history" : ""}`}`}`];
   }).join(". ");
 }
 
@@ -42,7 +44,7 @@ export function CurveReader(props: GainCurveProps & { label: string }) {
     const near = g.points.reduce<{ liftUm: number; d: number } | null>((best, p) => { const d = Math.abs(p.x - x); return best && best.d <= d ? best : { liftUm: p.liftUm, d }; }, null);
     setAt(near && near.d < 40 ? near.liftUm : null);
   };
-  const text = at === null ? "" : `${liftWords(at, unit, locale)}: ${wordsAt(lines, at, locale)}.`;
+  const text = at === null ? "" : `${liftWords(at, unit, locale)}: ${wordsAt(lines, at, locale, props.measure?.digits ?? 1)}.`;
   return (
     <div className="curve-r">
       <div
@@ -51,7 +53,7 @@ export function CurveReader(props: GainCurveProps & { label: string }) {
       >
         <GainCurve {...rest} lines={lines} locale={locale} unit={unit} readAtUm={at} />
       </div>
-      {text === "" ? null : <p className="curve-t" aria-hidden="true">{text}</p>}
+      <p className={text === "" ? "curve-t idle noprint" : "curve-t"} aria-hidden="true">{text || "Point at the curve, or use the arrow keys, to read it."}</p>
     </div>
   );
 }

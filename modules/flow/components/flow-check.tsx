@@ -4,7 +4,9 @@ import type { ShopContext } from "@/modules/access/context";
 import { Bay } from "@/modules/ui/bay";
 import type { GainOfPiece, PortGain, SideGain } from "../domain/side-gain";
 import { gainForPiece } from "../queries/gain";
+import { issuedReports } from "../queries/issued-reports";
 import { differenceText, liftWords } from "./flow-words";
+import { IssuedReports } from "./issued-reports";
 import { withheldWords } from "./gain-words";
 import { noiseWords } from "./noise-verdicts";
 import { MiniCurve } from "./mini-curve";
@@ -13,8 +15,9 @@ function SideFigure({ gain, locale }: { gain: SideGain; locale: string }) {
   if (!gain.comparable) return null;
   const isLoss = gain.meanGainCfm < 0;
   return (
-    <span className="nw">
-      <b className="num n-s">{differenceText(gain.meanGainCfm, locale, 2)}</b> <span className="unit">CFM mean {gain.side}{isLoss ? ", a loss" : ""}{gain.meanPercent === null ? "" : `, ${decimal(gain.meanPercent, 2, locale)} %`}</span>
+    <span>
+      <b className="num n-s">{differenceText(gain.meanGainCfm, locale, 2)}</b> <span className="unit">CFM {gain.side}, mean of the lifts read{isLoss ? ", a loss" : ""}{gain.meanPercent === null ? "" : `, ${decimal(gain.meanPercent, 2, locale)} %`}</span>
+      {typeof gain.atCamLift === "string" ? null : <span className="unit">; {differenceText(gain.atCamLift.gainCfm, locale)} at cam lift {liftWords(gain.atCamLift.liftUm, gain.liftUnit, locale)}{gain.atCamLift.gainCfm < 0 ? ", a loss" : ""}</span>}
       {gain.losses.length === 0 ? null : <span className="flag">▼ loss at {gain.losses.map((l) => liftWords(l.liftUm, gain.liftUnit, locale)).join(", ")}</span>}
     </span>
   );
@@ -58,7 +61,8 @@ export function FlowCheckHead({ gain, slug, locale }: { gain: GainOfPiece; slug:
 export async function FlowCheck({ ctx, pieceIds }: { ctx: ShopContext; pieceIds: readonly string[] }) {
   const gains: GainOfPiece[] = [];
   for (const id of pieceIds) gains.push(await gainForPiece(ctx, id));
-  const { slug, locale } = ctx.shop;
+  const { slug, locale, zone } = ctx.shop;
+  const reports = await issuedReports(ctx, gains.flatMap((g) => g.headId ?? []));
   return (
     <>
       {gains.filter((g) => g.headId !== null && g.ports.length > 0).map((gain) => {
@@ -69,6 +73,7 @@ export async function FlowCheck({ ctx, pieceIds }: { ctx: ShopContext; pieceIds:
             aside={only ? <Link className="lk" href={`/s/${slug}/flow/${gain.headId}${only.cylinder > 1 ? `?port=${only.cylinder}` : ""}`}>Flow sheet</Link> : `${gain.ports.length} ports`}
           >
             <FlowCheckHead gain={gain} slug={slug} locale={locale} />
+            <IssuedReports className="mt-3" reports={reports.filter((r) => r.headId === gain.headId)} slug={slug} locale={locale} zone={zone} />
           </Bay>
         );
       })}

@@ -2,6 +2,7 @@ import clsx from "clsx";
 import { useId } from "react";
 import { decimal } from "@/modules/kernel/format";
 import { curveGeometry, type CurveGeometry, type CurveLine } from "../domain/curve-geometry";
+import { engravedAxis, type CurveMeasure } from "../domain/curve-measure";
 import type { LiftUnit } from "../domain/lift-ladder";
 
 export interface GainCurveProps {
@@ -12,6 +13,8 @@ export interface GainCurveProps {
   width: number;
   height: number;
   locale: string;
+  /** Default: flow in CFM. The figures of `lines` are then of this measure. */
+  measure?: CurveMeasure;
   /** Default: narrower than 480. */
   mini?: boolean;
   /** A mark at one lift, set by whoever reads the curve. */
@@ -19,10 +22,13 @@ export interface GainCurveProps {
   className?: string;
 }
 
+/** Room for a leader between the plot and its labels. */
+const LABELS = { columnPx: 15 } as const;
+
 /** The geometry a `GainCurve` draws, for what is laid over it. Null when it cannot be drawn. */
-export function geometryOf(p: Pick<GainCurveProps, "lines" | "unit" | "atInH2O" | "camLiftUm" | "width" | "height" | "locale" | "mini">): CurveGeometry | null {
+export function geometryOf(p: Pick<GainCurveProps, "lines" | "unit" | "atInH2O" | "camLiftUm" | "width" | "height" | "locale" | "mini" | "measure">): CurveGeometry | null {
   const made = curveGeometry({
-    widthPx: p.width, heightPx: p.height, unit: p.unit, atInH2O: p.atInH2O, camLiftUm: p.camLiftUm, lines: p.lines, decimalText: (v, d) => decimal(v, d, p.locale), ...(p.mini === undefined ? {} : { mini: p.mini }),
+    widthPx: p.width, heightPx: p.height, unit: p.unit, atInH2O: p.atInH2O, camLiftUm: p.camLiftUm, lines: p.lines, decimalText: (v, d) => decimal(v, d, p.locale), ...(p.mini === undefined ? {} : { mini: p.mini }), ...(p.measure ? { measure: p.measure } : {}), labels: LABELS,
   });
   return made.ok ? made.value : null;
 }
@@ -75,8 +81,8 @@ export function GainCurve(props: GainCurveProps) {
       )}
       {g.lines.map((l) => <path key={`${l.side}${l.when}`} className={clsx(l.when === "before" ? "base" : "aft", l.isDashed && "dash")} d={l.path} />)}
       {mark === null || mark[0] === undefined ? null : <path className="rd" d={`M${mark[0].x} ${g.plot.top}V${g.plot.bottom}`} />}
-      {g.points.filter((p) => p.when === "after" || mark?.includes(p)).map((p) => (
-        <circle key={`${p.side}${p.when}${p.liftUm}`} className={p.isFilled ? "pt" : "pw"} cx={p.x} cy={p.y} r={mark?.includes(p) ? p.radiusPx + 1.6 : p.radiusPx} />
+      {g.points.map((p) => (
+        <circle key={`${p.side}${p.when}${p.liftUm}`} className={clsx(p.isFilled ? "pt" : "pw", p.when === "before" && !mark?.includes(p) && "bf")} cx={p.x} cy={p.y} r={mark?.includes(p) ? p.radiusPx + 1.6 : p.radiusPx} />
       ))}
       {g.losses.map((m) => (m.plate === null ? null : (
         <g key={`${m.side}${m.liftUm}`}>
@@ -85,10 +91,11 @@ export function GainCurve(props: GainCurveProps) {
           <text className="invt" x={m.plate.textX} y={m.plate.textY} textAnchor="middle">{m.text}</text>
         </g>
       )))}
+      {g.labels.map((l) => (l.leader === null ? null : <path key={l.key} className="ld" d={`M${l.leader.x1} ${l.leader.y1}L${l.leader.x2} ${l.leader.y2}`} />))}
       {g.labels.map((l) => l.lines.map((text, i) => (
         <text key={`${l.key}${i}`} className={i === 0 && (l.key.endsWith("after") || g.mini) ? "lab" : undefined} x={l.x} y={l.y + i * 14}>{text}</text>
       )))}
-      {g.flowTitle === null ? null : <text className="eng" x={g.flowTitle.x} y={g.flowTitle.y} textAnchor={g.flowTitle.anchor}>{g.flowTitle.text.toUpperCase()}</text>}
+      {g.flowTitle === null ? null : <text className="eng" x={g.flowTitle.x} y={g.flowTitle.y} textAnchor={g.flowTitle.anchor}>{engravedAxis(g.flowTitle.text)}</text>}
       {g.liftTitle === null ? null : <text className="eng" x={g.liftTitle.x} y={g.liftTitle.y} textAnchor={g.liftTitle.anchor}>{g.liftTitle.text.toUpperCase()}</text>}
     </svg>
   );

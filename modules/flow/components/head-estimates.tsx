@@ -33,7 +33,7 @@ export function HeadEstimates({ facts }: { facts: EstimateFacts }) {
             const made = engineEstimate({ readings: p.readings, atInH2O: p.atInH2O, cam, boreMm, strokeMm, cylinders: facts.cylinders });
             const name = `${facts.cylinders > 1 ? `cylinder ${p.cylinder}, ` : ""}${p.when}`;
             return (
-              <tr key={name}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{name}</th>
+              <tr key={name}><th scope="row">{name}</th>
                 {made.ok ? <><td className="r q">{n(made.value.meanFlowCfm, 1)}{made.value.isSynthetic ? <span className="sm dim block">cam drawn from lift and duration</span> : null}</td><td className="r q">{n(made.value.rpmAt0_5)} / {n(made.value.rpmAt0_6)}</td>
                   <td className="r q">{n(made.value.lowKW)} to {n(made.value.highKW)}<span className="sm dim block">estimate; {n((made.value.lowKW * 1000) / W_PER_HP)} to {n((made.value.highKW * 1000) / W_PER_HP)} hp</span></td></> : <td colSpan={3} className="mid">{made.refusal.message}</td>}
               </tr>

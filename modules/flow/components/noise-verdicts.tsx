@@ -4,7 +4,9 @@ import { historyWords, NOISE_WORDS, type BenchHistory } from "../domain/noise";
 import type { GainNoise, NoiseRow } from "../domain/noise-rows";
 import { historyUsed, isAssessed, listed, noHistoryWords, noiseSummary, notStatedWords } from "../domain/noise-summary";
 import type { SideGain } from "../domain/side-gain";
-import { differenceText, liftWords } from "./flow-words";
+import type { Units } from "../domain/curve-measure";
+import { liftWords } from "./flow-words";
+import { unitWords } from "./unit-words";
 import { Lane } from "@/modules/ui/lane";
 
 /** Filled: larger than the noise; open: within it; dotted: not assessed. */
@@ -16,7 +18,8 @@ const markOf = (row: NoiseRow): string => (row.byHistory ? HISTORY_MARK : NOISE_
 export interface NoisePort { noise: readonly NoiseRow[] | null; history?: BenchHistory | undefined; withheld: readonly string[]; notStated: readonly string[]; liftUnit: LiftUnit }
 
 /** Is the change larger than the noise, lift by lift, in words and shape. Without repeats, its own or enough of the bench's, it is not assessed. */
-export function NoiseVerdicts({ port, locale }: { port: NoisePort; locale: string }) {
+export function NoiseVerdicts({ port, locale, units = "read" }: { port: NoisePort; locale: string; units?: Units }) {
+  const w = unitWords(units, port.liftUnit, locale);
   if (port.noise === null) return <p className="mid">No change is judged: {port.withheld.join(" ") || "the two tests cannot be compared."}</p>;
   const used = historyUsed({ rows: port.noise, notStated: port.notStated, ...(port.history ? { history: port.history } : {}) });
   const noHistory = port.noise.some((r) => r.verdict === "not_assessed") ? noHistoryWords(port.history) : "";
@@ -24,12 +27,12 @@ export function NoiseVerdicts({ port, locale }: { port: NoisePort; locale: strin
     <>
       <Lane label="The change against the noise"><table className="calm">
         <caption className="sr-only">The change at each lift against the measurement noise</caption>
-        <thead><tr><th scope="col">Lift, {port.liftUnit}</th><th scope="col" className="r">Change, CFM</th><th scope="col" className="r">U, 95 %</th><th scope="col" className="r">Readings</th><th scope="col">Verdict</th></tr></thead>
+        <thead><tr><th scope="col">Lift, {w.liftUnit}</th><th scope="col" className="r">Change, {w.flowUnit}</th><th scope="col" className="r">U, 95 %</th><th scope="col" className="r">Readings</th><th scope="col">Verdict</th></tr></thead>
         <tbody>{port.noise.map((r) => (
-          <tr key={r.liftUm}><th scope="row" className="border-b border-line align-middle normal-case tracking-normal text-ink">{liftWords(r.liftUm, port.liftUnit, locale)}</th><td className="r q"><b>{differenceText(r.differenceCfm, locale)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${decimal(r.expandedCfm, 1, locale)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{markOf(r)}</span> {r.words}</td></tr>
+          <tr key={r.liftUm}><th scope="row">{w.lift(r.liftUm)}</th><td className="r q"><b>{w.difference(r.differenceCfm)}</b></td><td className="r q">{r.expandedCfm === null ? "—" : `±${w.flow(r.expandedCfm)}`}</td><td className="r q">{r.before}, {r.after}</td><td><span aria-hidden="true">{markOf(r)}</span> {r.words}</td></tr>
         ))}</tbody>
       </table></Lane>
-      {used === null ? null : <p className="hint px-3 pt-3">Where a lift was read once its noise is taken {historyWords(used)}: pooled standard deviation {decimal(used.pooledCfm, 2, locale)} CFM at this test pressure.</p>}
+      {used === null ? null : <p className="hint px-3 pt-3">Where a lift was read once its noise is taken {historyWords(used)}: pooled standard deviation {decimal(used.pooledCfm * w.perCfm, 2, locale)} {w.flowUnit} at this test pressure.</p>}
       {noHistory === "" ? null : <p className="hint px-3 pt-3">Not assessed: no reading twice in both tests{noHistory}.</p>}
       {port.notStated.length > 0 ? <p className="hint p-3">Uncertainty of {listed(port.notStated)} is not stated for this bench and counts as nothing here.</p> : null}
     </>

@@ -1,7 +1,7 @@
 import { decimal } from "@/modules/kernel/format";
 import { LITRES_S_PER_CFM, pressureText, type Units } from "../domain/curve-measure";
 import type { LiftUnit } from "../domain/lift-ladder";
-import { differenceText, flowText, liftWords } from "./flow-words";
+import { differenceText, liftWords } from "./flow-words";
 
 /** Figures as words in one system of units; flows come in as CFM, lifts as micrometres, pressures as inches of water. */
 export interface UnitWords {
@@ -11,7 +11,8 @@ export interface UnitWords {
   readonly speedUnit: "ft/s" | "m/s";
   /** CFM into what is shown. */
   readonly perCfm: number;
-  readonly flow: (cfm: number) => string;
+  /** A tenth unless a mean asks for more. */
+  readonly flow: (cfm: number, digits?: number) => string;
   readonly difference: (cfm: number, digits?: number) => string;
   readonly lift: (um: number) => string;
   readonly pressure: (inH2O: number) => string;
@@ -25,7 +26,7 @@ export function unitWords(units: Units, liftUnit: LiftUnit, locale: string): Uni
   const perCfm = isSi ? LITRES_S_PER_CFM : 1;
   return {
     units, liftUnit: unit, flowUnit: isSi ? "L/s" : "CFM", speedUnit: isSi ? "m/s" : "ft/s", perCfm,
-    flow: (cfm) => flowText(cfm * perCfm, locale), difference: (cfm, digits = 1) => differenceText(cfm * perCfm, locale, digits), lift: (um) => liftWords(um, unit, locale),
+    flow: (cfm, digits = 1) => decimal(cfm * perCfm, digits, locale), difference: (cfm, digits = 1) => differenceText(cfm * perCfm, locale, digits), lift: (um) => liftWords(um, unit, locale),
     pressure: (inH2O) => pressureText(inH2O, units, (v, d) => decimal(v, d, locale)), percent: (value, digits = 1) => `${decimal(value, digits, locale)} %`,
   };
 }

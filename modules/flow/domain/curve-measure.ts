@@ -21,6 +21,9 @@ export const KPA_PER_INH2O = PA_PER_INH2O / 1000;
 /** `28 in H₂O`, `6.97 kPa`. */
 export const pressureText = (inH2O: number, units: Units, decimalText: (value: number, digits: number) => string): string => (units === "si" ? `${decimalText(inH2O * KPA_PER_INH2O, 2)} kPa` : `${inH2O} in H₂O`);
 
+/** An axis title as it is engraved: capitals, but not for symbols that mean something by their case. */
+export const engravedAxis = (axis: string): string => (/kPa|L\/s|\bm\/s|Cd/.test(axis) ? axis : axis.toUpperCase());
+
 export function flowMeasure(units: Units, at: string): CurveMeasure {
   const unit = units === "si" ? "L/s" : "CFM";
   return { axis: `${unit} at ${at}`, unit, digits: 1, what: `Flow in ${unit}`, fromZero: true };

@@ -28,7 +28,7 @@ export interface PortFigures {
   valves: string;
   before: CoefficientTable | null; after: CoefficientTable | null;
   /** Every reading that counts, for a side with one test only. */
-  readings: { before: LiftReading[]; after: LiftReading[] };
+  readings: { before: readonly LiftReading[]; after: readonly LiftReading[] };
   gain: SideGain;
   /** Null when the two may not be compared. */
   means: ComparisonMeans | null;

@@ -1,9 +1,9 @@
 import Link from "next/link";
 import { notFound } from "next/navigation";
 import { orNotFound, shopPage } from "@/modules/access/page";
-import { differenceText, flowText, liftWords } from "@/modules/flow/components/flow-words";
 import { LibraryCurves } from "@/modules/flow/components/library-curves";
 import { bandHint, NoiseVerdicts } from "@/modules/flow/components/noise-verdicts";
+import { unitsAsked, unitViews, unitWords } from "@/modules/flow/components/unit-words";
 import { portWords, PURPOSE_WORDS } from "@/modules/flow/components/library-words";
 import { marginsOf } from "@/modules/flow/domain/noise-band";
 import type { Purpose } from "@/modules/flow/domain/raw-test";
@@ -14,6 +14,7 @@ import { localDate } from "@/modules/kernel/instant";
 import { Bay } from "@/modules/ui/bay";
 import { LinkButton } from "@/modules/ui/button";
 import { Note } from "@/modules/ui/note";
+import { Views } from "@/modules/ui/views";
 import { PageHead } from "@/modules/ui/page-head";
 
 export const metadata = { title: "Two tests over each other" };
@@ -22,11 +23,14 @@ const nameOf = (s: OverlaySide) => `${s.mark} ${portWords(s.cylinder, s.side)} $
 
 export default async function OverlayPage({ params, searchParams }: { params: Promise<{ shop: string }>; searchParams: Promise<Record<string, string | string[] | undefined>> }) {
   const ctx = await shopPage(params, "flow.see");
-  const { a, b } = await searchParams;
+  const { a, b, units: askedUnits } = await searchParams;
   const ask = overlayInput.safeParse({ a, b });
   if (!ask.success) notFound();
   const over = await orNotFound(overlayOf(ctx, ask.data));
   const { slug, locale } = ctx.shop;
+  const views = unitViews(over.b.liftUnit, (u) => `/s/${slug}/flow/library/overlay?a=${ask.data.a}&b=${ask.data.b}${u === "read" ? "" : `&units=${u}`}`);
+  const units = views.find((v) => v.key === unitsAsked(askedUnits))?.key ?? "read";
+  const w = unitWords(units, over.b.liftUnit, locale);
   const unit = over.b.liftUnit;
   const day = (iso: string) => date(localDate(new Date(iso), ctx.shop.zone), locale);
   const margins = over.comparable ? marginsOf(over.noise?.rows ?? []) : [];
@@ -38,21 +42,22 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
       {over.comparable
         ? <Note tone="info" className="mb-6" title="May be compared.">Side, bench, bore adapter, pressure, entry, open valves and lifts are alike.{over.samePort ? "" : " They are two castings, so the difference is not the gain of one port."} {over.notes.map((n) => n.words).join(" ")}</Note>
         : <Note className="mb-6" title="Not comparable, so no difference is shown.">{over.reasons.map((r) => r.words).join(" ")} {over.notes.map((n) => n.words).join(" ")}</Note>}
+      <Views label="Units" current={units} views={views} />
       <div className="split" style={{ "--side": "460px" } as React.CSSProperties}>
         <Bay label="Over each other">
-          <div className="hide-s"><LibraryCurves curves={[{ name: nameOf(over.a), look: "thin", readings: over.a.readings }, { name: nameOf(over.b), look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" margins={margins} width={820} height={420} /></div>
-          <div className="only-phone"><LibraryCurves curves={[{ name: "First", look: "thin", readings: over.a.readings }, { name: "Second", look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" margins={margins} width={340} height={280} /></div>
+          <div className="hide-s"><LibraryCurves curves={[{ name: nameOf(over.a), look: "thin", readings: over.a.readings }, { name: nameOf(over.b), look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" margins={margins} units={units} width={820} height={420} /></div>
+          <div className="only-phone"><LibraryCurves curves={[{ name: "First", look: "thin", readings: over.a.readings }, { name: "Second", look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" margins={margins} units={units} width={340} height={280} /></div>
           {hint === null ? null : <p className="hint">{hint}</p>}
-          {over.a.atInH2O === over.b.atInH2O ? null : <p className="hint">The first is stated at {over.a.atInH2O} in H₂O, the second at {over.b.atInH2O}: the two lines do not stand on one scale of pressure.</p>}
+          {over.a.atInH2O === over.b.atInH2O ? null : <p className="hint">The first is stated at {w.pressure(over.a.atInH2O)}, the second at {w.pressure(over.b.atInH2O)}: the two lines do not stand on one scale of pressure.</p>}
         </Bay>
-        <Bay label="Readings, CFM" flush>
+        <Bay label={`Readings, ${w.flowUnit}`} flush>
           <table className="calm">
             <caption className="sr-only">Both tests lift by lift</caption>
-            <thead><tr><th scope="col">Lift, {unit}</th><th scope="col" className="r">First</th><th scope="col" className="r">Second</th>{over.comparable ? <th scope="col" className="r">{word}</th> : null}</tr></thead>
-            <tbody>{over.rows.map((r) => <tr key={r.liftUm}><th scope="row" className="border-b border-line normal-case tracking-normal text-ink">{liftWords(r.liftUm, unit, locale)}</th><td className="r q">{r.a === null ? "—" : flowText(r.a, locale)}</td><td className="r q">{r.b === null ? "—" : flowText(r.b, locale)}</td>{over.comparable ? <td className="r q"><b>{r.difference === null ? "—" : differenceText(r.difference, locale)}</b></td> : null}</tr>)}</tbody>
-            {over.meanDifferenceCfm === null ? null : <tfoot><tr><td colSpan={3}>Mean over the common lifts</td><td className="r q">{differenceText(over.meanDifferenceCfm, locale)}</td></tr></tfoot>}
+            <thead><tr><th scope="col">Lift, {w.liftUnit}</th><th scope="col" className="r">First</th><th scope="col" className="r">Second</th>{over.comparable ? <th scope="col" className="r">{word}</th> : null}</tr></thead>
+            <tbody>{over.rows.map((r) => <tr key={r.liftUm}><th scope="row">{w.lift(r.liftUm)}</th><td className="r q">{r.a === null ? "—" : w.flow(r.a)}</td><td className="r q">{r.b === null ? "—" : w.flow(r.b)}</td>{over.comparable ? <td className="r q"><b>{r.difference === null ? "—" : w.difference(r.difference)}</b></td> : null}</tr>)}</tbody>
+            {over.meanDifferenceCfm === null ? null : <tfoot><tr><td colSpan={3}>Mean of the common lifts</td><td className="r q">{w.difference(over.meanDifferenceCfm)}</td></tr></tfoot>}
           </table>
-          {over.noise === null ? null : <NoiseVerdicts port={{ noise: over.noise.rows, withheld: [], history: over.noise.history, notStated: over.noise.notStated, liftUnit: unit }} locale={locale} />}
+          {over.noise === null ? null : <NoiseVerdicts port={{ noise: over.noise.rows, withheld: [], history: over.noise.history, notStated: over.noise.notStated, liftUnit: unit }} locale={locale} units={units} />}
           <div className="p-4">
             {[over.a, over.b].map((s, i) => <p key={s.testId} className="sm mid mb-2"><b>{i === 0 ? "First" : "Second"}: <Link className="lk" href={`/s/${slug}/flow/${s.headId}`}>{s.mark}</Link></b>, {day(s.startedAt)}, {s.operator}. {s.conditions.join(", ")}.</p>)}
           </div>
