@@ -14,6 +14,8 @@ export const measurementRow = z.strictObject({
 });
 export const saveMeasurementsInput = z.strictObject({
   headId: z.uuid(), stage: z.enum(["before", "after"]), instrument: line(80).default(""),
+  /** Who typed it, where that may not be who is signed in by now: another one's typing is refused and waits for them. */
+  by: z.uuid().optional(),
   rows: z.array(measurementRow).min(1, "Type at least one measurement.").max(300),
 });
 

@@ -52,6 +52,7 @@ export const saveMeasurements = defineCommand({
   act: "flow.record",
   input: saveMeasurementsInput,
   async run(ctx, input) {
+    if (input.by !== undefined && input.by !== personIdOf(ctx)) return refuse("OTHER_PERSON", "Somebody else typed this. It waits on the device until they sign in.");
     const [head] = await ctx.tx.select({ cylinders: heads.cylinders }).from(heads).where(and(eq(heads.shopId, ctx.shop.id), eq(heads.id, input.headId))).for("update");
     if (!head) return refuse("NOT_FOUND", "This head is not here.");
     const saved: SavedMeasure[] = [];

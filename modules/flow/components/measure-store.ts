@@ -31,7 +31,7 @@ export function deviceStore(shop: string): LineStore {
   };
 }
 
-interface Answer { saved?: SavedMeasure[]; refused?: RefusedMeasure[]; title?: string; fields?: { message: string }[] }
+interface Answer { code?: string; saved?: SavedMeasure[]; refused?: RefusedMeasure[]; title?: string; fields?: { message: string }[] }
 
 /** Sends one line to the shop's records. No answer, a broken one or "try again" counts as no link: the line stays. */
 export const lineSender = (slug: string): LineSender => async (line, edit): Promise<LineSent> => {
@@ -41,7 +41,7 @@ export const lineSender = (slug: string): LineSender => async (line, edit): Prom
     response = await fetch(`/api/v1/s/${slug}/flow/measurements`, {
       method: "POST",
       headers: { "content-type": "application/json", "idempotency-key": edit.requestId },
-      body: JSON.stringify({ headId: line.headId, stage: line.stage, instrument: edit.instrument, rows: [{ ...line.place, kind: line.kind, value: edit.value, unit: edit.unit, confirmed: edit.confirmed, revisionSeen: line.revision }] }),
+      body: JSON.stringify({ by: line.person, headId: line.headId, stage: line.stage, instrument: edit.instrument, rows: [{ ...line.place, kind: line.kind, value: edit.value, unit: edit.unit, confirmed: edit.confirmed, revisionSeen: line.revision }] }),
       signal: AbortSignal.timeout(15_000),
     });
     body = (await response.json()) as Answer;
@@ -52,7 +52,8 @@ export const lineSender = (slug: string): LineSender => async (line, edit): Prom
   const [refused] = body.refused ?? [];
   if (response.ok && saved) return { status: "saved", revision: saved.revision, valueText: saved.valueText, unit: saved.unit };
   if (response.ok && refused) return { status: "refused", message: refused.message, asks: refused.asks, theirs: refused.theirs };
-  if (response.status === 401) return { status: "signed-out" };
+  // Somebody else signed in meanwhile in another window: the line is not theirs to send.
+  if (response.status === 401 || body.code === "OTHER_PERSON") return { status: "signed-out" };
   if (response.status >= 500 || response.status === 429 || response.ok) return { status: "no-link" };
   return { status: "refused", message: body.fields?.[0]?.message ?? body.title ?? "This value was not accepted.", asks: false, theirs: null };
 };
