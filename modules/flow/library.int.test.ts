@@ -157,6 +157,8 @@ describe("two tests over each other", () => {
     expect(over).toMatchObject({ comparable: true, samePort: false });
     expect(over.rows.at(-1)).toMatchObject({ liftUm: 10160, a: 127, b: 143.6, difference: 16.6 });
     expect(over.noise?.rows.at(-1)).toMatchObject({ liftUm: 10160, verdict: "not_assessed", before: 1, after: 1 });
+    // The hero's means, and no cam named on the tests.
+    expect(over.compared).toMatchObject({ gain: { meanGainCfm: 9.45, crossovers: [] }, means: { overLift: { fromUm: 1270 }, overCam: "no_cam" } });
     const late = await heroTest(one, "intake", "after", "2026-06-20T15:00:00Z");
     const apart = await overlayOf(a.as("tech"), { a: late, b: after });
     expect(apart.notes.map((n) => n.words)).toContain("The two were read 159 days apart.");
@@ -168,6 +170,7 @@ describe("two tests over each other", () => {
     const withheld = await overlayOf(a.as("tech"), { a: before, b: exhaust });
     expect(withheld.comparable).toBe(false);
     expect(withheld.meanDifferenceCfm).toBeNull();
+    expect(withheld.compared).toBeNull();
     expect(withheld.noise).toBeNull();
     expect(withheld.rows.every((r) => r.difference === null)).toBe(true);
     expect(withheld.reasons.map((r) => r.code)).toContain("SIDE_DIFFERS");

@@ -10,11 +10,11 @@ import type { UnitWords } from "./unit-words";
 const SIDE_WORDS = { intake: "Intake", exhaust: "Exhaust" } as const;
 
 /** Means and cam lift of two tests as a table: before, after, the difference with its sign, and percent. */
-export function MeansTable({ gain, means, w, caption, change = "Gain" }: { gain: Parameters<typeof meanRows>[0]; means: ComparisonMeans | undefined; w: UnitWords; caption: string; change?: string }) {
+export function MeansTable({ gain, means, w, caption, heads = ["Before", "After", "Gain"] }: { gain: Parameters<typeof meanRows>[0]; means: ComparisonMeans | undefined; w: UnitWords; caption: string; heads?: readonly [string, string, string] }) {
   return (
     <Lane label={caption}><table className="calm">
       <caption className="sr-only">{caption}</caption>
-      <thead><tr><th scope="col">{w.flowUnit}</th><th scope="col" className="r">Before</th><th scope="col" className="r">After</th><th scope="col" className="r">{change}</th><th scope="col" className="r">%</th></tr></thead>
+      <thead><tr><th scope="col">{w.flowUnit}</th>{heads.map((h) => <th key={h} scope="col" className="r">{h}</th>)}<th scope="col" className="r">%</th></tr></thead>
       <tbody>{meanRows(gain, means, w).map((r) => (
         <tr key={r.name}><th scope="row" className="wr">{r.name}</th><td className="r q">{r.before}</td><td className="r q">{r.after}</td><td className="r q nw"><b>{r.isLoss ? "▼ " : ""}{r.gain}</b>{r.isLoss ? <span className="sr-only"> a loss</span> : null}</td><td className="r q nw">{r.percent}</td></tr>
       ))}</tbody>

@@ -46,10 +46,11 @@ export function camWords(means: ComparisonMeans | undefined, degrees: (value: nu
   return `Cam "${camLabel}", ${degrees(spanDeg)}°${isSynthetic ? "; * its curve is synthetic, drawn from lift and duration, an assumption" : ", from its table"}.`;
 }
 
-/** Where gain and loss change places; null where they do not. */
-export function crossoverWords({ crossovers }: Pick<Told, "crossovers">, w: UnitWords): string | null {
+/** Where gain and loss change places; null where they do not. @param isGain false for two castings, whose difference is no gain. */
+export function crossoverWords({ crossovers }: Pick<Told, "crossovers">, w: UnitWords, isGain = true): string | null {
+  const [low, high] = isGain ? ["loss", "gain"] : ["lower", "higher"];
   if (crossovers.length === 0) return null;
-  return `${crossovers.map((c, i) => `${i === 0 ? "Turns" : "turns"} from ${c.direction === "loss_to_gain" ? "loss to gain" : "gain to loss"} at ${w.lift(c.lift)}`).join(", ")} (crossover).`;
+  return `${crossovers.map((c, i) => `${i === 0 ? "Turns" : "turns"} from ${c.direction === "loss_to_gain" ? `${low} to ${high}` : `${high} to ${low}`} at ${w.lift(c.lift)}`).join(", ")} (crossover).`;
 }
 
 /** Lifts that lost, as plainly as a gain; null without one. */

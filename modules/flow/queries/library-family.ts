@@ -2,6 +2,7 @@ import "server-only";
 import { and, eq, inArray, sql } from "drizzle-orm";
 import { engineFamilies, flowTests, flowTestSummaries, heads } from "@/db/schema";
 import { inShop, mustBeAble, NotFound, settingsOf, type ShopContext, type TxContext } from "@/modules/access/context";
+import { comparisonMeans, type ComparisonMeans } from "../domain/comparison-means";
 import { historyOfPair } from "../domain/bench-history";
 import type { Reason, PortSide } from "../domain/comparison-reasons";
 import { gainsByLift, portChange, type KeptFigures, type LiftGains } from "../domain/family-gains";
@@ -10,13 +11,14 @@ import { middleCurve, type MiddlePoint } from "../domain/family-middle";
 import { noiseOfTests, type GainNoise } from "../domain/noise-rows";
 import type { RawTest } from "../domain/raw-test";
 import type { LiftReading } from "../domain/repeats";
-import { compareSets, type ShopComparison } from "../domain/shop-comparison";
+import { compareSets, type ComparableSets, type ShopComparison } from "../domain/shop-comparison";
 import { conditionWords } from "../domain/side-gain";
 import { standingTests } from "../domain/standing-tests";
 import { figuresOfTest, readingSetOf } from "../domain/test-figures";
 import { FLOW_CONSTANTS_VERSION } from "../domain/test-summary";
 import { valveListWords, type ValveOfFamily } from "../domain/valve-list";
 import { standsInLibrary } from "../library-sql";
+import { camsOf } from "./cams-of-tests";
 import { withRepeatHistory } from "./repeat-history";
 import { rawTests } from "./tests-of-head";
 
@@ -136,6 +138,8 @@ export interface Overlay {
   reasons: Reason<string>[]; notes: Reason<string>[];
   rows: OverlayRow[];
   meanDifferenceCfm: number | null;
+  /** What the two come to, first and second; null where no difference is shown. */
+  compared: { gain: ComparableSets; means: ComparisonMeans } | null;
   /** Each common lift against the noise; null where no difference is shown. */
   noise: GainNoise | null;
 }
@@ -174,12 +178,13 @@ export async function overlayOf(ctx: ShopContext, ask: { a: string; b: string })
     const compared = compareSets({ before: readingSetOf(a), after: readingSetOf(b), camLiftUm, benchCheckHoursMax: benchCheckHours });
     const base = { a: sideOf(a), b: sideOf(b), camLiftUm, samePort: a.headId === b.headId && a.cylinder === b.cylinder && a.side === b.side };
     const daysApart = Math.floor(Math.abs(Date.parse(b.startedAt) - Date.parse(a.startedAt)) / 86_400_000);
-    if (!compared.ok) return { ...base, comparable: false, reasons: [{ code: compared.refusal.code, words: compared.refusal.message }], notes: [], rows: [], meanDifferenceCfm: null, noise: null };
+    if (!compared.ok) return { ...base, comparable: false, reasons: [{ code: compared.refusal.code, words: compared.refusal.message }], notes: [], rows: [], meanDifferenceCfm: null, compared: null, noise: null };
     const value = compared.value;
     if (!value.comparable) {
-      return { ...base, comparable: false, reasons: asFirstAndSecond(value.reasons, base.samePort, daysApart), notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null })), meanDifferenceCfm: null, noise: null };
+      return { ...base, comparable: false, reasons: asFirstAndSecond(value.reasons, base.samePort, daysApart), notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null })), meanDifferenceCfm: null, compared: null, noise: null };
     }
     const rows = [...value.rows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: r.gainCfm })), ...value.unpairedRows.map((r) => ({ liftUm: r.liftUm, a: r.beforeCfm, b: r.afterCfm, difference: null }))];
-    return { ...base, comparable: true, reasons: [], notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: rows.sort((x, y) => x.liftUm - y.liftUm), meanDifferenceCfm: value.meanGainCfm, noise: noiseOfTests(figuresOfTest(a), figuresOfTest(b), b, historyOfPair(a, b)) };
+    const cam = (await camsOf(inner, [a, b])).get(b.camshaft?.id ?? a.camshaft?.id ?? "") ?? null;
+    return { ...base, comparable: true, compared: { gain: value, means: comparisonMeans(value, cam) }, reasons: [], notes: asFirstAndSecond(value.notes, base.samePort, daysApart), rows: rows.sort((x, y) => x.liftUm - y.liftUm), meanDifferenceCfm: value.meanGainCfm, noise: noiseOfTests(figuresOfTest(a), figuresOfTest(b), b, historyOfPair(a, b)) };
   });
 }

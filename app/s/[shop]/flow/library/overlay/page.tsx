@@ -1,6 +1,8 @@
 import Link from "next/link";
 import { notFound } from "next/navigation";
 import { orNotFound, shopPage } from "@/modules/access/page";
+import { MeansTable } from "@/modules/flow/components/comparison-figures";
+import { camWords, crossoverWords, noCamWords } from "@/modules/flow/components/comparison-words";
 import { LibraryCurves } from "@/modules/flow/components/library-curves";
 import { bandHint, NoiseVerdicts } from "@/modules/flow/components/noise-verdicts";
 import { unitsAsked, unitViews, unitWords } from "@/modules/flow/components/unit-words";
@@ -9,7 +11,7 @@ import { marginsOf } from "@/modules/flow/domain/noise-band";
 import type { Purpose } from "@/modules/flow/domain/raw-test";
 import { overlayInput } from "@/modules/flow/library-input";
 import { overlayOf, type OverlaySide } from "@/modules/flow/queries/library-family";
-import { date } from "@/modules/kernel/format";
+import { date, decimal } from "@/modules/kernel/format";
 import { localDate } from "@/modules/kernel/instant";
 import { Bay } from "@/modules/ui/bay";
 import { LinkButton } from "@/modules/ui/button";
@@ -57,6 +59,12 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
             <tbody>{over.rows.map((r) => <tr key={r.liftUm}><th scope="row">{w.lift(r.liftUm)}</th><td className="r q">{r.a === null ? "—" : w.flow(r.a)}</td><td className="r q">{r.b === null ? "—" : w.flow(r.b)}</td>{over.comparable ? <td className="r q"><b>{r.difference === null ? "—" : w.difference(r.difference)}</b></td> : null}</tr>)}</tbody>
             {over.meanDifferenceCfm === null ? null : <tfoot><tr><td colSpan={3}>Mean of the common lifts</td><td className="r q">{w.difference(over.meanDifferenceCfm)}</td></tr></tfoot>}
           </table>
+          {over.compared === null ? null : (
+            <>
+              <MeansTable gain={over.compared.gain} means={over.compared.means} w={w} caption="What the two tests come to" heads={["First", "Second", word]} />
+              <p className="hint p-3">{[camWords(over.compared.means, (v) => decimal(v, 0, locale)), noCamWords(over.compared.means), crossoverWords(over.compared.gain, w, over.samePort) ?? "The two do not cross."].filter((x) => x !== null).join(" ")}</p>
+            </>
+          )}
           {over.noise === null ? null : <NoiseVerdicts port={{ noise: over.noise.rows, withheld: [], history: over.noise.history, notStated: over.noise.notStated, liftUnit: unit }} locale={locale} units={units} />}
           <div className="p-4">
             {[over.a, over.b].map((s, i) => <p key={s.testId} className="sm mid mb-2"><b>{i === 0 ? "First" : "Second"}: <Link className="lk" href={`/s/${slug}/flow/${s.headId}`}>{s.mark}</Link></b>, {day(s.startedAt)}, {s.operator}. {s.conditions.join(", ")}.</p>)}
