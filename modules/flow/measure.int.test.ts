@@ -6,6 +6,7 @@ import { addOwnHead, changeFamily } from "./commands/families";
 import { addFamily } from "./commands/gear";
 import { saveMeasurements, setMeasurementLimit } from "./commands/measurements";
 import { gearRoom } from "./queries/gear";
+import { flowSheetFor } from "./queries/sheet";
 import { measurementSheet } from "./queries/measurements";
 
 let a: TestShop;
@@ -32,6 +33,18 @@ describe("the measurement sheet", () => {
     const sheet = await measurementSheet(a.as("counter"), head);
     expect(sheet.valves).toHaveLength(4);
     expect(sheet.cells.find((c) => c.kind === "spring-installed")).toMatchObject({ valueText: "33,5", unit: "mm", base: 33.5, revision: 1, by: "tech", instrument: "dial 2", stage: "before" });
+  });
+
+  it("tells the flow sheet the smallest section of each port, newest revision of each stage", async () => {
+    const port = (kind: string, value: string, more: object = {}) => valve(kind, value, { side: "", position: "", unit: "mm²", ...more });
+    expect(must(await save([port("section-intake", "560"), port("section-exhaust", "0.8 in2")])).refused).toEqual([]);
+    must(await save([port("section-intake", "566", { revisionSeen: 1 })]));
+    const { sections } = await flowSheetFor(a.as("tech"), head, 1);
+    expect(sections.find((x) => x.side === "intake")).toEqual({ side: "intake", stage: "before", mm2: 566 });
+    // 1 in2 is 25.4 x 25.4 mm2.
+    expect(sections.find((x) => x.side === "exhaust")?.mm2).toBeCloseTo(516.128, 6);
+    must(await save([port("section-intake", "", { revisionSeen: 2 })]));
+    expect((await flowSheetFor(a.as("tech"), head, 1)).sections.map((x) => x.side)).toEqual(["exhaust"]);
   });
 
   it("keeps a doubtful value when it is confirmed, and every revision for ever", async () => {
@@ -63,6 +76,12 @@ describe("the measurement sheet", () => {
     // A head that states its own keeps it.
     await behindTheCurtain(`update heads set cam_lift_intake_um = 9000 where id = '${early}'`);
     expect((await measurementSheet(a.as("tech"), early)).head.camLiftIntakeUm).toBe(9000);
+  });
+
+  it("takes a line kept on a device from nobody but who typed it", async () => {
+    const kept = { headId: head, stage: "after" as const, rows: [valve("spring-free", "40")], by: a.people.tech ?? "" };
+    expect(await saveMeasurements(a.as("insp"), kept)).toMatchObject({ ok: false, refusal: { code: "OTHER_PERSON" } });
+    expect(must(await saveMeasurements(a.as("tech"), kept)).saved).toHaveLength(1);
   });
 
   it("keeps before and after apart", async () => {

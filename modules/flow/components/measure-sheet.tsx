@@ -23,7 +23,7 @@ import { useMeasureLines } from "./measure-state";
 
 const GROUPS = Object.keys(GROUP_WORDS) as MeasureGroup[];
 /** Which figures stand under which group. */
-const FIGURES_OF: Readonly<Record<MeasureGroup, RegExp>> = { springs: /Coil|Rate|load/, lash: /Shim to fit|Lash/, clearances: /piston|Retainer/, seats: /Seat (width|offset)|Vacuum/, guides: /Stem/, chamber: /Chamber|Compression/, deck: /Deck/ };
+const FIGURES_OF: Readonly<Record<MeasureGroup, RegExp>> = { springs: /Coil|Rate|load/, lash: /Shim to fit|Lash/, clearances: /piston|Retainer/, seats: /Seat (width|offset)|Vacuum/, guides: /Stem/, ports: /^$/, chamber: /Chamber|Compression/, deck: /Deck/ };
 interface Column { place: LinePlace; head: string; liftMm: number | null }
 
 const never = () => () => undefined;

@@ -2,8 +2,8 @@ import type { UnitName } from "./units";
 
 /** What a measurement belongs to: each valve, each cylinder, or the whole head. */
 export type MeasureScope = "valve" | "cylinder" | "head";
-export type MeasureGroup = "springs" | "lash" | "clearances" | "seats" | "guides" | "chamber" | "deck";
-export type Dimension = "length" | "force" | "stiffness" | "volume" | "pressure" | "angle" | "time";
+export type MeasureGroup = "springs" | "lash" | "clearances" | "seats" | "guides" | "ports" | "chamber" | "deck";
+export type Dimension = "length" | "area" | "force" | "stiffness" | "volume" | "pressure" | "angle" | "time";
 
 export interface MeasureKind {
   readonly key: string;
@@ -16,19 +16,22 @@ export interface MeasureKind {
 }
 
 /** Base unit of each dimension: what figures are worked out in and `usual` is written in. */
-export const BASE_UNIT = { length: "mm", force: "N", stiffness: "N/mm", volume: "cc", pressure: "kPa", angle: "°", time: "s" } as const satisfies Record<Dimension, string>;
+export const BASE_UNIT = { length: "mm", area: "mm²", force: "N", stiffness: "N/mm", volume: "cc", pressure: "kPa", angle: "°", time: "s" } as const satisfies Record<Dimension, string>;
 /** Units that may be typed, the first of metric and of inch. */
 export const UNITS_OF: Readonly<Record<Dimension, readonly string[]>> = {
-  length: ["mm", "in"], force: ["N", "lbf"], stiffness: ["N/mm", "lbf/in"], volume: ["cc", "in3"], pressure: ["kPa", "psi"], angle: ["°"], time: ["s"],
+  length: ["mm", "in"], area: ["mm²", "in²"], force: ["N", "lbf"], stiffness: ["N/mm", "lbf/in"], volume: ["cc", "in3"], pressure: ["kPa", "psi"], angle: ["°"], time: ["s"],
 };
 /** The same in the names of the unit table, for what it converts. */
-export const TABLE_UNIT: Readonly<Record<string, UnitName>> = { mm: "mm", in: "in", N: "N", lbf: "lbf", "N/mm": "N/mm", "lbf/in": "lbf/in", cc: "cc", in3: "in3", kPa: "kPa", psi: "psi" };
+export const TABLE_UNIT: Readonly<Record<string, UnitName>> = { mm: "mm", in: "in", "mm²": "mm2", "in²": "in2", N: "N", lbf: "lbf", "N/mm": "N/mm", "lbf/in": "lbf/in", cc: "cc", in3: "in3", kPa: "kPa", psi: "psi" };
 
 export const GROUP_WORDS: Readonly<Record<MeasureGroup, string>> = {
-  springs: "Springs", lash: "Shims and lash", clearances: "Clearances that break engines", seats: "Seats and valves", guides: "Guides and stems", chamber: "Chamber and compression", deck: "Deck",
+  springs: "Springs", lash: "Shims and lash", clearances: "Clearances that break engines", seats: "Seats and valves", guides: "Guides and stems", ports: "Ports", chamber: "Chamber and compression", deck: "Deck",
 };
 
 const kind = (key: string, label: string, group: MeasureGroup, scope: MeasureScope, dimension: Dimension, low: number, high: number): MeasureKind => ({ key, label, group, scope, dimension, usual: [low, high] });
+
+/** The smallest section of each port, which the flow sheet holds the flows against. */
+export const SECTION_KINDS = { intake: "section-intake", exhaust: "section-exhaust" } as const;
 
 /** Everything the sheet has a line for, in the order it is measured. */
 export const MEASURE_KINDS: readonly MeasureKind[] = [
@@ -61,6 +64,8 @@ export const MEASURE_KINDS: readonly MeasureKind[] = [
   kind("guide-low-x", "Guide bore, foot, across", "guides", "valve", "length", 3.5, 15),
   kind("guide-low-y", "Guide bore, foot, along", "guides", "valve", "length", 3.5, 15),
   kind("stem", "Stem, thinnest", "guides", "valve", "length", 3.5, 15),
+  kind(SECTION_KINDS.intake, "Intake port, smallest section", "ports", "cylinder", "area", 100, 4000),
+  kind(SECTION_KINDS.exhaust, "Exhaust port, smallest section", "ports", "cylinder", "area", 100, 4000),
   kind("fill-1", "Burette fill 1", "chamber", "cylinder", "volume", 1, 400),
   kind("fill-2", "Burette fill 2", "chamber", "cylinder", "volume", 1, 400),
   kind("fill-3", "Burette fill 3", "chamber", "cylinder", "volume", 1, 400),

@@ -26,8 +26,8 @@ export function toBase(value: number, unit: string, dimension: Dimension): Resul
  * Errors: NUMBER_NOT_FINITE, UNIT_KIND_MISMATCH, MEASURE_NEGATIVE.
  */
 export function measuredValue(text: string, kind: MeasureKind, sheetUnit: string): Result<MeasuredValue> {
-  const m = /^(.*?)\s*([a-z/°"″]+3?)?$/i.exec(text.trim());
-  const written = m?.[2]?.replace(/^["″]$/, "in");
+  const m = /^(.*?)\s*([a-z/°"″]+[23²]?)?$/i.exec(text.trim());
+  const written = m?.[2]?.replace(/^["″]$/, "in").replace(/2$/, "²");
   const unit = written ? (UNITS_OF[kind.dimension].find((u) => u.toLowerCase() === written.toLowerCase()) ?? written) : sheetUnit;
   const number = typedNumber(m?.[1] ?? "");
   if (!number.ok) return refuse("NUMBER_NOT_FINITE", `This is not a number. Write digits with a point or a comma, and ${UNITS_OF[kind.dimension].join(" or ")} behind it if you like.`, { field: "value" });

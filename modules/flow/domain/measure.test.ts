@@ -27,6 +27,9 @@ describe("a value as typed", () => {
     expect(valueOf(measuredValue("1.319 in", kindOf("spring-installed"), "mm")).base).toBeCloseTo(33.5026, 9);
     expect(valueOf(measuredValue('.044"', kindOf("seat-width"), "mm"))).toMatchObject({ unit: "in" });
     expect(valueOf(measuredValue("46 LBF", kindOf("spring-seat-load"), "N")).base).toBeCloseTo(46 * 4.448221615, 5);
+    // 1 in2 is 25.4 x 25.4 mm2.
+    expect(valueOf(measuredValue("0.868 in2", kindOf("section-intake"), "mm²")).base).toBeCloseTo(559.999, 3);
+    expect(valueOf(measuredValue("560 mm²", kindOf("section-intake"), "in²"))).toEqual({ valueText: "560", unit: "mm²", base: 560 });
     expect(valueOf(measuredValue("-0.2", kindOf("deck-clearance"), "mm")).base).toBe(-0.2);
   });
   it("is refused when it is no number, below zero or in a unit of another kind", () => {

@@ -28,6 +28,8 @@ describe("units against mathjs", () => {
     "m3/s": "m^3/s",
     mm: "mm",
     in: "in",
+    mm2: "mm^2",
+    in2: "in^2",
     "lbf/in": "lbf/in",
     "N/mm": "N/mm",
     lbf: "lbf",

@@ -29,6 +29,8 @@ const UNITS = {
   "kg/h": { kind: "mass flow", toSi: 1 / 3600 },
   mm: { kind: "length", toSi: 1e-3 },
   in: { kind: "length", toSi: 0.0254 },
+  mm2: { kind: "area", toSi: 1e-6 },
+  in2: { kind: "area", toSi: 0.0254 ** 2 },
   "lbf/in": { kind: "stiffness", toSi: N_PER_LBF / 0.0254 },
   "N/mm": { kind: "stiffness", toSi: 1000 },
   lbf: { kind: "force", toSi: N_PER_LBF },

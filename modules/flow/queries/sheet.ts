@@ -1,10 +1,11 @@
 import "server-only";
-import { and, asc, desc, eq, isNull } from "drizzle-orm";
-import { benches, benchChecks, camshafts, customers, engineFamilies, fixtures, flowComparisons, heads, liftDevices, people, workOrders, workPieces } from "@/db/schema";
+import { and, asc, desc, eq, inArray, isNull } from "drizzle-orm";
+import { benches, benchChecks, camshafts, customers, engineFamilies, fixtures, flowComparisons, heads, liftDevices, measurements, people, workOrders, workPieces } from "@/db/schema";
 import { ableTo, inShop, mustBeAble, NotFound, personIdOf, settingsOf, type ShopContext } from "@/modules/access/context";
 import { standingCheck } from "../bench-check-sql";
 import type { PortSide } from "../domain/comparison-reasons";
 import type { BenchRange, BenchScale, RawTest } from "../domain/raw-test";
+import { SECTION_KINDS } from "../domain/measure-kinds";
 import { rawTests } from "./tests-of-head";
 import type { ValveOfFamily } from "../domain/valve-list";
 import { withRepeatHistory } from "./repeat-history";
@@ -22,6 +23,7 @@ export interface SheetHead {
   valves: ValveOfFamily[];
   version: number; workDone: string[]; notes: string;
 }
+export interface PortSection { side: PortSide; stage: "before" | "after"; mm2: number }
 export interface PortMark { cylinder: number; state: "empty" | "part" | "done" }
 /** Everything a flow sheet shows, raw. Figures are computed from it by `figuresOfTest` and `sideGain`, here and in the browser alike. */
 export interface FlowSheet {
@@ -35,6 +37,8 @@ export interface FlowSheet {
   canIssue: boolean;
   /** Whose readings these will be. */
   viewer: { id: string; name: string };
+  /** Smallest section of each port as measured, mm2, before and after the work. */
+  sections: PortSection[];
   /** Hazards this person has not yet confirmed for the job. */
   cautions: string[];
   comparisons: { id: string; comparisonNo: number; issuedAt: string; issuedBy: string }[];
@@ -99,6 +103,9 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
     const canRecord = ableTo(ctx, "flow.record");
     const isTold = canRecord && personId !== null;
     const cautions = !isTold ? [] : row.orderId ? await cautionsToShow(inner, { workOrderId: row.orderId, step: BENCH_STEP, hazards: BENCH_HAZARDS }) : await cautionsOfOwnHead(inner, { headId, step: BENCH_STEP, hazards: BENCH_HAZARDS });
+    const measured = await tx.selectDistinctOn([measurements.kind, measurements.stage], { kind: measurements.kind, stage: measurements.stage, valueText: measurements.valueText, mm2: measurements.valueSi }).from(measurements)
+      .where(and(eq(measurements.shopId, s), eq(measurements.headId, headId), eq(measurements.cylinder, cylinder), inArray(measurements.kind, Object.values(SECTION_KINDS))))
+      .orderBy(measurements.kind, measurements.stage, desc(measurements.revision));
     const issued = await tx.select({ id: flowComparisons.id, comparisonNo: flowComparisons.comparisonNo, issuedAt: flowComparisons.issuedAt, issuedBy: people.shortName }).from(flowComparisons)
       .innerJoin(people, and(eq(people.shopId, flowComparisons.shopId), eq(people.id, flowComparisons.issuedBy)))
       .where(and(eq(flowComparisons.shopId, s), eq(flowComparisons.headId, headId), eq(flowComparisons.cylinder, cylinder))).orderBy(desc(flowComparisons.comparisonNo));
@@ -110,6 +117,7 @@ export async function flowSheetFor(ctx: ShopContext, headId: string, cylinder: n
       },
       cylinder, ports: portMarks(h.cylinders, all), tests,
       benchCheckHours, nominalInH2O: nominalPressureInH2O, canRecord, canIssue: ableTo(ctx, "flow.issue"), viewer: { id: ctx.actor.id, name: ctx.actor.name },
+      sections: measured.filter((m) => m.valueText !== "" && m.mm2 > 0).map((m) => ({ side: m.kind === SECTION_KINDS.intake ? "intake" : "exhaust", stage: m.stage === "after" ? "after" : "before", mm2: m.mm2 })),
       cautions,
       comparisons: issued.map((c) => ({ ...c, issuedAt: c.issuedAt.toISOString() })),
     };

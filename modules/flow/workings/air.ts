@@ -7,7 +7,7 @@ import { figure, significant } from "./output";
 import { named, working } from "./working";
 
 const UNIT_LABELS: Readonly<Partial<Record<UnitName, string>>> = {
-  inH2O_conventional: "in H₂O, conventional", "inH2O_39.2F": "in H₂O at 39.2 °F", inH2O_60F: "in H₂O at 60 °F", inHg_conventional: "in Hg", mmHg_conventional: "mm Hg", "ft3/min": "ft³/min (CFM)", "m3/h": "m³/h", "m3/s": "m³/s", in3: "in³",
+  inH2O_conventional: "in H₂O, conventional", "inH2O_39.2F": "in H₂O at 39.2 °F", inH2O_60F: "in H₂O at 60 °F", inHg_conventional: "in Hg", mmHg_conventional: "mm Hg", "ft3/min": "ft³/min (CFM)", "m3/h": "m³/h", "m3/s": "m³/s", in3: "in³", mm2: "mm²", in2: "in²",
 };
 const UNIT_WORDS = Object.fromEntries(UNIT_NAMES.map((u) => [u, UNIT_LABELS[u] ?? u])) as Readonly<Record<UnitName, string>>;
 

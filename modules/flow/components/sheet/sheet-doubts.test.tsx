@@ -71,6 +71,12 @@ describe("checks on the sheet", () => {
     expect(words(cellHtml(grid(sheetOf([wrong])), "intake", "before", 1270))).not.toContain("impossible");
     expect(words(cellHtml(grid(sheetOf([{ ...wrong, valvesOpen: "left" }], { valves: TWO })), "intake", "before", 1270))).not.toContain("impossible");
   });
+  it("more than the smallest section can pass is marked on the test it was measured beside", () => {
+    // 127 cfm through 500 mm2 is 119.9 m/s; the ideal speed at 28 in H2O is about 107 m/s.
+    const marked = (stage: "before" | "after") => sheetFigures([before], 8, { sections: [{ side: "intake", stage, mm2: 500 }] }).sides[0]?.before?.figures.cells.at(-1)?.flags;
+    expect(marked("before")).toContain("ABOVE_IDEAL_PORT_LIMIT");
+    expect(marked("after")).not.toContain("ABOVE_IDEAL_PORT_LIMIT");
+  });
   it("flow at zero lift has its own words on the chip, before any other", () => {
     const test = draft("before");
     const [first] = test.cells;

@@ -34,11 +34,18 @@ export interface SheetFigures {
 }
 
 /** What is known of the head beside its tests. */
-export interface HeadKnown { readonly valves?: readonly ValveOfFamily[] }
+export interface HeadKnown {
+  readonly valves?: readonly ValveOfFamily[];
+  /** Smallest section of each port, mm2, before and after the work. */
+  readonly sections?: readonly { readonly side: PortSide; readonly stage: When; readonly mm2: number }[];
+}
 
-function beside(test: RawTest, before: SheetColumn | null, known: HeadKnown): FiguresBeside {
+function beside(test: RawTest, when: When, before: SheetColumn | null, known: HeadKnown): FiguresBeside {
   const listed = headDiametersMm(known.valves ?? [], test.side);
+  // Porting opens the section: each test is held against the one measured beside it.
+  const section = known.sections?.find((x) => x.side === test.side && x.stage === when);
   return {
+    ...(section ? { minSectionMm2: section.mm2 } : {}),
     // How many valves breathe is known where the family lists them and all are open.
     ...(listed.length > 0 && test.valvesOpen === "all" ? { valveDiametersMm: valvesOfTest(test.valveMm, listed) } : {}),
     ...(before && before.test.nominalInH2O === test.nominalInH2O ? { before: before.figures.readings } : {}),
@@ -47,7 +54,7 @@ function beside(test: RawTest, before: SheetColumn | null, known: HeadKnown): Fi
 
 function column(test: RawTest | null, side: PortSide, when: When, known: HeadKnown, before: SheetColumn | null = null): SheetColumn | null {
   if (!test) return null;
-  return { side, when, test, figures: figuresOfTest(test, beside(test, before, known)), head: when === "before" ? "Before" : test.purpose === "interim" ? `Pass ${test.runNo}` : "After" };
+  return { side, when, test, figures: figuresOfTest(test, beside(test, when, before, known)), head: when === "before" ? "Before" : test.purpose === "interim" ? `Pass ${test.runNo}` : "After" };
 }
 
 /** Both sides of a port as the sheet shows them: a pass in work stands where "after" will. */

@@ -14,7 +14,7 @@ const gear: BenchGear = { benches: [{ id: "b", name: "Bench 1", scale: "percent_
 const draft = heroTest("intake", "after", { state: "draft", completedAt: null, bench, nominalInH2O: 10, cells: [{ liftUm: 1270, repeatNo: 1, revision: 1, valueText: "40", valueUnit: "percent", rangeLabel: "200", pressureText: "10", pressureUnit: "inH2O", acceptedReason: null, excludedReason: null, takenAt: "2026-03-12T16:40:00.000Z" }] });
 const sheetOf = (tests: RawTest[]): FlowSheet => ({
   head: { id: "h", mark: "260224-07", family: "S250-4V", pieceId: null, workOrderId: null, orderNumber: null, customerName: null, castingNumber: "", seatMaterial: "unknown", cylinders: 1, boreMm: 77, camLiftIntakeUm: 8636, camLiftExhaustUm: 8636, valves: [], version: 1, workDone: [], notes: "" },
-  cylinder: 1, ports: [], tests, benchCheckHours: 8, nominalInH2O: 28, canRecord: true, canIssue: true, viewer: { id: "june", name: "June" }, cautions: [], comparisons: [],
+  cylinder: 1, ports: [], tests, benchCheckHours: 8, nominalInH2O: 28, canRecord: true, canIssue: true, viewer: { id: "june", name: "June" }, sections: [], cautions: [], comparisons: [],
 });
 const screen = (tests: RawTest[], isBench: boolean) => renderToStaticMarkup(
   <PlaceProvider place={{ slug: "s", locale: "en-US", currency: "USD", zone: "America/Denver" }}><ToastProvider><FlowSheetScreen sheet={sheetOf(tests)} gear={gear} isBench={isBench} /></ToastProvider></PlaceProvider>,

@@ -63,7 +63,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
   }, [queue]);
 
   const tests = useMemo(() => saved.map((t) => withTyped(t, [...state.cells.values()].filter((c) => c.testId === t.id).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c, e, t)] : []; }))), [saved, state]);
-  const figures = useMemo(() => sheetFigures(tests, sheet.benchCheckHours, { valves: sheet.head.valves }), [tests, sheet.benchCheckHours, sheet.head.valves]);
+  const figures = useMemo(() => sheetFigures(tests, sheet.benchCheckHours, { valves: sheet.head.valves, sections: sheet.sections }), [tests, sheet.benchCheckHours, sheet.head.valves, sheet.sections]);
 
   const keyOf = useCallback((pos: Pos) => keptKey(slug, pos.testId, pos.liftUm, pos.repeatNo), [slug]);
   const savedCell = useCallback((pos: Pos) => saved.find((t) => t.id === pos.testId)?.cells.find((c) => c.liftUm === pos.liftUm && c.repeatNo === pos.repeatNo), [saved]);
