@@ -23,6 +23,8 @@ import type { CurveView } from "./curve-views";
 import { HeadViews } from "./head-views";
 import { IssuedReports } from "./issued-reports";
 import { LibraryCurves } from "./library-curves";
+import { sheetFigures } from "./sheet/sheet-figures";
+import { SheetSummary } from "./sheet/sheet-summary";
 import { unitsAsked, unitViews } from "./unit-words";
 
 const PLACE = { slug: "s", locale: "en-US", currency: "USD", zone: "America/Denver" };
@@ -72,6 +74,11 @@ describe("what before and after come to", () => {
       expect(text).toContain("Lower after than before at .050 (−0.6), .100 (−0.4).");
       expect(text).toContain("Turns from loss to gain at .104 (crossover).");
     }
+  });
+  it("is told short on the sheet, both sides in a line, and not where the two may not be compared", () => {
+    const text = (tests: readonly RawTest[]) => words(renderToStaticMarkup(<SheetSummary figures={sheetFigures(tests, 8)} locale="en-US" />));
+    expect(text(hero({ exhaustFlows: CROSSED }))).toMatch(/Mean over the lift, CFM: intake \+8\.2 over \.050 to \.340, exhaust \+[\d.]+ over \.050 to \.340\. Exhaust turns from loss to gain at \.104 \(crossover\)\./);
+    expect(text([...hero().slice(0, 2), ...hero({ nominalInH2O: 25 }).slice(2)])).not.toContain("Mean over the lift");
   });
   it("says why there is no mean over the cam, and shows nothing where the two may not be compared", () => {
     expect(words(page(hero(), { cam: null }))).toContain("No mean over the cam: no camshaft is named on the tests.");

@@ -1,6 +1,6 @@
-import type { ComparisonMeans, NoCamMean } from "../domain/comparison-means";
+import { comparisonMeans, type ComparisonMeans, type NoCamMean } from "../domain/comparison-means";
 import type { PortRatio } from "../domain/port-ratios";
-import type { ComparableGain } from "../domain/side-gain";
+import type { ComparableGain, SideGain } from "../domain/side-gain";
 import type { UnitWords } from "./unit-words";
 
 /** One mean, before and after, ready to print. */
@@ -31,6 +31,14 @@ export function meanRows(gain: Told, means: ComparisonMeans | undefined, w: Unit
     ...(typeof overCam === "object" ? [row(`Mean over the cam${overCam.isSynthetic ? " *" : ""}`, overCam.beforeCfm, overCam.afterCfm, overCam.gainCfm, overCam.percent)] : []),
     ...(typeof atCamLift === "object" ? [row(`At cam lift ${w.lift(atCamLift.liftUm)}`, atCamLift.beforeCfm, atCamLift.afterCfm, atCamLift.gainCfm, atCamLift.beforeCfm === 0 ? null : (100 * atCamLift.gainCfm) / atCamLift.beforeCfm)] : []),
   ];
+}
+
+/** Both sides in a line: means over the lift and where they cross. Null where nothing may be compared. */
+export function shortWords(gains: readonly (SideGain | null)[], wordsOf: (gain: ComparableGain) => UnitWords): string | null {
+  const told = gains.flatMap((gain) => (gain?.comparable ? [{ gain, w: wordsOf(gain), mean: comparisonMeans(gain, null).overLift }] : []));
+  const means = told.flatMap(({ gain, w, mean }) => (mean ? [`${gain.side} ${mean.gainCfm < 0 ? "loss " : ""}${w.difference(mean.gainCfm)} over ${w.lift(mean.fromUm)} to ${w.lift(mean.toUm)}`] : []));
+  const crossings = told.flatMap(({ gain, w }) => { const words = crossoverWords(gain, w); return words === null ? [] : [`${gain.side === "intake" ? "Intake" : "Exhaust"} ${words[0]?.toLowerCase() ?? ""}${words.slice(1)}`]; });
+  return means.length + crossings.length === 0 ? null : [...(means.length > 0 ? [`Mean over the lift, ${told[0]?.w.flowUnit ?? "CFM"}: ${means.join(", ")}.`] : []), ...crossings].join(" ");
 }
 
 const NO_CAM: Readonly<Record<NoCamMean, string>> = {

@@ -43,7 +43,7 @@ function PortCurve({ port, view, units, locale }: { port: readonly PortFigures[]
   const w = unitWords(units, first.liftUnit, locale);
   const { lines, measure } = curveOf(port, view, units, w, first.atInH2O);
   if (lines.every((l) => l.before.length + l.after.length === 0)) return <p className="mid">Valve sizes are not recorded, or not all valves were open, so there is nothing to draw here. The flow is under Flow.</p>;
-  const curve = { lines, measure, unit: w.liftUnit, atInH2O: first.atInH2O, camLiftUm: first.camLiftUm, locale, label: `Read the curve of ${portWords(first.cylinder, "both sides")}: ${measure.what.toLowerCase()}` };
+  const curve = { lines, measure, unit: w.liftUnit, atInH2O: first.atInH2O, camLiftUm: first.camLiftUm, locale, label: `Read the curve: ${measure.what}${first.cylinder === 1 ? "" : `, port ${first.cylinder}`}` };
   return (
     <>
       <div className="hide-s"><CurveReader {...curve} width={620} height={360} /></div>

@@ -1,5 +1,7 @@
 import { decimal } from "@/modules/kernel/format";
+import { shortWords } from "../comparison-words";
 import { differenceText, liftWords } from "../flow-words";
+import { unitWords } from "../unit-words";
 import { exhaustToIntake, type SheetFigures, type SheetSide } from "./sheet-figures";
 
 /** `+9.45` of a side that may be compared; null otherwise. */
@@ -20,5 +22,11 @@ export function SheetSummary({ figures, locale }: { figures: SheetFigures; local
     [ratio ? `${decimal(ratio.percent, 0, locale)} %` : "–", ratio ? `Ex to in, ${liftWords(ratio.liftUm, unit, locale)}` : "Ex to in"],
     [`${read} of ${planned}`, "Lifts read"],
   ];
-  return <div className="sumr">{cells.map(([value, label]) => <div key={label}><span className="num n-m">{value}</span><span className="unit">{label}</span></div>)}</div>;
+  const more = shortWords(figures.sides.map((s) => s.gain), (gain) => unitWords("read", gain.liftUnit, locale));
+  return (
+    <>
+      {more === null ? null : <p className="hint">{more}</p>}
+      <div className="sumr">{cells.map(([value, label]) => <div key={label}><span className="num n-m">{value}</span><span className="unit">{label}</span></div>)}</div>
+    </>
+  );
 }
