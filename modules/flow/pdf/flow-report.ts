@@ -3,6 +3,7 @@ import { engraved, FACE, factRow, masthead, PAPER_INK, paperDefinition, paperWid
 import { dateTimeZone, decimal } from "@/modules/kernel/format";
 import { linesOfPort } from "../components/curve-lines";
 import { curveGeometry } from "../domain/curve-geometry";
+import { flowMeasure } from "../domain/curve-measure";
 import { historyUsed } from "../domain/noise-summary";
 import { AIRFLOW_WORDS, type ReportSide, type ReportSnapshot, type ReportTest } from "../domain/report-snapshot";
 import { curveContent } from "./curve-canvas";
@@ -82,7 +83,11 @@ export function flowReport(s: ReportSnapshot, asked: Density = DENSITIES[0]): TD
   // Sides without a comparison are drawn from their tests, so that a single test has its curve too.
   const lines = linesOfPort(port).map((line, i) => (line.before.length + line.after.length > 0 ? line : { ...line, before: s.sides[i]?.before?.readings ?? [], after: s.sides[i]?.after?.readings ?? [] }));
   const unit = unitOf(s.sides);
+  // Two tests at unlike pressures stand on one drawing, but its axis is of neither.
+  const pressures = new Set(tests.map((t) => t.conditions[0]));
+  const measure = isNew && pressures.size > 1 ? { measure: flowMeasure("read", "pressures that differ, see below") } : {};
   const geometry = curveGeometry({
+    ...measure,
     widthPx: isLong ? 216 : width, heightPx: isLong ? d.curveBeside : d.curve, unit, atInH2O: stated?.atInH2O ?? 28, camLiftUm: stated?.camLiftUm ?? null, lines, mini: isLong, paper: isNew,
     decimalText: (v, digits) => decimal(v, digits, s.locale),
   });
@@ -109,7 +114,7 @@ export function flowReport(s: ReportSnapshot, asked: Density = DENSITIES[0]): TD
       { width: "*", stack: [readingsTable(s.sides, s, { ...looks, isWide: false })] },
     ], columnGap: 16, margin: [0, 6, 0, 0] } as Content, ...(isNew ? s.sides.flatMap((side) => { const words = saidOf(side); return words === "" ? [] : told(`${SIDE_WORDS[side.side]}: ${words}`, 3); }) : [])] : [
       { stack: curve, margin: [0, isNew ? 4 : 0, 0, isNew ? 0 : -20] } as Content,
-      { columns: s.sides.map((side): Content => ({ stack: [sideHead(side), ...(liftsOf([side]).length > 0 ? [readingsTable([side], s, { ...looks, isWide: true })] : told("Not tested.")), ...meansOf(side), ...told(saidOf(side))] })), columnGap: 22, margin: [0, 4, 0, 0] } as Content,
+      { columns: s.sides.map((side): Content => ({ stack: [sideHead(side), ...(liftsOf([side]).length > 0 ? [readingsTable([side], s, { ...looks, isWide: true })] : isNew ? [] : told("Not tested.")), ...meansOf(side), ...told(saidOf(side))] })), columnGap: 22, margin: [0, 4, 0, 0] } as Content,
     ]),
     ...(saidBoth.length === 0 ? [] : told(`Both sides: ${saidBoth.join(" ")}`, 3)),
     ...(ratio === null ? [] : [{ text: ratio, fontSize: d.told, bold: true, margin: [2, d.gap, 0, 0] } as Content]),

@@ -51,4 +51,11 @@ describe("a report stands on one page", () => {
       expect(JSON.stringify(content)).toContain(AIRFLOW_WORDS);
     }
   });
+  it("names no pressure on an axis that two of them share", () => {
+    const text = (tests: readonly RawTest[]) => JSON.stringify(flowReport(reportOf(tests)).content);
+    expect(text(hero())).toContain("CFM at 28 in H₂O");
+    const apart = text([...hero().slice(0, 1), heroTest("intake", "after", { nominalInH2O: 25 })]);
+    expect(apart).toContain("CFM at pressures that differ, see below");
+    expect(apart).not.toMatch(/CFM at 2[58] in/);
+  });
 });
