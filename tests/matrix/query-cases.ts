@@ -100,6 +100,8 @@ export const QUERY_CASES: Record<string, QueryCase> = {
   "flow/queries/upload uploadHeads": byId("flow.see", "heads"),
   "flow/queries/upload flowFilesOf": byId("flow.see", "heads"),
   "flow/queries/tests-of-head cellsOf": byIds(null, "flow_tests"),
+  "flow/queries/cams-of-tests camsOf": { act: null, call: (fn, ctx, at) => fn(ctx, [{ camshaft: { id: at("camshafts").id, label: "" } }]) },
+  "flow/queries/issued-reports issuedReports": byIds("flow.see", "heads"),
   "flow/queries/tests-of-head rawTests": { act: null, call: (fn, ctx, at) => fn(ctx, { headIds: [at("heads").id] }) },
   "flow/queries/repeat-history withRepeatHistory": {
     act: null,

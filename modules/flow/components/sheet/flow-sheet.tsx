@@ -14,8 +14,11 @@ import { nextRange } from "../../domain/range-choice";
 import type { PortSide } from "../../domain/comparison-reasons";
 import type { BenchGear, FlowSheet } from "../../queries/sheet";
 import { CautionNote } from "../caution-note";
+import { flowMeasure, type Units } from "../../domain/curve-measure";
+import { scaledLines } from "../curve-lines";
 import { CurveReader } from "../curve-reader";
 import { liftWords } from "../flow-words";
+import { unitViews, unitWords } from "../unit-words";
 import { NoiseLines } from "../noise-verdicts";
 import { AddLiftDialog, RemoveLift } from "./add-lift-dialog";
 import { BenchKeypad } from "./bench-keypad";
@@ -31,6 +34,7 @@ import { SaveState } from "./save-state";
 import { notesOf, SheetNotes } from "./sheet-notes";
 import { meanText, SheetSummary } from "./sheet-summary";
 import { linesAt, repeatsRead, statedColumns, type SheetColumn } from "./sheet-figures";
+import { useFirstCell, useNextKey } from "./use-next-key";
 import { useSheet, type Pos } from "./use-sheet";
 
 const HINTS = [
@@ -38,7 +42,7 @@ const HINTS = [
 ];
 const RANGE_HINT = { keys: ["Alt", "↑", "↓"], does: "range" };
 const MORE_HINTS = [
-  { keys: ["PgDn"], does: "next port" }, { keys: ["*"], does: "take from bench" }, { keys: ["Ctrl", "Z"], does: "undo" },
+  { keys: ["PgDn"], does: "next port" }, { keys: ["*"], does: "take from bench" }, { keys: ["Ctrl", "Z"], does: "undo" }, { keys: ["Ctrl", "Enter"], does: "next step" },
 ];
 
 /** The flow sheet of one port pair: grid, live curve, doubts and the next step. With `isBench` a keypad for gloves stands by. */
@@ -52,6 +56,8 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const [again, setAgain] = useState<{ cell: string; count: number } | null>(null);
   const [drawAt, setDrawAt] = useState<number | null>(null);
   const [everyPass, setEveryPass] = useState(false);
+  const [units, setUnits] = useState<Units>("read");
+  useNextKey();
   const { figures } = sheet;
   const columns = figures.sides.flatMap((s) => [s.before, s.after]).filter((c): c is SheetColumn => c !== null);
   const drafts = columns.filter((c) => c.test.state === "draft");
@@ -73,7 +79,12 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
       return;
     }
     sheet.commit(pos);
-    if (document.activeElement instanceof HTMLInputElement) document.activeElement.select();
+    // Past the last intake lift comes the first of the exhaust; past that, the step that finishes.
+    const other = drafts.find((c) => c.when === pos.when && c.side === (by === 1 ? "exhaust" : "intake") && c.side !== pos.side);
+    const end = by === 1 ? figures.liftsUm[0] : figures.liftsUm.at(-1);
+    if (other && end !== undefined) focus(other.side, other.when, end);
+    else if (by === 1 && !isBench) document.querySelector<HTMLButtonElement>(".flow-sheet .commit-bar button.go")?.focus();
+    else if (document.activeElement instanceof HTMLInputElement) document.activeElement.select();
   };
   const across = (pos: Pos, side: PortSide) => {
     const at = figures.sides.find((s) => s.side === side);
@@ -133,6 +144,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const means = ([["in", intake], ["ex", exhaust]] as const).flatMap(([short, side]) => { const mean = meanText(side, locale); return mean ? [`${mean} mean ${short}`] : []; }).join(", ");
   const name = active && activeColumn ? `${active.side} ${liftWords(active.liftUm, unit, locale)} ${activeColumn.head.toLowerCase()}` : "no cell yet";
   const firstDraft = drafts[0];
+  useFirstCell(firstDraft && given.canRecord && drafts.every((c) => c.test.cells.length === 0) ? cellId(firstDraft.side, firstDraft.when, figures.liftsUm[0] ?? 0) : null);
   // Before a cell is in hand, range and pressure are those of the first that will be.
   const inHand = active && activeColumn?.test.state === "draft" ? active : firstDraft ? posOf(firstDraft, figures.liftsUm[0] ?? 0) : null;
   const inHandColumn = inHand ? (columns.find((c) => c.test.id === inHand.testId) ?? null) : null;
@@ -146,7 +158,8 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
   const keysWork = !isBench || drafts.length > 0;
   const next = <NextStep sheet={given} gear={gear} figures={figures} settle={sheet.settle} onChanged={() => router.refresh()} />;
   const passed = sidesWithPasses(sheet.tests);
-  const curve = { lines: linesAt(figures.sides, atInH2O), unit, atInH2O, camLiftUm: cam, locale, label: "Read the curve point by point" } as const;
+  const w = unitWords(units, unit, locale);
+  const curve = { lines: scaledLines(linesAt(figures.sides, atInH2O), w.perCfm), measure: flowMeasure(units, w.pressure(atInH2O)), unit: w.liftUnit, atInH2O, camLiftUm: cam, locale, label: "Read the curve point by point" } as const;
 
   return (
     <div className={`flow-sheet ${live}${isBench ? " bench" : ""}`}>
@@ -173,6 +186,9 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
             {figures.pressures.length > 1 && !(everyPass && !isBench) ? (
               <div role="group" aria-label="Pressure that is drawn" className="mb-2 flex flex-wrap gap-1">{figures.pressures.map((p) => <ToggleChip key={p} on={p === atInH2O} onChange={() => setDrawAt(p)}>{`At ${inH2O(p)} in H₂O`}</ToggleChip>)}</div>
             ) : null}
+            {isBench || everyPass || columns.length === 0 ? null : (
+              <div role="group" aria-label="Units of the curve" className="mb-2 flex flex-wrap gap-1">{unitViews(unit, (u) => u).map((v) => <ToggleChip key={v.key} on={units === v.key} onChange={() => setUnits(v.key)}>{v.label}</ToggleChip>)}</div>
+            )}
             {passed.length > 0 && !isBench ? (
               <div role="group" aria-label="What the curve shows" className="mb-2 flex flex-wrap gap-1">
                 <ToggleChip on={!everyPass} onChange={() => setEveryPass(false)}>Before and newest</ToggleChip>
@@ -181,7 +197,7 @@ export function FlowSheetScreen({ sheet: given, gear, isBench }: { sheet: FlowSh
             ) : null}
             {everyPass && passed.length > 0 && !isBench ? <PassCurves tests={sheet.tests} place={place} sides={passed} /> : (
               <>
-                <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? 160 : 366} /></div>
+                <div className="only-wide"><CurveReader {...curve} width={560} height={isBench ? (keysWork ? 172 : 300) : 366} /></div>
                 <div className="only-narrow"><CurveReader {...curve} width={350} height={290} mini /></div>
                 {notDrawn === "" ? null : <p className="sm mt-2" role="note"><span aria-hidden="true">▲ </span>{notDrawn}</p>}
               </>

@@ -4,6 +4,7 @@ import { EstimatesSwitch } from "@/modules/flow/components/head-estimates-switch
 import { CURVE_VIEWS, curveViewAsked } from "@/modules/flow/components/curve-views";
 import { HeadViews } from "@/modules/flow/components/head-views";
 import { IssuedReports } from "@/modules/flow/components/issued-reports";
+import { UnitSwitch } from "@/modules/flow/components/unit-switch";
 import { unitsAsked, unitViews } from "@/modules/flow/components/unit-words";
 import type { Units } from "@/modules/flow/domain/curve-measure";
 import { headFigures } from "@/modules/flow/queries/head-figures";
@@ -31,7 +32,7 @@ export default async function FiguresPage({ params, searchParams }: { params: Pr
       {ports.length === 0 ? <EmptyState title="No finished test yet" action={<LinkButton href={`${base}/${head.id}`}>Flow sheet</LinkButton>}>Figures appear when a test is finished.</EmptyState> : (
         <>
           <Views label="Curve of" current={view} views={CURVE_VIEWS.map((v) => ({ ...v, href: href(units, v.key) }))} />
-          <Views label="Units" current={units} views={unitChoices} />
+          <UnitSwitch current={units} choices={unitChoices} />
           <HeadViews ports={ports} ratios={ratios} units={units} view={view} />
         </>
       )}

@@ -4,6 +4,7 @@ import { differenceText } from "@/modules/flow/components/flow-words";
 import { LibraryCurves, type NamedCurve } from "@/modules/flow/components/library-curves";
 import { LibraryGainStrips } from "@/modules/flow/components/library-gain-strips";
 import { portWords } from "@/modules/flow/components/library-words";
+import { UnitSwitch } from "@/modules/flow/components/unit-switch";
 import { unitsAsked, unitViews, unitWords } from "@/modules/flow/components/unit-words";
 import { familyNames } from "@/modules/flow/queries/library";
 import { familyPicture, MEDIAN_OF_NEWEST, type FamilyPicture } from "@/modules/flow/queries/library-family";
@@ -51,7 +52,7 @@ export default async function FamilyPage({ params, searchParams }: { params: Pro
       <PageHead title={family} sub={facts} close actions={<><LinkButton href={`${base}?family=${encodeURIComponent(family)}&side=${side}`}>Its tests</LinkButton><LinkButton href={base}>Library</LinkButton></>} />
       <Views label="Side" current={side} views={(["intake", "exhaust"] as const).map((s) => ({ key: s, label: s === "intake" ? "Intake" : "Exhaust", href: href(family, s) }))} />
       <nav aria-label="Families" className="bar">{families.map((f) => <Link key={f.name} className={f.name === family ? "b" : "lk"} aria-current={f.name === family ? "page" : undefined} href={href(f.name, side)}>{f.name} <span className="dim sm">{f.heads} head{f.heads === 1 ? "" : "s"}</span></Link>)}</nav>
-      <Views label="Units" current={units} views={views} />
+      <UnitSwitch current={units} choices={views} />
       <div className="two mt-6">
         <Bay label={`Gains of the last ${LAST} heads`}>
           <div className="hide-s"><LibraryGainStrips {...strips} /></div>

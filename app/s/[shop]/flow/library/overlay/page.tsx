@@ -5,6 +5,7 @@ import { MeansTable } from "@/modules/flow/components/comparison-figures";
 import { camWords, crossoverWords, noCamWords } from "@/modules/flow/components/comparison-words";
 import { LibraryCurves } from "@/modules/flow/components/library-curves";
 import { bandHint, NoiseVerdicts } from "@/modules/flow/components/noise-verdicts";
+import { UnitSwitch } from "@/modules/flow/components/unit-switch";
 import { unitsAsked, unitViews, unitWords } from "@/modules/flow/components/unit-words";
 import { portWords, PURPOSE_WORDS } from "@/modules/flow/components/library-words";
 import { marginsOf } from "@/modules/flow/domain/noise-band";
@@ -16,7 +17,6 @@ import { localDate } from "@/modules/kernel/instant";
 import { Bay } from "@/modules/ui/bay";
 import { LinkButton } from "@/modules/ui/button";
 import { Note } from "@/modules/ui/note";
-import { Views } from "@/modules/ui/views";
 import { PageHead } from "@/modules/ui/page-head";
 
 export const metadata = { title: "Two tests over each other" };
@@ -44,7 +44,7 @@ export default async function OverlayPage({ params, searchParams }: { params: Pr
       {over.comparable
         ? <Note tone="info" className="mb-6" title="May be compared.">Side, bench, bore adapter, pressure, entry, open valves and lifts are alike.{over.samePort ? "" : " They are two castings, so the difference is not the gain of one port."} {over.notes.map((n) => n.words).join(" ")}</Note>
         : <Note className="mb-6" title="Not comparable, so no difference is shown.">{over.reasons.map((r) => r.words).join(" ")} {over.notes.map((n) => n.words).join(" ")}</Note>}
-      <Views label="Units" current={units} views={views} />
+      <UnitSwitch current={units} choices={views} />
       <div className="split" style={{ "--side": "460px" } as React.CSSProperties}>
         <Bay label="Over each other">
           <div className="hide-s"><LibraryCurves curves={[{ name: nameOf(over.a), look: "thin", readings: over.a.readings }, { name: nameOf(over.b), look: "thick", readings: over.b.readings }]} unit={unit} atInH2O={over.b.atInH2O} camLiftUm={over.camLiftUm} locale={locale} title="Two tests over each other" margins={margins} units={units} width={820} height={420} /></div>
