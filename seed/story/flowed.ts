@@ -45,7 +45,7 @@ export async function flowHead(cast: Cast, room: BenchRoom, who: string, at: str
       const valve = (fitted === 0 ? undefined : story.valveAfter[side]) ?? family[side].headMm;
       must(await postWholeTest(cast.as(who, at), {
         ...head, cylinder, side, purpose: pass.purpose, benchId, fixtureId: room.fixtures.get(fixtureMm) ?? "", nominal: String(NOMINAL), camLift: family[side].camLift, complete: true, liftUnit: "in",
-        entry: side === "exhaust" ? "none" : before && story.clayBefore ? "clay" : "radius", liftDeviceId: room.liftDeviceId, valve: String(valve), seatNote: story.seats[fitted], warmUpMinutes: 20, leak, leakPressure: leak && String(NOMINAL), leakScalingAgreed: held !== NOMINAL,
+        entry: side === "exhaust" ? "none" : before && story.clayBefore ? "clay" : "radius", liftDeviceId: room.liftDeviceId, camshaftId: story.family === "S250-4V" && side === "intake" ? room.camshaftId : "", valve: String(valve), seatNote: story.seats[fitted], warmUpMinutes: 20, leak, leakPressure: leak && String(NOMINAL), leakScalingAgreed: held !== NOMINAL,
         roomTemperature: `${66 + (salt % 7)} F`, roomPressure: `${(24.7 + (salt % 5) / 10).toFixed(1)} inHg`,
         readings: portReadings(family, side, story, pass.share, { salt, cylinder }).map((r) => shown(r, { factor, leak: Number(leak), held, byRange })),
       }), `flow ${pass.purpose} ${side} ${cylinder} of job ${salt}`);

@@ -12,6 +12,8 @@ export interface BenchRoom {
   /** Fixture by its bore, mm. */
   readonly fixtures: ReadonlyMap<number, string>;
   readonly liftDeviceId: string;
+  /** Of the S250-4V family, intake; its lift is tabled. */
+  readonly camshaftId: string;
 }
 
 /** The bench room as it is used: benches, plates with their checks by date, fixtures, lift devices, camshafts. */
@@ -26,13 +28,14 @@ export async function benchRoom(cast: Cast, who: string, at: string, today: stri
   for (const { dueInDays, ...plate } of CHECK_PLATES) must(await addCheckPlate(ctx, { ...plate, atPressure: "28", dueOn: addDays(today, dueInDays) }), plate.serial);
   const devices: string[] = [];
   for (const device of LIFT_DEVICES) devices.push(must(await addLiftDevice(ctx, device), device.name).id);
-  for (const cam of CAMSHAFTS) must(await addCamshaft(ctx, cam), cam.label);
+  const cams: string[] = [];
+  for (const cam of CAMSHAFTS) cams.push(must(await addCamshaft(ctx, cam), cam.label).id);
   for (const [benchId, days] of [[bench.id, BENCH_1_CHECKS], [older.id, OLDER_BENCH_CHECKS]] as const) {
     for (const day of days) {
       must(await recordBenchCheck(cast.as(who, day.at), { benchId, note: day.note, reason: day.reason ?? "", plates: CHECK_PLATES.map((p, i) => ({ serial: p.serial, reference: p.referenceFlow, indicated: day.shown[i] ?? "" })) }), `plates of ${day.at}`);
     }
   }
-  return { benchId: bench.id, olderBenchId: older.id, fixtures, liftDeviceId: devices[0] ?? "" };
+  return { benchId: bench.id, olderBenchId: older.id, fixtures, liftDeviceId: devices[0] ?? "", camshaftId: cams[0] ?? "" };
 }
 
 /** Engine families as the shop describes them: valve lists, bores and cam lifts of those it flows. */

@@ -29,7 +29,7 @@ export async function tellTamarack(ownerUrl: string, pinPepper: string, now: Dat
     { name: "Jonas Wiebe", email: "jonas@wiebe.example", phone: "030 5550101" }, { name: "Atelier Moreau", email: "atelier@moreau.example", phone: "030 5550102" }, { name: "Zoë Ångström", email: "zoe@angstrom.example", phone: "030 5550103" },
   ];
   const ids = await customersOf(cast, "Svea", first, people);
-  const gear: Gear = { parts: {}, room: { benchId: bench.id, olderBenchId: bench.id, fixtures: new Map([[96, fixture.id]]), liftDeviceId: "" }, hands: HANDS, counter: "Svea", receiver: "Ines", books: "Svea", inspector: "Ines" };
+  const gear: Gear = { parts: {}, room: { benchId: bench.id, olderBenchId: bench.id, fixtures: new Map([[96, fixture.id]]), liftDeviceId: "", camshaftId: "" }, hands: HANDS, counter: "Svea", receiver: "Ines", books: "Svea", inspector: "Ines" };
   const today = localDate(now, cast.shop.zone);
   const stories: [opened: string, to: JobPlan["to"], done?: number][] = [["2026-04-13", "gone"], ["2026-06-08", "gone"], [addDays(today, -40), "invoiced"], [addDays(today, -24), "in work", 3], [addDays(today, -8), "booked in"], [addDays(today, -1), "sent"]];
   for (const [i, [opened, to, done]] of stories.entries()) {
