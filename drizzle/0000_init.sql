@@ -105,6 +105,7 @@ CREATE TABLE "shop_settings" (
 	"bench_check_hours" integer DEFAULT 8 NOT NULL,
 	"nominal_pressure_inh2o" integer DEFAULT 28 NOT NULL,
 	"show_flow_estimates" boolean DEFAULT false NOT NULL,
+	"flow_limits" jsonb DEFAULT '{}'::jsonb NOT NULL,
 	"write_off_limit_minor" bigint DEFAULT 100 NOT NULL,
 	"workweek_start_day" integer DEFAULT 1 NOT NULL,
 	"invoice_words" text DEFAULT '' NOT NULL,

@@ -1,6 +1,6 @@
 import { sql } from "drizzle-orm";
 import {
-  bigint, boolean, foreignKey, index, integer, pgTable, primaryKey, text, unique, uniqueIndex, uuid,
+  bigint, boolean, foreignKey, index, integer, jsonb, pgTable, primaryKey, text, unique, uniqueIndex, uuid,
 } from "drizzle-orm/pg-core";
 import { createdAt, id, instant, minorUnits, businessDate, shopId, version } from "./columns";
 
@@ -41,6 +41,8 @@ export const shopSettings = pgTable("shop_settings", {
   nominalPressureInH2O: integer("nominal_pressure_inh2o").notNull().default(28),
   /** Engine speed and power estimates beside the curve of a head; never on an invoice. */
   showFlowEstimates: boolean("show_flow_estimates").notNull().default(false),
+  /** Limits of the checks of the flow room that the owner set; what is not named is the product's. */
+  flowLimits: jsonb("flow_limits").notNull().default(sql`'{}'::jsonb`),
   writeOffLimitMinor: minorUnits("write_off_limit_minor").notNull().default(100),
   workweekStartDay: integer("workweek_start_day").notNull().default(1),
   invoiceWords: text("invoice_words").notNull().default(""),

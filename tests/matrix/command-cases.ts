@@ -169,5 +169,5 @@ export const COMMAND_CASES: Record<string, Case> = {
 /** Commands without an id in their input, so that nothing of another shop can be named. Each new one is listed on purpose. */
 export const NAMES_NOTHING = [
   "customers.add", "menu.add", "purchasing.addSupplier", "time.addDevice", "time.enrolDevice", "time.addPerson", "time.acceptInvitation", "shop.settings", "bank.take-in",
-  "flow.add-bench", "flow.add-fixture", "flow.add-family", "flow.add-camshaft", "flow.add-own-head", "flow.add-check-plate", "flow.add-lift-device", "flow.set-up-bench", "flow.set-up-fixture", "flow.set-up-family", "flow.set-limit", "flow.show-estimates",
+  "flow.add-bench", "flow.add-fixture", "flow.add-family", "flow.add-camshaft", "flow.add-own-head", "flow.add-check-plate", "flow.add-lift-device", "flow.set-up-bench", "flow.set-up-fixture", "flow.set-up-family", "flow.set-limit", "flow.show-estimates", "flow.set-limits",
 ];

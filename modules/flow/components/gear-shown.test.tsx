@@ -13,7 +13,7 @@ const bench: BenchView = {
   id: "b", name: "North", kind: "series_orifice", scale: "direct", ranges: [], waterUnit: "conventional", nominalPressuresInH2O: [28], maxFlowCfm: 400, pressureUncertaintyInH2O: null, readingUncertaintyCfm: null,
   altitudeM: null, active: true, version: 1, check: null,
 };
-const room: GearRoom = { benches: [bench], plates: [], fixtures: [], liftDevices: [], camshafts: [], families: [family], benchCheckHours: 8, canSetUp: false, canRecord: false };
+const room: GearRoom = { benches: [bench], plates: [], fixtures: [], liftDevices: [], camshafts: [], families: [family], benchCheckHours: 8, canSetUp: false, canRecord: false, limits: { own: {}, version: 1, maySet: false } };
 const text = (view: GearView) => renderToStaticMarkup(<GearTable view={view} room={room} slug="ninebark" locale="en-US" edit={null} when={(iso) => iso} />).replace(/<[^>]+>/g, "|");
 const dates = (ats: string[]) => [...renderToStaticMarkup(<GearFactorChart locale="en-US" dateText={(iso) => iso.slice(0, 10)} points={ats.map((at, i) => ({ at, factor: 1 + i / 100, drifted: false }))} />).matchAll(/>(2026-\d\d-\d\d)</g)].map((m) => m[1]);
 

@@ -7,7 +7,8 @@ import { usePlace } from "@/modules/ui/place";
 import type { CoefficientRow } from "../domain/coefficient-rows";
 import { CD_MEASURE, flowMeasure, speedMeasure, type CurveMeasure, type Units } from "../domain/curve-measure";
 import type { CurveLine } from "../domain/curve-geometry";
-import { FLOW_FLAGS } from "../domain/flow-flags";
+import { flagWords } from "../domain/flag-words";
+import type { SanityLimits } from "../domain/sanity-limits";
 import type { PortRatio } from "../domain/port-ratios";
 import type { PortFigures } from "../queries/head-figures";
 import { ComparisonFigures } from "./comparison-figures";
@@ -20,8 +21,9 @@ import { NoiseVerdicts } from "./noise-verdicts";
 import { unitWords, type UnitWords } from "./unit-words";
 
 /** A triangle beside a doubtful figure; its words stand under the table. */
-function FlagMark({ row }: { row: CoefficientRow | undefined }) {
-  return row && row.flags.length > 0 ? <span className="nw" title={row.flags.map((f) => FLOW_FLAGS[f]).join(" ")}>▲<span className="sr-only"> {row.flags.map((f) => FLOW_FLAGS[f]).join(" ")}</span> </span> : null;
+function FlagMark({ row, limits }: { row: CoefficientRow | undefined; limits: SanityLimits | undefined }) {
+  const words = row?.flags.map((f) => flagWords(f, limits)).join(" ");
+  return words ? <span className="nw" title={words}>▲<span className="sr-only"> {words}</span> </span> : null;
 }
 
 const speedOf = (r: CoefficientRow, units: Units): number => (units === "si" ? r.speedMS : r.speedFtS);
@@ -68,10 +70,10 @@ function Coefficients({ p, units, locale }: { p: PortFigures; units: Units; loca
         <tbody>{lifts.map((um) => {
           const [b, a] = [row("before", um), row("after", um)];
           const speed = (r: CoefficientRow | undefined) => n(r ? speedOf(r, units) : undefined, 0);
-          return <tr key={um}><th scope="row">{w.lift(um)}</th><td className="r q">{n((a ?? b)?.liftOverDiameter, 3)}</td><td className="r q">{b ? w.flow(b.flowCfm) : "—"}</td><td className="r q">{a ? w.flow(a.flowCfm) : "—"}</td><td className="r q"><FlagMark row={b} />{n(b?.cd, 3)}</td><td className="r q"><FlagMark row={a} /><b>{n(a?.cd, 3)}</b></td><td className="r q">{speed(b)}</td><td className="r q">{speed(a)}</td></tr>;
+          return <tr key={um}><th scope="row">{w.lift(um)}</th><td className="r q">{n((a ?? b)?.liftOverDiameter, 3)}</td><td className="r q">{b ? w.flow(b.flowCfm) : "—"}</td><td className="r q">{a ? w.flow(a.flowCfm) : "—"}</td><td className="r q"><FlagMark row={b} limits={p.limits} />{n(b?.cd, 3)}</td><td className="r q"><FlagMark row={a} limits={p.limits} /><b>{n(a?.cd, 3)}</b></td><td className="r q">{speed(b)}</td><td className="r q">{speed(a)}</td></tr>;
         })}</tbody>
       </table></Lane>
-      {[...new Set([...(p.before?.rows ?? []), ...(p.after?.rows ?? [])].flatMap((r) => r.flags))].map((f) => <p key={f} className="sm px-3 pt-3"><b>▲</b> {FLOW_FLAGS[f]}</p>)}
+      {[...new Set([...(p.before?.rows ?? []), ...(p.after?.rows ?? [])].flatMap((r) => r.flags))].map((f) => <p key={f} className="sm px-3 pt-3"><b>▲</b> {flagWords(f, p.limits)}</p>)}
       <p className="hint p-3">Compressible coefficient on curtain area, {p.valves || "valves unknown"}; dry air at 20 °C and 101.325 kPa; stated at {w.pressure(p.atInH2O)}{ideal ? `, where air can reach ${n(units === "si" ? ideal.idealMS : ideal.idealFtS, 0)} ${w.speedUnit}` : ""}.</p>
     </>
   );

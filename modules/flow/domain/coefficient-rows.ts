@@ -3,6 +3,7 @@ import type { PortSide } from "./comparison-reasons";
 import { curtainArea } from "./curtain-area";
 import { dischargeCoefficient } from "./discharge-coefficient";
 import type { FlowFlag } from "./flow-flags";
+import type { SanityLimits } from "./sanity-limits";
 import { kelvinOfCelsius, M_PER_FT, PA_PER_INH2O } from "./units";
 import type { LiftReading } from "./repeats";
 import { bernoulliSpeedMS, meanVelocity } from "./velocity";
@@ -35,8 +36,8 @@ export interface CoefficientTable {
  * Intake draws room air; exhaust air stands at room plus test pressure. Source: as `dischargeCoefficient`, `curtainArea`, `meanVelocity`.
  * @param valveDiametersMm the open valves of the side. @param atInH2O pressure the flows are stated at.
  */
-export function coefficientTable(input: { readings: readonly LiftReading[]; side: PortSide; valveDiametersMm: readonly number[]; atInH2O: number }): CoefficientTable | null {
-  const { readings, side, valveDiametersMm, atInH2O } = input;
+export function coefficientTable(input: { readings: readonly LiftReading[]; side: PortSide; valveDiametersMm: readonly number[]; atInH2O: number; limits?: SanityLimits | undefined }): CoefficientTable | null {
+  const { readings, side, valveDiametersMm, atInH2O, limits } = input;
   const density = moistAirDensity(STATED_AIR);
   if (!density.ok || !(atInH2O > 0)) return null;
   const { densityKgM3 } = density.value;
@@ -48,7 +49,7 @@ export function coefficientTable(input: { readings: readonly LiftReading[]; side
     const area = curtainArea({ valveDiametersMm, liftMm: r.liftUm / 1000 });
     if (!area.ok) return null;
     const cd = dischargeCoefficient({
-      flowCfm: r.flowCfm, dpInH2O: atInH2O, densityKgM3, referenceAreaMm2: area.value.curtainAreaMm2, referenceArea: "curtain", model: "compressible", p0Pa, t0K: kelvinOfCelsius(STATED_AIR.temperatureC),
+      flowCfm: r.flowCfm, dpInH2O: atInH2O, densityKgM3, referenceAreaMm2: area.value.curtainAreaMm2, referenceArea: "curtain", model: "compressible", p0Pa, t0K: kelvinOfCelsius(STATED_AIR.temperatureC), limits,
     });
     const speed = meanVelocity({ flowCfm: r.flowCfm, areaMm2: area.value.curtainAreaMm2 });
     if (!cd.ok || !speed.ok) return null;

@@ -7,6 +7,7 @@ import type { BenchRange, BenchScale, HeldUnit, ValueUnit, WaterUnit } from "./r
 import { flowFromDirect, flowFromOrificeHead, flowFromRangePercent, type FlaggedFlow } from "./reading-to-flow";
 import { typedKelvin } from "./room-air";
 import { sanityFlagsOfReading } from "./sanity-flags";
+import type { SanityLimits } from "./sanity-limits";
 import { correctToPressure } from "./test-pressure";
 import { typedNumber } from "./typed-number";
 import { convertUnit } from "./units";
@@ -22,6 +23,8 @@ export interface ReadingRules {
   readonly densityKgM3: number | null;
   /** Leak of the closed head as the bench showed it, cfm, and the pressure it was read at; null = not measured. */
   readonly leak: { readonly indicatedCfm: number; readonly atInH2O: number; /** It may be scaled to a reading held at another pressure. */ readonly scalingAgreed?: boolean } | null;
+  /** Left out: the product's. */
+  readonly limits?: SanityLimits | undefined;
 }
 export interface TypedReading {
   readonly valueText: string;
@@ -47,13 +50,13 @@ export function heldInH2O(text: string, unit: HeldUnit, waterUnit: WaterUnit): R
 function onScale(rules: ReadingRules, typed: TypedReading): Result<FlaggedFlow & { percent?: number }> {
   const value = typedNumber(typed.valueText);
   if (!value.ok) return value;
-  const { benchFactor } = rules;
+  const { benchFactor, limits } = rules;
   if (typed.valueUnit === "percent" || typed.valueUnit === "head") {
     const range = rules.ranges.find((r) => r.label === typed.rangeLabel) ?? (rules.ranges.length === 1 ? rules.ranges[0] : undefined);
     if (!range) return refuse("READING_OUT_OF_RANGE", "Choose the range it was read on.", { field: "range" });
-    if (typed.valueUnit === "percent") return flowFromRangePercent({ rangeCfm: range.fullScaleCfm, percent: value.value, benchFactor });
+    if (typed.valueUnit === "percent") return flowFromRangePercent({ rangeCfm: range.fullScaleCfm, percent: value.value, benchFactor, limits });
     if (range.fullScaleHead === undefined) return refuse("READING_OUT_OF_RANGE", "This range has no head at full scale. Choose another, or complete the bench's ranges.", { field: "range" });
-    return flowFromOrificeHead({ rangeCfm: range.fullScaleCfm, head: value.value, fullScaleHead: range.fullScaleHead, benchFactor });
+    return flowFromOrificeHead({ rangeCfm: range.fullScaleCfm, head: value.value, fullScaleHead: range.fullScaleHead, benchFactor, limits });
   }
   const cfm = typed.valueUnit === "cfm" ? value : convertUnit(value.value, typed.valueUnit, "ft3/min");
   return cfm.ok ? flowFromDirect({ valueCfm: cfm.value, benchFactor }) : cfm;
@@ -92,7 +95,7 @@ export function computedReading(rules: ReadingRules, typed: TypedReading): Resul
   let flowCfm = raw.value.flowCfm * air.value.flowCfm;
   if (rules.leak && rules.leak.indicatedCfm > 0) {
     const net = subtractLeak({
-      measuredCfm: flowCfm, leakCfm: rules.leak.indicatedCfm * rules.benchFactor * (rules.densityKgM3 === null ? 1 : air.value.flowCfm), measuredAtInH2O: held.value, leakAtInH2O: rules.leak.atInH2O, allowScaling: rules.leak.scalingAgreed === true,
+      measuredCfm: flowCfm, leakCfm: rules.leak.indicatedCfm * rules.benchFactor * (rules.densityKgM3 === null ? 1 : air.value.flowCfm), measuredAtInH2O: held.value, leakAtInH2O: rules.leak.atInH2O, allowScaling: rules.leak.scalingAgreed === true, limits: rules.limits,
     });
     if (!net.ok) return net;
     flags.push(...net.value.flags);
@@ -100,7 +103,7 @@ export function computedReading(rules: ReadingRules, typed: TypedReading): Resul
   }
   const stated = correctToPressure({ flowCfm, fromInH2O: held.value, toInH2O: rules.nominalInH2O });
   if (!stated.ok) return stated;
-  const doubts = sanityFlagsOfReading({ heldInH2O: held.value, nominalInH2O: rules.nominalInH2O });
+  const doubts = sanityFlagsOfReading({ heldInH2O: held.value, nominalInH2O: rules.nominalInH2O }, rules.limits);
   if (!doubts.ok) return doubts;
   return ok({ flowCfm: stated.value.flowCfm, flags: [...new Set([...flags, ...stated.value.flags, ...doubts.value])] });
 }

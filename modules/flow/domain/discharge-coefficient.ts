@@ -2,17 +2,15 @@ import { ok, type Result } from "@/modules/kernel/result";
 import type { FlowFlag } from "./flow-flags";
 import { refuseFlow, refuseNotFinite } from "./flow-refusal";
 import { GAMMA_AIR, idealMassFlow } from "./ideal-mass-flow";
+import { SANITY_LIMITS, type SanityLimits } from "./sanity-limits";
 import { M3S_PER_CFM, PA_PER_INH2O } from "./units";
 
 /** The area a coefficient refers to is always named with it. On `head` it is called a flow coefficient. */
 export type ReferenceArea = "curtain" | "seat" | "head" | "throat";
 
-/** Usual band on curtain area (shape of the curves: Heywood (1988) Fig. 6-18, from memory). */
-export const CD_USUAL = { min: 0.3, max: 0.8 } as const;
-
 /** Flags of a coefficient; the usual band is known for the curtain area only. */
-export const coefficientFlags = (cd: number, referenceArea: ReferenceArea): FlowFlag[] =>
-  cd > 1 ? ["CD_ABOVE_ONE"] : referenceArea === "curtain" && (cd < CD_USUAL.min || cd > CD_USUAL.max) ? ["CD_UNUSUAL"] : [];
+export const coefficientFlags = (cd: number, referenceArea: ReferenceArea, limits: SanityLimits = SANITY_LIMITS): FlowFlag[] =>
+  cd > 1 ? ["CD_ABOVE_ONE"] : referenceArea === "curtain" && (cd < limits.cdLow || cd > limits.cdHigh) ? ["CD_UNUSUAL"] : [];
 
 export type DischargeInput = {
   readonly flowCfm: number;
@@ -21,6 +19,7 @@ export type DischargeInput = {
   readonly densityKgM3: number;
   readonly referenceAreaMm2: number;
   readonly referenceArea?: ReferenceArea;
+  readonly limits?: SanityLimits | undefined;
 } & (
   | { readonly model: "incompressible" }
   /** p0Pa: upstream stagnation pressure; for the exhaust direction room + test pressure. */
@@ -38,7 +37,7 @@ export function dischargeCoefficient(input: DischargeInput): Result<{
   referenceArea: ReferenceArea;
   flags: readonly FlowFlag[];
 }> {
-  const { flowCfm, dpInH2O, densityKgM3, referenceAreaMm2, referenceArea = "curtain" } = input;
+  const { flowCfm, dpInH2O, densityKgM3, referenceAreaMm2, referenceArea = "curtain", limits } = input;
   const bad = refuseNotFinite({ flowCfm, dpInH2O, densityKgM3, referenceAreaMm2 });
   if (bad) return bad;
   if (referenceAreaMm2 <= 0) return refuseFlow("GEOMETRY_INVALID", "referenceAreaMm2");
@@ -49,11 +48,11 @@ export function dischargeCoefficient(input: DischargeInput): Result<{
   const massFlowKgS = flowCfm * M3S_PER_CFM * densityKgM3;
   if (input.model === "incompressible") {
     const cd = massFlowKgS / (referenceAreaMm2 * 1e-6 * Math.sqrt(2 * dpPa * densityKgM3));
-    return ok({ cd, model: input.model, referenceArea, flags: coefficientFlags(cd, referenceArea) });
+    return ok({ cd, model: input.model, referenceArea, flags: coefficientFlags(cd, referenceArea, limits) });
   }
   const { p0Pa, t0K, gamma = GAMMA_AIR } = input;
   const ideal = idealMassFlow({ areaMm2: referenceAreaMm2, p0Pa, t0K, dpPa, gamma, gasConstant: p0Pa / (densityKgM3 * t0K) });
   if (!ideal.ok) return ideal;
   const cd = massFlowKgS / ideal.value.massFlowKgS;
-  return ok({ cd, model: input.model, referenceArea, flags: [...coefficientFlags(cd, referenceArea), ...ideal.value.flags] });
+  return ok({ cd, model: input.model, referenceArea, flags: [...coefficientFlags(cd, referenceArea, limits), ...ideal.value.flags] });
 }

@@ -2,10 +2,8 @@ import { ok, type Result } from "@/modules/kernel/result";
 import type { FlowFlag } from "./flow-flags";
 import { refuseFlow, refuseNotFinite } from "./flow-refusal";
 import type { FlaggedFlow } from "./reading-to-flow";
+import { SANITY_LIMITS, type SanityLimits } from "./sanity-limits";
 import { SET_POINT_SHARE_MAX } from "./test-pressure";
-
-/** Leak over this share of a reading is flagged. Common practice, no source. */
-export const LEAK_SHARE_HIGH = 0.05;
 
 /**
  * Flow without the fixture leak, both at one pressure (within 2 %).
@@ -18,8 +16,9 @@ export function subtractLeak(input: {
   measuredAtInH2O: number;
   leakAtInH2O: number;
   allowScaling?: boolean;
+  limits?: SanityLimits | undefined;
 }): Result<FlaggedFlow> {
-  const { measuredCfm, leakCfm, measuredAtInH2O, leakAtInH2O, allowScaling = false } = input;
+  const { measuredCfm, leakCfm, measuredAtInH2O, leakAtInH2O, allowScaling = false, limits = SANITY_LIMITS } = input;
   const bad = refuseNotFinite({ measuredCfm, leakCfm, measuredAtInH2O, leakAtInH2O });
   if (bad) return bad;
   if (measuredAtInH2O <= 0) return refuseFlow("PRESSURE_NOT_POSITIVE", "measuredAtInH2O");
@@ -34,6 +33,6 @@ export function subtractLeak(input: {
     flags.push("LEAK_SCALED");
   }
   if (leak > 0 && leak >= measuredCfm) return refuseFlow("LEAK_EXCEEDS_FLOW", "leakCfm", { measuredCfm, leakCfm: leak });
-  if (leak > LEAK_SHARE_HIGH * measuredCfm) flags.push("LEAK_HIGH");
+  if (leak > limits.leakShare * measuredCfm) flags.push("LEAK_HIGH");
   return ok({ flowCfm: measuredCfm - leak, flags });
 }

@@ -1,6 +1,7 @@
 import type { EntryKind, PortSide } from "./comparison-reasons";
 import type { LiftUnit } from "./lift-ladder";
 import type { BenchHistory } from "./noise";
+import type { SanityLimits } from "./sanity-limits";
 
 export type BenchScale = "direct" | "percent_linear" | "orifice_head";
 /** `series_orifice`: weather cancels. `absolute_meter`: counts the air as it is, and is brought to reference air. */
@@ -72,6 +73,8 @@ export interface RawTest {
   readonly known?: KnownUncertainty;
   /** Repeats of its bench in the twelve months up to this test, at its pressure. Left out: not asked for. */
   readonly history?: BenchHistory;
+  /** What its checks are held against, where the shop set any of it. Left out: the product's. */
+  readonly limits?: SanityLimits;
   readonly fixture: { readonly id: string; readonly name: string; readonly boreMm: number };
   readonly nominalInH2O: number;
   readonly lifts: readonly { readonly liftUm: number; readonly text: string }[];

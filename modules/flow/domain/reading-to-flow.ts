@@ -1,32 +1,29 @@
 import { ok, type Result } from "@/modules/kernel/result";
 import type { FlowFlag } from "./flow-flags";
 import { refuseFlow, refuseNotFinite } from "./flow-refusal";
+import { SANITY_LIMITS, type SanityLimits } from "./sanity-limits";
 
 export interface FlaggedFlow<F extends string = FlowFlag> {
   readonly flowCfm: number;
   readonly flags: readonly F[];
 }
 
-/** Where on the scale a reading is doubtful. Common practice, no source. */
-export const PERCENT_LOW = 30;
-export const PERCENT_HIGH = 98;
-
 /** Flags of a place on the scale, percent of full scale. */
-export const rangeFlags = (percent: number): FlowFlag[] =>
-  percent < PERCENT_LOW ? ["READING_LOW_IN_RANGE"] : percent > PERCENT_HIGH ? ["READING_HIGH_IN_RANGE"] : [];
+export const rangeFlags = (percent: number, limits: SanityLimits = SANITY_LIMITS): FlowFlag[] =>
+  percent < limits.percentLow ? ["READING_LOW_IN_RANGE"] : percent > limits.percentHigh ? ["READING_HIGH_IN_RANGE"] : [];
 
 /**
  * Flow on a scale linear in flow: `range x percent/100 x bench factor`. Common practice, no source.
  * @param percent 0 to 100. Errors: READING_OUT_OF_RANGE.
  */
-export function flowFromRangePercent(input: { rangeCfm: number; percent: number; benchFactor?: number }): Result<FlaggedFlow> {
+export function flowFromRangePercent(input: { rangeCfm: number; percent: number; benchFactor?: number; limits?: SanityLimits | undefined }): Result<FlaggedFlow> {
   const { rangeCfm, percent, benchFactor = 1 } = input;
   const bad = refuseNotFinite({ rangeCfm, percent, benchFactor });
   if (bad) return bad;
   if (percent < 0 || percent > 100) return refuseFlow("READING_OUT_OF_RANGE", "percent", { min: 0, max: 100 });
   if (rangeCfm <= 0) return refuseFlow("READING_OUT_OF_RANGE", "rangeCfm");
   if (benchFactor <= 0) return refuseFlow("READING_OUT_OF_RANGE", "benchFactor");
-  return ok({ flowCfm: ((rangeCfm * percent) / 100) * benchFactor, flags: rangeFlags(percent) });
+  return ok({ flowCfm: ((rangeCfm * percent) / 100) * benchFactor, flags: rangeFlags(percent, input.limits) });
 }
 
 /**
@@ -39,6 +36,7 @@ export function flowFromOrificeHead(input: {
   head: number;
   fullScaleHead: number;
   benchFactor?: number;
+  limits?: SanityLimits | undefined;
 }): Result<FlaggedFlow> {
   const { rangeCfm, head, fullScaleHead, benchFactor = 1 } = input;
   const bad = refuseNotFinite({ rangeCfm, head, fullScaleHead, benchFactor });
@@ -48,7 +46,7 @@ export function flowFromOrificeHead(input: {
   if (rangeCfm <= 0) return refuseFlow("READING_OUT_OF_RANGE", "rangeCfm");
   if (benchFactor <= 0) return refuseFlow("READING_OUT_OF_RANGE", "benchFactor");
   const part = Math.sqrt(head / fullScaleHead);
-  return ok({ flowCfm: rangeCfm * part * benchFactor, flags: rangeFlags(part * 100) });
+  return ok({ flowCfm: rangeCfm * part * benchFactor, flags: rangeFlags(part * 100, input.limits) });
 }
 
 /** Flow from a meter that shows it: `value x bench factor`. @param valueCfm >= 0. Errors: READING_OUT_OF_RANGE. */

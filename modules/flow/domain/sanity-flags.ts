@@ -6,22 +6,10 @@ import { refuseFlow, refuseNotFinite } from "./flow-refusal";
 import { isIncreasing, neighbours, paired } from "./neighbours";
 import { outlierLifts } from "./outliers";
 import { rangeFlags } from "./reading-to-flow";
+import { SANITY_LIMITS, type SanityLimits } from "./sanity-limits";
 import { SET_POINT_SHARE_MAX } from "./test-pressure";
 import { M3S_PER_CFM, PA_PER_INH2O } from "./units";
 import { bernoulliSpeedMS } from "./velocity";
-
-/** Limits an owner may change. Common practice, no source. */
-export const SANITY_LIMITS = {
-  fallShare: 0.01,
-  zeroLiftExtraCfm: 0.5,
-  offNominalShare: 0.1,
-  outlierTimesMedian: 3,
-  /** A quarter off the line: wide steps at low lift bend a sound curve by up to 15 %. */
-  outlierShareMin: 0.25,
-  gainShare: 0.4,
-  zeroDriftMm: 0.05,
-} as const;
-export type SanityLimits = { readonly [K in keyof typeof SANITY_LIMITS]: number };
 
 export interface SanityTest {
   /** Strictly increasing, one unit; the unit is that of the lift in the flag. */
@@ -93,7 +81,7 @@ export function sanityFlagsOfReading(reading: SanityReading, limits: SanityLimit
   const flags: FlowFlag[] = [];
   if (percent !== undefined) {
     if (percent < 0 || percent > 100) return refuseFlow("READING_OUT_OF_RANGE", "percent", { min: 0, max: 100 });
-    flags.push(...rangeFlags(percent));
+    flags.push(...rangeFlags(percent, limits));
   }
   if (heldInH2O !== undefined && nominalInH2O !== undefined) {
     const off = Math.abs(heldInH2O / nominalInH2O - 1);
@@ -104,7 +92,7 @@ export function sanityFlagsOfReading(reading: SanityReading, limits: SanityLimit
   if (valveDiametersMm && liftMm !== undefined && liftMm > 0) {
     const area = curtainArea({ valveDiametersMm, liftMm });
     if (!area.ok) return area;
-    const cd = dischargeCoefficient({ model: "incompressible", flowCfm, dpInH2O: heldInH2O, densityKgM3, referenceAreaMm2: area.value.curtainAreaMm2 });
+    const cd = dischargeCoefficient({ model: "incompressible", flowCfm, dpInH2O: heldInH2O, densityKgM3, referenceAreaMm2: area.value.curtainAreaMm2, limits });
     if (!cd.ok) return cd;
     flags.push(...cd.value.flags);
   }

@@ -7,6 +7,7 @@ import type { FlowFlag, LiftFlag } from "./flow-flags";
 import type { RawCell, RawTest } from "./raw-test";
 import { meanOfRepeats, type LiftMean, type LiftReading } from "./repeats";
 import { sanityFlagsOfTest } from "./sanity-flags";
+import type { SanityLimits } from "./sanity-limits";
 import type { ReadingSet } from "./shop-comparison";
 import { roomDensity } from "./room-air";
 import { typedNumber } from "./typed-number";
@@ -31,13 +32,15 @@ export interface TestFigures {
   readonly readings: readonly LiftMean[];
   readonly doubts: readonly LiftDoubt[];
   readonly isConverted: boolean;
+  /** What the doubts were held against, where the shop set it. */
+  readonly limits?: SanityLimits;
 }
 
 /** Leak, scale and air of a test, read from its typed conditions. A leak, or the air of a bench that needs it, that cannot be read refuses the whole computation. */
 export function rulesOfTest(test: RawTest): Result<ReadingRules> {
   const air = test.bench.kind === "absolute_meter" ? roomDensity(test) : ok({ densityKgM3: null });
   if (!air.ok) return air;
-  const rules = { densityKgM3: air.value.densityKgM3, scale: test.bench.scale, ranges: test.bench.ranges, waterUnit: test.bench.waterUnit, benchFactor: test.benchFactor, nominalInH2O: test.nominalInH2O };
+  const rules = { densityKgM3: air.value.densityKgM3, scale: test.bench.scale, ranges: test.bench.ranges, waterUnit: test.bench.waterUnit, benchFactor: test.benchFactor, nominalInH2O: test.nominalInH2O, limits: test.limits };
   if (test.leakText.trim() === "") return ok({ ...rules, leak: null });
   const leak = typedNumber(test.leakText, "leak");
   if (!leak.ok) return leak;
@@ -70,7 +73,7 @@ export function figuresOfTest(test: RawTest, beside: FiguresBeside = {}): TestFi
       ...cell,
       flowCfm: result.ok ? result.value.flowCfm : null,
       refusal: result.ok ? null : result.refusal,
-      flags: result.ok ? [...result.value.flags, ...geometryFlags({ ...beside, liftUm: cell.liftUm, flowCfm: result.value.flowCfm, side: test.side, atInH2O: test.nominalInH2O })] : [],
+      flags: result.ok ? [...result.value.flags, ...geometryFlags({ ...beside, liftUm: cell.liftUm, flowCfm: result.value.flowCfm, side: test.side, atInH2O: test.nominalInH2O, limits: test.limits })] : [],
       question: forQuestion === null ? null : readingQuestion({ liftUm: cell.liftUm, flowCfm: forQuestion }, readings),
     };
   });
@@ -81,12 +84,12 @@ export function figuresOfTest(test: RawTest, beside: FiguresBeside = {}): TestFi
     ...(beside.before ? { beforeCfm: lifts.map((um) => beside.before?.find((b) => b.liftUm === um)?.flowCfm ?? null) } : {}),
     ...(typeof test.zeroReturnUm === "number" ? { zeroReturnMm: test.zeroReturnUm / 1000 } : {}),
     ...(test.camLiftUm === null || test.state === "draft" ? {} : { camMaxLift: test.camLiftUm }),
-  });
+  }, test.limits);
   const doubts = (sane.ok ? sane.value : []).map((flag): LiftDoubt => {
     const [name = "", at] = flag.split("@");
     return { flag: name as LiftDoubt["flag"], liftUm: at === undefined ? null : Number(at) };
   });
-  return { side: test.side, cells, readings, doubts, isConverted: cells.some((c) => c.flags.includes("CONVERTED_PRESSURE")) };
+  return { side: test.side, cells, readings, doubts, isConverted: cells.some((c) => c.flags.includes("CONVERTED_PRESSURE")), ...(test.limits ? { limits: test.limits } : {}) };
 }
 
 /** Every reading that counts, repeats apart: those with a flow that were not excluded. */

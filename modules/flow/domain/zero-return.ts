@@ -1,7 +1,7 @@
 import { ok, refuse, type Result } from "@/modules/kernel/result";
 import { FLOW_FLAGS } from "./flow-flags";
 import type { LiftUnit } from "./lift-ladder";
-import { SANITY_LIMITS } from "./sanity-flags";
+import { SANITY_LIMITS, type SanityLimits } from "./sanity-limits";
 import { typedNumber } from "./typed-number";
 
 /** A gauge that shows more than this, micrometres, on a closed seat was not read: 5 mm. Our choice. */
@@ -22,12 +22,12 @@ export function zeroReturnUm(text: string, fieldUnit: LiftUnit): Result<number |
   return Math.abs(um) <= ZERO_UM_MAX ? ok(um) : refuse("READING_OUT_OF_RANGE", "More than 5 mm off its zero is no zero. Look at the indicator again.", { field: "zeroReturn" });
 }
 
-/** Did the indicator drift by more than the limit (0.05 mm)? */
-export const isZeroDrift = (um: number): boolean => Math.abs(um) / 1000 > SANITY_LIMITS.zeroDriftMm;
+/** Did the indicator drift by more than the limit (0.05 mm, or the shop's)? */
+export const isZeroDrift = (um: number, limits: SanityLimits = SANITY_LIMITS): boolean => Math.abs(um) / 1000 > limits.zeroDriftMm;
 
 /** What is said beside the field while it is typed: the refusal, the doubt, or nothing. */
-export function zeroReturnWords(text: string, unit: LiftUnit): string | null {
+export function zeroReturnWords(text: string, unit: LiftUnit, limits?: SanityLimits): string | null {
   const read = zeroReturnUm(text, unit);
   if (!read.ok) return read.refusal.message;
-  return read.value !== null && isZeroDrift(read.value) ? FLOW_FLAGS.LIFT_ZERO_DRIFT : null;
+  return read.value !== null && isZeroDrift(read.value, limits) ? FLOW_FLAGS.LIFT_ZERO_DRIFT : null;
 }

@@ -8,6 +8,7 @@ import { standingCheck } from "../bench-check-sql";
 import type { CamPoint } from "../domain/cam-table";
 import type { PortSide } from "../domain/comparison-reasons";
 import type { BenchRange, BenchScale, WaterUnit } from "../domain/raw-test";
+import { ownLimits, type OwnLimits } from "../domain/sanity-limits";
 import type { ValveOfFamily } from "../domain/valve-list";
 
 export interface BenchCheckView {
@@ -31,6 +32,8 @@ export interface FamilyView { id: string; name: string; cylinders: number; boreM
 export interface GearRoom {
   benches: BenchView[]; plates: PlateView[]; fixtures: FixtureView[]; liftDevices: LiftDeviceView[]; camshafts: CamshaftView[]; families: FamilyView[];
   benchCheckHours: number; canSetUp: boolean; canRecord: boolean;
+  /** Limits of the checks that the shop set itself, with the version of its settings. */
+  limits: { own: OwnLimits; version: number; maySet: boolean };
 }
 
 const HOUR_MS = 3_600_000;
@@ -51,7 +54,7 @@ export async function gearRoom(ctx: ShopContext): Promise<GearRoom> {
   mustBeAble(ctx, "flow.see");
   const s = ctx.shop.id;
   return inShop(ctx, async (tx) => {
-    const { benchCheckHours } = await settingsOf({ ...ctx, tx });
+    const { benchCheckHours, flowLimits, version } = await settingsOf({ ...ctx, tx });
     const checks = await tx.selectDistinctOn([benchChecks.benchId]).from(benchChecks).where(and(eq(benchChecks.shopId, s), standingCheck)).orderBy(benchChecks.benchId, desc(benchChecks.at));
     const today = localDate(ctx.now, ctx.shop.zone);
     const [b, p, f, d, c, fam] = [
@@ -70,6 +73,7 @@ export async function gearRoom(ctx: ShopContext): Promise<GearRoom> {
       camshafts: c.map((x) => ({ id: x.id, label: x.label, side: x.side as PortSide, maxLiftUm: x.maxLiftUm, durationDeg: x.durationDeg, profile: x.profile as CamPoint[], dataSource: x.dataSource, active: x.active, version: x.version })),
       families: fam.map(({ shopId: _, createdAt: __, valves, ...x }) => ({ ...x, valves: valves as ValveOfFamily[] })),
       benchCheckHours, canSetUp: ableTo(ctx, "flow.set-up"), canRecord: ableTo(ctx, "flow.record"),
+      limits: { own: ownLimits(flowLimits), version, maySet: ableTo(ctx, "settings.write") },
     };
   });
 }

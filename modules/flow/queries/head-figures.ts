@@ -13,6 +13,7 @@ import type { NoiseRow } from "../domain/noise-rows";
 import type { RawTest } from "../domain/raw-test";
 import type { LiftReading } from "../domain/repeats";
 import { ratiosOfPort, type PortRatio } from "../domain/port-ratios";
+import type { SanityLimits } from "../domain/sanity-limits";
 import { sideGain, type SideGain } from "../domain/side-gain";
 import { camIdOf, standingTests } from "../domain/standing-tests";
 import { figuresOfTest } from "../domain/test-figures";
@@ -39,6 +40,8 @@ export interface PortFigures {
   notStated: readonly string[];
   /** Repeats of the bench up to the newer test. */
   history?: BenchHistory | undefined;
+  /** What the flags of coefficients were held against, where the shop set it. */
+  limits?: SanityLimits | undefined;
 }
 export interface EstimateFacts { cylinders: number; boreMm: number | null; strokeMm: number | null; cams: (CamFacts & { id: string; label: string })[]; ports: { cylinder: number; when: "before" | "after"; atInH2O: number; readings: LiftReading[] }[] }
 export interface HeadFigures {
@@ -63,7 +66,7 @@ function portFigures(cylinder: number, side: PortSide, tests: readonly Test[], v
     const diameters = test ? sizes(test) : [];
     // One valve open is not the whole list.
     if (!test || diameters.length === 0 || test.valvesOpen !== "all") return null;
-    return coefficientTable({ readings: figuresOfTest(test).readings, side, valveDiametersMm: diameters, atInH2O: test.nominalInH2O });
+    return coefficientTable({ readings: figuresOfTest(test).readings, side, valveDiametersMm: diameters, atInH2O: test.nominalInH2O, limits: test.limits });
   };
   const gain = sideGain(standing, side, hoursMax);
   // Figures that cannot be computed count as absent, as they do on the order.
@@ -76,7 +79,7 @@ function portFigures(cylinder: number, side: PortSide, tests: readonly Test[], v
     readings: { before: readingsOf(standing.before), after: readingsOf(standing.after) }, gain: told, means: told.comparable ? comparisonMeans(told, cams.get(camIdOf(standing) ?? "") ?? null) : null,
     noise: noise?.rows ?? null,
     withheld: gain.ok && gain.value.state === "withheld" ? gain.value.reasons.map((r) => r.words) : gain.ok && gain.value.state === "absent" ? ["One of the two tests is missing."] : [],
-    notStated: noise?.notStated ?? [], history: noise?.history,
+    notStated: noise?.notStated ?? [], history: noise?.history, limits: newest.limits,
   };
 }
 

@@ -1,15 +1,17 @@
-import { FLOW_FLAGS, LIFT_FLAGS, type FlowFlag, type LiftFlag } from "../../domain/flow-flags";
+import { flagWords } from "../../domain/flag-words";
+import type { FlowFlag, LiftFlag } from "../../domain/flow-flags";
+import { SANITY_LIMITS, shownLimit, type SanityLimits } from "../../domain/sanity-limits";
 import type { ComputedCell, TestFigures } from "../../domain/test-figures";
 import { typingDoubt } from "../../domain/typing-doubt";
 import type { Stuck } from "./reading-queue";
 
 /** Short words that stand in the cell itself, beside a triangle; the most pressing first, because a cell shows one. */
 const SHORT: Partial<Record<FlowFlag | LiftFlag, string>> = {
-  CD_ABOVE_ONE: "impossible", ABOVE_IDEAL_PORT_LIMIT: "over section", FLOW_AT_ZERO_LIFT: "flows when shut", OUTLIER: "off the line", GAIN_UNUSUAL: "gain over 40 %", FLOW_FALLS_WITH_LIFT: "flow falls", PRESSURE_OFF_NOMINAL: "pressure off",
+  CD_ABOVE_ONE: "impossible", ABOVE_IDEAL_PORT_LIMIT: "over section", FLOW_AT_ZERO_LIFT: "flows when shut", OUTLIER: "off the line", GAIN_UNUSUAL: "gain unusual", FLOW_FALLS_WITH_LIFT: "flow falls", PRESSURE_OFF_NOMINAL: "pressure off",
   LEAK_HIGH: "leak high", CD_UNUSUAL: "unusual Cd", READING_HIGH_IN_RANGE: "top of scale", READING_LOW_IN_RANGE: "low on scale", PRESSURE_RATIO_LARGE: "far converted", CONVERTED_PRESSURE: "converted", LEAK_SCALED: "leak scaled",
 };
 const PRESSING = Object.keys(SHORT);
-const wordsOf = (flag: FlowFlag | LiftFlag): string => (flag in LIFT_FLAGS ? LIFT_FLAGS[flag as LiftFlag] : FLOW_FLAGS[flag as FlowFlag]);
+const shortOf = (flag: FlowFlag | LiftFlag, limits: SanityLimits = SANITY_LIMITS): string => (flag === "GAIN_UNUSUAL" ? `gain over ${shownLimit("gainShare", limits.gainShare)} %` : (SHORT[flag] ?? ""));
 const STUCK_SHORT: Record<Stuck["kind"], string> = { asked: "sure?", refused: "look again", conflict: "changed" };
 
 export interface CellDoubt {
@@ -36,5 +38,5 @@ export function cellDoubts({ cell, figures, stuck, liftUm, text, isTyping }: { c
   else if (stuck === null && cell?.acceptedReason) found.push(doubt("kept", `Kept with a reason: ${cell.acceptedReason}`));
   const here = figures.doubts.filter((d) => d.liftUm === liftUm || (d.flag === "FLOW_AT_ZERO_LIFT" && liftUm === 0)).map((d) => d.flag);
   const flags = [...new Set([...(cell?.flags ?? []), ...here])].filter((f) => SHORT[f] !== undefined).sort((a, b) => PRESSING.indexOf(a) - PRESSING.indexOf(b));
-  return [...found, ...flags.map((f) => doubt(SHORT[f] ?? "", wordsOf(f), { isCheck: true }))];
+  return [...found, ...flags.map((f) => doubt(shortOf(f, figures.limits), flagWords(f, figures.limits), { isCheck: true }))];
 }

@@ -41,7 +41,7 @@ export function ZeroReturn({ drafts, values, onChange }: { drafts: readonly RawT
       <div className="mt-2 flex flex-wrap gap-4">
         {drafts.map((t) => {
           const text = values[t.id] ?? "";
-          const words = text === "-" ? null : zeroReturnWords(text, t.liftUnit);
+          const words = text === "-" ? null : zeroReturnWords(text, t.liftUnit, t.limits);
           return (
             <span key={t.id} className="field">
               <label htmlFor={`${id}${t.side}`}><span className="capitalize">{t.side}</span>, valve shut</label>
