@@ -127,7 +127,7 @@ export function ReadingGrid({ sheet, unit, locale, port, canRecord, isBench, act
             <Fragment key={s.side}>
               <th scope="col" id={`h-${s.side}-before`} className="r bf">Before{unitOf(s.before)}{pressureOf(s.before)}</th>
               <th scope="col" id={`h-${s.side}-after`} className="r af">{s.after?.head ?? "After"}{unitOf(s.after)}{pressureOf(s.after)}</th>
-              <th scope="col" className="r gh">{s.gain && !s.gain.comparable && s.gain.state === "withheld" ? "Withheld" : "Gain"}</th>
+              {s.gain?.state === "withheld" ? <th scope="col" className="r gh wh">Withheld</th> : <th scope="col" className="r gh">Gain</th>}
             </Fragment>
           ))}
         </tr>
