@@ -79,7 +79,7 @@ await run(async () => {
     const owner = signIns.find((s) => s.role === "owner");
     if (!owner) throw new Problem("The demo has no owner to sign in.");
     const cookie = await signIn(app, owner);
-    const factsNow = async () => JSON.parse((await runTypescript("scripts/bench/facts.ts", product.ownerEnv, "The demo could not be read:", ["react-server"])).trim().split("\n").at(-1));
+    const factsNow = async (families = "") => JSON.parse((await runTypescript("scripts/bench/facts.ts", { ...product.ownerEnv, BENCH_FAMILIES: families }, "The demo could not be read:", ["react-server"])).trim().split("\n").at(-1));
     const floor = [{ name: FLOOR_PAGE, once: page(app, "/sign-in", "") }, { name: FLOOR_QUERY, once: () => pool.query("select 1") }];
     const facts = await factsNow();
     heading(`${shape.clients} clients, ${shape.rounds} rounds of ${shape.ms} ms each, over the demo`);
@@ -100,7 +100,7 @@ await run(async () => {
     for (const tests of argv.includes("--no-load") ? [] : [100, 10_000]) {
       heading(`The flow room and library with ${tests} more tests of 24 lifts`);
       await runTypescript("scripts/bench/load.ts", { ...product.ownerEnv, BENCH_TESTS: String(tests) }, "The flow library could not be filled:", ["react-server"]);
-      table(await measure([...floor, ...targetsOf(await factsNow(), app, cookie).filter((t) => /flow/.test(t.name))], shape, (i) => say(`round ${i}`)));
+      table(await measure([...floor, ...targetsOf(await factsNow(`Load family L${tests}-`), app, cookie).filter((t) => /flow/.test(t.name))], shape, (i) => say(`round ${i}`)));
     }
     console.log("\n  Ratios compare within this run only. Floor page: sign-in, rendered anew for each request. Floor query: through the same driver.");
   } finally {

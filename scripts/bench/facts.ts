@@ -13,8 +13,8 @@ const facts = await withShop(shop.id, async (tx) => {
   const [link] = await tx.select({ id: links.id }).from(links).where(and(eq(links.shopId, shop.id), eq(links.purpose, "estimate"), isNull(links.revokedAt), sql`${links.expiresAt} > now()`)).orderBy(desc(links.createdAt)).limit(1);
   const [invoice] = await tx.select({ id: invoices.id }).from(invoices).where(and(eq(invoices.shopId, shop.id), eq(invoices.state, "issued"))).limit(1);
   const { rows: [tests] } = await tx.execute<{ n: number }>(sql`select count(*)::int as n from flow_tests where shop_id = ${shop.id} and state = 'complete'`);
-  // The largest family, and two finished tests of one side in it: what the family picture and the overlay are asked for.
-  const { rows: [family] } = await tx.execute<{ name: string }>(sql`select family as name from heads where shop_id = ${shop.id} group by family order by count(*) desc, family limit 1`);
+  // The largest family (of the load named, so that ladders are alike), and two finished tests of one side in it: what the family picture and the overlay are asked for.
+  const { rows: [family] } = await tx.execute<{ name: string }>(sql`select family as name from heads where shop_id = ${shop.id} and family like ${`${process.env.BENCH_FAMILIES ?? ""}%`} group by family order by count(*) desc, family limit 1`);
   const { rows: pair } = await tx.execute<{ id: string }>(sql`
     select t.id from flow_tests t join heads h on h.shop_id = t.shop_id and h.id = t.head_id
     where t.shop_id = ${shop.id} and t.state = 'complete' and h.family = ${family?.name ?? ""} and t.side = 'intake' order by t.id limit 2`);
