@@ -23,7 +23,7 @@ import { withRepeatHistory } from "./repeat-history";
 import { rawTests } from "./tests-of-head";
 
 /** A family's middle curve is taken over so many of its newest tests, so that the answer takes as long in year ten as in year one. */
-export const MEDIAN_OF_NEWEST = 50;
+export const MEDIAN_OF_NEWEST = 20;
 
 export interface PortOfFamily { headId: string; cylinder: number; mark: string; ownerKind: string; workDone: string[]; flowedAt: string; gain: "comparable" | "withheld" | "absent"; reasons: string[]; meanGainCfm: number | null; meanPercent: number | null; notes: string[] }
 export interface FamilyPicture {
