@@ -1,6 +1,6 @@
 "use client";
 
-import { useCallback, useEffect, useMemo, useState, useSyncExternalStore } from "react";
+import { useCallback, useMemo, useState, useSyncExternalStore } from "react";
 import { usePlace } from "@/modules/ui/place";
 import { measureKind } from "../domain/measure-kinds";
 import { lineKey, type LinePlace, type Stage } from "../domain/measure-line";
@@ -8,6 +8,7 @@ import { measuredValue, measureQuestion } from "../domain/measure-value";
 import type { MeasurementSheet } from "../queries/measurements";
 import { keptLineKey, MeasureQueue, type KeptLine, type SavedLine, type StuckLine } from "./measure-queue";
 import { deviceStore, lineSender } from "./measure-store";
+import { useSending } from "./use-sending";
 
 /** A line as it is shown: what is typed and not yet in the records, else what stands there. */
 export interface Entry { readonly text: string; readonly unit: string; readonly isKeptHere: boolean; readonly stuck: StuckLine | null }
@@ -34,18 +35,7 @@ export function useMeasureLines(sheet: MeasurementSheet, instrument: string) {
   const [queue] = useState(() => new MeasureQueue(deviceStore(slug), lineSender(slug), (s) => onSaved(s), sheet.viewerId));
   const state = useSyncExternalStore(queue.subscribe, queue.snapshot, queue.snapshot);
 
-  useEffect(() => {
-    const again = () => void queue.flush();
-    void queue.load().then(again);
-    const timer = setInterval(() => { if (queue.snapshot().waiting > 0) again(); }, 5_000);
-    window.addEventListener("online", again);
-    document.addEventListener("visibilitychange", again);
-    return () => {
-      clearInterval(timer);
-      window.removeEventListener("online", again);
-      document.removeEventListener("visibilitychange", again);
-    };
-  }, [queue]);
+  useSending(queue);
 
   const entries = useMemo(() => {
     const out = new Map<string, Entry>([...standing].map(([key, s]) => [key, { text: s.text, unit: s.unit, isKeptHere: false, stuck: null }]));

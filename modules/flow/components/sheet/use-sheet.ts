@@ -13,6 +13,7 @@ import { nextEdit, type CellMore } from "./next-edit";
 import { keptKey, ReadingQueue, type CellEdit, type KeptCell, type SavedCell, type Stuck } from "./reading-queue";
 import { readingSender, tabletStore } from "./reading-store";
 import { sheetFigures, withTyped, type When } from "./sheet-figures";
+import { useSending } from "../use-sending";
 
 export interface Pos { readonly side: PortSide; readonly when: When; readonly testId: string; readonly liftUm: number; readonly repeatNo: number }
 interface Stood { readonly value: string; readonly range: string | null }
@@ -49,18 +50,7 @@ export function useSheet(sheet: FlowSheet, slug: string) {
   const [queue] = useState(() => new ReadingQueue(tabletStore(slug), readingSender(slug), (s) => onSaved(s), sheet.viewer.id));
   const state = useSyncExternalStore(queue.subscribe, queue.snapshot, queue.snapshot);
 
-  useEffect(() => {
-    const again = () => void queue.flush();
-    void queue.load().then(() => recheck.current()).then(again);
-    const timer = setInterval(() => { if (queue.snapshot().waiting > 0) again(); }, 5_000);
-    window.addEventListener("online", again);
-    document.addEventListener("visibilitychange", again);
-    return () => {
-      clearInterval(timer);
-      window.removeEventListener("online", again);
-      document.removeEventListener("visibilitychange", again);
-    };
-  }, [queue]);
+  useSending(queue, () => recheck.current());
 
   const tests = useMemo(() => saved.map((t) => withTyped(t, [...state.cells.values()].filter((c) => c.testId === t.id).flatMap((c) => { const e = lastEdit(c); return e ? [rawOf(c, e, t)] : []; }))), [saved, state]);
   const figures = useMemo(() => sheetFigures(tests, sheet.benchCheckHours, { valves: sheet.head.valves, sections: sheet.sections }), [tests, sheet.benchCheckHours, sheet.head.valves, sheet.sections]);
